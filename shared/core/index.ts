@@ -1,0 +1,44 @@
+/**
+ * The numeric core: typed arrays in, numbers and typed arrays out. It imports nothing outside its
+ * folder, reads no clock and draws no random numbers.
+ */
+export { buildGraph, type Graph, type PairEnds } from "./graph/build-graph.ts";
+export { type Components, components } from "./graph/components.ts";
+export { type InducedSubgraph, inducedSubgraph } from "./graph/induced-subgraph.ts";
+export { UnionFind, type UnionResult } from "./graph/union-find.ts";
+export { countedPairs } from "./measures/counted-pairs.ts";
+export { degreeCounts } from "./measures/degree-counts.ts";
+export { density, possiblePairs } from "./measures/density.ts";
+export { isolates } from "./measures/isolates.ts";
+export { largestShare } from "./measures/largest-share.ts";
+export { meanDegree } from "./measures/mean-degree.ts";
+export type { Measured, UndefinedReason } from "./measures/measured.ts";
+export {
+  type NetworkReport,
+  networkReport,
+  type ReportOptions,
+} from "./measures/network-report.ts";
+export { recall } from "./measures/recall.ts";
+export {
+  FEWEST_FOR_VERDICT,
+  FULL_COVERAGE,
+  type RecallCorrected,
+  type Threshold,
+  type ThresholdFigures,
+  type ThresholdInput,
+  type ThresholdPopulation,
+  threshold,
+} from "./measures/threshold.ts";
+export { transitivity } from "./measures/transitivity.ts";
+export { triangles } from "./measures/triangles.ts";
+export { twoPaths } from "./measures/two-paths.ts";
+export { type Region, regionsMet, type Verdict, verdictOf } from "./measures/verdict.ts";
+export { lambertGiantShare } from "./stats/lambert-giant-share.ts";
+export { type Interval, wilsonInterval, Z_95 } from "./stats/wilson-interval.ts";
+export { dayNumber, dayString, MISSING_DAY } from "./time/day-number.ts";
+export {
+  type ExposureRange,
+  type ExposureTable,
+  exposureFilter,
+  type FilteredPairs,
+} from "./time/exposure-filter.ts";

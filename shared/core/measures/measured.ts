@@ -1,0 +1,27 @@
+/** Why a figure is undefined, or why a verdict is withheld. The words for the screen live there. */
+export type UndefinedReason =
+  | "no_people"
+  | "one_person"
+  | "no_two_paths"
+  | "no_one_interviewed"
+  | "too_few_people"
+  | "free_range"
+  | "coverage_low"
+  | "recall_unknown"
+  | "recall_low"
+  | "no_double_reports";
+
+/** A number, or `null` with the reason; never NaN, and never 0 standing in for "undefined". */
+export type Measured =
+  | { readonly value: number; readonly reason: null }
+  | { readonly value: null; readonly reason: UndefinedReason };
+
+/** Wraps a defined value. */
+export function defined(value: number): Measured {
+  return { value, reason: null };
+}
+
+/** Wraps an undefined value with its reason. */
+export function undefinedBecause(reason: UndefinedReason): Measured {
+  return { value: null, reason };
+}
