@@ -1,0 +1,60 @@
+// The client in dist/, built again when one of its sources has changed.
+import { createHash } from "node:crypto";
+import { existsSync, readdirSync, readFileSync, rmSync, statSync, writeFileSync } from "node:fs";
+import { join, relative } from "node:path";
+import { takeLock } from "./locks.mjs";
+import { PlainError, say } from "./plain.mjs";
+import { lastLines, runCaptured } from "./processes.mjs";
+import { makeDataFolder } from "./project.mjs";
+
+const SOURCES = ["src", "shared", "public", "index.html", "package-lock.json", "tsconfig.json"];
+
+function* filesUnder(path) {
+  if (!existsSync(path)) return;
+  if (!statSync(path).isDirectory()) {
+    yield path;
+    return;
+  }
+  for (const name of readdirSync(path).sort()) yield* filesUnder(join(path, name));
+}
+
+/** Hash over every file the build reads: names and contents. */
+function hashSources(root) {
+  const configs = readdirSync(root).filter((n) => /^(vite|tailwind|postcss)\.config\./.test(n));
+  const hash = createHash("sha256");
+  for (const source of [...SOURCES, ...configs.sort()]) {
+    for (const file of filesUnder(join(root, source))) {
+      const content = readFileSync(file);
+      hash.update(`${relative(root, file)}\0${content.length}\0`).update(content);
+    }
+  }
+  return hash.digest("hex");
+}
+
+function isFresh(stamp, wanted) {
+  return existsSync(stamp) && readFileSync(stamp, "utf8") === wanted;
+}
+
+/** Builds the client with Vite when dist/ does not come from the present sources. */
+export async function ensureClientBuild(root) {
+  const stamp = join(root, "dist", ".stamp");
+  if (isFresh(stamp, hashSources(root))) return;
+  const folder = makeDataFolder(join(root, ".data"));
+  const lock = await takeLock(join(folder, "build.lock"), () => 300_000);
+  try {
+    const wanted = hashSources(root);
+    if (isFresh(stamp, wanted)) return;
+    say("Building the client …");
+    rmSync(stamp, { force: true });
+    const vite = join(root, "node_modules", "vite", "bin", "vite.js");
+    const { code, output } = await runCaptured(process.execPath, [vite, "build"], {
+      cwd: root,
+      env: { ...process.env, NODE_ENV: "production" },
+      timeoutMs: 300_000,
+    });
+    if (code !== 0) throw new PlainError(`the client build failed:\n${lastLines(output)}`);
+    writeFileSync(stamp, wanted);
+  } finally {
+    lock.release();
+  }
+}

@@ -1,0 +1,2 @@
+export function isLoopback(host: string): boolean;
+export function checkSettings(env: Record<string, string | undefined>): void;
