@@ -1,0 +1,73 @@
+import { Dialog as Primitive } from "radix-ui";
+import type { ReactNode } from "react";
+import { Button } from "./button.tsx";
+
+export type DialogProps = {
+  open: boolean;
+  onOpenChange: (open: boolean) => void;
+  title: string;
+  /** One or two sentences read out with the title. */
+  description?: ReactNode;
+  children?: ReactNode;
+  /** Buttons at the foot, the main one last. */
+  actions?: ReactNode;
+  size?: "narrow" | "wide";
+  /** `alertdialog` for questions that must be answered. */
+  role?: "dialog" | "alertdialog";
+  closeLabel?: string;
+};
+
+/**
+ * Modal dialog: focus is held inside and goes back where it came from, Esc closes.
+ * The library's own overlay is left out because it injects a style element, which the
+ * content-security policy refuses; the page is held still by src/styles/base.css instead.
+ */
+export function Dialog({
+  open,
+  onOpenChange,
+  title,
+  description,
+  children,
+  actions,
+  size = "narrow",
+  role = "dialog",
+  closeLabel = "Close",
+}: DialogProps) {
+  return (
+    <Primitive.Root open={open} onOpenChange={onOpenChange}>
+      <Primitive.Portal>
+        <div className="fixed inset-0 z-40 bg-ink/45" aria-hidden="true" />
+        <Primitive.Content
+          role={role}
+          data-dialog="open"
+          {...(description ? {} : { "aria-describedby": undefined })}
+          className={`fixed inset-x-0 bottom-0 z-50 mx-auto flex max-h-[92dvh] w-full flex-col
+            border-t-2 border-ink bg-paper text-ink sm:bottom-auto sm:top-[8vh] sm:max-h-[84vh]
+            sm:border ${size === "wide" ? "sm:max-w-3xl" : "sm:max-w-lg"}`}
+        >
+          <div className="flex items-start justify-between gap-4 border-b border-rule px-5 py-3">
+            <Primitive.Title className="text-lg">{title}</Primitive.Title>
+            <Primitive.Close asChild>
+              <Button variant="plain" size="small">
+                {closeLabel}
+              </Button>
+            </Primitive.Close>
+          </div>
+          <div className="min-h-0 overflow-y-auto px-5 py-4">
+            {description ? (
+              <Primitive.Description asChild>
+                <div className="mb-3 text-ink-2">{description}</div>
+              </Primitive.Description>
+            ) : null}
+            {children}
+          </div>
+          {actions ? (
+            <div className="flex flex-wrap justify-end gap-2 border-t border-rule px-5 py-3">
+              {actions}
+            </div>
+          ) : null}
+        </Primitive.Content>
+      </Primitive.Portal>
+    </Primitive.Root>
+  );
+}
