@@ -1,0 +1,91 @@
+/**
+ * Every error the server can answer with: status, and the words shown to a person. Codes are
+ * stable and never reused; field codes (in `errors[]`) come from `FIELD_ERRORS`.
+ */
+export const ERRORS = {
+  not_signed_in: { status: 401, title: "Sign in to continue" },
+  sign_in_failed: { status: 401, title: "E-mail or password is not right" },
+  session_ended: { status: 401, title: "Your session has ended; sign in again" },
+  origin_refused: { status: 403, title: "The request did not come from this site" },
+  role_refused: { status: 403, title: "Your acting role cannot do this" },
+  not_found: { status: 404, title: "Not found, or not yours to see" },
+  method_not_allowed: { status: 405, title: "This address does not take that method" },
+  idempotency_key_required: { status: 400, title: "The request needs an Idempotency-Key" },
+  malformed_request: { status: 400, title: "The request could not be read" },
+  stale_version: { status: 409, title: "Someone changed this record meanwhile" },
+  conflict: { status: 409, title: "This clashes with what is on record" },
+  in_flight: { status: 409, title: "The same request is still being worked on" },
+  too_large: { status: 413, title: "The request is too large" },
+  json_required: { status: 415, title: "The request must be JSON" },
+  invalid: { status: 422, title: "Some fields need another look" },
+  key_reused: { status: 422, title: "This Idempotency-Key was used for another request" },
+  too_many_attempts: { status: 429, title: "Too many attempts; wait and try again" },
+  internal: { status: 500, title: "Something went wrong on our side" },
+  unavailable: { status: 503, title: "The service is busy or restarting; try again shortly" },
+} as const;
+export type ErrorCode = keyof typeof ERRORS;
+
+/** Codes that stand beside a field. */
+export const FIELD_ERRORS = {
+  required: "Needed",
+  too_long: "Too long",
+  too_short: "Too short",
+  too_many: "Too many",
+  too_small: "Too small",
+  too_big: "Too large",
+  not_a_number: "Not a number",
+  not_a_whole_number: "Give a whole number",
+  not_a_day: "Not a calendar day (YYYY-MM-DD, or YYYY-MM)",
+  not_an_instant: "Not a date and time",
+  out_of_range: "Outside the years 1900–2100",
+  in_future: "In the future",
+  not_in_list: "Not one of the choices",
+  not_text: "Not readable text",
+  bad_character: "Contains a character that cannot be kept",
+  not_an_email: "Not an e-mail address",
+  not_a_phone: "Not a telephone number",
+  not_an_id: "Not an identifier",
+  not_known: "Not on record",
+  unknown_key: "Not a field of this form",
+  wrong_type: "Not of the right kind",
+  not_sortable: "This cannot be sorted by",
+  last_before_first: "The last day is before the first",
+  max_below_min: "The largest number is below the smallest",
+  self_contact: "A person cannot be a contact of themselves",
+  repeated: "Already in this list",
+  result_before_specimen: "The result is before the specimen",
+  not_a_zone: "Not a time zone",
+  account_unknown: "No account with this e-mail",
+  demo_only: "Demo accounts can only join an investigation marked invented",
+  already_member: "Already holds this role here",
+  invalid: "Not valid",
+  required_column: "This column is missing",
+  unknown_column: "Not a column of this file",
+  duplicate_column: "This column appears twice",
+  ragged_row: "This row has too few or too many cells",
+  duplicate_ref: "This reference appears twice in the file",
+  unknown_ref: "This reference is not on record",
+  named_by_other: "Must be one of the two references, or blank",
+  encoding: "The file is not UTF-8 text",
+  not_csv: "This is not a CSV file",
+  empty_file: "The file has no rows",
+  too_many_rows: "Too many rows",
+  unclosed_quote: "A quotation mark is not closed",
+} as const;
+export type FieldErrorCode = keyof typeof FIELD_ERRORS;
+
+/** One field's error: a dotted path and a code. Values are never echoed. */
+export interface FieldError {
+  path: string;
+  code: FieldErrorCode;
+}
+
+/** The body of every error (RFC 9457, media type application/problem+json). */
+export interface Problem {
+  type: string;
+  title: string;
+  status: number;
+  code: ErrorCode;
+  instance: string;
+  errors?: FieldError[];
+}
