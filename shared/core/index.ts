@@ -12,6 +12,7 @@ export { density, possiblePairs } from "./measures/density.ts";
 export { isolates } from "./measures/isolates.ts";
 export { largestShare } from "./measures/largest-share.ts";
 export { meanDegree } from "./measures/mean-degree.ts";
+export { meanDegreeInterviewed } from "./measures/mean-degree-interviewed.ts";
 export type { Measured, UndefinedReason } from "./measures/measured.ts";
 export {
   type NetworkReport,
@@ -22,7 +23,6 @@ export { recall } from "./measures/recall.ts";
 export {
   FEWEST_FOR_VERDICT,
   FULL_COVERAGE,
-  type RecallCorrected,
   type Threshold,
   type ThresholdFigures,
   type ThresholdInput,

@@ -29,19 +29,10 @@ export type ThresholdInput = {
   readonly recall: number | null;
 };
 
-/** The figure corrected for recall, shown beside the uncorrected one. q is taken as known. */
-export type RecallCorrected = {
-  readonly recall: number;
-  readonly pairsPerPerson: number;
-  readonly pairsPerPersonInterval: Interval;
-};
-
 export type ThresholdFigures = {
   readonly population: ThresholdPopulation;
   readonly n: number;
   readonly interviewed: number;
-  /** i/n; 1 when complete; null without people. */
-  readonly coverage: number | null;
   readonly pairsPerPerson: number | null;
   readonly pairsPerPersonInterval: Interval | null;
   /** w of the critical window 1 ± w. */
@@ -50,9 +41,11 @@ export type ThresholdFigures = {
   readonly expectedGiantShare: number | null;
   readonly verdict: Verdict | null;
   /** The verdicts that remain open when `not_distinguishable`; else empty. */
-  readonly openVerdicts: readonly Region[];
-  /** Present only when a recall estimate was given for interviewed people. */
-  readonly corrected?: RecallCorrected;
+  readonly openVerdicts: Region[];
+  /** q; this and the next only when a recall estimate was given for interviewed people. */
+  readonly recall?: number;
+  /** `pairsPerPerson` corrected for recall, q taken as known; shown beside it, never instead. */
+  readonly pairsPerPersonRecallCorrected?: number;
 };
 
 export type Threshold = ThresholdFigures & {
@@ -73,31 +66,42 @@ function check(input: ThresholdInput, interviewed: number, eligible: number): vo
   }
 }
 
-/** m_obs ÷ (C(i,2)·q2 + i(n − i)·q), q2 = 1 − (1 − q)², as pairs per person. */
-function correctForRecall(
-  recall: number,
-  n: number,
-  interviewed: number,
-  eligible: number,
-  c: number,
-  interval: Interval,
-): RecallCorrected {
-  const both = 1 - (1 - recall) ** 2;
-  const seen = possiblePairs(interviewed) * both + interviewed * (n - interviewed) * recall;
-  const factor = eligible / seen;
-  return {
-    recall,
-    pairsPerPerson: c * factor,
-    pairsPerPersonInterval: [interval[0] * factor, interval[1] * factor],
-  };
+/**
+ * What a figure must be multiplied by to allow for recall q: the eligible pairs X over the pairs
+ * that would be told of them, C(i,2)·q2 + i(n − i)·q with q2 = 1 − (1 − q)².
+ */
+function recallFactor(q: number, n: number, i: number, eligible: number): number {
+  const both = 1 - (1 - q) ** 2;
+  return eligible / (possiblePairs(i) * both + i * (n - i) * q);
 }
 
 function withheldBecause(input: ThresholdInput, interviewed: number): UndefinedReason | null {
   const { n } = input;
   if (n < FEWEST_FOR_VERDICT || interviewed < FEWEST_FOR_VERDICT) return "too_few_people";
   if (!input.presetWindow) return "free_range";
-  if (input.coverageRequired && interviewed < FULL_COVERAGE * n) return "coverage_low";
+  if (input.coverageRequired && interviewed / n < FULL_COVERAGE) return "coverage_low";
   return null;
+}
+
+/** The figures when no pair could have been seen: no people, one person, or no interview. */
+function withoutPairs(n: number, i: number, reasons: Record<string, UndefinedReason>) {
+  const why = n === 0 ? "no_people" : i === 0 ? "no_one_interviewed" : "one_person";
+  const zero = why === "one_person" ? 0 : null;
+  reasons.pairsPerPersonInterval = why;
+  if (zero === null) {
+    reasons.pairsPerPerson = why;
+    reasons.expectedGiantShare = why;
+  }
+  if (n === 0) reasons.criticalHalfWidth = why;
+  return {
+    pairsPerPerson: zero,
+    pairsPerPersonInterval: null,
+    criticalHalfWidth: n === 0 ? null : 1 / Math.cbrt(n),
+    expectedGiantShare: zero,
+    verdict: null,
+    openVerdicts: [],
+    reasons,
+  };
 }
 
 /**
@@ -112,13 +116,14 @@ function withheldBecause(input: ThresholdInput, interviewed: number): UndefinedR
  *
  * Verdict by C.2.4; withheld (null) in this order: `too_few_people` (n or i below 30), `free_range`,
  * `coverage_low`. Readings chosen where the method leaves room:
- * - without a recall estimate "below" becomes `not_distinguishable` (`recall_unknown`), and every
- *   region is open, since the figure is a lower bound;
+ * - without a recall estimate the figure is a lower bound: "below" becomes `not_distinguishable`
+ *   (`recall_unknown`), and whatever lies above the lower limit stays open; the other verdicts are
+ *   given as the interval gives them;
  * - with one, "below" must hold for the corrected upper limit too, else `not_distinguishable`
- *   (`recall_low`) with the regions between the raw lower and the corrected upper limit open;
+ *   (`recall_low`), and the open regions reach up to the corrected upper limit;
  * - a complete network needs no recall estimate, and its `interviewed` is n;
  * - S(c) is always given when c is; it may stand beside the recorded largest share only when
- *   `coverage` is at least 0.9.
+ *   i/n is at least `FULL_COVERAGE`.
  *
  * Edge cases: n = 0 all null (`no_people`); n = 1 complete c = 0 without interval (`one_person`);
  * nobody interviewed → c null (`no_one_interviewed`).
@@ -136,56 +141,26 @@ export function threshold(input: ThresholdInput): Threshold {
   const reasons: Record<string, UndefinedReason> = {};
   const withheld = withheldBecause(input, i);
   if (withheld) reasons.verdict = withheld;
-  const shared = { population, n, interviewed: i, coverage: n === 0 ? null : i / n };
-  if (n === 0) reasons.coverage = "no_people";
+  const shared = { population, n, interviewed: i };
 
-  if (eligible === 0) {
-    const why = n === 0 ? "no_people" : i === 0 ? "no_one_interviewed" : "one_person";
-    const zero = why === "one_person" ? 0 : null;
-    reasons.pairsPerPersonInterval = why;
-    if (zero === null) {
-      reasons.pairsPerPerson = why;
-      reasons.expectedGiantShare = why;
-    }
-    if (n === 0) reasons.criticalHalfWidth = why;
-    return {
-      ...shared,
-      pairsPerPerson: zero,
-      pairsPerPersonInterval: null,
-      criticalHalfWidth: n === 0 ? null : 1 / Math.cbrt(n),
-      expectedGiantShare: zero,
-      verdict: null,
-      openVerdicts: [],
-      reasons,
-    };
-  }
+  if (eligible === 0) return { ...shared, ...withoutPairs(n, i, reasons) };
 
   const w = 1 / Math.cbrt(n);
   const c = ((n - 1) * countedPairs) / eligible;
   const [lower, upper] = wilsonInterval(countedPairs, eligible) ?? [0, 1];
   const interval: Interval = [lower * (n - 1), upper * (n - 1)];
-  const corrected =
-    complete || input.recall === null
-      ? null
-      : correctForRecall(input.recall, n, i, eligible, c, interval);
+  const recall = complete ? null : input.recall;
+  const factor = recall === null ? 1 : recallFactor(recall, n, i, eligible);
 
-  let verdict: Verdict | null = null;
-  let openVerdicts: Region[] = [];
-  if (!withheld) {
-    verdict = verdictOf(interval, w);
-    if (verdict === "not_distinguishable") openVerdicts = regionsMet(interval, w);
-    if (verdict === "below" && !complete) {
-      if (corrected === null) {
-        verdict = "not_distinguishable";
-        openVerdicts = ["below", "inside_window", "above"];
-        reasons.verdict = "recall_unknown";
-      } else if (corrected.pairsPerPersonInterval[1] >= 1 - w) {
-        verdict = "not_distinguishable";
-        openVerdicts = regionsMet([interval[0], corrected.pairsPerPersonInterval[1]], w);
-        reasons.verdict = "recall_low";
-      }
-    }
+  // How high the true figure may reach: without a recall estimate c is only a lower bound.
+  const top = recall === null && !complete ? Number.POSITIVE_INFINITY : interval[1] * factor;
+
+  let verdict = withheld ? null : verdictOf(interval, w);
+  if (verdict === "below" && top >= 1 - w) {
+    verdict = "not_distinguishable";
+    reasons.verdict = recall === null ? "recall_unknown" : "recall_low";
   }
+  const openVerdicts = verdict === "not_distinguishable" ? regionsMet([interval[0], top], w) : [];
   return {
     ...shared,
     pairsPerPerson: c,
@@ -194,7 +169,7 @@ export function threshold(input: ThresholdInput): Threshold {
     expectedGiantShare: lambertGiantShare(c),
     verdict,
     openVerdicts,
-    ...(corrected ? { corrected } : {}),
+    ...(recall === null ? {} : { recall, pairsPerPersonRecallCorrected: c * factor }),
     reasons,
   };
 }

@@ -2,7 +2,7 @@
 export const Z_95 = 1.959963984540054;
 
 /** Lower and upper limit. */
-export type Interval = readonly [number, number];
+export type Interval = [number, number];
 
 /**
  * Wilson score interval for a proportion, 95 %.
