@@ -1,0 +1,43 @@
+import { defineConfig } from "vitest/config";
+
+const common = {
+  setupFiles: ["tests/support/guards.ts"],
+  restoreMocks: true,
+  unstubEnvs: true,
+  unstubGlobals: true,
+};
+
+export default defineConfig({
+  test: {
+    maxWorkers: 2,
+    passWithNoTests: false,
+    projects: [
+      {
+        test: {
+          ...common,
+          name: "core",
+          include: ["tests/core/**/*.test.ts", "tests/architecture/**/*.test.ts"],
+          testTimeout: 20_000,
+        },
+      },
+      {
+        test: {
+          ...common,
+          name: "client",
+          environment: "jsdom",
+          include: ["tests/client/**/*.test.{ts,tsx}"],
+        },
+      },
+      {
+        test: {
+          ...common,
+          name: "api",
+          include: ["tests/{features,policy,server}/**/*.test.ts"],
+          globalSetup: ["tests/support/global-setup.ts"],
+          testTimeout: 30_000,
+          hookTimeout: 60_000,
+        },
+      },
+    ],
+  },
+});
