@@ -30,7 +30,7 @@ function faulty(line: number, column: string, code: FieldErrorCode): CsvTable {
 /** Line breaks inside quoted cells; they tell how far above its last line a row begins. */
 function innerLines(cells: readonly string[]): number {
   let count = 0;
-  for (const cell of cells) count += cell.match(/\r\n|\r|\n/g)?.length ?? 0;
+  for (const cell of cells) count += cell.split("\n").length - 1;
   return count;
 }
 
@@ -62,11 +62,11 @@ export function readCsv(bytes: Uint8Array, required: readonly string[]): CsvTabl
   }
   let parsed: ParsedRow[];
   try {
-    parsed = parse(text, {
+    // A file edited on two systems mixes line ends; csv-parse would count some of them twice.
+    parsed = parse(text.replace(/\r\n?/g, "\n"), {
       bom: true,
       info: true,
-      // A file edited on two systems mixes line ends; detection would settle on the first.
-      record_delimiter: ["\r\n", "\n", "\r"],
+      record_delimiter: "\n",
       relax_column_count: true,
       skip_empty_lines: true,
     }) as unknown as ParsedRow[];
