@@ -1,0 +1,112 @@
+import { sql } from "drizzle-orm";
+import {
+  bigint,
+  boolean,
+  check,
+  index,
+  integer,
+  text,
+  uniqueIndex,
+  uuid,
+} from "drizzle-orm/pg-core";
+import { at, core, recordedAt } from "./shared.ts";
+
+export const investigation = core.table("investigation", {
+  id: uuid("id").primaryKey(),
+  name: text("name").notNull(),
+  invented: boolean("invented").notNull().default(false),
+  timeZone: text("time_zone").notNull(),
+  countryCode: text("country_code").notNull(),
+  populationAtRisk: integer("population_at_risk"),
+  infectiousBefore: integer("infectious_before").notNull(),
+  infectiousAfter: integer("infectious_after").notNull(),
+  incubationMin: integer("incubation_min").notNull(),
+  incubationMax: integer("incubation_max").notNull(),
+  monitoringDays: integer("monitoring_days").notNull(),
+  caseDefinitionVersion: integer("case_definition_version").notNull().default(1),
+  graphVersion: bigint("graph_version", { mode: "number" }).notNull().default(0),
+  nextNumber: integer("next_number").notNull().default(1),
+  version: integer("version").notNull().default(1),
+  recordedAt: recordedAt(),
+  recordedBy: uuid("recorded_by"),
+});
+
+export const caseDefinition = core.table(
+  "case_definition",
+  {
+    id: uuid("id").primaryKey(),
+    investigationId: uuid("investigation_id")
+      .notNull()
+      .references(() => investigation.id),
+    number: integer("number").notNull(),
+    wording: text("wording").notNull(),
+    recordedAt: recordedAt(),
+    recordedBy: uuid("recorded_by"),
+  },
+  (t) => [uniqueIndex("case_definition_number").on(t.investigationId, t.number)],
+);
+
+export const team = core.table("team", {
+  id: uuid("id").primaryKey(),
+  investigationId: uuid("investigation_id")
+    .notNull()
+    .references(() => investigation.id),
+  name: text("name").notNull(),
+  recordedAt: recordedAt(),
+});
+
+export const member = core.table(
+  "member",
+  {
+    id: uuid("id").primaryKey(),
+    investigationId: uuid("investigation_id")
+      .notNull()
+      .references(() => investigation.id),
+    accountId: uuid("account_id").notNull(),
+    role: text("role").notNull(),
+    teamId: uuid("team_id").references(() => team.id),
+    since: at("since").notNull().defaultNow(),
+    endedAt: at("ended_at"),
+    recordedBy: uuid("recorded_by"),
+  },
+  (t) => [
+    uniqueIndex("member_live")
+      .on(t.investigationId, t.accountId, t.role)
+      .where(sql`${t.endedAt} is null`),
+    index("member_account").on(t.accountId),
+    check("member_role", sql`${t.role} in ('tracer','supervisor','epidemiologist','officer')`),
+  ],
+);
+
+/** What happened to the graph, in order; the live graphs follow it by version. */
+export const graphChange = core.table(
+  "graph_change",
+  {
+    id: bigint("id", { mode: "number" }).primaryKey().generatedAlwaysAsIdentity(),
+    investigationId: uuid("investigation_id")
+      .notNull()
+      .references(() => investigation.id),
+    graphVersion: bigint("graph_version", { mode: "number" }).notNull(),
+    // person | pair | exposure | interview | classification | withdrawn | bulk
+    kind: text("kind").notNull(),
+    personA: uuid("person_a"),
+    personB: uuid("person_b"),
+    recordedAt: recordedAt(),
+  },
+  (t) => [index("graph_change_version").on(t.investigationId, t.graphVersion)],
+);
+
+/** The message of each event; the dispatcher claims undone rows. */
+export const outbox = core.table(
+  "outbox",
+  {
+    id: bigint("id", { mode: "number" }).primaryKey().generatedAlwaysAsIdentity(),
+    investigationId: uuid("investigation_id").notNull(),
+    topic: text("topic").notNull(),
+    entityId: uuid("entity_id"),
+    graphVersion: bigint("graph_version", { mode: "number" }),
+    recordedAt: recordedAt(),
+    doneAt: at("done_at"),
+  },
+  (t) => [index("outbox_undone").on(t.id).where(sql`${t.doneAt} is null`)],
+);
