@@ -10,11 +10,13 @@ import {
   realpathSync,
   renameSync,
   rmdirSync,
+  rmSync,
   statSync,
 } from "node:fs";
 import { join } from "node:path";
 import { writeWhole } from "./locks.mjs";
 import { PlainError, say } from "./plain.mjs";
+import { endPostmaster } from "./postgres-process.mjs";
 import { makeDataFolder } from "./project.mjs";
 
 /** Present once initdb and the first database are complete; without it a cluster is half-made. */
@@ -66,8 +68,12 @@ function outsidePath(real) {
   return `/var/lib/strandline-${key}`;
 }
 
-function makeOutside(pointer, real, account) {
+async function makeOutside(pointer, real, account, throwAway) {
   const path = outsidePath(real);
+  if (existsSync(path)) {
+    await endPostmaster(join(path, "data"));
+    if (throwAway) rmSync(path, { recursive: true, force: true });
+  }
   if (existsSync(path)) {
     // Its keys and passwords went with the old data folder; a database is never thrown away.
     const kept = `${path}-kept-${Date.now()}`;
@@ -92,9 +98,9 @@ export function findPlace(dir) {
 /**
  * The folder of the cluster for a data folder, made when missing, and the account that runs it.
  * A data folder closed to that account gets a folder outside, keyed by a hash of its path.
- * @returns {{folder: string, data: string, account: {uid?: number, gid?: number}}}
+ * @returns {Promise<{folder: string, data: string, account: {uid?: number, gid?: number}}>}
  */
-export function settlePlace(dir) {
+export async function settlePlace(dir, { throwAway = false } = {}) {
   const real = realpathSync(makeDataFolder(dir));
   const pointer = join(real, "postgres-at.json");
   const inside = join(real, "postgres");
@@ -131,5 +137,5 @@ export function settlePlace(dir) {
     );
   }
   rmdirSync(inside);
-  return place(makeOutside(pointer, real, account), account);
+  return place(await makeOutside(pointer, real, account, throwAway), account);
 }

@@ -18,7 +18,8 @@ import { setTimeout as sleep } from "node:timers/promises";
 import { writeWhole } from "./locks.mjs";
 import { PlainError } from "./plain.mjs";
 import { give, MARKER } from "./postgres-place.mjs";
-import { lastLines, processArguments, processIdentity, runCaptured } from "./processes.mjs";
+import { readPostmaster } from "./postgres-process.mjs";
+import { lastLines, runCaptured } from "./processes.mjs";
 
 export const ADMIN = "strandline_admin";
 export const DATABASE = "strandline";
@@ -79,21 +80,6 @@ export function answers(port) {
     socket.on("connect", () => socket.write(Buffer.from([0, 0, 0, 8, 4, 210, 22, 47])));
     socket.on("data", (data) => done(data[0] === 0x4e || data[0] === 0x53));
   });
-}
-
-/** What postmaster.pid says, if the process it names is really the server of this folder. */
-export function readPostmaster(data) {
-  let lines;
-  try {
-    lines = readFileSync(join(data, "postmaster.pid"), "utf8").split("\n");
-  } catch (error) {
-    if (error.code === "ENOENT") return undefined;
-    throw error;
-  }
-  const pid = Math.abs(Number(lines[0]));
-  const identity = processIdentity(pid);
-  if (!identity || !processArguments(pid).includes(data)) return undefined;
-  return { pid, identity, port: Number(lines[3]), ready: lines[7]?.trim() === "ready" };
 }
 
 /** The server once it takes connections; undefined when it is not coming up. */

@@ -5,6 +5,7 @@ import { join } from "node:path";
 import { takeLock } from "./locks.mjs";
 import { PlainError } from "./plain.mjs";
 import { findPlace, give, MARKER, settlePlace } from "./postgres-place.mjs";
+import { endPostmaster, readPostmaster } from "./postgres-process.mjs";
 import { ensurePostgres } from "./postgres-programs.mjs";
 import {
   ADMIN,
@@ -12,11 +13,10 @@ import {
   DATABASE,
   HOST,
   makeCluster,
-  readPostmaster,
   startFresh,
   waitReady,
 } from "./postgres-server.mjs";
-import { endProcess, isAlive, processIdentity } from "./processes.mjs";
+import { isAlive, processIdentity } from "./processes.mjs";
 
 export { freePort } from "./postgres-server.mjs";
 
@@ -54,7 +54,7 @@ export async function startCluster(dir, { port, throwAway = false } = {}) {
   // The first look for programs installs them, and with them the user the place may belong to.
   const before = findPlace(dir);
   const server = await ensurePostgres(before && madeWith(before.data));
-  const place = settlePlace(dir);
+  const place = await settlePlace(dir, { throwAway });
   const lock = await takeLock(join(place.folder, "lock"), () => 180_000);
   try {
     let found = await waitReady(place.data, 120_000, () => false);
@@ -99,14 +99,7 @@ export async function stopCluster(dir, { force = false } = {}) {
   try {
     rmSync(join(leaseFolder(place.folder), processIdentity(process.pid)), { force: true });
     if (liveLeases(place.folder).length > 0 && !force) return false;
-    const found = readPostmaster(place.data);
-    if (!found) return true;
-    // Fast, then immediate shutdown; the next start recovers from either.
-    return await endProcess(found.identity, [
-      ["SIGINT", 30_000],
-      ["SIGQUIT", 10_000],
-      ["SIGKILL", 5_000],
-    ]);
+    return await endPostmaster(place.data);
   } finally {
     lock.release();
   }
