@@ -1,0 +1,99 @@
+-- Who is asking, inside one transaction. The nonce in app.ctx was made by the server at sign-in or
+-- at a change of role and stands in auth.ctx_live, which no role login can read; it counts only for
+-- the login of its own role and only while the membership lasts.
+create or replace function core.ctx(out account_id uuid, out investigation_id uuid, out role text)
+language sql stable security definer set search_path = '' as $$
+  select c.account_id, c.investigation_id, c.role
+  from auth.ctx_live c
+  join core.member m on m.account_id = c.account_id and m.investigation_id = c.investigation_id
+    and m.role = c.role and m.ended_at is null
+  where c.nonce = nullif(current_setting('app.ctx', true), '')::uuid
+    and c.expires_at > now()
+    and session_user = ('strandline_' || c.role)
+$$;
+
+create or replace function core.ctx_user() returns uuid
+language sql stable security definer set search_path = '' as $$ select account_id from core.ctx() $$;
+
+create or replace function core.ctx_investigation() returns uuid
+language sql stable security definer set search_path = '' as $$ select investigation_id from core.ctx() $$;
+
+create or replace function core.ctx_role() returns text
+language sql stable security definer set search_path = '' as $$ select role from core.ctx() $$;
+
+-- People assigned to the acting tracer or one of their teams.
+create or replace function core.ctx_held() returns uuid[]
+language sql stable security definer set search_path = '' as $$
+  select coalesce(array_agg(p.id), '{}')
+  from core.ctx() c
+  join core.person p on p.investigation_id = c.investigation_id and p.withdrawn_at is null
+  where p.assigned_account_id = c.account_id
+     or p.assigned_team_id in (
+       select m.team_id from core.member m
+       where m.account_id = c.account_id and m.investigation_id = c.investigation_id
+         and m.role = c.role and m.ended_at is null and m.team_id is not null)
+$$;
+
+-- The tracer's scope: held people and those one contact pair away.
+create or replace function core.ctx_people() returns uuid[]
+language sql stable security definer set search_path = '' as $$
+  with held as (select core.ctx_held() as ids)
+  select coalesce(array_agg(distinct id), '{}') from (
+    select unnest(ids) as id from held
+    union all
+    select cp.person_b from held, core.contact_pair cp
+    where cp.person_a = any (ids) and cp.withdrawn_at is null
+    union all
+    select cp.person_a from held, core.contact_pair cp
+    where cp.person_b = any (ids) and cp.withdrawn_at is null
+  ) scope
+$$;
+
+-- People whose identity a tracer may open: held people, and contacts (not cases) of held cases.
+-- A case seen from a held contact stays a study number: a contact is not told who the case is.
+create or replace function core.ctx_named_people() returns uuid[]
+language sql stable security definer set search_path = '' as $$
+  with held as (select core.ctx_held() as ids),
+  cases as (
+    select coalesce(array_agg(p.id), '{}') as ids from held, core.person p
+    where p.id = any (held.ids) and p.classification in ('confirmed', 'probable', 'suspected'))
+  select coalesce(array_agg(distinct id), '{}') from (
+    select unnest(ids) as id from held
+    union all
+    select p.id from cases, core.contact_pair cp, core.person p
+    where cp.person_a = any (cases.ids) and cp.withdrawn_at is null and p.id = cp.person_b
+      and (p.classification is null or p.classification in ('contact', 'not_a_case'))
+    union all
+    select p.id from cases, core.contact_pair cp, core.person p
+    where cp.person_b = any (cases.ids) and cp.withdrawn_at is null and p.id = cp.person_a
+      and (p.classification is null or p.classification in ('contact', 'not_a_case'))
+  ) scope
+$$;
+
+-- May the acting person attach something to this person? In scope, or made by them just now.
+create or replace function core.ctx_can_link(p_person uuid) returns boolean
+language sql stable security definer set search_path = '' as $$
+  select exists (
+    select 1 from core.ctx() c
+    join core.person p on p.id = p_person and p.investigation_id = c.investigation_id
+    where c.role in ('supervisor', 'officer')
+       or p.recorded_by = c.account_id
+       or p.id = any ((select core.ctx_people())::uuid[]))
+$$;
+
+create or replace function core.ctx_can_tell(p_pair uuid) returns boolean
+language sql stable security definer set search_path = '' as $$
+  select exists (
+    select 1 from core.contact_pair cp
+    where cp.id = p_pair and core.ctx_can_link(cp.person_a) and core.ctx_can_link(cp.person_b))
+$$;
+
+-- Identity scope of the acting role, as one predicate.
+create or replace function core.ctx_may_name(p_person uuid) returns boolean
+language sql stable security definer set search_path = '' as $$
+  select exists (
+    select 1 from core.ctx() c
+    join core.person p on p.id = p_person and p.investigation_id = c.investigation_id
+    where c.role in ('supervisor', 'officer')
+       or (c.role = 'tracer' and p.id = any ((select core.ctx_named_people())::uuid[])))
+$$;

@@ -1,0 +1,167 @@
+import { IDENTITY_FIELDS } from "../../../shared/fields/person.ts";
+import { FIELDS, openableKeys, readableColumns } from "../../../shared/fields.ts";
+import { ROLES, type Role } from "../../../shared/roles.ts";
+import { ALL_TABLES, CORE_TABLES, loginOf, WRITES } from "./policies.ts";
+
+const ROLE_LOGINS = ROLES.map(loginOf).join(", ");
+const LOGINS = `${ROLE_LOGINS}, ${loginOf("auth")}, ${loginOf("system")}`;
+
+function columns(list: readonly string[]): string {
+  return list.map((column) => `"${column}"`).join(", ");
+}
+
+/** Every column of a table, as the registry lists it. */
+function listed(table: string): string[] {
+  return FIELDS.filter((field) => field.table === table).map((field) => field.column);
+}
+
+/** Functions a role's login may call; everything else is revoked from everyone. */
+const FUNCTIONS: Record<string, readonly Role[]> = {
+  "core.ctx()": ROLES,
+  "core.ctx_user()": ROLES,
+  "core.ctx_investigation()": ROLES,
+  "core.ctx_role()": ROLES,
+  "core.ctx_held()": ["tracer"],
+  "core.ctx_people()": ["tracer"],
+  "core.ctx_named_people()": ["tracer"],
+  "core.ctx_can_link(uuid)": ["tracer", "supervisor", "officer"],
+  "core.ctx_can_tell(uuid)": ["tracer", "supervisor", "officer"],
+  "core.ctx_may_name(uuid)": ["tracer", "supervisor", "officer"],
+  "core.bump_graph()": ["tracer", "supervisor", "officer"],
+  "core.next_numbers(integer)": ["tracer", "supervisor", "officer"],
+  "core.announce(text, uuid, bigint)": ["tracer", "supervisor", "officer"],
+  "auth.claim_key(uuid, text, text)": ["tracer", "supervisor", "officer"],
+  "auth.keep_receipt(uuid, smallint, jsonb)": ["tracer", "supervisor", "officer"],
+  "identity.open_people(uuid[], text[], text)": ["tracer", "supervisor", "officer"],
+  "identity.open_places(uuid[])": ["tracer", "supervisor"],
+  "identity.find_people(bytea[], bytea[], integer)": ["tracer", "supervisor"],
+  "identity.flag_hidden_matches(uuid, bytea[], bytea[])": ["tracer", "supervisor"],
+  "identity.people_by_ref(bytea[])": ["supervisor", "officer"],
+  "identity.ref_taken(bytea, uuid)": ["tracer", "supervisor", "officer"],
+  "identity.open_for_import(uuid, uuid[])": ["supervisor", "officer"],
+  "identity.households_by_token(bytea[])": ["tracer", "supervisor", "officer"],
+  "identity.put_place(uuid, bytea, bytea)": ["tracer", "supervisor", "officer"],
+  "identity.wrapped_key()": ["tracer", "supervisor", "officer"],
+  "identity.read_draft(uuid)": ["tracer", "supervisor"],
+  "identity.keep_draft(uuid, bytea, integer)": ["tracer", "supervisor"],
+  "identity.drop_draft(uuid)": ["tracer", "supervisor"],
+  "identity.keep_stage(uuid, integer, bytea)": ["supervisor", "officer"],
+  "identity.read_stage(uuid)": ["supervisor", "officer"],
+  "identity.drop_stage(uuid)": ["supervisor", "officer"],
+  "identity.put_people(jsonb, jsonb, smallint[])": ["tracer", "supervisor", "officer"],
+};
+
+/** Masked and coarse columns a role gets from `identity.person`, without any ciphertext. */
+export function maskedColumns(role: Role): string[] {
+  const out: string[] = [];
+  for (const field of IDENTITY_FIELDS) {
+    const access = field.access[role];
+    if (field.masked && access !== "none") out.push(field.masked.column);
+    if (field.coarse && access !== "none") out.push(field.coarse.column);
+  }
+  return out;
+}
+
+/** Generated views: one of masked identity per role that has any, and the members with their names. */
+export function views(): string[] {
+  const out = [
+    "drop schema if exists views cascade",
+    "create schema views authorization strandline_owner",
+  ];
+  for (const role of ROLES) {
+    const masked = maskedColumns(role);
+    if (masked.length === 0) continue;
+    const scope =
+      role === "tracer" ? " and person_id = any ((select core.ctx_named_people())::uuid[])" : "";
+    out.push(
+      `create view views.person_${role} with (security_barrier) as
+       select person_id, ${columns(masked)} from identity.person
+       where investigation_id = (select core.ctx_investigation())
+         and (select core.ctx_role()) = '${role}'${scope}`,
+    );
+  }
+  out.push(
+    `create view views.member with (security_barrier) as
+     select m.id, m.account_id, a.display_name, a.email, m.role, t.name as team, m.since, m.ended_at
+     from core.member m join auth.account a on a.id = m.account_id
+     left join core.team t on t.id = m.team_id
+     where m.investigation_id = (select core.ctx_investigation())`,
+    `create view views.account_of_email with (security_barrier) as
+     select a.id, lower(a.email) as email, a.demo from auth.account a where a.disabled_at is null
+       and (select core.ctx_role()) in ('supervisor', 'officer')`,
+  );
+  return out;
+}
+
+/** Rights of the logins, from the field registry; whatever was granted before is taken back first. */
+export function grants(): string[] {
+  const out: string[] = [];
+  for (const table of ALL_TABLES) {
+    out.push(`alter table ${table} owner to strandline_owner`);
+    // Column rights fall with the table's own, so this clears both.
+    out.push(`revoke all on ${table} from public, ${LOGINS}`);
+  }
+  for (const schema of ["core", "identity", "auth", "audit", "views"]) {
+    out.push(`revoke all on schema ${schema} from public, ${LOGINS}`);
+    out.push(`revoke all on all functions in schema ${schema} from public, ${LOGINS}`);
+    out.push(`grant usage on schema ${schema} to strandline_owner`);
+  }
+  out.push(`grant usage on schema core to ${LOGINS}`);
+  out.push(`grant usage on schema audit to ${ROLE_LOGINS}, ${loginOf("auth")}`);
+  out.push(`grant usage on schema auth to ${loginOf("auth")}`);
+  for (const role of ROLES) {
+    const login = loginOf(role);
+    out.push(`grant usage on schema views to ${login}`);
+    // Functions of identity only: its tables carry no right for any role login.
+    if (role !== "epidemiologist") out.push(`grant usage on schema identity, auth to ${login}`);
+    for (const table of CORE_TABLES) {
+      const readable = readableColumns(table, role);
+      if (readable.length > 0)
+        out.push(`grant select (${columns(readable)}) on ${table} to ${login}`);
+      const writes = WRITES[table];
+      if (writes?.insert.includes(role)) {
+        const insertable = listed(table).filter(
+          (column) => !(column === "id" && table === "core.graph_change"),
+        );
+        out.push(`grant insert (${columns(insertable)}) on ${table} to ${login}`);
+      }
+      if (writes?.update?.roles.includes(role)) {
+        out.push(`grant update (${columns(writes.update.columns)}) on ${table} to ${login}`);
+      }
+    }
+    if (maskedColumns(role).length > 0)
+      out.push(`grant select on views.person_${role} to ${login}`);
+    out.push(
+      `grant insert (id, investigation_id, account_id, role, action, person_ids, fields, counts) on audit.event to ${login}`,
+    );
+  }
+  for (const role of ["supervisor", "officer"] as const) {
+    out.push(`grant select on views.member, views.account_of_email to ${loginOf(role)}`);
+  }
+  out.push(`grant select on audit.event to ${loginOf("officer")}`);
+  for (const table of CORE_TABLES) out.push(`grant select on ${table} to ${loginOf("system")}`);
+  out.push(`grant update (done_at) on core.outbox to ${loginOf("system")}`);
+  out.push(`grant update (state, progress) on core.import to ${loginOf("system")}`);
+  const auth = loginOf("auth");
+  out.push(
+    `grant select, insert, update, delete on auth.account, auth.session, auth.ctx_live,
+       auth.idempotency, auth.first_officer_link, auth.meta to ${auth}`,
+    `grant select, insert on core.investigation, core.case_definition, identity.data_key to ${auth}`,
+    `grant select, insert, update (ended_at) on core.member to ${auth}`,
+    `grant usage on schema identity to ${auth}`,
+    `grant insert on audit.event to ${auth}`,
+  );
+  for (const [signature, roles] of Object.entries(FUNCTIONS)) {
+    out.push(`alter function ${signature} owner to strandline_owner`);
+    out.push(`revoke all on function ${signature} from public`);
+    if (roles.length > 0)
+      out.push(`grant execute on function ${signature} to ${roles.map(loginOf).join(", ")}`);
+  }
+  out.push("delete from auth.field_right");
+  for (const role of ROLES) {
+    for (const key of openableKeys(role)) {
+      out.push(`insert into auth.field_right (role, field) values ('${role}', '${key}')`);
+    }
+  }
+  return out;
+}

@@ -1,0 +1,263 @@
+import type { Role } from "../../../shared/roles.ts";
+import { ROLES } from "../../../shared/roles.ts";
+
+/** The database login of an application role. */
+export function loginOf(role: Role | "auth" | "system"): string {
+  return `strandline_${role}`;
+}
+
+/** Which roles may add or change rows of a table, and which columns a change may touch. */
+interface Writes {
+  insert: readonly Role[];
+  update?: { roles: readonly Role[]; columns: readonly string[] };
+}
+
+const RECORDERS = ["tracer", "supervisor", "officer"] as const;
+const LEADERS = ["supervisor", "officer"] as const;
+
+export const WRITES: Record<string, Writes> = {
+  "core.person": {
+    insert: RECORDERS,
+    update: {
+      roles: RECORDERS,
+      columns: [
+        "sex",
+        "age_band",
+        "area",
+        "occupation",
+        "household_id",
+        "classification",
+        "case_definition_version",
+        "onset_date",
+        "specimen_date",
+        "result_date",
+        "result",
+        "report_date",
+        "interview_date",
+        "interviewed",
+        "interview_state",
+        "isolation_date",
+        "outcome",
+        "outcome_date",
+        "became_case",
+        "assigned_account_id",
+        "assigned_team_id",
+        "version",
+        "updated_at",
+        "withdrawn_at",
+      ],
+    },
+  },
+  "core.classification": { insert: RECORDERS },
+  "core.test_result": {
+    insert: RECORDERS,
+    update: {
+      roles: RECORDERS,
+      columns: [
+        "specimen_date",
+        "kind",
+        "result",
+        "result_date",
+        "result_at",
+        "version",
+        "withdrawn_at",
+      ],
+    },
+  },
+  "core.interview": {
+    insert: RECORDERS,
+    update: { roles: RECORDERS, columns: ["graph_version", "withdrawn_at"] },
+  },
+  "core.contact_pair": {
+    insert: RECORDERS,
+    update: { roles: RECORDERS, columns: ["withdrawn_at"] },
+  },
+  "core.exposure": { insert: RECORDERS, update: { roles: RECORDERS, columns: ["withdrawn_at"] } },
+  "core.group_exposure": {
+    insert: ["tracer", "supervisor"],
+    update: { roles: ["tracer", "supervisor"], columns: ["withdrawn_at"] },
+  },
+  "core.place": {
+    insert: RECORDERS,
+    update: { roles: RECORDERS, columns: ["name", "setting", "area", "version"] },
+  },
+  "core.team": { insert: LEADERS },
+  "core.member": { insert: LEADERS, update: { roles: LEADERS, columns: ["ended_at", "team_id"] } },
+  "core.graph_change": { insert: RECORDERS },
+  "core.import": {
+    insert: LEADERS,
+    update: {
+      roles: LEADERS,
+      columns: [
+        "state",
+        "row_count",
+        "counts",
+        "problems",
+        "progress",
+        "create_missing",
+        "committed_at",
+      ],
+    },
+  },
+  "core.match_review": { insert: [], update: { roles: ["supervisor"], columns: ["state"] } },
+  "core.investigation": {
+    insert: [],
+    update: {
+      roles: LEADERS,
+      columns: [
+        "name",
+        "population_at_risk",
+        "infectious_before",
+        "infectious_after",
+        "monitoring_days",
+        "version",
+      ],
+    },
+  },
+};
+
+const SCOPE = "any ((select core.ctx_people())::uuid[])";
+const NAMED = "any ((select core.ctx_named_people())::uuid[])";
+const HERE = "investigation_id = (select core.ctx_investigation())";
+
+/** Rows a tracer sees, where that is less than the whole investigation. */
+const TRACER_ROWS: Record<string, string> = {
+  "core.person": `${HERE} and id = ${SCOPE}`,
+  "core.classification": `${HERE} and person_id = ${SCOPE}`,
+  "core.test_result": `${HERE} and person_id = ${SCOPE}`,
+  "core.interview": `${HERE} and person_id = ${SCOPE}`,
+  "core.group_exposure": `${HERE} and person_id = ${SCOPE}`,
+  "core.contact_pair": `${HERE} and person_a = ${SCOPE} and person_b = ${SCOPE}`,
+  "core.exposure": `${HERE} and exists (select 1 from core.contact_pair cp where cp.id = pair_id)`,
+  "core.match_review": "false",
+  "core.member": "false",
+  "core.import": "false",
+};
+
+/** Rows a tracer may add, where that needs more than the investigation. */
+const TRACER_ADDS: Record<string, string> = {
+  "core.person": `${HERE} and recorded_by = (select core.ctx_user())`,
+  "core.classification": `${HERE} and core.ctx_can_link(person_id)`,
+  "core.test_result": `${HERE} and core.ctx_can_link(person_id)`,
+  "core.interview": `${HERE} and core.ctx_can_link(person_id)`,
+  "core.group_exposure": `${HERE} and core.ctx_can_link(person_id)`,
+  "core.contact_pair": `${HERE} and core.ctx_can_link(person_a) and core.ctx_can_link(person_b)`,
+  "core.exposure": `${HERE} and core.ctx_can_tell(pair_id)`,
+};
+
+/** Tables whose rows belong to an investigation, or are one. */
+export const CORE_TABLES = [
+  "core.investigation",
+  "core.case_definition",
+  "core.team",
+  "core.member",
+  "core.place",
+  "core.person",
+  "core.classification",
+  "core.test_result",
+  "core.interview",
+  "core.contact_pair",
+  "core.exposure",
+  "core.group_exposure",
+  "core.match_review",
+  "core.graph_change",
+  "core.outbox",
+  "core.import",
+] as const;
+
+const IDENTITY_TABLES = [
+  "identity.person",
+  "identity.search_token",
+  "identity.place",
+  "identity.interview_draft",
+  "identity.import_stage",
+  "identity.data_key",
+] as const;
+
+const AUTH_TABLES = [
+  "auth.account",
+  "auth.session",
+  "auth.ctx_live",
+  "auth.idempotency",
+  "auth.first_officer_link",
+  "auth.meta",
+  "auth.field_right",
+] as const;
+
+export const ALL_TABLES = [...CORE_TABLES, ...IDENTITY_TABLES, ...AUTH_TABLES, "audit.event"];
+
+function here(table: string): string {
+  return table === "core.investigation" ? "id = (select core.ctx_investigation())" : HERE;
+}
+
+function policy(
+  table: string,
+  name: string,
+  command: string,
+  role: string,
+  clause: string,
+): string {
+  return `create policy ${name} on ${table} for ${command} to ${role} ${clause}`;
+}
+
+/**
+ * Row level security of every table, forced, one set of policies per login. A table with no policy
+ * for a login shows it no row. Statements are complete and may be run again.
+ */
+export function rowPolicies(): string[] {
+  const out: string[] = [
+    `do $$ declare p record; begin
+       for p in select schemaname, tablename, policyname from pg_policies
+         where schemaname in ('core','identity','auth','audit') loop
+         execute format('drop policy %I on %I.%I', p.policyname, p.schemaname, p.tablename);
+       end loop; end $$`,
+  ];
+  for (const table of ALL_TABLES) {
+    out.push(`alter table ${table} enable row level security`);
+    out.push(`alter table ${table} force row level security`);
+  }
+  for (const table of CORE_TABLES) {
+    for (const role of ROLES) {
+      const login = loginOf(role);
+      const tracer = role === "tracer";
+      const rows = (tracer && TRACER_ROWS[table]) || here(table);
+      out.push(policy(table, `read_${role}`, "select", login, `using (${rows})`));
+      const writes = WRITES[table];
+      if (writes?.insert.includes(role)) {
+        const adds = (tracer && TRACER_ADDS[table]) || here(table);
+        out.push(policy(table, `add_${role}`, "insert", login, `with check (${adds})`));
+      }
+      if (writes?.update?.roles.includes(role)) {
+        const changes = tracer && table === "core.person" ? `${HERE} and id = ${NAMED}` : rows;
+        out.push(
+          policy(
+            table,
+            `change_${role}`,
+            "update",
+            login,
+            `using (${changes}) with check (${here(table)})`,
+          ),
+        );
+      }
+    }
+    out.push(policy(table, "read_system", "select", loginOf("system"), "using (true)"));
+  }
+  out.push(policy("core.outbox", "change_system", "update", loginOf("system"), "using (true)"));
+  out.push(policy("core.import", "change_system", "update", loginOf("system"), "using (true)"));
+  for (const table of [
+    ...AUTH_TABLES.filter((t) => t !== "auth.field_right"),
+    "core.investigation",
+    "core.member",
+    "core.case_definition",
+    "identity.data_key",
+  ]) {
+    out.push(policy(table, "all_auth", "all", loginOf("auth"), "using (true) with check (true)"));
+  }
+  out.push(policy("audit.event", "add_auth", "insert", loginOf("auth"), "with check (true)"));
+  for (const role of ROLES) {
+    const mine = `account_id = (select core.ctx_user()) and ${HERE}`;
+    out.push(policy("audit.event", `add_${role}`, "insert", loginOf(role), `with check (${mine})`));
+  }
+  out.push(policy("audit.event", "read_officer", "select", loginOf("officer"), `using (${HERE})`));
+  return out;
+}
