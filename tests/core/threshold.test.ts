@@ -171,6 +171,16 @@ describe("interviewed people", () => {
     });
   });
 
+  // c_e 0.2666, upper limit 0.324; q 0.30 lifts that limit to 0.876, q 0.28 to 0.934; w = 0.1.
+  it("turns exactly where the corrected upper limit enters the window", () => {
+    expect(traced(1000, 500, 100, { recall: 0.3 }).verdict).toBe("below");
+    expect(traced(1000, 500, 100, { recall: 0.28 })).toMatchObject({
+      verdict: "not_distinguishable",
+      openVerdicts: ["below", "inside_window"],
+      reasons: { verdict: "recall_low" },
+    });
+  });
+
   it("leaves everything above the lower limit open while recall is unknown", () => {
     // The bare interval meets "below" and the window only.
     const bare = complete(200, 80);
