@@ -8,7 +8,7 @@ export type BarItem = {
   /** The category: a degree, a size class. Unique. */
   label: string;
   value: number;
-  /** What a baseline would give, from–to, drawn as a bracket over the bar. */
+  /** What a baseline would give, from–to, drawn as a bracket beside the bar. */
   reference?: readonly [number, number];
 };
 
@@ -27,9 +27,10 @@ export type BarsProps = {
   empty?: string;
 };
 
-const top = 22;
+const top = 34;
 const bottom = 40;
 const left = 4;
+const bracketHalf = 4;
 
 /** Counts by category as plain bars, each with its figure where there is room; a table one key away. */
 export function Bars({
@@ -48,7 +49,9 @@ export function Bars({
     0,
   );
   const slot = (width - left * 2) / Math.max(1, items.length);
-  const barWidth = Math.max(2, Math.min(34, slot - 3));
+  const withReference = items.some((item) => item.reference);
+  const room = slot - (withReference ? bracketHalf * 4 + 4 : 3);
+  const barWidth = Math.max(2, Math.min(34, room));
   const base = height - bottom;
   const y = (value: number) => base - (most === 0 ? 0 : (value / most) * (base - top));
   const longest = items.reduce((max, item) => Math.max(max, item.label.length), 1);
@@ -90,8 +93,7 @@ export function Bars({
                   />
                   {item.reference ? (
                     <Bracket
-                      x={middle}
-                      width={barWidth}
+                      x={middle + barWidth / 2 + bracketHalf + 1}
                       from={y(item.reference[0])}
                       to={y(item.reference[1])}
                     />
@@ -125,9 +127,8 @@ export function Bars({
   );
 }
 
-function Bracket(props: { x: number; width: number; from: number; to: number }) {
-  const { x, width, from, to } = props;
-  const half = Math.min(8, width / 2 + 2);
+function Bracket({ x, from, to }: { x: number; from: number; to: number }) {
+  const half = bracketHalf;
   return (
     <path
       d={`M${x - half} ${to}h${half * 2}M${x} ${to}V${from}M${x - half} ${from}h${half * 2}`}

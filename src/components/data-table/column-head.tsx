@@ -45,7 +45,7 @@ function SortHeader({ label, sortKey, numeric, sort, onSortChange }: SortHeaderP
     <button
       type="button"
       onClick={press}
-      className={`inline-flex min-h-6 items-baseline gap-1 hover:text-ink ${
+      className={`-my-0.5 inline-flex items-baseline gap-1 py-0.5 hover:text-ink ${
         active ? "font-bold text-ink" : ""
       } ${numeric ? "flex-row-reverse" : ""}`}
     >

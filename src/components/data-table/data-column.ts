@@ -14,6 +14,8 @@ export type DataColumn<Row> = {
   hideable?: boolean;
   /** The cell that names the row; the first column by default. */
   rowHeader?: boolean;
+  /** Long words may break over lines; other cells stay on one and the table scrolls sideways. */
+  wrap?: boolean;
   /** Whether this row's value is not final yet. */
   pending?: (row: Row) => boolean;
 };

@@ -141,7 +141,8 @@ export function DataTable<Row extends object>(props: DataTableProps<Row>) {
       ) : (
         <>
           <div
-            className="max-h-[70vh] overflow-auto"
+            // Positioned, or words for readers only would widen the page past the scrolled part.
+            className="relative max-h-[70vh] overflow-auto"
             aria-busy={props.updating || undefined}
             data-table-scroll=""
           >

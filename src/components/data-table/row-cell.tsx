@@ -16,13 +16,17 @@ export function RowCell<Row>({ column, row, head, to }: RowCellProps<Row>) {
   const content = column.cell(row);
   if (!head) {
     return (
-      <Cell numeric={column.numeric} pending={column.pending?.(row)}>
+      <Cell
+        numeric={column.numeric}
+        pending={column.pending?.(row)}
+        className={column.wrap ? "min-w-40" : "whitespace-nowrap"}
+      >
         {content}
       </Cell>
     );
   }
   return (
-    <HeadCell scope="row" className="align-baseline">
+    <HeadCell scope="row" className="whitespace-nowrap align-baseline">
       {to ? (
         // Not in the tab order: the row is, and Enter on it goes to the same place.
         <Link

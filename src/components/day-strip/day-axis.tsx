@@ -33,16 +33,6 @@ export function DayAxis({
         fill="none"
       />
       <path d={`M${scale.left} ${lineY}H${scale.right}`} className="axis" />
-      {scale.ticks.map(({ day, x }) => (
-        <text
-          key={day}
-          x={Math.min(x + 1, scale.right - 42)}
-          y={lineY - 7}
-          className="t-quiet t-small"
-        >
-          {formatDay(day, { style: "short" })}
-        </text>
-      ))}
       {now === null ? null : (
         <>
           <path d={`M${now} 15V${bottom}`} stroke="var(--coral)" strokeWidth={1.25} fill="none" />
@@ -56,6 +46,16 @@ export function DayAxis({
           </text>
         </>
       )}
+      {scale.ticks.map(({ day, x }) => (
+        <text
+          key={day}
+          x={Math.min(x + 1, scale.right - 42)}
+          y={lineY - 7}
+          className="t-quiet t-small t-rim"
+        >
+          {formatDay(day, { style: "short" })}
+        </text>
+      ))}
     </g>
   );
 }

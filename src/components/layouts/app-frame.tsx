@@ -55,8 +55,9 @@ export function AppFrame({
       >
         Skip to the page
       </a>
-      <header className="border-b border-rule" data-print="hide">
+      <header className="border-b border-rule">
         <div
+          data-print="hide"
           className="mx-auto flex max-w-[90rem] flex-wrap items-center gap-x-7 px-4 sm:px-6
             lg:flex-nowrap"
         >
@@ -65,7 +66,7 @@ export function AppFrame({
           </Link>
           <nav
             aria-label="Rooms"
-            className="order-3 -mx-4 flex w-[calc(100%+2rem)] gap-5 overflow-x-auto px-4 sm:-mx-6
+            className="order-4 -mx-4 flex w-[calc(100%+2rem)] gap-5 overflow-x-auto px-4 sm:-mx-6
               sm:w-[calc(100%+3rem)] sm:px-6 lg:order-2 lg:mx-0 lg:w-auto lg:overflow-visible
               lg:px-0"
           >
@@ -84,27 +85,35 @@ export function AppFrame({
               </NavLink>
             ))}
           </nav>
+          {investigationSwitch || roleSwitch ? (
+            <div
+              className="order-3 flex w-full min-w-0 items-center gap-3 py-1 text-sm sm:ms-auto
+                sm:w-auto *:min-w-0"
+            >
+              {investigationSwitch}
+              {roleSwitch}
+            </div>
+          ) : null}
           <div
-            className="order-2 ms-auto flex min-w-0 flex-wrap items-center justify-end gap-x-4 gap-y-1
-              py-1.5 text-sm lg:order-3"
+            className={`order-2 ms-auto flex items-center gap-3 text-sm sm:order-3 ${
+              investigationSwitch || roleSwitch ? "sm:ms-0" : ""
+            }`}
           >
-            {investigationSwitch}
-            {roleSwitch}
             {account}
           </div>
         </div>
-      </header>
-      {banner || cutOffLine ? (
-        <div className="border-b border-rule bg-paper-2">
-          <div
-            className="mx-auto flex max-w-[90rem] flex-wrap justify-between gap-x-6 px-4 py-1
-              text-sm sm:px-6"
-          >
-            <div className="text-ochre">{banner}</div>
-            <div className="text-ink-2">{cutOffLine}</div>
+        {banner || cutOffLine ? (
+          <div className="border-t border-rule bg-paper-2">
+            <div
+              className="mx-auto flex max-w-[90rem] flex-wrap justify-between gap-x-6 px-4 py-1
+                text-sm sm:px-6"
+            >
+              <div className="text-ochre">{banner}</div>
+              <div className="text-ink-2">{cutOffLine}</div>
+            </div>
           </div>
-        </div>
-      ) : null}
+        ) : null}
+      </header>
       <main id="main" tabIndex={-1} className="mx-auto w-full max-w-[90rem] flex-1 px-4 sm:px-6">
         {children}
       </main>

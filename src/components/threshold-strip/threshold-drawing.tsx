@@ -144,13 +144,13 @@ function ConnectivityLine({
   return (
     <g>
       <path
-        d={`M${x} ${lanes.axis - (small ? 14 : 24)}V${lanes.axis + (small ? 14 : 24)}`}
+        d={`M${x} ${small ? lanes.axis - 14 : below ? lanes.axis - 24 : lanes.giant + 6}V${lanes.axis + (small ? 14 : 24)}`}
         className="dotted"
       />
       {small ? null : (
         <text
           x={x}
-          y={below ? lanes.axis + 38 : lanes.axis - 30}
+          y={below ? lanes.axis + 38 : lanes.giant}
           textAnchor={anchor}
           className="t-quiet t-small"
         >
@@ -222,7 +222,7 @@ function Observed({
         x={anchor === "end" ? Math.min(x + 8, width - 2) : Math.max(2, x - 6)}
         y={lanes.value}
         textAnchor={anchor}
-        className="t-kelp"
+        className="t-kelp t-rim"
         fontWeight={700}
       >
         {label}

@@ -39,6 +39,7 @@ export function Dialog({
         <div className="fixed inset-0 z-40 bg-ink/45" aria-hidden="true" />
         <Primitive.Content
           role={role}
+          onOpenAutoFocus={focusFirst}
           data-dialog="open"
           {...(description ? {} : { "aria-describedby": undefined })}
           className={`fixed inset-x-0 bottom-0 z-50 mx-auto flex max-h-[92dvh] w-full flex-col
@@ -62,7 +63,10 @@ export function Dialog({
             {children}
           </div>
           {actions ? (
-            <div className="flex flex-wrap justify-end gap-2 border-t border-rule px-5 py-3">
+            <div
+              data-dialog-actions=""
+              className="flex flex-wrap justify-end gap-2 border-t border-rule px-5 py-3"
+            >
               {actions}
             </div>
           ) : null}
@@ -70,4 +74,17 @@ export function Dialog({
       </Primitive.Portal>
     </Primitive.Root>
   );
+}
+
+/** Focus goes to the first field, else to the first button at the foot; "Close" comes last. */
+function focusFirst(event: Event) {
+  const content = event.currentTarget;
+  if (!(content instanceof HTMLElement)) return;
+  const field = content.querySelector<HTMLElement>(
+    "input:not(:disabled),select:not(:disabled),textarea:not(:disabled)",
+  );
+  const target = field ?? content.querySelector<HTMLElement>("[data-dialog-actions] button");
+  if (!target) return;
+  event.preventDefault();
+  target.focus();
 }

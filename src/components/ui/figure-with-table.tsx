@@ -38,15 +38,16 @@ export function FigureWithTable({
       tabIndex={0}
       aria-keyshortcuts="t"
       onKeyDown={onKeyDown}
-      className="min-w-0 outline-offset-4"
+      className="mb-4 min-w-0 outline-offset-4"
     >
-      <div id={id}>{asTable ? <div className="overflow-x-auto">{table}</div> : children}</div>
+      <div id={id}>
+        {asTable ? <div className="relative overflow-x-auto">{table}</div> : children}
+      </div>
       <figcaption className="flex flex-wrap items-start gap-x-6 gap-y-1">
         {notes ? <div className="min-w-0 flex-1 basis-72">{notes}</div> : null}
         <button
           type="button"
           aria-controls={id}
-          aria-label={`${label}: ${asTable ? "show as a picture" : "show as a table"}`}
           onClick={() => setAsTable((current) => !current)}
           className={
             quiet
@@ -55,8 +56,11 @@ export function FigureWithTable({
           }
           data-print="hide"
         >
+          <span className="sr-only">{label}, </span>
           {asTable ? "as a picture" : "as a table"}
-          <kbd className="ms-1.5 font-sans text-xs">T</kbd>
+          <span className="ms-1.5 text-xs" aria-hidden="true">
+            T
+          </span>
         </button>
       </figcaption>
     </figure>

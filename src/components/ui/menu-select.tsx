@@ -4,11 +4,12 @@ export type MenuOption<V extends string> = { value: V; label: string; disabled?:
 
 export type MenuSelectProps<V extends string> = Omit<
   ComponentProps<"select">,
-  "value" | "onChange" | "children"
+  "value" | "onChange" | "children" | "size"
 > & {
   /** Read out and shown before the box; `hideLabel` keeps it for readers only. */
   label: ReactNode;
   hideLabel?: boolean;
+  size?: "normal" | "small";
   options: readonly MenuOption<V>[];
   value: V;
   onValueChange: (value: V) => void;
@@ -18,6 +19,7 @@ export type MenuSelectProps<V extends string> = Omit<
 export function MenuSelect<V extends string>({
   label,
   hideLabel = false,
+  size = "normal",
   options,
   value,
   onValueChange,
@@ -29,7 +31,7 @@ export function MenuSelect<V extends string>({
       <span className={hideLabel ? "sr-only" : "shrink-0 text-ink-2"}>{label}</span>
       <select
         {...rest}
-        className="field-box w-auto min-w-0 text-sm"
+        className={`field-box w-auto min-w-0 text-sm ${size === "small" ? "min-h-7 py-0" : ""}`}
         value={value}
         onChange={(event) => {
           const chosen = options.find((option) => option.value === event.target.value);

@@ -40,6 +40,7 @@ export function Pagination({
         {onPageSizeChange ? (
           <MenuSelect
             label="per page"
+            size="small"
             options={pageSizes.map((size) => ({ value: String(size), label: String(size) }))}
             value={String(pageSize)}
             onValueChange={(value) => onPageSizeChange(Number(value))}
