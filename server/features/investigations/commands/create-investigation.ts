@@ -1,0 +1,58 @@
+import { createHash } from "node:crypto";
+import { sql } from "drizzle-orm";
+import type { InvestigationInput } from "../../../../shared/contracts/investigations.ts";
+import { recordEvent } from "../../../audit/record-event.ts";
+import { withTx } from "../../../db/with-tx.ts";
+import { HttpProblem } from "../../../http/problem.ts";
+import type { SignedIn } from "../../../http/sign-in.ts";
+import type { Services } from "../../../services.ts";
+import { insertInvestigation } from "../store.ts";
+
+/**
+ * Opens an investigation; who opens it holds in it the role they act in. Runs as the accounts
+ * login, since the new investigation is in nobody's context yet.
+ */
+export async function createInvestigation(
+  services: Pick<Services, "pools" | "keys">,
+  who: SignedIn,
+  input: InvestigationInput,
+  key: string,
+): Promise<{ id: string; version: number }> {
+  if (!who.actingRole) throw new HttpProblem("role_refused");
+  const role = who.actingRole;
+  if (who.demo && !input.invented) {
+    throw new HttpProblem("invalid", { errors: [{ path: "invented", code: "demo_only" }] });
+  }
+  const hash = createHash("sha256").update(JSON.stringify(input)).digest("base64url");
+  return withTx({ pool: services.pools.auth, nonce: null }, async (tx) => {
+    const claimed = await tx.execute(
+      sql`insert into auth.idempotency (account_id, key, route, request_hash, status, receipt)
+          values (${who.accountId}, ${key}, 'post /api/investigations', ${hash}, 0, '{}')
+          on conflict do nothing`,
+    );
+    if (claimed.rowCount === 0) {
+      const found = await tx.execute<{
+        request_hash: string;
+        receipt: { id: string; version: number };
+      }>(
+        sql`select request_hash, receipt from auth.idempotency where account_id = ${who.accountId} and key = ${key}`,
+      );
+      const earlier = found.rows[0];
+      if (!earlier || earlier.request_hash !== hash) throw new HttpProblem("key_reused");
+      return earlier.receipt;
+    }
+    const id = await insertInvestigation(tx, services.keys, input, who.accountId, [role]);
+    await recordEvent(tx, {
+      action: "investigation.created",
+      accountId: who.accountId,
+      role,
+      investigationId: id,
+    });
+    const receipt = { id, version: 1 };
+    await tx.execute(
+      sql`update auth.idempotency set status = 201, receipt = ${JSON.stringify(receipt)}::jsonb
+          where account_id = ${who.accountId} and key = ${key}`,
+    );
+    return receipt;
+  });
+}

@@ -1,0 +1,232 @@
+import type { Request, Response } from "express";
+import { z } from "zod";
+import {
+  firstOfficerInput,
+  sessionAnswer,
+  signInInput,
+  switchInput,
+  welcomeAnswer,
+} from "../../../shared/contracts/session.ts";
+import { ABSOLUTE_HOURS, HOME_ROOM, IDLE_MINUTES, ROLES, ROOMS_OF } from "../../../shared/roles.ts";
+import { recordEvent } from "../../audit/record-event.ts";
+import { now } from "../../clock.ts";
+import { withTx } from "../../db/with-tx.ts";
+import { HttpProblem } from "../../http/problem.ts";
+import { definePlainRoute, type PlainRoute } from "../../http/route.ts";
+import {
+  beginSession,
+  endSession,
+  loadAccount,
+  type Membership,
+  type SignedIn,
+  signedInOf,
+} from "../../http/sign-in.ts";
+import type { Services } from "../../services.ts";
+import { makeFirstOfficer } from "./first-officer.ts";
+import { createSignInLimiter } from "./limiter.ts";
+import { createPassport, type Verified } from "./passport.ts";
+
+function presentSession(who: SignedIn, startedAt: string): z.input<typeof sessionAnswer> {
+  const role = who.actingRole;
+  const rooms = role ? [...ROOMS_OF[role]] : [];
+  if (role) rooms.sort((a, b) => Number(b === HOME_ROOM[role]) - Number(a === HOME_ROOM[role]));
+  return {
+    accountId: who.accountId,
+    displayName: who.displayName,
+    email: who.email,
+    demo: who.demo,
+    actingRole: role,
+    investigationId: who.investigationId,
+    rooms,
+    memberships: who.memberships,
+    idleMinutes: role ? IDLE_MINUTES[role] : Math.min(...Object.values(IDLE_MINUTES)),
+    endsAt: new Date(new Date(startedAt).getTime() + ABSOLUTE_HOURS * 3_600_000).toISOString(),
+  };
+}
+
+/** The membership a sign-in starts in: the first one, by age of investigation. */
+function firstMembership(memberships: readonly Membership[]): Membership | null {
+  const order = (one: Membership) => ROLES.indexOf(one.role);
+  const first = memberships[0];
+  if (!first) return null;
+  const same = memberships.filter((one) => one.investigationId === first.investigationId);
+  return same.sort((a, b) => order(a) - order(b))[0] ?? null;
+}
+
+/** Begins a session and writes its event; answers with the session. */
+async function start(
+  request: Request,
+  services: Services,
+  account: Verified,
+  acting: Membership | null,
+  action: "session.started" | "session.role_changed",
+  startedAt: string,
+) {
+  const { pools } = services;
+  await beginSession(request, pools.auth, account, acting, startedAt);
+  await withTx({ pool: pools.auth, nonce: null }, (tx) =>
+    recordEvent(tx, {
+      action,
+      accountId: account.id,
+      role: acting?.role ?? null,
+      investigationId: acting?.investigationId ?? null,
+    }),
+  );
+  const loaded = await loadAccount(pools.auth, account.id);
+  if (!loaded) throw new HttpProblem("sign_in_failed");
+  return presentSession(
+    {
+      accountId: loaded.id,
+      email: loaded.email,
+      displayName: loaded.display_name,
+      demo: loaded.demo,
+      memberships: loaded.memberships,
+      actingRole: acting?.role ?? null,
+      investigationId: acting?.investigationId ?? null,
+      nonce: request.session.nonce ?? null,
+    },
+    startedAt,
+  );
+}
+
+/** Routes of the session: sign in, who am I, act as, sign out. */
+export function sessionRoutes(services: Services): PlainRoute[] {
+  const passport = createPassport(services);
+  const limiter = createSignInLimiter();
+  const verify = (request: Request, response: Response): Promise<Verified> =>
+    new Promise((resolve, reject) => {
+      passport.authenticate(
+        "local",
+        { session: false },
+        (error: unknown, user: Verified | false | undefined) => {
+          if (error) reject(error);
+          else if (user) resolve(user);
+          else reject(new HttpProblem("sign_in_failed"));
+        },
+      )(request, response, reject);
+    });
+
+  return [
+    definePlainRoute({
+      method: "get",
+      path: "/api/welcome",
+      summary: "What a visitor may know before signing in",
+      access: "public",
+      output: welcomeAnswer,
+      async handle(_request, response) {
+        const found = await services.pools.auth.query("select 1 from auth.account limit 1");
+        return {
+          signedIn: response.locals.who !== null,
+          demo: services.env.demo,
+          setUpNeeded: found.rowCount === 0,
+        };
+      },
+    }),
+    definePlainRoute({
+      method: "post",
+      path: "/api/session",
+      summary: "Sign in",
+      access: "public",
+      body: signInInput,
+      output: sessionAnswer,
+      async handle(request, response) {
+        const input = response.locals.body as z.output<typeof signInInput>;
+        const address = request.ip ?? "";
+        await limiter.check(address, input.email);
+        let account: Verified;
+        try {
+          account = await verify(request, response);
+        } catch (error) {
+          if (error instanceof HttpProblem) await limiter.failed(address, input.email);
+          throw error;
+        }
+        const loaded = await loadAccount(services.pools.auth, account.id);
+        if (!loaded) throw new HttpProblem("sign_in_failed");
+        const acting = firstMembership(loaded.memberships);
+        return start(request, services, account, acting, "session.started", now().toISOString());
+      },
+    }),
+    definePlainRoute({
+      method: "get",
+      path: "/api/session",
+      summary: "Who is signed in, acting as what",
+      access: "signedIn",
+      output: sessionAnswer,
+      async handle(request) {
+        return presentSession(
+          signedInOf(request),
+          request.session.startedAt ?? now().toISOString(),
+        );
+      },
+    }),
+    definePlainRoute({
+      method: "patch",
+      path: "/api/session",
+      summary: "Act in another role or investigation",
+      access: "signedIn",
+      body: switchInput,
+      output: sessionAnswer,
+      async handle(request, response) {
+        const input = response.locals.body as z.output<typeof switchInput>;
+        const who = signedInOf(request);
+        const acting = who.memberships.find(
+          (one) => one.role === input.actingRole && one.investigationId === input.investigationId,
+        );
+        if (!acting) throw new HttpProblem("not_found");
+        const account = { id: who.accountId, epoch: request.session.epoch ?? 0 };
+        const startedAt = request.session.startedAt ?? now().toISOString();
+        return start(request, services, account, acting, "session.role_changed", startedAt);
+      },
+    }),
+    definePlainRoute({
+      method: "delete",
+      path: "/api/session",
+      summary: "Sign out",
+      access: "signedIn",
+      output: z.null(),
+      status: 204,
+      async handle(request, response) {
+        const who = signedInOf(request);
+        await endSession(request, services.pools.auth);
+        await withTx({ pool: services.pools.auth, nonce: null }, (tx) =>
+          recordEvent(tx, {
+            action: "session.ended",
+            accountId: who.accountId,
+            role: who.actingRole,
+            investigationId: who.investigationId,
+          }),
+        );
+        const name = services.env.secureCookie ? "__Host-strandline" : "strandline";
+        response.clearCookie(name, {
+          path: "/",
+          httpOnly: true,
+          sameSite: "strict",
+          secure: services.env.secureCookie,
+        });
+        response.setHeader("Clear-Site-Data", '"cache", "storage"');
+        return null;
+      },
+    }),
+    definePlainRoute({
+      method: "post",
+      path: "/api/first-officer",
+      summary: "Make the first data officer with the link printed at start",
+      access: "public",
+      body: firstOfficerInput,
+      output: z.strictObject({ made: z.boolean() }),
+      status: 201,
+      async handle(request, response) {
+        const input = response.locals.body as z.output<typeof firstOfficerInput>;
+        const address = request.ip ?? "";
+        await limiter.check(address, "first-officer");
+        try {
+          await makeFirstOfficer(services, input);
+        } catch (error) {
+          await limiter.failed(address, "first-officer");
+          throw error;
+        }
+        return { made: true };
+      },
+    }),
+  ];
+}

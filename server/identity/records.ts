@@ -1,0 +1,271 @@
+import { sql } from "drizzle-orm";
+import type { EventName } from "../../shared/events.ts";
+import { MISSING } from "../../shared/vocabulary.ts";
+import type { Tx } from "../db/with-tx.ts";
+import { open, seal } from "./cipher.ts";
+import type { InvestigationKeys } from "./keys.ts";
+import { lastTwo, maskEmail, maskName } from "./mask.ts";
+import {
+  nameParts,
+  nameSounds,
+  normalPhone,
+  soundsToFind,
+  TOKEN_KINDS,
+  tokenOf,
+} from "./tokens.ts";
+
+/** Identity of a person as typed. A key left out stays as it is; null means "not asked". */
+export interface Identity {
+  ref?: string | null;
+  name?: string | null;
+  phone?: string | null;
+  email?: string | null;
+  birthDate?: string | null;
+  address?: string | null;
+  note?: string | null;
+}
+export type IdentityKey = keyof Identity;
+export const IDENTITY_KEYS = [
+  "ref",
+  "name",
+  "phone",
+  "email",
+  "birthDate",
+  "address",
+  "note",
+] as const;
+
+const COLUMNS: Record<IdentityKey, string> = {
+  ref: "ref_cipher",
+  name: "name_cipher",
+  phone: "phone_cipher",
+  email: "email_cipher",
+  birthDate: "birth_date_cipher",
+  address: "address_cipher",
+  note: "note_cipher",
+};
+
+const known = (value: string | null | undefined): value is string =>
+  typeof value === "string" && !(MISSING as readonly string[]).includes(value);
+
+/** Where a value is bound to: moved anywhere else it does not open. */
+const place = (key: IdentityKey, personId: string) => `identity.person|${COLUMNS[key]}|${personId}`;
+
+/** Token under which a reference is unique in its investigation. */
+export function refToken(keys: InvestigationKeys, ref: string): Buffer {
+  return tokenOf(keys.token, "ref", ref.trim());
+}
+
+/** Token under which a household's name is found again (case and spacing aside). */
+export function householdToken(keys: InvestigationKeys, name: string): Buffer {
+  return tokenOf(keys.token, "household", name.trim().replace(/\s+/g, " ").toLowerCase());
+}
+
+/** Seals and opens a household's name. */
+export const placeName = {
+  seal: (keys: InvestigationKeys, placeId: string, name: string) =>
+    seal(keys.seal, `identity.place|name_cipher|${placeId}`, name),
+  open: (keys: InvestigationKeys, placeId: string, cipher: Buffer) =>
+    open(keys.seal, `identity.place|name_cipher|${placeId}`, cipher).toString(),
+};
+
+interface Token {
+  person_id: string;
+  kind: number;
+  token: string;
+}
+
+function tokensOf(keys: InvestigationKeys, personId: string, identity: Identity, country: string) {
+  const out: Token[] = [];
+  const add = (kind: number, value: string) =>
+    out.push({
+      person_id: personId,
+      kind,
+      token: tokenOf(keys.token, kind, value).toString("base64"),
+    });
+  if (known(identity.phone)) {
+    const phone = normalPhone(identity.phone, country);
+    if (phone) add(TOKEN_KINDS.phone, phone);
+  }
+  if (known(identity.email)) add(TOKEN_KINDS.email, identity.email.toLowerCase());
+  if (known(identity.name)) {
+    for (const part of nameParts(identity.name)) add(TOKEN_KINDS.namePart, part);
+    for (const sound of nameSounds(identity.name)) add(TOKEN_KINDS.nameSound, sound);
+  }
+  return out;
+}
+
+function rowOf(keys: InvestigationKeys, personId: string, identity: Identity) {
+  const row: Record<string, unknown> = { person_id: personId, has: [] as string[] };
+  for (const key of IDENTITY_KEYS) {
+    const value = identity[key];
+    if (value === undefined) continue;
+    (row.has as string[]).push(key);
+    row[COLUMNS[key]] =
+      value === null ? null : seal(keys.seal, place(key, personId), value).toString("base64");
+  }
+  if (identity.ref) row.ref_token = refToken(keys, identity.ref).toString("base64");
+  if (known(identity.name)) row.name_masked = maskName(identity.name);
+  if (known(identity.phone)) row.phone_last2 = lastTwo(identity.phone);
+  if (known(identity.email)) row.email_masked = maskEmail(identity.email);
+  if (known(identity.birthDate)) row.birth_year = Number(identity.birthDate.slice(0, 4));
+  return row;
+}
+
+/**
+ * Writes identity of people that stand in core already: ciphertext, masked and coarse forms, and
+ * search tokens. Runs through the database's own function, which checks who may.
+ *
+ * @param country country code by which national telephone numbers are read
+ */
+export async function putPeople(
+  tx: Tx,
+  keys: InvestigationKeys,
+  people: readonly { personId: string; identity: Identity }[],
+  country: string,
+): Promise<void> {
+  if (people.length === 0) return;
+  const rows = people.map(({ personId, identity }) => rowOf(keys, personId, identity));
+  const tokens = people.flatMap(({ personId, identity }) =>
+    tokensOf(keys, personId, identity, country),
+  );
+  const kinds = new Set<number>();
+  for (const { identity } of people) {
+    if (identity.phone !== undefined) kinds.add(TOKEN_KINDS.phone);
+    if (identity.email !== undefined) kinds.add(TOKEN_KINDS.email);
+    if (identity.name !== undefined) {
+      kinds.add(TOKEN_KINDS.namePart);
+      kinds.add(TOKEN_KINDS.nameSound);
+    }
+  }
+  await tx.execute(
+    sql`select identity.put_people(${JSON.stringify(rows)}::jsonb, ${JSON.stringify(tokens)}::jsonb,
+      ${`{${[...kinds].join(",")}}`}::smallint[])`,
+  );
+}
+
+/** Identity of opened people by id; people out of scope are absent. */
+export type OpenedPeople = Map<string, Identity>;
+
+/**
+ * Opens identity fields of people. Writes one access event naming fields and people in the same
+ * transaction.
+ *
+ * @param fields identity keys; one that the acting role may not open is refused (42501)
+ * @param action the event's name
+ */
+export async function openPeople(
+  tx: Tx,
+  keys: InvestigationKeys,
+  personIds: readonly string[],
+  fields: readonly IdentityKey[],
+  action: EventName,
+): Promise<OpenedPeople> {
+  const opened: OpenedPeople = new Map();
+  if (personIds.length === 0 || fields.length === 0) return opened;
+  const found = await tx.execute<{ person_id: string; field: IdentityKey; cipher: Buffer }>(
+    sql`select person_id, field, cipher from identity.open_people(
+      ${sql.param(`{${personIds.join(",")}}`)}::uuid[], ${sql.param(`{${fields.join(",")}}`)}::text[], ${action})`,
+  );
+  for (const row of found.rows) {
+    const identity = opened.get(row.person_id) ?? {};
+    identity[row.field] = open(keys.seal, place(row.field, row.person_id), row.cipher).toString();
+    opened.set(row.person_id, identity);
+  }
+  return opened;
+}
+
+/** Opens ciphertexts of people that were read for an import (recorded by the import's own event). */
+export function openCipher(
+  keys: InvestigationKeys,
+  personId: string,
+  field: IdentityKey,
+  cipher: Buffer,
+): string {
+  return open(keys.seal, place(field, personId), cipher).toString();
+}
+
+/** Opens household names; recorded by the database's function. */
+export async function openPlaces(
+  tx: Tx,
+  keys: InvestigationKeys,
+  placeIds: readonly string[],
+): Promise<Map<string, string>> {
+  const names = new Map<string, string>();
+  const ids = [...new Set(placeIds)];
+  if (ids.length === 0) return names;
+  const found = await tx.execute<{ place_id: string; cipher: Buffer }>(
+    sql`select place_id, cipher from identity.open_places(${sql.param(`{${ids.join(",")}}`)}::uuid[])`,
+  );
+  for (const row of found.rows)
+    names.set(row.place_id, placeName.open(keys, row.place_id, row.cipher));
+  return names;
+}
+
+/** A person found by search tokens, with the kinds that met. */
+export interface Found {
+  personId: string;
+  kinds: number[];
+}
+
+const byteArray = (tokens: readonly Buffer[]) =>
+  sql`${sql.param(`{${tokens.map((token) => `"\\\\x${token.toString("hex")}"`).join(",")}}`)}::bytea[]`;
+
+/**
+ * Finds people by what was typed: a telephone number or e-mail exactly, else all name parts (whole
+ * parts, or parts that sound alike), within what the acting person may name.
+ */
+export async function findPeople(
+  tx: Tx,
+  keys: InvestigationKeys,
+  typed: string,
+  country: string,
+  limit = 200,
+): Promise<Found[]> {
+  const { all, any, sounds } = searchTokens(keys, typed, country);
+  const run = async (allTokens: Buffer[], anyTokens: Buffer[]) => {
+    if (allTokens.length + anyTokens.length === 0) return [];
+    const found = await tx.execute<{ person_id: string; kinds: number[] }>(
+      sql`select person_id, kinds from identity.find_people(${byteArray(allTokens)}, ${byteArray(anyTokens)}, ${limit})`,
+    );
+    return found.rows.map((row) => ({ personId: row.person_id, kinds: row.kinds }));
+  };
+  const exact = await run(all, any);
+  if (exact.length >= limit || sounds.length === 0) return exact;
+  const alike = await run(sounds, []);
+  const seen = new Set(exact.map((one) => one.personId));
+  return [...exact, ...alike.filter((one) => !seen.has(one.personId))].slice(0, limit);
+}
+
+/** Tokens of something typed: name parts to meet together, exact ones, and phonetic ones. */
+export function searchTokens(keys: InvestigationKeys, typed: string, country: string) {
+  const any: Buffer[] = [];
+  const text = typed.trim();
+  if (/\d{3}/.test(text.replace(/\D+/g, "")) && !/[a-z@]/i.test(text)) {
+    const phone = normalPhone(text, country);
+    if (phone) any.push(tokenOf(keys.token, TOKEN_KINDS.phone, phone));
+  }
+  if (text.includes("@")) any.push(tokenOf(keys.token, TOKEN_KINDS.email, text.toLowerCase()));
+  const named = text.includes("@") || any.length > 0 ? "" : text;
+  return {
+    any,
+    all: nameParts(named).map((part) => tokenOf(keys.token, TOKEN_KINDS.namePart, part)),
+    sounds: soundsToFind(named).map((sound) => tokenOf(keys.token, TOKEN_KINDS.nameSound, sound)),
+  };
+}
+
+/** Sends possible matches that the acting person may not see to the supervisor's list. */
+export async function flagHiddenMatches(
+  tx: Tx,
+  keys: InvestigationKeys,
+  personId: string,
+  typed: { name: string | null; phone: string | null },
+  country: string,
+): Promise<void> {
+  const phone = typed.phone ? searchTokens(keys, typed.phone, country).any : [];
+  const names = typed.name ? searchTokens(keys, typed.name, country).all : [];
+  if (phone.length + names.length === 0) return;
+  await tx.execute(
+    sql`select identity.flag_hidden_matches(${personId}::uuid, ${byteArray(phone)}, ${byteArray(names)})`,
+  );
+}

@@ -1,0 +1,143 @@
+import type { Server } from "node:http";
+import pino from "pino";
+import { createAnalysis } from "./analysis/analysis.ts";
+import { createApp } from "./app.ts";
+import { EnvError, parseEnv } from "./config/env.ts";
+import { loadSecrets } from "./config/secrets.ts";
+import { migrate } from "./db/migrate.ts";
+import { createPools, endPools, loginUrl } from "./db/pools.ts";
+import { startDispatcher } from "./events/dispatcher.ts";
+import { createLiveHub } from "./events/live-hub.ts";
+import { firstOfficerToken } from "./features/session/first-officer.ts";
+import { safeError } from "./http/translate-error.ts";
+import { createKeyRing } from "./identity/keys.ts";
+import type { Services } from "./services.ts";
+
+const STOP_MS = 10_000;
+
+/** Stores the key check at the first boot and refuses another master key afterwards. */
+async function checkKey(services: Pick<Services, "pools" | "keys">): Promise<void> {
+  const found = await services.pools.auth.query(
+    "select value from auth.meta where key = 'key_check'",
+  );
+  const value = found.rows[0]?.value as string | undefined;
+  if (value === undefined) {
+    await services.pools.auth.query("insert into auth.meta (key, value) values ('key_check', $1)", [
+      services.keys.checkValue(),
+    ]);
+  } else if (!services.keys.opensCheck(value)) {
+    throw new EnvError(
+      "the master key does not open this database; restore secrets.json from its backup",
+    );
+  }
+}
+
+/** A durable database only: an acknowledged interview must survive a crash. */
+async function checkDurability(services: Pick<Services, "pools">): Promise<void> {
+  const found = await services.pools.system.query(
+    `select name from pg_settings where name in ('fsync', 'full_page_writes', 'synchronous_commit')
+       and setting = 'off'`,
+  );
+  if (found.rowCount) {
+    throw new EnvError(
+      `PostgreSQL runs with ${found.rows[0].name}=off, which can lose acknowledged work`,
+    );
+  }
+}
+
+async function main(): Promise<void> {
+  const env = parseEnv(process.env);
+  const log = pino({ level: env.logLevel, base: undefined });
+  const secrets = loadSecrets(env.dataDir);
+  await migrate(env.databaseUrl, secrets.logins);
+  const pools = createPools(env.databaseUrl, secrets.logins, (error) =>
+    log.warn({ event: "database connection lost", error: safeError(error) }),
+  );
+  const keys = createKeyRing(secrets.masterKey);
+  await checkKey({ pools, keys });
+  await checkDurability({ pools });
+  if (env.demo) {
+    const { makeDemo } = await import("../drizzle/seed/make-demo.ts");
+    await makeDemo({
+      databaseUrl: env.databaseUrl,
+      dataDir: env.dataDir,
+      pools,
+      keys,
+      password: env.demoPassword,
+    });
+  }
+  const systemUrl = loginUrl(env.databaseUrl, "system", secrets.logins.system);
+  const hub = createLiveHub();
+  const analysis = createAnalysis({ pools, log });
+  await analysis.start();
+  const dispatcher = await startDispatcher({ pools, systemUrl, analysis, hub, log });
+  const services: Services = { env, secrets, pools, keys, analysis, hub, log };
+
+  const dev = env.dev ? await (await import("./dev-client.ts")).devClient() : undefined;
+  const app = createApp(services, dev?.middleware);
+  const server: Server = app.listen(env.port, env.host, (error?: Error) => {
+    if (error) {
+      process.stderr.write(
+        `strandline: cannot listen on ${env.host}:${env.port} (${(error as NodeJS.ErrnoException).code})\n`,
+      );
+      process.exit(1);
+    }
+    void announce();
+  });
+  server.requestTimeout = 60_000;
+  server.headersTimeout = 10_000;
+
+  async function announce(): Promise<void> {
+    const address =
+      env.publicUrl ?? `http://${env.host.includes(":") ? `[${env.host}]` : env.host}:${env.port}`;
+    process.stdout.write(`Strandline is ready at ${address}\n`);
+    if (env.demo) {
+      const { demoNotice } = await import("../drizzle/seed/make-demo.ts");
+      process.stdout.write(demoNotice(env.dataDir, env.demoPassword));
+      return;
+    }
+    const token = await firstOfficerToken(pools);
+    if (token) {
+      process.stdout.write(
+        `Make the first data officer (single use, 72 hours): ${address}/first-officer#${token}\n`,
+      );
+    }
+  }
+
+  let stopping = false;
+  const stop = (signal: string) => {
+    if (stopping) return;
+    stopping = true;
+    log.info({ event: "stopping", signal });
+    const hard = setTimeout(() => process.exit(1), STOP_MS);
+    hard.unref();
+    hub.close();
+    server.close(async () => {
+      await dispatcher.stop();
+      await analysis.stop();
+      await dev?.close();
+      await endPools(pools);
+      process.exit(0);
+    });
+    server.closeIdleConnections();
+  };
+  process.on("SIGTERM", () => stop("SIGTERM"));
+  process.on("SIGINT", () => stop("SIGINT"));
+  for (const event of ["uncaughtException", "unhandledRejection"] as const) {
+    process.on(event, (error: unknown) => {
+      log.fatal({ event, error: safeError(error) });
+      process.exit(1);
+    });
+  }
+}
+
+main().catch((error: unknown) => {
+  // A refused setting is said in its own words; anything else by name only, for it may carry data.
+  const line =
+    error instanceof EnvError ||
+    (error instanceof Error && !("code" in error) && !("cause" in error))
+      ? (error as Error).message
+      : JSON.stringify(safeError(error));
+  process.stderr.write(`strandline: ${line}\n`);
+  process.exit(1);
+});

@@ -1,0 +1,12 @@
+import { investigationPlainRoutes, investigationRoutes } from "./features/investigations/routes.ts";
+import { sessionRoutes } from "./features/session/routes.ts";
+import type { AnyRoute, PlainRoute } from "./http/route.ts";
+import type { Services } from "./services.ts";
+
+/** Every route of an investigation; the one list that app, document and tests are made from. */
+export const ROUTES: readonly AnyRoute[] = [...investigationRoutes];
+
+/** Routes outside any investigation, and those that stream. */
+export function plainRoutes(services: Services): PlainRoute[] {
+  return [...sessionRoutes(services), ...investigationPlainRoutes(services)];
+}
