@@ -9,7 +9,7 @@ import { LockHeldError, takeLock, writeWhole } from "./lib/locks.mjs";
 import { checkNode, ensurePackages } from "./lib/packages.mjs";
 import { complain, PlainError, runScript, say } from "./lib/plain.mjs";
 import { startCluster, stopCluster } from "./lib/postgres.mjs";
-import { endProcess, isAlive, processIdentity } from "./lib/processes.mjs";
+import { endProcess, isAlive, processIdentity, startedBy } from "./lib/processes.mjs";
 import { dataFolder, makeDataFolder, projectRoot } from "./lib/project.mjs";
 import { checkSettings } from "./lib/settings.mjs";
 
@@ -92,10 +92,10 @@ function listenForEnd() {
     }
   };
   for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"]) process.on(signal, () => ask(signal));
-  const parent = process.ppid;
   if (process.env.npm_lifecycle_event) {
+    const starters = startedBy();
     const watch = setInterval(() => {
-      if (process.ppid === parent) return;
+      if (starters.every(isAlive)) return;
       clearInterval(watch);
       if (first === 0) ask("npm is gone");
     }, 500);
@@ -176,7 +176,7 @@ async function serve({ data, address, dev, lock, end }) {
     }
     if (first.trouble) complain(first.trouble.message);
     else say("Stopping …");
-    end.onHarder(() => process.kill(-Number.parseInt(server.identity, 10), "SIGKILL"));
+    end.onHarder(() => void endProcess(server.identity, [["SIGKILL", 5_000]]));
     await endProcess(server.identity, [
       ["SIGTERM", SERVER_GRACE_MS],
       ["SIGKILL", 5_000],
@@ -206,6 +206,10 @@ await runScript(async () => {
     await ensurePackages(projectRoot, { dev: false });
     if (end.isAsked()) return 0;
     return await serve({ data, address, dev, lock, end });
+  } catch (error) {
+    // Ctrl-C also reaches the npm or Vite that runs: their failure is then no news.
+    if (!end.isAsked()) throw error;
+    return 0;
   } finally {
     lock.release();
   }

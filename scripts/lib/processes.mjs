@@ -31,6 +31,23 @@ export function isAlive(identity) {
   return Number.isInteger(pid) && processIdentity(pid) === identity;
 }
 
+/** The parent's pid, undefined when it cannot be read. */
+function parentOf(pid) {
+  try {
+    const stat = readFileSync(`/proc/${pid}/stat`, "utf8");
+    return Number(stat.slice(stat.lastIndexOf(")") + 2).split(" ")[1]);
+  } catch {
+    return undefined;
+  }
+}
+
+/** Identities of whoever started this process: its parent and, behind a `sh -c`, that one's. */
+export function startedBy() {
+  const starters = [process.ppid];
+  if (processArguments(process.ppid)[1] === "-c") starters.push(parentOf(process.ppid));
+  return starters.map(processIdentity).filter(Boolean);
+}
+
 /** The argument list of a process, [] when it cannot be read. */
 export function processArguments(pid) {
   try {

@@ -1,5 +1,5 @@
 // Where the project and its data live.
-import { mkdirSync } from "node:fs";
+import { existsSync, mkdirSync, statSync } from "node:fs";
 import { dirname, resolve } from "node:path";
 import { fileURLToPath } from "node:url";
 import { PlainError } from "./plain.mjs";
@@ -18,10 +18,25 @@ export function dataFolder(env) {
  * an existing folder keeps its rights.
  */
 export function makeDataFolder(dir) {
+  const mode = process.getuid?.() === 0 ? 0o711 : 0o700;
+  // One level at a time: Node's recursive mkdir never ends where the system refuses with ENOENT.
+  const missing = [];
+  for (let path = dir; !existsSync(path) && path !== dirname(path); path = dirname(path)) {
+    missing.unshift(path);
+  }
   try {
-    mkdirSync(dir, { recursive: true, mode: process.getuid?.() === 0 ? 0o711 : 0o700 });
+    for (const path of missing) makeFolder(path, mode);
+    if (!statSync(dir).isDirectory()) throw Object.assign(new Error(), { code: "ENOTDIR" });
   } catch (error) {
     throw new PlainError(`the data folder ${dir} cannot be made (${error.code})`);
   }
   return dir;
+}
+
+function makeFolder(path, mode) {
+  try {
+    mkdirSync(path, { mode });
+  } catch (error) {
+    if (error.code !== "EEXIST") throw error;
+  }
 }
