@@ -26,7 +26,8 @@ export function createCalendar(
   offsetMinutes: number,
 ): Calendar {
   const last = Date.parse(`${lastDay}T00:00:00.000Z`);
-  if (!/^\d{4}-\d{2}-\d{2}$/.test(lastDay) || Number.isNaN(last)) {
+  // Some calendars' mistakes (30 February) parse as the day after: only a round trip shows them.
+  if (Number.isNaN(last) || new Date(last).toISOString().slice(0, 10) !== lastDay) {
     throw new RangeError("lastDay must be YYYY-MM-DD");
   }
   const first = last - (days - 1) * DAY_MS;

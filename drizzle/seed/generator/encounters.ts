@@ -1,7 +1,8 @@
+import { groupOf, othersIn, SLOT, sharedSlot, someoneIn } from "./circles.ts";
 import { itemAt } from "./item-at.ts";
 import type { Rng } from "./rng.ts";
 import type { CaseCourse } from "./spread.ts";
-import { groupOf, othersIn, SLOT, sharedSlot, someoneIn, type Town } from "./town.ts";
+import type { Town } from "./town.ts";
 import type { Exposure, Setting } from "./types.ts";
 
 /** How close a kind of meeting is; `blank` is the share of each answer that nobody remembers. */

@@ -1,8 +1,9 @@
 import type { Calendar } from "./calendar.ts";
+import { groupOf, SLOT } from "./circles.ts";
 import { itemAt } from "./item-at.ts";
 import { inventFamilyName, inventGivenName, inventGroundName, pickManner } from "./names.ts";
 import { createRng, type Rng } from "./rng.ts";
-import { groupOf, SLOT, type Town } from "./town.ts";
+import type { Town } from "./town.ts";
 import { type Person, REFUSED, UNKNOWN } from "./types.ts";
 
 export type Profile = Pick<

@@ -1,10 +1,11 @@
 import type { Calendar } from "./calendar.ts";
+import { groupOf, SLOT } from "./circles.ts";
 import { itemAt } from "./item-at.ts";
 import { respellName } from "./names.ts";
 import { inventedPhone } from "./phones.ts";
 import { inventProfile, type Profile } from "./profile.ts";
 import { createRng, type Rng } from "./rng.ts";
-import { groupOf, SLOT, type Town } from "./town.ts";
+import type { Town } from "./town.ts";
 import type { Person, Place } from "./types.ts";
 
 /** What the team has on record, growing in the order of recording: ids are positions. */

@@ -1,7 +1,8 @@
 import { type Calendar, DAY_MINUTES } from "./calendar.ts";
+import { SLOT, someoneIn } from "./circles.ts";
 import { itemAt } from "./item-at.ts";
 import { createRng, type Rng } from "./rng.ts";
-import { SLOT, someoneIn, type Town } from "./town.ts";
+import type { Town } from "./town.ts";
 import type { OutbreakOptions } from "./types.ts";
 
 /** One infection that came to notice; days are indices, minutes count from the first midnight. */

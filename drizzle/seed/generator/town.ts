@@ -1,3 +1,4 @@
+import { SLOT, SLOTS } from "./circles.ts";
 import { itemAt } from "./item-at.ts";
 import { inventGroundName } from "./names.ts";
 import { createRng, type Rng } from "./rng.ts";
@@ -10,10 +11,6 @@ import {
   TRADES,
   type ZonePlan,
 } from "./sites.ts";
-
-/** The four circles a person may belong to: slots of `Town.member`. */
-export const SLOT = { household: 0, day: 1, friends: 2, relatives: 3 } as const;
-const SLOTS = 4;
 
 /**
  * Everybody who lives in the town, as flat arrays; person i lives in the zone whose range holds i.
@@ -63,6 +60,7 @@ export function buildTown(seed: number, people: number): Town {
   const sites: Site[] = [];
   const districts: string[] = [];
   const zones: Town["zones"] = [];
+  const used = new Set<string>();
   const addGroup = (site: number) => groupSite.push(site) - 1;
   const addSite = (site: Site) => sites.push(site) - 1;
   const join = (person: number, slot: number, group: number) => {
@@ -166,7 +164,12 @@ export function buildTown(seed: number, people: number): Town {
     const trades = TRADES.flatMap((trade) => Array.from({ length: trade.share }, () => trade));
     while (workers.length > 0) {
       const trade = rng.pick(trades);
-      const name = inventGroundName(rng, [trade.kind]);
+      let name = inventGroundName(rng, [trade.kind]);
+      // A large town runs out of names; a demo-sized one never shows two places of one name.
+      for (let again = 0; used.has(name) && again < 8; again += 1) {
+        name = inventGroundName(rng, [trade.kind]);
+      }
+      used.add(name);
       const size = Math.min(40, 3 + Math.round(rng.exponential(9)));
       staff(size, addSite({ name, setting: trade.setting, district: area(), jobs: trade.jobs }));
     }
@@ -221,40 +224,4 @@ function indexGroups(member: Int32Array, groups: number) {
     cursor[group] = position + 1;
   }
   return { groupStart, groupPeople };
-}
-
-/** Group of a person in a slot, or -1. */
-export function groupOf(town: Town, person: number, slot: number): number {
-  return itemAt(town.member, person * SLOTS + slot);
-}
-
-/** A random other member of the person's group in a slot; -1 when there is nobody. */
-export function someoneIn(town: Town, rng: Rng, person: number, slot: number): number {
-  const group = groupOf(town, person, slot);
-  if (group < 0) return -1;
-  const start = itemAt(town.groupStart, group);
-  const size = itemAt(town.groupStart, group + 1) - start;
-  if (size < 2) return -1;
-  const other = itemAt(town.groupPeople, start + rng.below(size));
-  return other === person ? -1 : other;
-}
-
-/** Everybody in the person's group in a slot, themselves left out. */
-export function othersIn(town: Town, person: number, slot: number): number[] {
-  const group = groupOf(town, person, slot);
-  if (group < 0) return [];
-  const people = town.groupPeople.subarray(
-    itemAt(town.groupStart, group),
-    itemAt(town.groupStart, group + 1),
-  );
-  return Array.from(people).filter((other) => other !== person);
-}
-
-/** The slot two people share first, or -1. */
-export function sharedSlot(town: Town, a: number, b: number): number {
-  for (let slot = 0; slot < SLOTS; slot += 1) {
-    const group = groupOf(town, a, slot);
-    if (group >= 0 && group === groupOf(town, b, slot)) return slot;
-  }
-  return -1;
 }

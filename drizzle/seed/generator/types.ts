@@ -33,7 +33,8 @@ export interface OutbreakOptions {
   incubationMax: number;
   /** Opaque ids of the people who interview; at least one. */
   tracers: readonly string[];
-  /** Distinct contact pairs per person on record to aim for: 1.05 for a demo, 3 from 5,000 people. */
+  /** Distinct contact pairs per person on record to aim for: 1.05, and 3 from 5,000 people.
+   * Below 0.9 too few people are named and fewer than `people` come on record. */
   pairsPerPerson?: number;
   /** False leaves out the daily follow-up rows, by far the longest array. */
   followUpChecks?: boolean;
