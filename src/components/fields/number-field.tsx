@@ -32,7 +32,8 @@ export function NumberField({
       label={
         <>
           {label}
-          {unit ? <span className="sr-only"> ({unit})</span> : null}
+          {unit ? " " : null}
+          {unit ? <span className="sr-only">({unit})</span> : null}
         </>
       }
       required={rest.required || rest["aria-required"] === true}

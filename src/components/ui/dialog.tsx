@@ -1,5 +1,5 @@
 import { Dialog as Primitive } from "radix-ui";
-import type { ReactNode } from "react";
+import { type ReactNode, useRef } from "react";
 import { Button } from "./button.tsx";
 
 export type DialogProps = {
@@ -33,13 +33,22 @@ export function Dialog({
   role = "dialog",
   closeLabel = "Close",
 }: DialogProps) {
+  const opener = useRef<Element | null>(null);
   return (
     <Primitive.Root open={open} onOpenChange={onOpenChange}>
       <Primitive.Portal>
         <div className="fixed inset-0 z-40 bg-ink/45" aria-hidden="true" />
         <Primitive.Content
           role={role}
-          onOpenAutoFocus={focusFirst}
+          onOpenAutoFocus={(event) => {
+            opener.current = document.activeElement;
+            focusFirst(event);
+          }}
+          onCloseAutoFocus={(event) => {
+            // The library gives focus back to a trigger of its own only, and ours has none.
+            event.preventDefault();
+            if (opener.current instanceof HTMLElement) opener.current.focus();
+          }}
           data-dialog="open"
           {...(description ? {} : { "aria-describedby": undefined })}
           className={`fixed inset-x-0 bottom-0 z-50 mx-auto flex max-h-[92dvh] w-full flex-col

@@ -56,8 +56,7 @@ export function FigureWithTable({
           }
           data-print="hide"
         >
-          <span className="sr-only">{label}, </span>
-          {asTable ? "as a picture" : "as a table"}
+          <span className="sr-only">{label},</span> {asTable ? "as a picture" : "as a table"}
           <span className="ms-1.5 text-xs" aria-hidden="true">
             T
           </span>
