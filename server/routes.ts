@@ -1,10 +1,16 @@
+import { memberRoutes } from "./features/investigations/members.ts";
 import { investigationPlainRoutes, investigationRoutes } from "./features/investigations/routes.ts";
+import { safeguardRoutes } from "./features/safeguard/routes.ts";
 import { sessionRoutes } from "./features/session/routes.ts";
 import type { AnyRoute, PlainRoute } from "./http/route.ts";
 import type { Services } from "./services.ts";
 
 /** Every route of an investigation; the one list that app, document and tests are made from. */
-export const ROUTES: readonly AnyRoute[] = [...investigationRoutes];
+export const ROUTES: readonly AnyRoute[] = [
+  ...investigationRoutes,
+  ...memberRoutes,
+  ...safeguardRoutes,
+];
 
 /** Routes outside any investigation, and those that stream. */
 export function plainRoutes(services: Services): PlainRoute[] {

@@ -37,7 +37,7 @@ export const PERSON_FIELDS = table("core.person", [
 /** Encrypted columns that say who a person is, with their masked and coarse companions. */
 export const IDENTITY_FIELDS = table("identity.person", [
   ["person_id", "operational", "FFNF"],
-  ["investigation_id", "operational", "FFNF"],
+  ["investigation_id", "operational", "NNNN"],
   ["ref_cipher", "direct", "FFNF", { key: "ref", cipher: true }],
   ["ref_token", "direct", "NNNN"],
   [

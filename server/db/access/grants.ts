@@ -89,6 +89,8 @@ export function views(): string[] {
     `create view views.account_of_email with (security_barrier) as
      select a.id, lower(a.email) as email, a.demo from auth.account a where a.disabled_at is null
        and (select core.ctx_role()) in ('supervisor', 'officer')`,
+    `create view views.field_right with (security_barrier) as
+     select role, field from auth.field_right where (select core.ctx_role()) = 'officer'`,
   );
   return out;
 }
@@ -138,7 +140,7 @@ export function grants(): string[] {
   for (const role of ["supervisor", "officer"] as const) {
     out.push(`grant select on views.member, views.account_of_email to ${loginOf(role)}`);
   }
-  out.push(`grant select on audit.event to ${loginOf("officer")}`);
+  out.push(`grant select on audit.event, views.field_right to ${loginOf("officer")}`);
   for (const table of CORE_TABLES) out.push(`grant select on ${table} to ${loginOf("system")}`);
   out.push(`grant update (done_at) on core.outbox to ${loginOf("system")}`);
   out.push(`grant update (state, progress) on core.import to ${loginOf("system")}`);

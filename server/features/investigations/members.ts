@@ -1,0 +1,106 @@
+import { sql } from "drizzle-orm";
+import { z } from "zod";
+import { listQuery, receipt } from "../../../shared/contracts/common.ts";
+import { memberInput, memberList } from "../../../shared/contracts/investigations.ts";
+import { recordEvent } from "../../audit/record-event.ts";
+import type { Tx } from "../../db/with-tx.ts";
+import { HttpProblem, invalid } from "../../http/problem.ts";
+import { type Actor, type AnyRoute, defineRoute } from "../../http/route.ts";
+import {
+  accountOfEmail,
+  endMember,
+  holdsRole,
+  insertMember,
+  listMembers,
+  liveMember,
+  lockMembers,
+  teamOfName,
+} from "./members-store.ts";
+import { loadInvestigation } from "./store.ts";
+
+const LEADERS = ["supervisor", "officer"] as const;
+const params = z.object({ id: z.uuid() });
+const memberParams = params.extend({ memberId: z.uuid() });
+
+async function recordMember(
+  tx: Tx,
+  actor: Actor,
+  action: "member.added" | "member.ended",
+  role: string,
+) {
+  await recordEvent(tx, {
+    action,
+    accountId: actor.accountId,
+    role: actor.role,
+    investigationId: actor.investigationId,
+    fields: [`role:${role}`],
+  });
+}
+
+/** Who works on the investigation: list, add by e-mail, end. */
+export const memberRoutes: AnyRoute[] = [
+  defineRoute({
+    method: "get",
+    path: "/api/investigations/:id/members",
+    summary: "Members of the investigation",
+    policy: LEADERS,
+    params,
+    query: listQuery,
+    output: memberList,
+    async run({ tx, query }) {
+      if (query.sort) throw invalid({ path: "sort", code: "not_sortable" });
+      const { items, total } = await listMembers(tx, query);
+      return { items, total, page: query.page, pageSize: query.pageSize };
+    },
+  }),
+  defineRoute({
+    method: "post",
+    path: "/api/investigations/:id/members",
+    summary: "Give an account a role here",
+    policy: LEADERS,
+    params,
+    body: memberInput,
+    output: receipt,
+    creates: true,
+    async run({ tx, actor, body }) {
+      const account = await accountOfEmail(tx, body.email);
+      if (!account) throw invalid({ path: "email", code: "account_unknown" });
+      const investigation = await loadInvestigation(tx, actor.investigationId);
+      if (account.demo && !investigation.invented) {
+        throw invalid({ path: "email", code: "demo_only" });
+      }
+      await lockMembers(tx, actor.investigationId);
+      if (await holdsRole(tx, account.id, body.role)) {
+        throw invalid({ path: "role", code: "already_member" });
+      }
+      const teamId = body.team ? await teamOfName(tx, actor.investigationId, body.team) : null;
+      const id = await insertMember(tx, actor, { accountId: account.id, role: body.role, teamId });
+      await recordMember(tx, actor, "member.added", body.role);
+      await tx.execute(sql`select core.announce('members', ${id}::uuid, null)`);
+      return { id };
+    },
+  }),
+  defineRoute({
+    method: "delete",
+    path: "/api/investigations/:id/members/:memberId",
+    summary: "End a membership",
+    policy: LEADERS,
+    params: memberParams,
+    output: z.null(),
+    status: 204,
+    async run({ tx, actor, params: { memberId } }) {
+      await lockMembers(tx, actor.investigationId);
+      const member = await liveMember(tx, memberId);
+      if (!member) throw new HttpProblem("not_found");
+      // Somebody must be left who can let others in.
+      if (member.otherLeaders === 0 && (LEADERS as readonly string[]).includes(member.role)) {
+        throw new HttpProblem("conflict", { errors: [{ path: "memberId", code: "last_leader" }] });
+      }
+      // Before the change: whoever ends their own membership has no context after it.
+      await recordMember(tx, actor, "member.ended", member.role);
+      await tx.execute(sql`select core.announce('members', ${memberId}::uuid, null)`);
+      await endMember(tx, memberId);
+      return null;
+    },
+  }),
+];
