@@ -9,7 +9,7 @@ import { LockHeldError, takeLock, writeWhole } from "./lib/locks.mjs";
 import { checkNode, ensurePackages } from "./lib/packages.mjs";
 import { complain, PlainError, runScript, say } from "./lib/plain.mjs";
 import { startCluster, stopCluster } from "./lib/postgres.mjs";
-import { endProcess, isAlive, processIdentity, startedBy } from "./lib/processes.mjs";
+import { endProcess, isAlive, processIdentity, startedBy, stopCaptured } from "./lib/processes.mjs";
 import { dataFolder, makeDataFolder, projectRoot } from "./lib/project.mjs";
 import { checkSettings } from "./lib/settings.mjs";
 
@@ -86,6 +86,7 @@ function listenForEnd() {
   const ask = (why) => {
     if (first === 0) {
       first = Date.now();
+      stopCaptured();
       resolve(why);
     } else if (Date.now() - first > SAME_SIGNAL_MS) {
       harder();

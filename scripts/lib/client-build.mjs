@@ -51,6 +51,7 @@ export async function ensureClientBuild(root) {
       cwd: root,
       env: { ...process.env, NODE_ENV: "production" },
       timeoutMs: 300_000,
+      mayStop: true,
     });
     if (code !== 0) throw new PlainError(`the client build failed:\n${lastLines(output)}`);
     writeFileSync(stamp, wanted);

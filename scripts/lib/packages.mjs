@@ -58,7 +58,7 @@ export async function ensurePackages(root, { dev }) {
     const { code, output } = await runCaptured(
       byNode ? process.execPath : "npm",
       byNode ? [npm, ...args] : args,
-      { cwd: root },
+      { cwd: root, mayStop: true },
     );
     if (code !== 0) {
       throw new PlainError(`npm ci failed (exit code ${code}):\n${lastLines(output)}`);
@@ -86,7 +86,11 @@ export async function installDebianPackages(names, what) {
     [...patient, "-qq", ...command.split(" ").slice(1)],
   ];
   for (const args of steps) {
-    const { code, output } = await runCaptured("apt-get", args, { env });
+    const { code, output } = await runCaptured("apt-get", args, {
+      env,
+      // Out of the terminal's reach: broken off half-way it would leave dpkg to be mended by hand.
+      detached: true,
+    });
     // A failed update alone may leave lists that still do: only the installation decides.
     if (code !== 0 && args !== steps[0]) {
       throw new PlainError(`${what} could not be installed (${command}):\n${lastLines(output, 6)}`);

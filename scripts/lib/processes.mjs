@@ -86,11 +86,22 @@ export async function endProcess(identity, steps) {
   return !isAlive(identity);
 }
 
+const stoppable = new Set();
+
+/** Ends the commands that runCaptured was told may be broken off. */
+export function stopCaptured() {
+  for (const child of stoppable) child.kill("SIGTERM");
+}
+
 /**
  * Runs a command to its end and keeps what it printed.
  * @returns {Promise<{code: number, output: string}>} code 127 when it could not be started
  */
-export function runCaptured(command, args, { input, timeoutMs = 900_000, ...options } = {}) {
+export function runCaptured(
+  command,
+  args,
+  { input, timeoutMs = 900_000, mayStop = false, ...options } = {},
+) {
   return new Promise((resolve) => {
     const child = spawn(command, args, {
       ...options,
@@ -98,6 +109,10 @@ export function runCaptured(command, args, { input, timeoutMs = 900_000, ...opti
       timeout: timeoutMs,
       killSignal: "SIGKILL",
     });
+    if (mayStop) {
+      stoppable.add(child);
+      child.on("close", () => stoppable.delete(child));
+    }
     let output = "";
     const keep = (chunk) => {
       output = (output + chunk).slice(-200_000);

@@ -1,5 +1,5 @@
 // Where the project and its data live.
-import { existsSync, mkdirSync, statSync } from "node:fs";
+import { accessSync, constants, existsSync, mkdirSync, statSync } from "node:fs";
 import { dirname, resolve } from "node:path";
 import { fileURLToPath } from "node:url";
 import { PlainError } from "./plain.mjs";
@@ -29,6 +29,13 @@ export function makeDataFolder(dir) {
     if (!statSync(dir).isDirectory()) throw Object.assign(new Error(), { code: "ENOTDIR" });
   } catch (error) {
     throw new PlainError(`the data folder ${dir} cannot be made (${error.code})`);
+  }
+  try {
+    accessSync(dir, constants.W_OK | constants.X_OK);
+  } catch {
+    throw new PlainError(
+      `the data folder ${dir} belongs to another user; start as that user or set STRANDLINE_DATA to a folder of your own`,
+    );
   }
   return dir;
 }

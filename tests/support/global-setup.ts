@@ -1,6 +1,7 @@
 import { existsSync } from "node:fs";
 import { resolve } from "node:path";
 import { pathToFileURL } from "node:url";
+import pg from "pg";
 import type { TestProject } from "vitest/node";
 import { startCluster, stopCluster } from "../../scripts/lib/postgres.mjs";
 
@@ -13,6 +14,20 @@ declare module "vitest" {
 
 type DatabaseSupport = { prepareTemplate?: (adminUrl: string) => Promise<unknown> };
 
+/** Runs that were killed left their copies; when the cluster starts anew nobody uses them. */
+async function dropLeftOvers(adminUrl: string): Promise<void> {
+  const client = new pg.Client({ connectionString: adminUrl });
+  await client.connect();
+  try {
+    const { rows } = await client.query<{ name: string }>(
+      "select quote_ident(datname) as name from pg_database where datname like 'strandline\\_test\\_%'",
+    );
+    for (const { name } of rows) await client.query(`drop database ${name} with (force)`);
+  } finally {
+    await client.end();
+  }
+}
+
 /**
  * Starts the private test cluster, or joins the one another run holds, and has the template
  * database made that each test file copies. The last run to end stops the cluster.
@@ -24,6 +39,7 @@ export async function setup(project: TestProject): Promise<() => Promise<void>> 
     await stopCluster(folder);
   };
   try {
+    if (!cluster.reused) await dropLeftOvers(cluster.url);
     const support = resolve(project.config.root, "tests/support/database.ts");
     if (existsSync(support)) {
       const module: DatabaseSupport = await import(pathToFileURL(support).href);
