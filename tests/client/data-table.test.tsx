@@ -24,7 +24,7 @@ const rows: readonly Row[] = [
 ];
 
 const columns: readonly DataColumn<Row>[] = [
-  { id: "study", header: "Study number", cell: (row) => row.study, hideable: false },
+  { id: "study", header: "Study number", cell: (row) => row.study },
   {
     id: "onset",
     header: "Onset",

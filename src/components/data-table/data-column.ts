@@ -10,7 +10,7 @@ export type DataColumn<Row> = {
   numeric?: boolean;
   /** Name of the server's sort key; without it the column cannot be sorted. */
   sortKey?: string;
-  /** False keeps the column out of the column choice (default true). */
+  /** False keeps the column out of the column choice; the one that names the row always stays. */
   hideable?: boolean;
   /** The cell that names the row; the first column by default. */
   rowHeader?: boolean;

@@ -107,8 +107,10 @@ export function DataTable<Row extends object>(props: DataTableProps<Row>) {
       : undefined,
   );
 
-  const choice = onHiddenColumnsChange ? columns.filter((column) => column.hideable !== false) : [];
   const rowHeaderId = (columns.find((column) => column.rowHeader) ?? columns[0])?.id;
+  const choice = onHiddenColumnsChange
+    ? columns.filter((column) => column.hideable !== false && column.id !== rowHeaderId)
+    : [];
 
   return (
     <div>
@@ -142,7 +144,7 @@ export function DataTable<Row extends object>(props: DataTableProps<Row>) {
         <>
           <div
             // Positioned, or words for readers only would widen the page past the scrolled part.
-            className="relative max-h-[70vh] overflow-auto"
+            className="relative -mx-1 max-h-[70vh] overflow-auto px-1"
             aria-busy={props.updating || undefined}
             data-table-scroll=""
           >
@@ -179,7 +181,7 @@ export function DataTable<Row extends object>(props: DataTableProps<Row>) {
                           onKeyDown: (event) => keys.onKeyDown(event, index),
                           onFocus: () => keys.setActive(index),
                           className:
-                            "cursor-pointer hover:bg-paper-2 focus-visible:-outline-offset-2",
+                            "cursor-pointer hover:bg-paper-2 focus-visible:outline-offset-0",
                         }
                       : {})}
                     onClick={(event) => {

@@ -32,7 +32,7 @@ export function RowCell<Row>({ column, row, head, to }: RowCellProps<Row>) {
         <Link
           to={to}
           tabIndex={-1}
-          className="underline decoration-rule underline-offset-4 hover:decoration-kelp"
+          className="-my-0.5 inline-block py-0.5 underline decoration-rule underline-offset-4 hover:decoration-kelp"
         >
           {content}
         </Link>

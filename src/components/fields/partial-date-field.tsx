@@ -51,6 +51,7 @@ export function PartialDateField({
   const parsed = parsePartialDate(value, { today, allowMonth, answers });
   const ownError = left && parsed.kind === "invalid" ? parsed.reason : undefined;
   const shownError = error ?? ownError;
+  const read = reading(parsed, today);
 
   function settle() {
     setLeft(true);
@@ -72,7 +73,10 @@ export function PartialDateField({
           placeholder={allowMonth ? "YYYY-MM-DD or YYYY-MM" : "YYYY-MM-DD"}
           aria-required={required || undefined}
           aria-invalid={shownError ? true : undefined}
-          aria-describedby={[`${id}-read`, describedBy(id, { label, hint, error: shownError })]
+          aria-describedby={[
+            read ? `${id}-read` : "",
+            describedBy(id, { label, hint, error: shownError }),
+          ]
             .filter(Boolean)
             .join(" ")}
           className={`field-box min-w-0 flex-1 ${
@@ -97,9 +101,12 @@ export function PartialDateField({
           />
         ) : null}
       </span>
-      <p id={`${id}-read`} className="mt-0.5 min-h-5 text-sm leading-5 text-ink-2">
-        {reading(parsed, today)}
-      </p>
+      {/* Keeps its line while something is being typed, so that the form does not jump. */}
+      {shownError && !read ? null : (
+        <p id={`${id}-read`} className="mt-0.5 min-h-5 text-sm leading-5 text-ink-2">
+          {read}
+        </p>
+      )}
     </FieldFrame>
   );
 }

@@ -12,25 +12,25 @@ export function ThresholdTable({ label, input }: { label: string; input: Thresho
       value: formatNumber(input.value, { decimals: 2 }),
       interval: formatInterval(input.interval),
     },
-    { id: "giant", what: "giant component, 1 pair a person", value: "1", interval: noValue },
+    { id: "giant", what: "giant component, 1 pair a person", value: "1", interval: "" },
     {
       id: "window",
       what: "critical window",
-      value: noValue,
+      value: "",
       interval: half === null ? noValue : formatInterval([Math.max(0, 1 - half), 1 + half]),
     },
     {
       id: "connectivity",
       what: "all connected, ln n",
       value: formatNumber(connectivity(input), { decimals: 2 }),
-      interval: noValue,
+      interval: "",
     },
-    { id: "n", what: "people, n", value: formatNumber(input.n), interval: noValue },
+    { id: "n", what: "people, n", value: formatNumber(input.n), interval: "" },
     ...(input.trail ?? []).map(({ day, value }) => ({
       id: day,
       what: `as of ${formatDay(day)}`,
       value: formatNumber(value, { decimals: 2 }),
-      interval: noValue,
+      interval: "",
     })),
   ];
   return (

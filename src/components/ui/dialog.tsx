@@ -37,7 +37,7 @@ export function Dialog({
   return (
     <Primitive.Root open={open} onOpenChange={onOpenChange}>
       <Primitive.Portal>
-        <div className="fixed inset-0 z-40 bg-ink/45" aria-hidden="true" />
+        <div className="veil fixed inset-0 z-40" aria-hidden="true" />
         <Primitive.Content
           role={role}
           onOpenAutoFocus={(event) => {
@@ -49,6 +49,7 @@ export function Dialog({
             event.preventDefault();
             if (opener.current instanceof HTMLElement) opener.current.focus();
           }}
+          aria-modal="true"
           data-dialog="open"
           {...(description ? {} : { "aria-describedby": undefined })}
           className={`fixed inset-x-0 bottom-0 z-50 mx-auto flex max-h-[92dvh] w-full flex-col
