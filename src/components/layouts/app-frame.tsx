@@ -66,8 +66,8 @@ export function AppFrame({
           </Link>
           <nav
             aria-label="Rooms"
-            className="order-4 -mx-4 flex w-[calc(100%+2rem)] gap-5 overflow-x-auto px-4 sm:-mx-6
-              sm:w-[calc(100%+3rem)] sm:px-6 lg:order-2 lg:mx-0 lg:w-auto lg:overflow-visible
+            className="order-4 -mx-4 flex w-[calc(100%+2rem)] gap-3.5 overflow-x-auto px-4 sm:-mx-6
+              sm:w-[calc(100%+3rem)] sm:gap-5 sm:px-6 lg:order-2 lg:mx-0 lg:w-auto lg:overflow-visible
               lg:px-0"
           >
             {rooms.map((room) => (
