@@ -1,7 +1,10 @@
 import { memberRoutes } from "./features/investigations/members.ts";
 import { investigationPlainRoutes, investigationRoutes } from "./features/investigations/routes.ts";
+import { peopleRoutes } from "./features/people/routes.ts";
+import { placeRoutes } from "./features/places/routes.ts";
 import { safeguardRoutes } from "./features/safeguard/routes.ts";
 import { sessionRoutes } from "./features/session/routes.ts";
+import { testRoutes } from "./features/tests/routes.ts";
 import type { AnyRoute, PlainRoute } from "./http/route.ts";
 import type { Services } from "./services.ts";
 
@@ -9,6 +12,9 @@ import type { Services } from "./services.ts";
 export const ROUTES: readonly AnyRoute[] = [
   ...investigationRoutes,
   ...memberRoutes,
+  ...peopleRoutes,
+  ...testRoutes,
+  ...placeRoutes,
   ...safeguardRoutes,
 ];
 

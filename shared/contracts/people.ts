@@ -65,15 +65,13 @@ export const personRow = z
   .omit({ note: true, outcome: true, outcomeDate: true });
 export type PersonRow = z.output<typeof personRow>;
 
-const editable = z
-  .strictObject(personFields)
-  .omit({
-    interviewDate: true,
-    interviewed: true,
-    specimenDate: true,
-    resultDate: true,
-    result: true,
-  });
+const editable = z.strictObject(personFields).omit({
+  interviewDate: true,
+  interviewed: true,
+  specimenDate: true,
+  resultDate: true,
+  result: true,
+});
 
 /**
  * Change of a person: only the keys present are changed. `assignedTo` is an account id or null.
@@ -227,11 +225,14 @@ export const pairAnswer = z.strictObject({
 export type PersonPair = z.output<typeof pairAnswer>;
 
 const windowAnswer = z.strictObject({ from: z.string(), to: z.string() }).nullable();
+const infectiousAnswer = z
+  .strictObject({ from: z.string(), to: z.string(), basis: z.enum(["onset", "specimen"]) })
+  .nullable();
 
 /** What stands on a person's page beside the person. */
 export function personPage(role: Role) {
   return personAnswer(role).extend({
-    windows: z.strictObject({ infectious: windowAnswer, source: windowAnswer }),
+    windows: z.strictObject({ infectious: infectiousAnswer, source: windowAnswer }),
     monitoring: z
       .strictObject({ dayZero: z.string(), lastDueDay: z.string(), dueDays: z.array(z.string()) })
       .nullable(),
@@ -267,7 +268,7 @@ export function personPage(role: Role) {
 }
 export type PersonPage = Person & {
   windows: {
-    infectious: { from: string; to: string } | null;
+    infectious: { from: string; to: string; basis: "onset" | "specimen" } | null;
     source: { from: string; to: string } | null;
   };
   monitoring: { dayZero: string; lastDueDay: string; dueDays: string[] } | null;

@@ -81,7 +81,7 @@ export async function placeFor(
 export async function listPlaces(
   tx: Tx,
   actor: Actor,
-  options: { q: string | undefined; page: number; pageSize: number },
+  options: { q?: string | undefined; page: number; pageSize: number },
 ): Promise<{ rows: PlaceRow[]; total: number }> {
   const pattern = options.q ? `%${options.q.replace(/[\\%_]/g, "\\$&")}%` : null;
   const where = sql`investigation_id = ${actor.investigationId}
