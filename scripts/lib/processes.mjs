@@ -88,9 +88,9 @@ export async function endProcess(identity, steps) {
 
 const stoppable = new Set();
 
-/** Ends the commands that runCaptured was told may be broken off. */
+/** Ends the commands that may be broken off; npm would first finish its work on any other signal. */
 export function stopCaptured() {
-  for (const child of stoppable) child.kill("SIGTERM");
+  for (const child of stoppable) child.kill("SIGKILL");
 }
 
 /**
