@@ -4,7 +4,7 @@ import { existsSync, readdirSync, readFileSync, rmSync, statSync, writeFileSync 
 import { join, relative } from "node:path";
 import { takeLock } from "./locks.mjs";
 import { PlainError, say } from "./plain.mjs";
-import { lastLines, runCaptured } from "./processes.mjs";
+import { firstLines, runCaptured } from "./processes.mjs";
 import { makeDataFolder } from "./project.mjs";
 
 const SOURCES = ["src", "shared", "public", "index.html", "package-lock.json", "tsconfig.json"];
@@ -49,11 +49,11 @@ export async function ensureClientBuild(root) {
     const vite = join(root, "node_modules", "vite", "bin", "vite.js");
     const { code, output } = await runCaptured(process.execPath, [vite, "build"], {
       cwd: root,
-      env: { ...process.env, NODE_ENV: "production" },
+      env: { ...process.env, NODE_ENV: "production", NO_COLOR: "1" },
       timeoutMs: 300_000,
       mayStop: true,
     });
-    if (code !== 0) throw new PlainError(`the client build failed:\n${lastLines(output)}`);
+    if (code !== 0) throw new PlainError(`the client build failed:\n${firstLines(output)}`);
     writeFileSync(stamp, wanted);
   } finally {
     lock.release();

@@ -134,3 +134,8 @@ export function runCaptured(
 export function lastLines(text, count = 15) {
   return text.trimEnd().split("\n").slice(-count).join("\n");
 }
+
+/** The first lines of a text: where a compiler says what is wrong, before its own stack. */
+export function firstLines(text, count = 20) {
+  return text.trim().split("\n").slice(0, count).join("\n");
+}
