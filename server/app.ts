@@ -95,12 +95,8 @@ export function createApp(services: Services, dev?: express.Handler): Express {
   app.use("/api", sessions(services));
   app.use("/api", async (request: Request, response: Response, next: NextFunction) => {
     if (request.get("x-strandline-background") === "1" && request.session) {
-      // Live updates are not activity: the idle clock goes on.
-      Object.defineProperty(request.session, "touch", {
-        value: () => request.session,
-        enumerable: false,
-        configurable: true,
-      });
+      // Live updates are not activity: the store leaves the idle clock of a marked session alone.
+      Object.defineProperty(request.session, "background", { value: true, enumerable: false });
     }
     response.locals.who = await whoIsAsking(request, services.pools.auth);
     next();

@@ -14,6 +14,8 @@ declare module "express-session" {
     nonce: string | null;
     /** Set only while a session is being made: no other save may create a row. */
     fresh?: boolean;
+    /** Set on a request that nobody's hand caused; it does not move the idle end. */
+    background?: boolean;
   }
 }
 
@@ -70,6 +72,10 @@ export class SessionStore extends PgStore {
   }
 
   override touch(sid: string, data: session.SessionData, done: Done = () => {}) {
+    if (data.background) {
+      done();
+      return;
+    }
     const left = data.cookie.expires ? new Date(data.cookie.expires).getTime() - Date.now() : 0;
     const seconds = Math.max(1, Math.round(left / 1000));
     this.#pool
