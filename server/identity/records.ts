@@ -69,13 +69,19 @@ export const placeName = {
     open(keys.seal, `identity.place|name_cipher|${placeId}`, cipher).toString(),
 };
 
-interface Token {
+export interface Token {
   person_id: string;
   kind: number;
   token: string;
 }
 
-function tokensOf(keys: InvestigationKeys, personId: string, identity: Identity, country: string) {
+/** Search tokens of a person's identity, binary in base64. */
+export function identityTokens(
+  keys: InvestigationKeys,
+  personId: string,
+  identity: Identity,
+  country: string,
+): Token[] {
   const out: Token[] = [];
   const add = (kind: number, value: string) =>
     out.push({
@@ -95,7 +101,12 @@ function tokensOf(keys: InvestigationKeys, personId: string, identity: Identity,
   return out;
 }
 
-function rowOf(keys: InvestigationKeys, personId: string, identity: Identity) {
+/** The stored row of a person's identity (ciphertext, masked and coarse forms), binary in base64. */
+export function sealIdentity(
+  keys: InvestigationKeys,
+  personId: string,
+  identity: Identity,
+): Record<string, unknown> {
   const row: Record<string, unknown> = { person_id: personId, has: [] as string[] };
   for (const key of IDENTITY_KEYS) {
     const value = identity[key];
@@ -125,9 +136,9 @@ export async function putPeople(
   country: string,
 ): Promise<void> {
   if (people.length === 0) return;
-  const rows = people.map(({ personId, identity }) => rowOf(keys, personId, identity));
+  const rows = people.map(({ personId, identity }) => sealIdentity(keys, personId, identity));
   const tokens = people.flatMap(({ personId, identity }) =>
-    tokensOf(keys, personId, identity, country),
+    identityTokens(keys, personId, identity, country),
   );
   const kinds = new Set<number>();
   for (const { identity } of people) {

@@ -7,7 +7,7 @@ import {
   switchInput,
   welcomeAnswer,
 } from "../../../shared/contracts/session.ts";
-import { ABSOLUTE_HOURS, HOME_ROOM, IDLE_MINUTES, ROLES, ROOMS_OF } from "../../../shared/roles.ts";
+import { ABSOLUTE_HOURS, HOME_ROOM, IDLE_MINUTES, ROOMS_OF } from "../../../shared/roles.ts";
 import { recordEvent } from "../../audit/record-event.ts";
 import { now } from "../../clock.ts";
 import { withTx } from "../../db/with-tx.ts";
@@ -42,15 +42,6 @@ function presentSession(who: SignedIn, startedAt: string): z.input<typeof sessio
     idleMinutes: role ? IDLE_MINUTES[role] : Math.min(...Object.values(IDLE_MINUTES)),
     endsAt: new Date(new Date(startedAt).getTime() + ABSOLUTE_HOURS * 3_600_000).toISOString(),
   };
-}
-
-/** The membership a sign-in starts in: the first one, by age of investigation. */
-function firstMembership(memberships: readonly Membership[]): Membership | null {
-  const order = (one: Membership) => ROLES.indexOf(one.role);
-  const first = memberships[0];
-  if (!first) return null;
-  const same = memberships.filter((one) => one.investigationId === first.investigationId);
-  return same.sort((a, b) => order(a) - order(b))[0] ?? null;
 }
 
 /** Begins a session and writes its event; answers with the session. */
@@ -142,7 +133,8 @@ export function sessionRoutes(services: Services): PlainRoute[] {
         }
         const loaded = await loadAccount(services.pools.auth, account.id);
         if (!loaded) throw new HttpProblem("sign_in_failed");
-        const acting = firstMembership(loaded.memberships);
+        // The oldest membership is where a sign-in starts.
+        const acting = loaded.memberships[0] ?? null;
         return start(request, services, account, acting, "session.started", now().toISOString());
       },
     }),
