@@ -34,6 +34,21 @@ language sql stable security definer set search_path = '' as $$
          and m.role = c.role and m.ended_at is null and m.team_id is not null)
 $$;
 
+-- Is a person held: assigned to the account, or to a team of theirs? Called by the functions below
+-- with the context they have read already; no login may call it.
+create or replace function core.ctx_holds(
+  p_account uuid, p_investigation uuid, p_role text, p_person uuid) returns boolean
+language sql stable set search_path = '' as $$
+  select exists (
+    select 1 from core.person h
+    where h.id = p_person and h.investigation_id = p_investigation and h.withdrawn_at is null
+      and (h.assigned_account_id = p_account
+        or exists (
+          select 1 from core.member m
+          where m.team_id = h.assigned_team_id and m.account_id = p_account
+            and m.investigation_id = p_investigation and m.role = p_role and m.ended_at is null)))
+$$;
+
 -- The tracer's scope: held people and those one contact pair away.
 create or replace function core.ctx_people() returns uuid[]
 language sql stable security definer set search_path = '' as $$
@@ -70,7 +85,8 @@ language sql stable security definer set search_path = '' as $$
   ) scope
 $$;
 
--- May the acting person attach something to this person? In scope, or made by them just now.
+-- May the acting person attach something to this person? In scope, or made by them just now. Asked
+-- once per row of a form, so it looks at this person and their pairs only, never at a whole scope.
 create or replace function core.ctx_can_link(p_person uuid) returns boolean
 language sql stable security definer set search_path = '' as $$
   select exists (
@@ -78,7 +94,15 @@ language sql stable security definer set search_path = '' as $$
     join core.person p on p.id = p_person and p.investigation_id = c.investigation_id
     where c.role in ('supervisor', 'officer')
        or p.recorded_by = c.account_id
-       or p.id = any ((select core.ctx_people())::uuid[]))
+       or core.ctx_holds(c.account_id, c.investigation_id, c.role, p.id)
+       or exists (
+         select 1 from (
+           select cp.person_b as id from core.contact_pair cp
+           where cp.person_a = p.id and cp.withdrawn_at is null
+           union all
+           select cp.person_a from core.contact_pair cp
+           where cp.person_b = p.id and cp.withdrawn_at is null) n
+         where core.ctx_holds(c.account_id, c.investigation_id, c.role, n.id)))
 $$;
 
 create or replace function core.ctx_can_tell(p_pair uuid) returns boolean
@@ -88,12 +112,24 @@ language sql stable security definer set search_path = '' as $$
     where cp.id = p_pair and core.ctx_can_link(cp.person_a) and core.ctx_can_link(cp.person_b))
 $$;
 
--- Identity scope of the acting role, as one predicate.
+-- Identity scope of the acting role, as one predicate: the same people as core.ctx_named_people(),
+-- asked from the person's side.
 create or replace function core.ctx_may_name(p_person uuid) returns boolean
 language sql stable security definer set search_path = '' as $$
   select exists (
     select 1 from core.ctx() c
     join core.person p on p.id = p_person and p.investigation_id = c.investigation_id
     where c.role in ('supervisor', 'officer')
-       or (c.role = 'tracer' and p.id = any ((select core.ctx_named_people())::uuid[])))
+       or (c.role = 'tracer' and (
+         core.ctx_holds(c.account_id, c.investigation_id, c.role, p.id)
+         or ((p.classification is null or p.classification in ('contact', 'not_a_case')) and exists (
+           select 1 from (
+             select cp.person_b as id from core.contact_pair cp
+             where cp.person_a = p.id and cp.withdrawn_at is null
+             union all
+             select cp.person_a from core.contact_pair cp
+             where cp.person_b = p.id and cp.withdrawn_at is null) n
+           join core.person q on q.id = n.id
+             and q.classification in ('confirmed', 'probable', 'suspected')
+           where core.ctx_holds(c.account_id, c.investigation_id, c.role, n.id))))))
 $$;

@@ -14,6 +14,83 @@ language sql volatile security definer set search_path = '' as $$
   returning next_number - greatest(p_count, 0)
 $$;
 
+-- The contact pairs of one person with others, made or revived where needed: a pair may exist of
+-- which the acting person sees nothing, and must not be made twice. `made` is true for new ones.
+create or replace function core.pairs_for(p_person uuid, p_others uuid[])
+returns table (other uuid, pair uuid, made boolean)
+language plpgsql volatile security definer set search_path = '' as $$
+declare
+  c record;
+  v_made uuid[];
+begin
+  select * into c from core.ctx();
+  if c.account_id is null or c.role = 'epidemiologist' or not core.ctx_can_link(p_person)
+    or exists (select 1 from unnest(p_others) u (id) where not core.ctx_can_link(u.id)) then
+    raise insufficient_privilege using message = 'no context';
+  end if;
+  with put as (
+    insert into core.contact_pair as cp (id, investigation_id, person_a, person_b)
+    select gen_random_uuid(), c.investigation_id, least(u.id, p_person), greatest(u.id, p_person)
+    from (select distinct o.id from unnest(p_others) o (id) order by o.id) u
+    on conflict (investigation_id, person_a, person_b) do update set withdrawn_at = null
+      where cp.withdrawn_at is not null
+    returning cp.id)
+  select coalesce(array_agg(put.id), '{}') into v_made from put;
+  -- A statement of its own: it also sees a pair that another transaction made meanwhile.
+  return query
+    select u.id, cp.id, cp.id = any (v_made)
+    from (select distinct o.id from unnest(p_others) o (id)) u
+    join core.contact_pair cp on cp.investigation_id = c.investigation_id
+      and cp.person_a = least(u.id, p_person) and cp.person_b = greatest(u.id, p_person);
+end $$;
+
+-- Contacts under follow-up whom the acting person may see, with day 0: the latest last exposure day
+-- to a case (or to someone not yet classified) over all their pairs, because one contact has one
+-- follow-up whoever named them. Partial and missing days give no day 0. A person not yet classified
+-- counts as a contact once a case has named them.
+create or replace function core.follow_up_days()
+returns table (person_id uuid, day_zero text)
+language plpgsql stable security definer set search_path = '' as $$
+declare
+  c record;
+  v_people uuid[];
+begin
+  select * into c from core.ctx();
+  if c.account_id is null or c.role not in ('tracer', 'supervisor') then
+    raise insufficient_privilege using message = 'no context';
+  end if;
+  if c.role = 'tracer' then
+    select coalesce(array_agg(p.id), '{}') into v_people from core.person p
+    where p.id = any ((select core.ctx_people())::uuid[]) and p.withdrawn_at is null
+      and (p.classification = 'contact' or p.classification is null);
+  else
+    select coalesce(array_agg(p.id), '{}') into v_people from core.person p
+    where p.investigation_id = c.investigation_id and p.withdrawn_at is null
+      and (p.classification = 'contact' or p.classification is null);
+  end if;
+  return query
+    with sides as (
+      select cp.id, cp.person_a as contact, cp.person_b as source from core.contact_pair cp
+      where cp.person_a = any (v_people) and cp.withdrawn_at is null
+      union all
+      select cp.id, cp.person_b, cp.person_a from core.contact_pair cp
+      where cp.person_b = any (v_people) and cp.withdrawn_at is null),
+    told as (
+      select s.contact,
+        max(e.last_exposure) filter (where e.last_exposure ~ '^\d{4}-\d{2}-\d{2}$') as day_zero
+      from sides s
+      join core.person p on p.id = s.contact
+      join core.person q on q.id = s.source and q.withdrawn_at is null
+      join core.exposure e on e.pair_id = s.id and e.withdrawn_at is null
+      where q.classification in ('confirmed', 'probable', 'suspected')
+          and (p.classification = 'contact' or e.named_by = q.id)
+        or q.classification is null and p.classification = 'contact'
+      group by s.contact)
+    select p.id, t.day_zero from core.person p
+    left join told t on t.contact = p.id
+    where p.id = any (v_people) and (p.classification = 'contact' or t.contact is not null);
+end $$;
+
 -- The message of an event: ids and versions only; delivered when the transaction commits.
 create or replace function core.announce(p_topic text, p_entity uuid, p_version bigint) returns void
 language plpgsql volatile security definer set search_path = '' as $$

@@ -202,6 +202,12 @@ begin
   if c.role not in ('tracer', 'supervisor') or not core.ctx_can_link(p_person) then
     raise insufficient_privilege using message = 'no context';
   end if;
+  -- A draft that was submitted meanwhile is not brought back by a page that still holds it.
+  if p_version > 0 and not exists (
+    select 1 from identity.interview_draft d
+    where d.person_id = p_person and d.account_id = c.account_id) then
+    return null;
+  end if;
   insert into identity.interview_draft as d (person_id, account_id, investigation_id, body_cipher, version)
   values (p_person, c.account_id, c.investigation_id, p_body, 1)
   on conflict (person_id, account_id) do update

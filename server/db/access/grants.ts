@@ -16,7 +16,7 @@ function listed(table: string): string[] {
 }
 
 /** Functions a role's login may call; everything else is revoked from everyone. */
-const FUNCTIONS: Record<string, readonly Role[]> = {
+const FUNCTIONS: Record<string, readonly (Role | "system")[]> = {
   "core.ctx()": ROLES,
   "core.ctx_user()": ROLES,
   "core.ctx_investigation()": ROLES,
@@ -27,9 +27,14 @@ const FUNCTIONS: Record<string, readonly Role[]> = {
   "core.ctx_can_link(uuid)": ["tracer", "supervisor", "officer"],
   "core.ctx_can_tell(uuid)": ["tracer", "supervisor", "officer"],
   "core.ctx_may_name(uuid)": ["tracer", "supervisor", "officer"],
+  "core.ctx_holds(uuid, uuid, text, uuid)": [],
+  "core.pairs_for(uuid, uuid[])": ["tracer", "supervisor", "officer"],
+  "core.follow_up_days()": ["tracer", "supervisor"],
   "core.bump_graph()": ["tracer", "supervisor", "officer"],
   "core.next_numbers(integer)": ["tracer", "supervisor", "officer"],
   "core.announce(text, uuid, bigint)": ["tracer", "supervisor", "officer"],
+  "core.fill_occupations(uuid, jsonb)": ["supervisor", "officer"],
+  "core.sweep_import_stages()": ["system"],
   "auth.claim_key(uuid, text, text)": ["tracer", "supervisor", "officer"],
   "auth.keep_receipt(uuid, smallint, jsonb)": ["tracer", "supervisor", "officer"],
   "identity.open_people(uuid[], text[], text)": ["tracer", "supervisor", "officer"],
