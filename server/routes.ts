@@ -1,3 +1,5 @@
+import { followUpRoutes } from "./features/follow-up/routes.ts";
+import { interviewRoutes } from "./features/interviews/routes.ts";
 import { memberRoutes } from "./features/investigations/members.ts";
 import { investigationPlainRoutes, investigationRoutes } from "./features/investigations/routes.ts";
 import { peopleRoutes } from "./features/people/routes.ts";
@@ -15,6 +17,8 @@ export const ROUTES: readonly AnyRoute[] = [
   ...peopleRoutes,
   ...testRoutes,
   ...placeRoutes,
+  ...interviewRoutes,
+  ...followUpRoutes,
   ...safeguardRoutes,
 ];
 
