@@ -38,3 +38,22 @@ export const HOME_ROOM: Record<Role, Room> = {
   epidemiologist: "compare",
   officer: "safeguard",
 };
+
+/**
+ * What a role may do that no single record's `can` could say. For offering a way in only: the
+ * server's route policies and the database decide.
+ */
+export const DUTIES = {
+  register: ["tracer", "supervisor"],
+  recordPlace: ["tracer", "supervisor"],
+  assign: ["supervisor"],
+  reviewMatches: ["supervisor"],
+  importFiles: ["supervisor", "officer"],
+  changeSettings: ["supervisor", "officer"],
+} as const satisfies Record<string, readonly Role[]>;
+export type Duty = keyof typeof DUTIES;
+
+/** Whether a role has a duty; false without a role. */
+export function hasDuty(role: Role | null, duty: Duty): boolean {
+  return role !== null && (DUTIES[duty] as readonly Role[]).includes(role);
+}

@@ -1,0 +1,55 @@
+import { createBrowserRouter, type RouteObject } from "react-router-dom";
+import { LoadingState } from "../components/ui/loading-state.tsx";
+import { PageError } from "./routes/page-error.tsx";
+
+/** Pages of the Trace room. Each is a file of its own, fetched when it is first opened. */
+const trace: RouteObject[] = [];
+
+/** The other rooms. */
+const rooms: RouteObject[] = [];
+
+const routes: RouteObject[] = [
+  {
+    errorElement: <PageError />,
+    hydrateFallbackElement: (
+      <main className="mx-auto max-w-2xl px-5 pt-[9vh]">
+        <LoadingState label="Opening Strandline" />
+      </main>
+    ),
+    children: [
+      { path: "/sign-in", lazy: () => import("../features/session/routes/sign-in-route.tsx") },
+      {
+        path: "/first-officer",
+        lazy: () => import("../features/session/routes/first-officer-route.tsx"),
+      },
+      {
+        lazy: () => import("./routes/signed-in-layout.tsx"),
+        children: [
+          { index: true, lazy: () => import("./routes/home-route.tsx") },
+          { path: "acting", lazy: () => import("./routes/acting-route.tsx") },
+          { path: "investigations", lazy: () => import("./routes/investigations-route.tsx") },
+          {
+            path: "i/:investigationId",
+            lazy: () => import("./routes/investigation-layout.tsx"),
+            children: [
+              {
+                errorElement: <PageError />,
+                children: [
+                  ...trace,
+                  ...rooms,
+                  { path: "*", lazy: () => import("./routes/not-found-route.tsx") },
+                ],
+              },
+            ],
+          },
+        ],
+      },
+      { path: "*", lazy: () => import("./routes/not-found-route.tsx") },
+    ],
+  },
+];
+
+/** The router of the client. */
+export function createRouter() {
+  return createBrowserRouter(routes);
+}

@@ -1,0 +1,98 @@
+import { useQuery } from "@tanstack/react-query";
+import { useState } from "react";
+import { hasDuty } from "../../../shared/roles.ts";
+import { RoomPage } from "../../components/layouts/room-page.tsx";
+import { Section } from "../../components/layouts/section.tsx";
+import { Button } from "../../components/ui/button.tsx";
+import { EmptyState } from "../../components/ui/empty-state.tsx";
+import { ErrorState } from "../../components/ui/error-state.tsx";
+import { LoadingState } from "../../components/ui/loading-state.tsx";
+import { Tag } from "../../components/ui/tag.tsx";
+import { useToast } from "../../components/ui/use-toast.ts";
+import { investigationQuery } from "../../features/investigations/api/get-investigation.ts";
+import { investigationsQuery } from "../../features/investigations/api/get-investigations.ts";
+import { CreateInvestigationForm } from "../../features/investigations/components/create-investigation-form.tsx";
+import { InvestigationTable } from "../../features/investigations/components/investigation-table.tsx";
+import { SettingsForm } from "../../features/investigations/components/settings-form.tsx";
+import { useSwitchActing } from "../../features/session/components/acting-switch.tsx";
+import { errorKind } from "../../lib/api-error.ts";
+import { useSession } from "../../lib/session-context.ts";
+import { Frame } from "../frame.tsx";
+
+/** The investigations one works in; their settings; opening a new one. */
+export function Component() {
+  const session = useSession();
+  const toast = useToast();
+  const switchTo = useSwitchActing();
+  const list = useQuery(investigationsQuery());
+  const [creating, setCreating] = useState(false);
+  const mayChange = hasDuty(session.actingRole, "changeSettings");
+
+  return (
+    <Frame>
+      <RoomPage
+        title="Investigations"
+        subLine="You act in one at a time."
+        actions={
+          mayChange && !creating ? (
+            <Button onClick={() => setCreating(true)}>Open a new one</Button>
+          ) : null
+        }
+      >
+        {creating ? (
+          <Section title="New investigation">
+            <CreateInvestigationForm
+              demo={session.demo}
+              onCancel={() => setCreating(false)}
+              onCreated={() => {
+                setCreating(false);
+                toast({ tone: "done", text: "Opened. You hold your acting role in it." });
+              }}
+            />
+          </Section>
+        ) : null}
+        <Section title="Yours">
+          {list.isPending ? <LoadingState label="Loading investigations" rows={3} /> : null}
+          {list.isError ? (
+            <ErrorState kind={errorKind(list.error)} onRetry={() => void list.refetch()} />
+          ) : null}
+          {list.data && list.data.items.length === 0 ? (
+            <EmptyState title="You hold no role in any investigation">
+              A data officer of an investigation can add you by the e-mail you sign in with.
+            </EmptyState>
+          ) : null}
+          {list.data && list.data.items.length > 0 ? (
+            <InvestigationTable
+              investigations={list.data.items}
+              action={(one) => {
+                const role = one.roles.find((held) => held === session.actingRole) ?? one.roles[0];
+                if (one.id === session.investigationId) return <Tag tone="kelp">acting here</Tag>;
+                return role ? (
+                  <Button size="small" onClick={() => switchTo(role, one.id)}>
+                    Act here<span className="sr-only">: {one.name}</span>
+                  </Button>
+                ) : null;
+              }}
+            />
+          ) : null}
+        </Section>
+        {mayChange && session.investigationId ? (
+          <Settings investigationId={session.investigationId} />
+        ) : null}
+      </RoomPage>
+    </Frame>
+  );
+}
+
+function Settings({ investigationId }: { investigationId: string }) {
+  const investigation = useQuery(investigationQuery(investigationId));
+  if (!investigation.data) return null;
+  return (
+    <Section title="Settings" subLine={investigation.data.name}>
+      <SettingsForm
+        investigation={investigation.data}
+        onReload={() => void investigation.refetch()}
+      />
+    </Section>
+  );
+}

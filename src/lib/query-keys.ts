@@ -1,0 +1,20 @@
+/** First word of every query key inside an investigation; live topics are mapped onto these. */
+export type QueryWord =
+  | "investigation"
+  | "members"
+  | "people"
+  | "tests"
+  | "places"
+  | "match-reviews"
+  | "interviews"
+  | "follow-up"
+  | "imports"
+  | "groups"
+  | "network"
+  | "field-policy"
+  | "access-events";
+
+/** Key of a query: `["i", investigation, word, …]`. */
+export function investigationKey(investigationId: string, word: QueryWord, ...rest: unknown[]) {
+  return ["i", investigationId, word, ...rest] as const;
+}

@@ -1,0 +1,20 @@
+import type { UndefinedReason } from "../../shared/core/index.ts";
+
+const words: Record<UndefinedReason, string> = {
+  no_people: "there are no people in this population",
+  one_person: "there is only one person in this population",
+  no_two_paths: "nobody here has two contact pairs",
+  no_one_interviewed: "nobody has been interviewed",
+  too_few_people: "fewer than 30 people, or fewer than 30 of them interviewed",
+  free_range: "the exposure range was chosen freely; any network passes 1 if the range is widened",
+  coverage_low: "fewer than 90 % of the people were interviewed",
+  recall_unknown: "without a recall estimate the figure is a lower bound",
+  recall_low: "corrected for recall, the figure may reach the threshold",
+  no_double_reports: "no contact pair was told by both of its people",
+};
+
+/** Why a figure is missing or its verdict withheld, in words; undefined without a reason. */
+export function reasonWords(code: string | undefined): string | undefined {
+  if (code === undefined) return undefined;
+  return code in words ? words[code as UndefinedReason] : "it could not be worked out";
+}
