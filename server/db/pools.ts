@@ -1,17 +1,7 @@
 import pg from "pg";
 import { loginOf } from "./access/policies.ts";
 import { LOGIN_NAMES, type LoginName, type LoginPasswords } from "./roles.ts";
-
-// Days stay `YYYY-MM-DD` and instants ISO strings: the driver must not make Date objects of them.
-const DATE = 1082;
-const TIMESTAMPTZ = 1184;
-const types: pg.CustomTypesConfig = {
-  getTypeParser: ((oid: number, format?: "text" | "binary") => {
-    if (oid === DATE) return (value: string) => value;
-    if (oid === TIMESTAMPTZ) return (value: string) => new Date(value).toISOString();
-    return pg.types.getTypeParser(oid, format as "text");
-  }) as pg.CustomTypesConfig["getTypeParser"],
-};
+import { TYPES } from "./types.ts";
 
 /** One pool per database login. */
 export type Pools = Record<LoginName, pg.Pool>;
@@ -51,7 +41,7 @@ export function createPools(
       idleTimeoutMillis: 30_000,
       maxLifetimeSeconds: 3600,
       keepAlive: true,
-      types,
+      types: TYPES,
     });
     pool.on("error", onError);
     // The pool's listener does not cover clients that are checked out.

@@ -1,6 +1,7 @@
 import type { NodePgDatabase } from "drizzle-orm/node-postgres";
 import { drizzle } from "drizzle-orm/node-postgres";
 import type pg from "pg";
+import { TYPES } from "./types.ts";
 
 /** A database handle that exists only inside a transaction. */
 export type Tx = NodePgDatabase<Record<string, never>> & { readonly inTx: unique symbol };
@@ -26,6 +27,23 @@ export class TxLostError extends Error {
 }
 
 /**
+ * Drizzle brings type parsers of its own with every query, which leave instants in PostgreSQL's
+ * notation; this hands its queries to the client with ours, so that instants are ISO strings.
+ */
+function withOurTypes(client: pg.PoolClient): pg.PoolClient {
+  const query = (config: unknown, ...rest: unknown[]) => {
+    const ours =
+      typeof config === "object" && config !== null && "types" in config
+        ? { ...config, types: TYPES }
+        : config;
+    return Reflect.apply(client.query as (...args: unknown[]) => unknown, client, [ours, ...rest]);
+  };
+  return new Proxy(client, {
+    get: (target, key) => (key === "query" ? query : Reflect.get(target, key, target)),
+  });
+}
+
+/**
  * Runs `work` in one transaction with the acting person's context, and returns its value only
  * after COMMIT has really committed. This is the one place where the context is set.
  *
@@ -42,7 +60,7 @@ export async function withTx<T>(
     await client.query(ISOLATION[isolation]);
     if (context.nonce)
       await client.query("select set_config('app.ctx', $1, true)", [context.nonce]);
-    const value = await work(drizzle(client) as unknown as Tx);
+    const value = await work(drizzle(withOurTypes(client)) as unknown as Tx);
     const done = await client.query("commit");
     if (done.command !== "COMMIT") throw new TxLostError();
     return value;

@@ -7,7 +7,7 @@ import {
   switchInput,
   welcomeAnswer,
 } from "../../../shared/contracts/session.ts";
-import { ABSOLUTE_HOURS, HOME_ROOM, IDLE_MINUTES, ROOMS_OF } from "../../../shared/roles.ts";
+import { ABSOLUTE_HOURS, IDLE_MINUTES, ROOMS_OF } from "../../../shared/roles.ts";
 import { recordEvent } from "../../audit/record-event.ts";
 import { now } from "../../clock.ts";
 import { withTx } from "../../db/with-tx.ts";
@@ -29,7 +29,6 @@ import { createPassport, type Verified } from "./passport.ts";
 function presentSession(who: SignedIn, startedAt: string): z.input<typeof sessionAnswer> {
   const role = who.actingRole;
   const rooms = role ? [...ROOMS_OF[role]] : [];
-  if (role) rooms.sort((a, b) => Number(b === HOME_ROOM[role]) - Number(a === HOME_ROOM[role]));
   return {
     accountId: who.accountId,
     displayName: who.displayName,
