@@ -1,11 +1,12 @@
 // npm test [core|api|e2e]: set-up, every part, one plain line of counts at the end.
 import { existsSync } from "node:fs";
 import { join } from "node:path";
+import { LockHeldError, takeLock } from "./lib/locks.mjs";
 import { checkNode, ensurePackages, installDebianPackages } from "./lib/packages.mjs";
 import { PlainError, runScript, say } from "./lib/plain.mjs";
 import { settlePlace } from "./lib/postgres-place.mjs";
 import { ensurePostgres } from "./lib/postgres-programs.mjs";
-import { projectRoot } from "./lib/project.mjs";
+import { makeDataFolder, projectRoot } from "./lib/project.mjs";
 import { partNames, runParts } from "./lib/test-parts.mjs";
 
 const CHROMIUM = "/usr/bin/chromium";
@@ -20,7 +21,6 @@ function chooseParts(args) {
 
 /** Fails with one line when a tool is missing and cannot be installed: no test is skipped for it. */
 async function setUp(parts) {
-  checkNode();
   await ensurePackages(projectRoot, { dev: true });
   if (parts.includes("api") || parts.includes("e2e")) {
     await ensurePostgres();
@@ -40,8 +40,27 @@ function stopOnSignal(running) {
   }
 }
 
+/** Two runs of a part would write over each other's results. */
+async function lockParts(parts) {
+  const folder = makeDataFolder(join(projectRoot, ".test-data"));
+  const locks = [];
+  for (const part of parts) {
+    try {
+      locks.push(await takeLock(join(folder, `test-${part}.lock`), () => 0));
+    } catch (error) {
+      if (!(error instanceof LockHeldError)) throw error;
+      throw new PlainError(`the ${part} tests already run (process ${error.holder.pid})`);
+    }
+  }
+  process.on("exit", () => {
+    for (const lock of locks) lock.release();
+  });
+}
+
 await runScript(async () => {
   const parts = chooseParts(process.argv.slice(2));
+  checkNode();
+  await lockParts(parts);
   await setUp(parts);
   const running = { child: undefined, stopped: false };
   stopOnSignal(running);

@@ -25,6 +25,9 @@ function madeWith(data) {
   return existsSync(file) ? Number.parseInt(readFileSync(file, "utf8"), 10) : undefined;
 }
 
+/** Places this process holds, found again even when the data folder was deleted meanwhile. */
+const held = new Map();
+
 const leaseFolder = (folder) => join(folder, "leases");
 
 function liveLeases(folder) {
@@ -72,6 +75,7 @@ export async function startCluster(dir, { port, throwAway = false } = {}) {
     mkdirSync(leaseFolder(place.folder), { recursive: true, mode: 0o700 });
     give(leaseFolder(place.folder), place.account);
     writeFileSync(join(leaseFolder(place.folder), processIdentity(process.pid)), "");
+    held.set(dir, place);
     return clusterOf(place, found, { reused });
   } finally {
     lock.release();
@@ -93,8 +97,8 @@ export async function runningCluster(dir) {
  * @returns {Promise<boolean>} true when it is stopped
  */
 export async function stopCluster(dir, { force = false } = {}) {
-  const place = findPlace(dir);
-  if (!place) return true;
+  const place = findPlace(dir) ?? held.get(dir);
+  if (!place || !existsSync(place.folder)) return true;
   const lock = await takeLock(join(place.folder, "lock"), () => 180_000);
   try {
     rmSync(join(leaseFolder(place.folder), processIdentity(process.pid)), { force: true });

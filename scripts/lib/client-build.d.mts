@@ -1,0 +1,1 @@
+export function ensureClientBuild(root: string): Promise<void>;

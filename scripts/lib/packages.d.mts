@@ -1,0 +1,1 @@
+export function packagesComplete(root: string, options: { dev: boolean }): boolean;
