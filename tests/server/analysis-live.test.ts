@@ -123,7 +123,7 @@ describe("live groups", () => {
 
   it("gives the same groups, ids and growth after a restart", async () => {
     const graph = await StoredGraph.make(database.adminUrl);
-    const made = [];
+    const made: { index: string }[] = [];
     for (let turn = 0; turn < 6; turn++) made.push(await interviewed(graph, 2 + turn));
     const joins = [0, 2, 3].map((k) => ({ a: made[k]?.index ?? "", b: made[k + 1]?.index ?? "" }));
     for (const join of joins) {
