@@ -194,9 +194,8 @@ export function mount(
     add(route.method, route.path, (q, r) => runRoute(route, q, r, services), route.upload === true);
   }
   // Fixed segments come before parameters, whatever the order of features.
-  const paths = [...byPath.keys()].sort((a, b) =>
-    a.replaceAll(":", "~").localeCompare(b.replaceAll(":", "~"), "en"),
-  );
+  const rank = (path: string) => path.replaceAll(":", "~");
+  const paths = [...byPath.keys()].sort((a, b) => (rank(a) < rank(b) ? -1 : 1));
   for (const path of paths) {
     const at = app.route(path);
     const methods: string[] = [];
