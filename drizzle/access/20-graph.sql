@@ -1,6 +1,6 @@
 -- Next graph version of the acting investigation; the row lock orders submissions.
 create or replace function core.bump_graph() returns bigint
-language sql volatile security definer set search_path = '' as $$
+language sql volatile security definer set search_path = pg_catalog, pg_temp as $$
   update core.investigation set graph_version = graph_version + 1
   where id = core.ctx_investigation()
   returning graph_version
@@ -8,7 +8,7 @@ $$;
 
 -- Reserves `p_count` place numbers and returns the first.
 create or replace function core.next_numbers(p_count integer) returns integer
-language sql volatile security definer set search_path = '' as $$
+language sql volatile security definer set search_path = pg_catalog, pg_temp as $$
   update core.investigation set next_number = next_number + greatest(p_count, 0)
   where id = core.ctx_investigation()
   returning next_number - greatest(p_count, 0)
@@ -18,7 +18,7 @@ $$;
 -- which the acting person sees nothing, and must not be made twice. `made` is true for new ones.
 create or replace function core.pairs_for(p_person uuid, p_others uuid[])
 returns table (other uuid, pair uuid, made boolean)
-language plpgsql volatile security definer set search_path = '' as $$
+language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 declare
   c record;
   v_made uuid[];
@@ -50,7 +50,7 @@ end $$;
 -- counts as a contact once a case has named them.
 create or replace function core.follow_up_days()
 returns table (person_id uuid, day_zero text)
-language plpgsql stable security definer set search_path = '' as $$
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
 declare
   c record;
   v_people uuid[];
@@ -93,7 +93,7 @@ end $$;
 
 -- The message of an event: ids and versions only; delivered when the transaction commits.
 create or replace function core.announce(p_topic text, p_entity uuid, p_version bigint) returns void
-language plpgsql volatile security definer set search_path = '' as $$
+language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 declare v_investigation uuid := core.ctx_investigation();
 begin
   if v_investigation is null then
@@ -107,7 +107,7 @@ end $$;
 -- Idempotency: claims a key for the acting account, or returns what was answered before.
 create or replace function auth.claim_key(p_key uuid, p_route text, p_hash text)
 returns table (request_hash text, status smallint, receipt jsonb)
-language plpgsql volatile security definer set search_path = '' as $$
+language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 declare v_user uuid := core.ctx_user();
 begin
   if v_user is null then
@@ -121,7 +121,7 @@ begin
 end $$;
 
 create or replace function auth.keep_receipt(p_key uuid, p_status smallint, p_receipt jsonb)
-returns void language sql volatile security definer set search_path = '' as $$
+returns void language sql volatile security definer set search_path = pg_catalog, pg_temp as $$
   update auth.idempotency set status = p_status, receipt = p_receipt
   where account_id = core.ctx_user() and key = p_key and status = 0
 $$;

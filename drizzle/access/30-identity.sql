@@ -2,7 +2,7 @@
 -- returns ciphertext, which only the application can open. Rows out of scope are left out silently.
 create or replace function identity.open_people(p_people uuid[], p_fields text[], p_action text)
 returns table (person_id uuid, field text, cipher bytea)
-language plpgsql volatile security definer set search_path = '' as $$
+language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 declare
   c record;
   v_fields text[];
@@ -35,7 +35,7 @@ end $$;
 -- Household names, likewise recorded (tracers: households of people whose identity is theirs).
 create or replace function identity.open_places(p_places uuid[])
 returns table (place_id uuid, cipher bytea)
-language plpgsql volatile security definer set search_path = '' as $$
+language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 declare
   c record;
   v_places uuid[];
@@ -62,7 +62,7 @@ end $$;
 -- application; every token of p_all must be met (name parts), any token of p_any suffices.
 create or replace function identity.find_people(p_all bytea[], p_any bytea[], p_limit integer)
 returns table (person_id uuid, kinds smallint[])
-language plpgsql volatile security definer set search_path = '' as $$
+language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 declare c record;
 begin
   select * into c from core.ctx();
@@ -90,7 +90,7 @@ end $$;
 -- them: the pair goes to the supervisor's list.
 create or replace function identity.flag_hidden_matches(
   p_person uuid, p_phone bytea[], p_names bytea[]) returns void
-language plpgsql volatile security definer set search_path = '' as $$
+language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 declare c record;
 begin
   select * into c from core.ctx();
@@ -119,7 +119,7 @@ end $$;
 -- References of a file to people on record (supervisor and officer only).
 create or replace function identity.people_by_ref(p_tokens bytea[])
 returns table (token bytea, person_id uuid)
-language plpgsql volatile security definer set search_path = '' as $$
+language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 declare c record;
 begin
   select * into c from core.ctx();
@@ -132,7 +132,7 @@ end $$;
 
 -- True when a reference is taken in the acting investigation (says nothing of whom).
 create or replace function identity.ref_taken(p_token bytea, p_except uuid) returns boolean
-language sql stable security definer set search_path = '' as $$
+language sql stable security definer set search_path = pg_catalog, pg_temp as $$
   select exists (select 1 from identity.person i
     where i.investigation_id = core.ctx_investigation() and i.ref_token = p_token
       and i.person_id is distinct from p_except)
@@ -141,7 +141,7 @@ $$;
 -- Ciphertext of people a file names, to compare and fill blanks; the import's own event records it.
 create or replace function identity.open_for_import(p_import uuid, p_people uuid[])
 returns table (person_id uuid, field text, cipher bytea)
-language plpgsql volatile security definer set search_path = '' as $$
+language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 declare c record;
 begin
   select * into c from core.ctx();
@@ -163,13 +163,13 @@ end $$;
 -- Households by keyed name.
 create or replace function identity.households_by_token(p_tokens bytea[])
 returns table (token bytea, place_id uuid)
-language sql stable security definer set search_path = '' as $$
+language sql stable security definer set search_path = pg_catalog, pg_temp as $$
   select i.name_token, i.place_id from identity.place i
   where i.investigation_id = core.ctx_investigation() and i.name_token = any (p_tokens)
 $$;
 
 create or replace function identity.put_place(p_place uuid, p_cipher bytea, p_token bytea)
-returns void language plpgsql volatile security definer set search_path = '' as $$
+returns void language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 begin
   insert into identity.place (place_id, investigation_id, name_cipher, name_token)
   select p.id, p.investigation_id, p_cipher, p_token from core.place p
@@ -179,21 +179,21 @@ end $$;
 
 -- The wrapped data key of the acting investigation; only the application can unwrap it.
 create or replace function identity.wrapped_key() returns bytea
-language sql stable security definer set search_path = '' as $$
+language sql stable security definer set search_path = pg_catalog, pg_temp as $$
   select k.wrapped_key from identity.data_key k where k.investigation_id = core.ctx_investigation()
 $$;
 
 -- Drafts: the acting person's own, for a person they may interview.
 create or replace function identity.read_draft(p_person uuid)
 returns table (body_cipher bytea, version integer, updated_at timestamptz)
-language sql stable security definer set search_path = '' as $$
+language sql stable security definer set search_path = pg_catalog, pg_temp as $$
   select d.body_cipher, d.version, d.updated_at from identity.interview_draft d
   where d.person_id = p_person and d.account_id = core.ctx_user()
     and d.investigation_id = core.ctx_investigation()
 $$;
 
 create or replace function identity.keep_draft(p_person uuid, p_body bytea, p_version integer)
-returns integer language plpgsql volatile security definer set search_path = '' as $$
+returns integer language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 declare
   c record;
   v_version integer;
@@ -218,14 +218,14 @@ begin
 end $$;
 
 create or replace function identity.drop_draft(p_person uuid) returns void
-language sql volatile security definer set search_path = '' as $$
+language sql volatile security definer set search_path = pg_catalog, pg_temp as $$
   delete from identity.interview_draft
   where person_id = p_person and account_id = core.ctx_user()
 $$;
 
 -- Staged rows of a file, encrypted in chunks.
 create or replace function identity.keep_stage(p_import uuid, p_chunk integer, p_body bytea)
-returns void language plpgsql volatile security definer set search_path = '' as $$
+returns void language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 declare c record;
 begin
   select * into c from core.ctx();
@@ -239,7 +239,7 @@ end $$;
 
 create or replace function identity.read_stage(p_import uuid)
 returns table (chunk integer, body_cipher bytea)
-language sql stable security definer set search_path = '' as $$
+language sql stable security definer set search_path = pg_catalog, pg_temp as $$
   select s.chunk, s.body_cipher from identity.import_stage s
   where s.import_id = p_import and s.investigation_id = core.ctx_investigation()
     and core.ctx_role() in ('supervisor', 'officer')
@@ -247,7 +247,7 @@ language sql stable security definer set search_path = '' as $$
 $$;
 
 create or replace function identity.drop_stage(p_import uuid) returns void
-language sql volatile security definer set search_path = '' as $$
+language sql volatile security definer set search_path = pg_catalog, pg_temp as $$
   delete from identity.import_stage s
   where s.import_id = p_import and s.investigation_id = core.ctx_investigation()
     and core.ctx_role() in ('supervisor', 'officer')
@@ -257,7 +257,7 @@ $$;
 -- p_rows: [{person_id, has: [field…], ref_cipher, ref_token, name_cipher, …}], binary in base64;
 -- p_tokens: [{person_id, kind, token}]; p_kinds: token kinds to clear first.
 create or replace function identity.put_people(p_rows jsonb, p_tokens jsonb, p_kinds smallint[])
-returns integer language plpgsql volatile security definer set search_path = '' as $$
+returns integer language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 declare
   c record;
   v_ids uuid[];

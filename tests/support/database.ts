@@ -3,6 +3,7 @@ import { readdirSync, readFileSync } from "node:fs";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import pg from "pg";
+import { refuseTemporary } from "../../server/db/access/apply-access.ts";
 import { migrate } from "../../server/db/migrate.ts";
 import { LOGIN_NAMES, type LoginPasswords } from "../../server/db/roles.ts";
 
@@ -79,6 +80,8 @@ export async function createTestDatabase(clusterUrl: string): Promise<TestDataba
     await client.query(`create database ${name} template ${templateName()}`);
     await client.query("select pg_advisory_unlock(7203116)");
   });
+  // Rights on the database itself are not copied with it.
+  await withAdmin(urlOf(clusterUrl, name), refuseTemporary);
   return {
     adminUrl: urlOf(clusterUrl, name),
     drop: () =>

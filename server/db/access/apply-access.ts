@@ -1,11 +1,22 @@
 import { createHash } from "node:crypto";
 import { readdir, readFile } from "node:fs/promises";
 import { fileURLToPath } from "node:url";
-import type pg from "pg";
+import pg from "pg";
 import { grants, views } from "./grants.ts";
 import { rowPolicies } from "./policies.ts";
 
 const FOLDER = fileURLToPath(new URL("../../../drizzle/access/", import.meta.url));
+
+/**
+ * Takes the right to make temporary objects from everyone: what is never there cannot stand in the
+ * way of a name. It belongs to the database, not to what is in it, so a restored or copied database
+ * has lost it and every start says it again.
+ */
+export async function refuseTemporary(client: pg.ClientBase): Promise<void> {
+  const found = await client.query("select current_database() as name");
+  const name = pg.escapeIdentifier(found.rows[0].name as string);
+  await client.query(`revoke temporary on database ${name} from public`);
+}
 
 /**
  * Brings functions, row policies, views and grants to what the code and the field registry say, in
@@ -14,6 +25,7 @@ const FOLDER = fileURLToPath(new URL("../../../drizzle/access/", import.meta.url
  * @param client a connection that owns the schemas (an administrator's)
  */
 export async function applyAccess(client: pg.ClientBase): Promise<void> {
+  await refuseTemporary(client);
   const files = (await readdir(FOLDER)).filter((name) => name.endsWith(".sql")).sort();
   const sources = await Promise.all(files.map((name) => readFile(`${FOLDER}${name}`, "utf8")));
   const statements = [...sources, ...views(), ...grants(), ...rowPolicies()];

@@ -45,7 +45,7 @@ test("signing in gives a session under a new id, stored only as a hash", async (
     accountId: account.id,
     email: account.email,
     actingRole: "officer",
-    rooms: ["safeguard", "trace"],
+    rooms: ["trace", "safeguard"],
     idleMinutes: 15,
   });
   const cookie = (first.headers["set-cookie"] as unknown as string[])[0] ?? "";
