@@ -105,7 +105,8 @@ export function numberOrMissing(min: number, max: number, whole: boolean) {
     blankToNull,
     z
       .union([whole ? number.int(code("not_a_whole_number")) : number, z.enum(MISSING)], {
-        error: (issue) => (typeof issue.input === "number" ? "out_of_range" : "not_a_number"),
+        error: (issue) =>
+          typeof issue.input === "number" && whole ? "not_a_whole_number" : "not_a_number",
       })
       .nullable()
       .default(null),
