@@ -149,8 +149,17 @@ export class GroupBook {
   #count(people: readonly number[]): Entry {
     const { code, past } = this.#people.columns;
     const member = people[0] as number;
-    const entry = { id: null, founder: member, member, size: people.length };
-    const out: Entry = { ...entry, cases: 0, contacts: 0, past: 0, step: this.#step, partSize: 1 };
+    const out: Entry = {
+      id: null,
+      founder: member,
+      member,
+      size: people.length,
+      cases: 0,
+      contacts: 0,
+      past: 0,
+      step: this.#step,
+      partSize: 1,
+    };
     for (const person of people) {
       out.founder = Math.min(out.founder, person);
       if (isCaseCode(code[person] as number)) out.cases++;

@@ -18,6 +18,8 @@ export class GrowingTable<const S extends Record<string, ColumnKind>> {
   readonly #spec: S;
   readonly #names: (keyof S & string)[];
   #columns: ColumnsOf<S>;
+  // The same columns by position: naming them one by one is too slow for some 300,000 rows.
+  #list: (Int32Array | Float64Array | Uint8Array)[];
   #capacity: number;
   #length = 0;
 
@@ -26,6 +28,7 @@ export class GrowingTable<const S extends Record<string, ColumnKind>> {
     this.#names = Object.keys(spec);
     this.#capacity = capacity;
     this.#columns = this.#make(capacity, (bytes) => new ArrayBuffer(bytes));
+    this.#list = this.#names.map((name) => this.#columns[name]);
   }
 
   #make(capacity: number, buffer: (bytes: number) => ArrayBufferLike): ColumnsOf<S> {
@@ -54,6 +57,7 @@ export class GrowingTable<const S extends Record<string, ColumnKind>> {
       const next = this.#make(this.#capacity, (bytes) => new ArrayBuffer(bytes));
       for (const name of this.#names) next[name].set(this.#columns[name]);
       this.#columns = next;
+      this.#list = this.#names.map((name) => next[name]);
     }
     const at = this.#length++;
     this.set(at, row);
@@ -62,7 +66,11 @@ export class GrowingTable<const S extends Record<string, ColumnKind>> {
 
   /** Overwrites a row. */
   set(at: number, row: RowOf<S>): void {
-    for (const name of this.#names) this.#columns[name][at] = row[name];
+    const list = this.#list;
+    const names = this.#names;
+    for (let k = 0; k < list.length; k++) {
+      (list[k] as Float64Array)[at] = row[names[k] as keyof S];
+    }
   }
 
   /** A copy of the rows so far on shared memory, for a worker to read while this table grows. */

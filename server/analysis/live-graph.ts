@@ -15,10 +15,10 @@ export type LoadedGraph = {
   since(): Date;
 };
 
-function loaded(store: GraphStore): LoadedGraph {
+async function loaded(store: GraphStore): Promise<LoadedGraph> {
   const today = () => dayIn(store.timeZone, now());
   let day = today();
-  const groups = new LiveGroups(store, startOfDayIn(store.timeZone, day).getTime() - 1);
+  const groups = await LiveGroups.read(store, startOfDayIn(store.timeZone, day).getTime() - 1);
   let snapshot: GraphSnapshot | null = null;
   return {
     store,
@@ -113,7 +113,7 @@ export class LiveGraph {
       if (followed) return;
     }
     const store = await loadGraph(this.#pool, this.#id);
-    this.#loaded = store && loaded(store);
+    this.#loaded = store && (await loaded(store));
     this.#onLoad();
   }
 }

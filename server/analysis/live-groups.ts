@@ -1,3 +1,4 @@
+import { setImmediate as turn } from "node:timers/promises";
 import { UnionFind } from "../../shared/core/index.ts";
 import { Arcs } from "./arcs.ts";
 import type { Touched } from "./fetch-touched.ts";
@@ -10,6 +11,8 @@ import { pastSizes } from "./past-sizes.ts";
 
 /** Union–find elements left over from rebuilds, per person, before they are thrown away. */
 const MOST_ELEMENTS_PER_PERSON = 4;
+/** Pairs handled between two turns of the event loop: some 10 ms. */
+const SLICE = 20_000;
 
 /**
  * The connected groups of an investigation's current record: union–find for what is added, a
@@ -32,17 +35,37 @@ export class LiveGroups {
   readonly #arcs = new Arcs();
   #sets = new UnionFind();
 
-  /**
-   * @param since instant (ms) that growth is counted from
-   */
-  constructor(store: GraphStore, since: number) {
+  private constructor(store: GraphStore) {
     this.#store = store;
     this.#book = new GroupBook(store, (person) => this.#members.of(person));
-    this.#addPeople();
-    this.since(since);
+  }
+
+  /**
+   * Reads the groups of a whole record, in slices, so that other work gets its turn in between. The
+   * store must not change meanwhile.
+   *
+   * @param since instant (ms) that growth is counted from
+   */
+  static async read(store: GraphStore, since: number): Promise<LiveGroups> {
+    const groups = new LiveGroups(store);
+    groups.#addPeople();
+    await turn();
+    groups.since(since);
+    await turn();
     const steps = heldPairsByEntry(store);
-    this.#listPairs(steps.held);
-    for (const step of steps.batches()) this.#join(step);
+    let joined = 0;
+    while (groups.#pairs.length < store.pairs.length) {
+      groups.#listPairs(steps.held, SLICE);
+      await turn();
+    }
+    for (const step of steps.batches()) {
+      groups.#join(step);
+      joined += step.length;
+      if (joined < SLICE) continue;
+      joined = 0;
+      await turn();
+    }
+    return groups;
   }
 
   /** Counts growth from another instant (a new day). */
@@ -100,9 +123,10 @@ export class LiveGroups {
     }
   }
 
-  #listPairs(held?: Uint8Array): void {
+  #listPairs(held?: Uint8Array, most = Number.POSITIVE_INFINITY): void {
     const { a, b } = this.#store.pairs;
-    for (let pair = this.#pairs.length; pair < this.#store.pairs.length; pair++) {
+    const end = Math.min(this.#store.pairs.length, this.#pairs.length + most);
+    for (let pair = this.#pairs.length; pair < end; pair++) {
       this.#pairs.push({ held: held?.[pair] ?? 0 });
       this.#arcs.addPair(pair, a[pair] as number, b[pair] as number);
     }
