@@ -46,6 +46,9 @@ async function checkDurability(services: Pick<Services, "pools">): Promise<void>
 }
 
 async function main(): Promise<void> {
+  // A reader that goes away (`npm start | head`) must not take the server with it.
+  process.stdout.on("error", () => {});
+  process.stderr.on("error", () => {});
   const env = parseEnv(process.env);
   const log = pino({ level: env.logLevel, base: undefined });
   const secrets = loadSecrets(env.dataDir);

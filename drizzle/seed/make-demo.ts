@@ -4,7 +4,7 @@ import { join } from "node:path";
 import pg from "pg";
 import { dayIn, now, shiftDay } from "../../server/clock.ts";
 import type { Pools } from "../../server/db/pools.ts";
-import { hashPassword } from "../../server/features/session/password.ts";
+import { hashPassword, verifyPassword } from "../../server/features/session/password.ts";
 import type { KeyRing } from "../../server/identity/keys.ts";
 import type { Role } from "../../shared/roles.ts";
 import { generateOutbreak } from "./generator/generate-outbreak.ts";
@@ -70,6 +70,21 @@ function storyEnd(): { lastDay: string; lastMinute: number } {
     : { lastDay: today, lastMinute: Math.min(minute, 18 * 60) };
 }
 
+/** Makes the password named at this start the one that signs in, if it is not already. */
+async function takeOverPassword(pools: Pools, password: string): Promise<void> {
+  const emails = Object.keys(ROLE_ACCOUNTS).map(emailOf);
+  const found = await pools.auth.query<{ password_hash: string }>(
+    "select password_hash from auth.account where demo and email = any ($1)",
+    [emails],
+  );
+  const stored = found.rows[0]?.password_hash;
+  if (!stored || (await verifyPassword(stored, password))) return;
+  await pools.auth.query(
+    "update auth.account set password_hash = $1, epoch = epoch + 1 where demo and email = any ($2)",
+    [await hashPassword(password), emails],
+  );
+}
+
 /**
  * Makes the demo once: four accounts, two colleagues, and the invented investigation with its
  * outbreak. At later starts only a changed password is taken over.
@@ -79,8 +94,10 @@ export async function makeDemo(options: DemoOptions): Promise<void> {
   const password = demoPassword(options.dataDir, options.password);
   const known = await pools.auth.query("select value from auth.meta where key = 'demo'");
   if (known.rowCount) {
-    if (options.password) {
-      const hash = await hashPassword(password);
+    await takeOverPassword(pools, password);
+    return;
+  }
+  const hash = await hashPassword(password);
       await pools.auth.query(
         "update auth.account set password_hash = $1 where demo and email = any ($2) and disabled_at is null",
         [hash, Object.keys(ROLE_ACCOUNTS).map(emailOf)],
