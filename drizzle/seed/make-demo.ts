@@ -98,14 +98,6 @@ export async function makeDemo(options: DemoOptions): Promise<void> {
     return;
   }
   const hash = await hashPassword(password);
-      await pools.auth.query(
-        "update auth.account set password_hash = $1 where demo and email = any ($2) and disabled_at is null",
-        [hash, Object.keys(ROLE_ACCOUNTS).map(emailOf)],
-      );
-    }
-    return;
-  }
-  const hash = await hashPassword(password);
   const locked = await hashPassword(randomBytes(32).toString("base64"));
   const client = new pg.Client({ connectionString: databaseUrl });
   client.on("error", () => {});
