@@ -1,7 +1,11 @@
+import { liveRoutes } from "./events/routes.ts";
 import { followUpRoutes } from "./features/follow-up/routes.ts";
+import { groupRoutes } from "./features/groups/routes.ts";
+import { importRoutes } from "./features/imports/routes.ts";
 import { interviewRoutes } from "./features/interviews/routes.ts";
 import { memberRoutes } from "./features/investigations/members.ts";
 import { investigationPlainRoutes, investigationRoutes } from "./features/investigations/routes.ts";
+import { networkRoutes } from "./features/network/routes.ts";
 import { peopleRoutes } from "./features/people/routes.ts";
 import { placeRoutes } from "./features/places/routes.ts";
 import { safeguardRoutes } from "./features/safeguard/routes.ts";
@@ -19,10 +23,13 @@ export const ROUTES: readonly AnyRoute[] = [
   ...placeRoutes,
   ...interviewRoutes,
   ...followUpRoutes,
+  ...importRoutes,
+  ...groupRoutes,
+  ...networkRoutes,
   ...safeguardRoutes,
 ];
 
 /** Routes outside any investigation, and those that stream. */
 export function plainRoutes(services: Services): PlainRoute[] {
-  return [...sessionRoutes(services), ...investigationPlainRoutes(services)];
+  return [...sessionRoutes(services), ...investigationPlainRoutes(services), ...liveRoutes()];
 }

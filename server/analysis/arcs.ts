@@ -1,4 +1,4 @@
-function grown(array: Int32Array): Int32Array {
+function grown(array: Int32Array): Int32Array<ArrayBuffer> {
   const next = new Int32Array(2 * array.length);
   next.set(array);
   return next;
