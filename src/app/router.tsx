@@ -3,7 +3,16 @@ import { LoadingState } from "../components/ui/loading-state.tsx";
 import { PageError } from "./routes/page-error.tsx";
 
 /** Pages of the Trace room. Each is a file of its own, fetched when it is first opened. */
-const trace: RouteObject[] = [];
+const trace: RouteObject[] = [
+  { path: "trace", lazy: () => import("../features/people/routes/trace-route.tsx") },
+  {
+    path: "trace/people/new",
+    lazy: () => import("../features/people/routes/register-person-route.tsx"),
+  },
+  { path: "trace/people/:personId", lazy: () => import("./routes/person-route.tsx") },
+  { path: "trace/places", lazy: () => import("../features/places/routes/places-route.tsx") },
+  { path: "trace/matches", lazy: () => import("../features/people/routes/matches-route.tsx") },
+];
 
 /** The other rooms. */
 const rooms: RouteObject[] = [];

@@ -42,7 +42,7 @@ export function thresholdSentence(
   }
   const notes = notesOf(summary);
   if (verdict === null) return { sentence: withoutVerdict(summary, seen), notes };
-  return { sentence: `${verdictWords(summary)}, ${seen}${expectation(summary)}.`, notes };
+  return { sentence: `${verdictWords(summary)}, in ${seen}${expectation(summary)}.`, notes };
 }
 
 /** Whether the expected share may stand beside the recorded one: only when nearly all were seen. */
@@ -127,21 +127,19 @@ function notesOf(summary: NetworkSummary): string[] {
         `${formatNumber(corrected, { decimals: 2 })} contact pairs per person.`,
     );
   } else if (
+    typeof recall !== "number" &&
     threshold.population === "interviewed" &&
     reasons["threshold.verdict"] !== "recall_unknown"
   ) {
     notes.push("No recall estimate yet: the figure is a lower bound.");
   }
   const { largestShare } = summary;
-  if (
-    largestShare !== null &&
-    threshold.expectedGiantShare !== null &&
-    mayCompareLargest(summary)
-  ) {
+  const expected = threshold.expectedGiantShare ?? 0;
+  // Up to 1 the expected share is 0, in the limit only: no figure to hold a real group against.
+  if (largestShare !== null && expected > 0 && mayCompareLargest(summary)) {
     notes.push(
       `The largest recorded connected group holds ${formatShare(largestShare)}; random mixing would ` +
-        `give about ${formatShare(threshold.expectedGiantShare)}. Real networks are clustered, so ` +
-        "theirs is often smaller.",
+        `give about ${formatShare(expected)}. Real networks are clustered, so theirs is often smaller.`,
     );
   }
   return notes;

@@ -1,0 +1,25 @@
+import { useParams } from "react-router-dom";
+import { PersonRecord } from "../../features/people/components/person-record.tsx";
+import { TestSection } from "../../features/tests/components/test-section.tsx";
+import { useInvestigation } from "../../lib/investigation-context.ts";
+
+/** A person's page with their tests. */
+export function Component() {
+  const { personId = "" } = useParams();
+  const { id: investigationId, today } = useInvestigation();
+  return (
+    <PersonRecord
+      // Another person is another page: nothing typed for the one before stays in a box.
+      key={personId}
+      personId={personId}
+      tests={(person) => (
+        <TestSection
+          investigationId={investigationId}
+          personId={person.id}
+          today={today}
+          canAdd={person.can.addTest === true}
+        />
+      )}
+    />
+  );
+}

@@ -1,0 +1,110 @@
+import { useId } from "react";
+import { CLASSIFICATIONS } from "../../../../shared/vocabulary.ts";
+import { Button } from "../../../components/ui/button.tsx";
+import { MenuSelect } from "../../../components/ui/menu-select.tsx";
+import { classificationWords } from "../../../lib/words.ts";
+import type { useListState } from "../use-list-state.ts";
+
+const classifications = [
+  { value: "", label: "all" },
+  { value: "case", label: "cases of any certainty" },
+  ...CLASSIFICATIONS.map((value) => ({ value, label: classificationWords[value] })),
+];
+const interviewed = [
+  { value: "", label: "all" },
+  { value: "yes", label: "yes" },
+  { value: "no", label: "no" },
+];
+const assigned = [
+  { value: "", label: "all" },
+  { value: "me", label: "me" },
+  { value: "none", label: "nobody" },
+];
+
+export type LineListFiltersProps = {
+  state: ReturnType<typeof useListState>;
+  /** Keys of the answers: what cannot be read cannot be filtered by. */
+  keys: ReadonlySet<string>;
+  areas: readonly string[];
+};
+
+/** Search and filters above the line list. */
+export function LineListFilters({ state, keys, areas }: LineListFiltersProps) {
+  const id = useId();
+  const named = keys.has("name") || keys.size === 0;
+  return (
+    <>
+      <label htmlFor={`${id}-q`} className="text-sm">
+        <span className="mb-1 block text-ink-2">
+          {named ? "Find by name, telephone, reference or study number" : "Find by study number"}
+        </span>
+        <input
+          id={`${id}-q`}
+          type="search"
+          autoComplete="off"
+          spellCheck={false}
+          className="field-box w-72 max-w-full"
+          value={state.typed.q}
+          onChange={(event) => state.setTyped({ ...state.typed, q: event.target.value })}
+        />
+      </label>
+      <Labelled words="classification">
+        <MenuSelect
+          label="Classification"
+          hideLabel
+          options={classifications}
+          value={state.filters.classification ?? ""}
+          onValueChange={(value) => state.setFilter("classification", value)}
+        />
+      </Labelled>
+      <Labelled words="interviewed">
+        <MenuSelect
+          label="Interviewed"
+          hideLabel
+          options={interviewed}
+          value={state.filters.interviewed ?? ""}
+          onValueChange={(value) => state.setFilter("interviewed", value)}
+        />
+      </Labelled>
+      {keys.has("assignedTo") || state.filters.assigned ? (
+        <Labelled words="assigned to">
+          <MenuSelect
+            label="Assigned to"
+            hideLabel
+            options={assigned}
+            value={state.filters.assigned ?? ""}
+            onValueChange={(value) => state.setFilter("assigned", value)}
+          />
+        </Labelled>
+      ) : null}
+      <label htmlFor={`${id}-area`} className="text-sm">
+        <span className="mb-1 block text-ink-2">area, as written</span>
+        <input
+          id={`${id}-area`}
+          list={`${id}-areas`}
+          autoComplete="off"
+          className="field-box w-36 max-w-full"
+          value={state.typed.area}
+          onChange={(event) => state.setTyped({ ...state.typed, area: event.target.value })}
+        />
+        <datalist id={`${id}-areas`}>
+          {areas.map((area) => (
+            <option key={area} value={area} />
+          ))}
+        </datalist>
+      </label>
+      {state.anyFilter ? <Button onClick={state.clear}>Show all</Button> : null}
+    </>
+  );
+}
+
+function Labelled({ words, children }: { words: string; children: React.ReactNode }) {
+  return (
+    <div className="text-sm">
+      <span className="mb-1 block text-ink-2" aria-hidden="true">
+        {words}
+      </span>
+      {children}
+    </div>
+  );
+}

@@ -1,0 +1,35 @@
+import type { Classification, InterviewOutcome, Setting } from "../../shared/vocabulary.ts";
+
+/** Stored words as they are shown. Coded values are kept in English and lower case. */
+export const classificationWords: Readonly<Record<Classification, string>> = {
+  confirmed: "confirmed case",
+  probable: "probable case",
+  suspected: "suspected case",
+  not_a_case: "not a case",
+  contact: "contact",
+};
+
+export const settingWords: Readonly<Record<Setting, string>> = {
+  household: "household",
+  workplace: "workplace",
+  school: "school",
+  health_care: "health care",
+  social: "social",
+  transport: "transport",
+  other: "other",
+};
+
+export const interviewWords: Readonly<Record<InterviewOutcome, string>> = {
+  attempted: "attempted",
+  partial: "partial",
+  complete: "complete",
+  refused: "refused",
+  unreachable: "unreachable",
+  died: "died",
+  not_able: "not able",
+};
+
+/** The word for a stored code; the code itself with its underscores opened where none is kept. */
+export function wordFor(words: Readonly<Record<string, string>>, code: string): string {
+  return words[code] ?? code.replaceAll("_", " ");
+}
