@@ -18,16 +18,18 @@ const shown: readonly PersonMarkInput[] = [
 export type MarkLegendProps = {
   /** Groups in the order of their colours, where colour is used; the rest are grey. */
   groups?: readonly string[];
+  /** Only these marks, where a picture does not draw them all. */
+  marks?: readonly PersonMarkInput[];
   layout?: "column" | "row";
 };
 
 /** What the marks mean, and whose colour is whose. */
-export function MarkLegend({ groups = [], layout = "column" }: MarkLegendProps) {
+export function MarkLegend({ groups = [], marks = shown, layout = "column" }: MarkLegendProps) {
   const list = layout === "column" ? "flex flex-col gap-y-1.5" : "flex flex-wrap gap-x-5 gap-y-1.5";
   return (
     <div className="space-y-3 text-sm">
       <ul className={list} aria-label="Person marks">
-        {shown.map((input) => (
+        {marks.map((input) => (
           <li key={markText(input)} className="flex items-center gap-2">
             <PersonMark {...input} decorative />
             {markText(input)}

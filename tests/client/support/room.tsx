@@ -1,0 +1,89 @@
+import { QueryClient, QueryClientProvider } from "@tanstack/react-query";
+import { render } from "@testing-library/react";
+import type { ComponentType } from "react";
+import { MemoryRouter, Route, Routes, useLocation } from "react-router-dom";
+import { vi } from "vitest";
+import type { Investigation } from "../../../shared/contracts/investigations.ts";
+import type { Session } from "../../../shared/contracts/session.ts";
+import { CutOffContext } from "../../../src/lib/cut-off-context.ts";
+import { InvestigationContext } from "../../../src/lib/investigation-context.ts";
+import { SessionContext } from "../../../src/lib/session-context.ts";
+import { ids } from "./network-answers.ts";
+
+const investigation: Investigation = {
+  id: ids.investigation,
+  name: "Sallow Bay",
+  invented: true,
+  timeZone: "UTC",
+  countryCode: "GB",
+  today: "2026-05-27",
+  populationAtRisk: null,
+  infectiousBefore: 2,
+  infectiousAfter: 10,
+  incubationMin: 1,
+  incubationMax: 14,
+  monitoringDays: 14,
+  caseDefinitionVersion: 1,
+  graphVersion: 1482,
+  version: 1,
+  roles: ["epidemiologist"],
+};
+
+/** A path inside the investigation (with its query) → what the server answers. */
+export type Answers = (path: string, query: URLSearchParams) => unknown;
+
+export type RoomOptions = {
+  room: ComponentType;
+  at: string;
+  rooms: Session["rooms"];
+  answers: Answers;
+};
+
+/** Renders a room on answers of one's own; gives what was asked for and the cut-offs it showed. */
+export function renderRoom({ room: Room, at, rooms, answers }: RoomOptions) {
+  const asked: string[] = [];
+  const cutOffs: unknown[] = [];
+  const start = `/api/investigations/${ids.investigation}/`;
+  vi.stubGlobal("fetch", async (address: string) => {
+    const url = new URL(address, "http://localhost");
+    const path = url.pathname.replace(start, "");
+    asked.push(`${path}${url.search}`);
+    const answer = answers(path, url.searchParams);
+    if (answer instanceof Response) return answer;
+    return new Response(JSON.stringify(answer), {
+      headers: { "content-type": "application/json" },
+    });
+  });
+  // Nothing comes near in a page without layout, so the drawing library is not fetched.
+  vi.stubGlobal(
+    "IntersectionObserver",
+    class {
+      observe() {}
+      disconnect() {}
+    },
+  );
+  const queryClient = new QueryClient({ defaultOptions: { queries: { retry: false } } });
+  const session = { rooms } as Session;
+  render(
+    <QueryClientProvider client={queryClient}>
+      <SessionContext value={session}>
+        <InvestigationContext value={investigation}>
+          <CutOffContext value={(cutOff) => void cutOffs.push(cutOff)}>
+            <MemoryRouter initialEntries={[at]}>
+              <Routes>
+                <Route path="/room" element={<Room />} />
+                <Route path="*" element={<Elsewhere />} />
+              </Routes>
+            </MemoryRouter>
+          </CutOffContext>
+        </InvestigationContext>
+      </SessionContext>
+    </QueryClientProvider>,
+  );
+  return { asked, cutOffs, queryClient };
+}
+
+function Elsewhere() {
+  const { pathname, search } = useLocation();
+  return <p>{`at ${pathname}${search}`}</p>;
+}
