@@ -15,7 +15,10 @@ const trace: RouteObject[] = [
 ];
 
 /** The other rooms. */
-const rooms: RouteObject[] = [];
+const rooms: RouteObject[] = [
+  { path: "review", lazy: () => import("../features/review/routes/review-route.tsx") },
+  { path: "compare", lazy: () => import("../features/compare/routes/compare-route.tsx") },
+];
 
 const routes: RouteObject[] = [
   {
