@@ -8,6 +8,7 @@ import { migrate } from "./db/migrate.ts";
 import { createPools, endPools, loginUrl } from "./db/pools.ts";
 import { startDispatcher } from "./events/dispatcher.ts";
 import { createLiveHub } from "./events/live-hub.ts";
+import { startImportUpkeep } from "./features/imports/upkeep.ts";
 import { firstOfficerToken } from "./features/session/first-officer.ts";
 import { safeError } from "./http/translate-error.ts";
 import { createKeyRing } from "./identity/keys.ts";
@@ -73,6 +74,7 @@ async function main(): Promise<void> {
   const hub = createLiveHub();
   const analysis = createAnalysis({ pools, log });
   await analysis.start();
+  const imports = await startImportUpkeep({ pools, log });
   const dispatcher = await startDispatcher({ pools, systemUrl, analysis, hub, log });
   const services: Services = { env, secrets, pools, keys, analysis, hub, log };
 
@@ -116,6 +118,7 @@ async function main(): Promise<void> {
     hard.unref();
     hub.close();
     server.close(async () => {
+      imports.stop();
       await dispatcher.stop();
       await analysis.stop();
       await dev?.close();

@@ -73,6 +73,14 @@ export const FIELD_ERRORS = {
   empty_file: "The file has no rows",
   too_many_rows: "Too many rows",
   unclosed_quote: "A quotation mark is not closed",
+  stray_quote: "A quotation mark stands in the middle of a cell",
+  row_too_long: "A row is too long; perhaps a quotation mark is not closed",
+  wrong_delimiter: "Cells must be separated by commas",
+  conflict: "Differs from what is on record; not stored",
+  stage_dropped: "The checked rows were deleted after a day; upload the file again",
+  commit_failed: "The import could not be finished; nothing was stored",
+  commit_clash: "Someone recorded the same reference meanwhile; nothing was stored",
+  commit_no_access: "You signed out or changed role before it was finished; nothing was stored",
 } as const;
 export type FieldErrorCode = keyof typeof FIELD_ERRORS;
 

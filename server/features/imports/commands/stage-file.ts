@@ -1,0 +1,134 @@
+import { createHash } from "node:crypto";
+import { recordEvent } from "../../../audit/record-event.ts";
+import { dayIn, now } from "../../../clock.ts";
+import type { Tx } from "../../../db/with-tx.ts";
+import { announce } from "../../../events/record-graph-change.ts";
+import type { Actor } from "../../../http/route.ts";
+import type { InvestigationKeys } from "../../../identity/keys.ts";
+import type { Services } from "../../../services.ts";
+import { loadInvestigation } from "../../investigations/store.ts";
+import { pairsChecker } from "../check-pairs.ts";
+import { peopleChecker } from "../check-people.ts";
+import { COMPARED_FIELDS } from "../known-people.ts";
+import { createPause, type Pause } from "../pause.ts";
+import { type Preview, previewPairs, previewPeople } from "../preview.ts";
+import { ProblemList } from "../problem-list.ts";
+import { type FileRow, readRows } from "../read-rows.ts";
+import { type Checked, COLUMNS_OF, type ImportKind, type ImportProblem } from "../staged-row.ts";
+import { dropStage, keepImport, keepStage, openImport } from "../store.ts";
+import { raiseLimits } from "./run-commit.ts";
+
+/** Rows of a stored chunk; also how many references are looked up at a time. */
+const CHUNK_ROWS = 2_000;
+const HASH_BYTES = 1024 * 1024;
+
+/** SHA-256 of a file and what it is taken for, in slices. */
+async function fingerprint(kind: ImportKind, bytes: Buffer, pause: Pause): Promise<string> {
+  const hash = createHash("sha256").update(`${kind}\n`);
+  for (let from = 0; from < bytes.length; from += HASH_BYTES) {
+    hash.update(bytes.subarray(from, from + HASH_BYTES));
+    await pause();
+  }
+  return hash.digest("hex");
+}
+
+interface Staging {
+  tx: Tx;
+  keys: InvestigationKeys;
+  importId: string;
+  pause: Pause;
+}
+
+/** Checks a file row by row and keeps the good ones in encrypted chunks; counts all of them. */
+async function checkRows<T>(
+  { tx, keys, importId, pause }: Staging,
+  rows: AsyncIterable<FileRow>,
+  check: (row: FileRow) => Checked<T>,
+  preview: Preview<T>,
+): Promise<{ problems: ProblemList; counts: Record<string, number> }> {
+  const problems = new ProblemList();
+  let [read, bad, recordProblems, chunk] = [0, 0, 0, 0];
+  let staged: T[] = [];
+  let found: ImportProblem[] = [];
+  const flush = async () => {
+    const onRecord = await preview.add(staged);
+    recordProblems += onRecord.length;
+    problems.add([...found, ...onRecord]);
+    if (staged.length > 0) await keepStage(tx, keys, importId, chunk, staged);
+    chunk += 1;
+    staged = [];
+    found = [];
+  };
+  for await (const row of rows) {
+    read += 1;
+    const { row: good, problems: wrong } = check(row);
+    if (good) staged.push(good);
+    else bad += 1;
+    found.push(...wrong);
+    if (staged.length >= CHUNK_ROWS || found.length >= CHUNK_ROWS) await flush();
+    await pause();
+  }
+  await flush();
+  const counts = preview.counts();
+  bad += counts.unknownRows ?? 0;
+  return {
+    problems,
+    counts: {
+      ...counts,
+      rows: read,
+      good: read - bad,
+      bad,
+      problems: problems.count,
+      recordProblems,
+      stagedAt: Math.floor(now().getTime() / 1000),
+    },
+  };
+}
+
+/**
+ * Checks every row of a file and stages the good ones; nothing reaches the record. The same file
+ * for the same kind is the same import: one that was committed stays as it is, one that was not is
+ * checked again against what is on record now.
+ *
+ * @returns id of the import
+ * @throws HttpProblem 422 when the file as a whole cannot be read; nothing is kept then
+ */
+export async function stageFile(
+  tx: Tx,
+  services: Pick<Services, "keys">,
+  actor: Actor,
+  kind: ImportKind,
+  bytes: Buffer,
+): Promise<string> {
+  await raiseLimits(tx);
+  const pause = createPause();
+  const { id, state, fresh } = await openImport(
+    tx,
+    actor,
+    kind,
+    await fingerprint(kind, bytes, pause),
+  );
+  if (state === "committing" || state === "committed") return id;
+  if (!fresh) await dropStage(tx, id);
+  const settings = await loadInvestigation(tx, actor.investigationId);
+  const keys = await services.keys.of(tx, actor.investigationId);
+  const today = dayIn(settings.timeZone, now());
+  const staging: Staging = { tx, keys, importId: id, pause };
+  const rows = readRows(bytes, COLUMNS_OF[kind].all, COLUMNS_OF[kind].required);
+  const compare = { tx, keys, importId: id, role: actor.role, country: settings.countryCode };
+  const { counts, problems } =
+    kind === "people"
+      ? await checkRows(staging, rows, peopleChecker(today), previewPeople(compare, actor))
+      : await checkRows(staging, rows, pairsChecker(today), previewPairs(tx, keys));
+  await keepImport(tx, id, { state: "ready", counts, problems: problems.sorted() });
+  await recordEvent(tx, {
+    action: "import.staged",
+    accountId: actor.accountId,
+    role: actor.role,
+    investigationId: actor.investigationId,
+    fields: (counts.known ?? 0) > 0 ? COMPARED_FIELDS : [],
+    counts,
+  });
+  await announce(tx, "imports", id);
+  return id;
+}

@@ -1,0 +1,165 @@
+import { randomUUID } from "node:crypto";
+import { sql } from "drizzle-orm";
+import type { Import } from "../../../shared/contracts/imports.ts";
+import type { Tx } from "../../db/with-tx.ts";
+import type { Actor } from "../../http/route.ts";
+import { open, seal } from "../../identity/cipher.ts";
+import type { InvestigationKeys } from "../../identity/keys.ts";
+import { refToken } from "../../identity/records.ts";
+import type { ImportKind, ImportProblem } from "./staged-row.ts";
+
+/** An import as stored. `counts.stagedAt` (s since the epoch) stands while checked rows are kept. */
+export interface ImportRow {
+  id: string;
+  kind: ImportKind;
+  state: Import["state"];
+  rowCount: number;
+  counts: Record<string, number>;
+  problems: ImportProblem[];
+  progress: number;
+  createMissing: boolean;
+  recordedAt: string;
+  committedAt: string | null;
+}
+
+const BARE = `id, kind, state, row_count as "rowCount", counts, progress,
+  create_missing as "createMissing", recorded_at as "recordedAt", committed_at as "committedAt"`;
+
+/** An import with its problems, or undefined when there is none in this investigation. */
+export async function loadImport(tx: Tx, id: string): Promise<ImportRow | undefined> {
+  const found = await tx.execute<ImportRow & Record<string, unknown>>(
+    sql`select ${sql.raw(BARE)}, problems from core.import where id = ${id}`,
+  );
+  return found.rows[0];
+}
+
+/** Imports, newest first, without their problems. */
+export async function listImports(
+  tx: Tx,
+  page: { page: number; pageSize: number },
+): Promise<{ rows: ImportRow[]; total: number }> {
+  const total = await tx.execute<{ count: number }>(
+    sql`select count(*)::int as count from core.import`,
+  );
+  const found = await tx.execute<ImportRow & Record<string, unknown>>(
+    sql`select ${sql.raw(BARE)}, '[]'::jsonb as problems from core.import
+        order by recorded_at desc, id
+        limit ${page.pageSize} offset ${(page.page - 1) * page.pageSize}`,
+  );
+  return { rows: found.rows, total: total.rows[0]?.count ?? 0 };
+}
+
+/**
+ * Opens an import for a file, or finds the one the same file (bytes and kind) made before and
+ * locks it.
+ */
+export async function openImport(
+  tx: Tx,
+  actor: Actor,
+  kind: ImportKind,
+  sha256: string,
+): Promise<{ id: string; state: ImportRow["state"]; fresh: boolean }> {
+  const id = randomUUID();
+  const made = await tx.execute(
+    sql`insert into core.import (id, investigation_id, kind, sha256, state, recorded_by)
+        values (${id}, ${actor.investigationId}, ${kind}, ${sha256}, 'checking', ${actor.accountId})
+        on conflict do nothing`,
+  );
+  if (made.rowCount === 1) return { id, state: "checking", fresh: true };
+  const found = await tx.execute<{ id: string; state: ImportRow["state"] }>(
+    sql`select id, state from core.import where kind = ${kind} and sha256 = ${sha256} for update`,
+  );
+  const row = found.rows[0];
+  if (!row) throw new Error("an import of this file is there and is not");
+  return { ...row, fresh: false };
+}
+
+/** Stores what an import has come to. */
+export async function keepImport(
+  tx: Tx,
+  id: string,
+  change: {
+    state: ImportRow["state"];
+    counts: Record<string, number>;
+    problems: readonly ImportProblem[];
+    committed?: boolean;
+  },
+): Promise<void> {
+  await tx.execute(
+    sql`update core.import set state = ${change.state}, row_count = ${change.counts.rows ?? 0},
+          counts = ${JSON.stringify(change.counts)}::jsonb,
+          problems = ${JSON.stringify(change.problems)}::jsonb,
+          progress = ${change.committed ? 1 : 0},
+          committed_at = ${change.committed ? sql`now()` : null}
+        where id = ${id}`,
+  );
+}
+
+/**
+ * Claims an import for committing.
+ *
+ * @returns false when it is not ready (gone, being committed, committed, or its rows were deleted)
+ */
+export async function claimCommit(tx: Tx, id: string, createMissing: boolean): Promise<boolean> {
+  const done = await tx.execute(
+    sql`update core.import set state = 'committing', progress = 0, create_missing = ${createMissing}
+        where id = ${id} and state in ('ready', 'failed') and counts ? 'stagedAt'`,
+  );
+  return done.rowCount === 1;
+}
+
+const stagePlace = (id: string, chunk: number) =>
+  `identity.import_stage|body_cipher|${id}|${chunk}`;
+
+/** Keeps a chunk of checked rows, encrypted. */
+export async function keepStage(
+  tx: Tx,
+  keys: InvestigationKeys,
+  id: string,
+  chunk: number,
+  rows: readonly unknown[],
+): Promise<void> {
+  const sealed = seal(keys.seal, stagePlace(id, chunk), JSON.stringify(rows));
+  await tx.execute(sql`select identity.keep_stage(${id}::uuid, ${chunk}, ${sealed}::bytea)`);
+}
+
+/** The kept chunks in order, each opened when it is asked for. */
+export async function readStage<T>(
+  tx: Tx,
+  keys: InvestigationKeys,
+  id: string,
+): Promise<(() => T[])[]> {
+  const found = await tx.execute<{ chunk: number; body_cipher: Buffer }>(
+    sql`select chunk, body_cipher from identity.read_stage(${id}::uuid)`,
+  );
+  return found.rows.map(
+    ({ chunk, body_cipher }) =>
+      () =>
+        JSON.parse(open(keys.seal, stagePlace(id, chunk), body_cipher).toString()) as T[],
+  );
+}
+
+/** Deletes the kept rows of an import. */
+export async function dropStage(tx: Tx, id: string): Promise<void> {
+  await tx.execute(sql`select identity.drop_stage(${id}::uuid)`);
+}
+
+/** References to ids of people on record; those not on record are absent. */
+export async function peopleByRef(
+  tx: Tx,
+  keys: InvestigationKeys,
+  refs: readonly string[],
+): Promise<Map<string, string>> {
+  if (refs.length === 0) return new Map();
+  const refOf = new Map(refs.map((ref) => [refToken(keys, ref).toString("hex"), ref]));
+  const tokens = `{${[...refOf.keys()].map((hex) => `"\\\\x${hex}"`).join(",")}}`;
+  const found = await tx.execute<{ token: Buffer; person_id: string }>(
+    sql`select token, person_id from identity.people_by_ref(${sql.param(tokens)}::bytea[])`,
+  );
+  const out = new Map<string, string>();
+  for (const row of found.rows) {
+    const ref = refOf.get(row.token.toString("hex"));
+    if (ref !== undefined) out.set(ref, row.person_id);
+  }
+  return out;
+}
