@@ -21,6 +21,7 @@ import { WorkerLane } from "./worker-lane.ts";
 
 /** Graphs kept in memory; the one asked for longest ago is dropped and read again when wanted. */
 const MOST_LOADED = 12;
+const LOADED_AHEAD = 4;
 
 /** Current groups of an investigation; do not change them. */
 export type GroupsNow = {
@@ -35,9 +36,12 @@ export type GraphQuery = z.output<typeof graphQuery>;
 
 /** The server's analysis: live graphs and what is computed on them. */
 export type Analysis = {
-  /** Loads the graphs of the most recent investigations, so that first questions are quick. */
+  /**
+   * Begins to load the graphs of the most recent investigations, so that first questions are
+   * quick, and returns without waiting for them.
+   */
   start(): Promise<void>;
-  /** Ends the worker threads; running questions fail. */
+  /** Ends loading ahead and the worker threads; running questions fail. */
   stop(): Promise<void>;
   /** Connected groups of the current record; null when there is no such investigation. */
   groups(investigationId: string): Promise<GroupsNow | null>;
@@ -80,6 +84,8 @@ export function createAnalysis(options: {
   const kept = new Map<string, Kept>();
   const reports = new WorkerLane();
   const pictures = new WorkerLane();
+  let stopped = false;
+  let loadingAhead: Promise<void> = Promise.resolve();
 
   function keep(id: string): Kept {
     const known = kept.get(id);
@@ -121,19 +127,26 @@ export function createAnalysis(options: {
     return whole;
   }
 
+  const complain = (error: unknown) =>
+    options.log.error({ event: "graph not loaded", error: safeError(error) });
+
+  async function loadAhead(): Promise<void> {
+    const { rows } = await pool.query<{ id: string }>(
+      `select id from core.investigation where graph_version > 0
+       order by recorded_at desc limit ${LOADED_AHEAD}`,
+    );
+    if (rows.length > 0) reports.warm();
+    for (const { id } of rows) if (!stopped) await open(id).catch(complain);
+  }
+
   return {
     async start() {
-      const { rows } = await pool.query<{ id: string }>(
-        "select id from core.investigation where graph_version > 0 order by recorded_at desc limit 4",
-      );
-      for (const { id } of rows) {
-        await open(id).catch((error: unknown) =>
-          options.log.error({ event: "graph not loaded", error: safeError(error) }),
-        );
-      }
+      loadingAhead = loadAhead().catch(complain);
     },
 
     async stop() {
+      stopped = true;
+      await loadingAhead;
       await Promise.all([reports.stop(), pictures.stop()]);
     },
 

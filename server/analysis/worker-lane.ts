@@ -15,6 +15,11 @@ export class WorkerLane {
   #waiting = new Map<number, Waiting>();
   #next = 1;
 
+  /** Starts the thread before there is work for it. */
+  warm(): void {
+    this.#start().unref();
+  }
+
   /** Runs a job. @throws Error when the job fails or the worker dies */
   run<J extends Job>(job: J): Promise<JobAnswer[J["kind"]]> {
     const worker = this.#start();
