@@ -62,7 +62,8 @@ export function personKeys(role: Role): string[] {
 
 /** People's list: keys that a role may sort by, with the SQL column each stands for. */
 export function sortableColumns(role: Role): Record<string, string> {
-  const columns: Record<string, string> = {};
+  // Without a prototype: a sort key is typed by anyone and may be called "constructor".
+  const columns: Record<string, string> = Object.create(null);
   for (const field of PERSON_FIELDS) {
     if (field.key && field.sortable && field.access[role] === "full") {
       columns[field.key] = field.column;

@@ -8,7 +8,13 @@ import { recordGraphChange } from "../../../events/record-graph-change.ts";
 import { invalid } from "../../../http/problem.ts";
 import type { Actor } from "../../../http/route.ts";
 import type { KeyRing } from "../../../identity/keys.ts";
-import { IDENTITY_KEYS, type Identity, putPeople, refToken } from "../../../identity/records.ts";
+import {
+  flagHiddenMatches,
+  IDENTITY_KEYS,
+  type Identity,
+  putPeople,
+  refToken,
+} from "../../../identity/records.ts";
 import type { InvestigationRow } from "../../investigations/store.ts";
 import { placeFor } from "../../places/store.ts";
 import { checkPerson } from "../check-person.ts";
@@ -74,6 +80,8 @@ export async function registerPerson(
   const identity: Identity = {};
   for (const key of IDENTITY_KEYS) identity[key] = input[key] ?? null;
   await putPeople(tx, keys, [{ personId: person.id, identity }], settings.countryCode);
+  const typed = { name: input.name, phone: input.phone };
+  await flagHiddenMatches(tx, keys, person.id, typed, settings.countryCode);
   if (input.specimenDate || input.result || input.resultDate) {
     await insertTests(tx, actor, [
       {
