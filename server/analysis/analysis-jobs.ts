@@ -1,7 +1,7 @@
 import { parentPort } from "node:worker_threads";
+import { answerPicture, type PictureAnswer, type PictureQuestion } from "./answer-picture.ts";
+import { answerReport, type ReportAnswer } from "./answer-report.ts";
 import type { GraphSnapshot } from "./graph-store.ts";
-import { answerPicture, type PictureAnswer, type PictureQuestion } from "./picture.ts";
-import { answerReport, type ReportAnswer } from "./report.ts";
 import type { ReportQuestion } from "./report-question.ts";
 
 /** Work for a worker. */

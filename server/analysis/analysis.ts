@@ -9,11 +9,11 @@ import type {
 import { now } from "../clock.ts";
 import type { Pools } from "../db/pools.ts";
 import { safeError } from "../http/translate-error.ts";
+import type { PictureQuestion } from "./answer-picture.ts";
 import { Answers } from "./answers.ts";
 import type { LiveGroup } from "./group-book.ts";
 import { founderOf, groupNames } from "./group-names.ts";
 import { LiveGraph, type LoadedGraph } from "./live-graph.ts";
-import type { PictureQuestion } from "./picture.ts";
 import { presentPicture, presentSummary } from "./present-answers.ts";
 import { type AnalysisSettings, type AskedReport, reportQuestion } from "./report-question.ts";
 import { TrailMemory } from "./trail-memory.ts";

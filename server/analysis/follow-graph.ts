@@ -1,5 +1,5 @@
 import type pg from "pg";
-import { applyStep, type Change, fetchStep, type StepRows, type Touched } from "./fetch-touched.ts";
+import { applyStep, type Change, fetchStep, type StepRows, type Touched } from "./graph-step.ts";
 import type { GraphStore } from "./graph-store.ts";
 import { snapshotTx } from "./snapshot-tx.ts";
 

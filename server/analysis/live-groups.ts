@@ -1,7 +1,7 @@
 import { setImmediate as turn } from "node:timers/promises";
 import { UnionFind } from "../../shared/core/index.ts";
 import { Arcs } from "./arcs.ts";
-import type { Touched } from "./fetch-touched.ts";
+import type { Touched } from "./graph-step.ts";
 import type { GraphStore } from "./graph-store.ts";
 import { GroupBook, type LiveGroup } from "./group-book.ts";
 import { GrowingTable } from "./growing-table.ts";

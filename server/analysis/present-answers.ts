@@ -1,8 +1,8 @@
 import type { NetworkSummary } from "../../shared/contracts/network.ts";
 import { CLASSIFICATIONS } from "../../shared/vocabulary.ts";
+import type { PictureAnswer } from "./answer-picture.ts";
+import type { ReportAnswer } from "./answer-report.ts";
 import type { LoadedGraph } from "./live-graph.ts";
-import type { PictureAnswer } from "./picture.ts";
-import type { ReportAnswer } from "./report.ts";
 import type { AskedReport } from "./report-question.ts";
 
 /** A worker's report as the contract gives it. */

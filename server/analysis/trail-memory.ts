@@ -1,4 +1,4 @@
-import type { ReportAnswer } from "./report.ts";
+import type { ReportAnswer } from "./answer-report.ts";
 import type { CutOff, ReportQuestion } from "./report-question.ts";
 import type { TrailPoint } from "./trail.ts";
 

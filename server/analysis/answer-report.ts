@@ -4,8 +4,8 @@ import {
   type NetworkReport,
   networkReport,
 } from "../../shared/core/index.ts";
-import { recallOf } from "./double-reports.ts";
 import type { GraphSnapshot } from "./graph-store.ts";
+import { recallOf } from "./recall-of.ts";
 import type { CutOff, ReportQuestion } from "./report-question.ts";
 import {
   casesOf,

@@ -1,9 +1,9 @@
 import type { NetworkGraph } from "../../shared/contracts/network.ts";
 import { type Components, components } from "../../shared/core/index.ts";
+import { dayRange } from "./answer-report.ts";
 import type { GraphSnapshot } from "./graph-store.ts";
 import { layOut } from "./lay-out.ts";
 import { packGroups } from "./pack-groups.ts";
-import { dayRange } from "./report.ts";
 import type { ReportQuestion } from "./report-question.ts";
 import {
   casesOf,
