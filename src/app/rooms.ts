@@ -1,7 +1,7 @@
 import type { Session } from "../../shared/contracts/session.ts";
-import { ROOMS, ROOMS_OF, type Room } from "../../shared/roles.ts";
+import { type Duty, hasDuty, ROOMS, ROOMS_OF, type Room } from "../../shared/roles.ts";
 import type { Room as RoomLink } from "../components/layouts/app-frame.tsx";
-import { roomPath } from "./paths.ts";
+import { paths, roomPath } from "./paths.ts";
 
 const names: Record<Room, string> = {
   trace: "Trace",
@@ -28,5 +28,25 @@ export function homePath(session: Session): string {
   const home = session.rooms[0];
   return home && session.investigationId
     ? roomPath(session.investigationId, home)
-    : "/investigations";
+    : paths.investigations;
+}
+
+/** Pages of a room that ask for a duty of the role. */
+const duties: readonly (readonly [(investigationId: string) => string, Duty])[] = [
+  [paths.newPerson, "register"],
+  [paths.imports, "importFiles"],
+  [paths.matches, "reviewMatches"],
+];
+
+/** Whether the acting role ever has a page; an address that is no room's is left to the router. */
+export function mayOpen(session: Session, pathname: string): boolean {
+  const { actingRole, investigationId } = session;
+  if (!actingRole || !investigationId) return false;
+  const duty = duties.find(([path]) => path(investigationId) === pathname);
+  if (duty && !hasDuty(actingRole, duty[1])) return false;
+  const room = ROOMS.find((one) => {
+    const start = roomPath(investigationId, one);
+    return pathname === start || pathname.startsWith(`${start}/`);
+  });
+  return room === undefined || ROOMS_OF[actingRole].includes(room);
 }

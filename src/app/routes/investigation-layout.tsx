@@ -1,8 +1,9 @@
 import { useQuery } from "@tanstack/react-query";
-import { Outlet, useParams } from "react-router-dom";
+import { Outlet, useLocation, useParams } from "react-router-dom";
 import { Button } from "../../components/ui/button.tsx";
 import { EmptyState } from "../../components/ui/empty-state.tsx";
 import { ErrorState } from "../../components/ui/error-state.tsx";
+import { LinkButton } from "../../components/ui/link-button.tsx";
 import { LoadingState } from "../../components/ui/loading-state.tsx";
 import { investigationQuery } from "../../features/investigations/api/get-investigation.ts";
 import { useSwitchActing } from "../../features/session/components/acting-switch.tsx";
@@ -11,6 +12,7 @@ import { InvestigationContext } from "../../lib/investigation-context.ts";
 import { useSession } from "../../lib/session-context.ts";
 import { Frame } from "../frame.tsx";
 import { useLive } from "../live.ts";
+import { homePath, mayOpen } from "../rooms.ts";
 
 /** Every page inside an investigation: its settings, its live stream, the frame. */
 export function Component() {
@@ -28,6 +30,8 @@ export function Component() {
 
 function Inside({ investigationId }: { investigationId: string }) {
   useLive(investigationId);
+  const session = useSession();
+  const { pathname } = useLocation();
   const investigation = useQuery(investigationQuery(investigationId));
   if (!investigation.data) {
     return (
@@ -51,7 +55,17 @@ function Inside({ investigationId }: { investigationId: string }) {
         investigation={investigation.data}
         readAt={new Date(investigation.dataUpdatedAt).toISOString()}
       >
-        <Outlet />
+        {mayOpen(session, pathname) ? (
+          <Outlet />
+        ) : (
+          // Said here, so that no page is opened only to be refused by the server.
+          <div className="pt-6">
+            <ErrorState
+              kind="no-permission"
+              actions={<LinkButton to={homePath(session)}>Back to your room</LinkButton>}
+            />
+          </div>
+        )}
       </Frame>
     </InvestigationContext>
   );

@@ -39,5 +39,8 @@ export const ILLNESS_FACTS: readonly Fact[] = [
 
 /** The facts that an answer holds for this reader. */
 export function presentFacts(facts: readonly Fact[], person: PersonPage): readonly Fact[] {
-  return facts.filter(({ key }) => key in person);
+  // A household has a name for some and a number for the rest: one of the two is enough.
+  return facts.filter(
+    ({ key }) => key in person && !(key === "householdNumber" && "household" in person),
+  );
 }

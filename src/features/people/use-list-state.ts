@@ -1,13 +1,13 @@
 import { useQueryClient } from "@tanstack/react-query";
-import { useEffect, useState } from "react";
+import { useState } from "react";
 import { useSearchParams } from "react-router-dom";
 import { parseSortParameter, sortParameter } from "../../components/data-table/data-column.ts";
 import { investigationKey } from "../../lib/query-keys.ts";
+import { useSettled } from "../../lib/use-settled.ts";
 import type { PeopleAsk } from "./api/list-people.ts";
 
 export type CodedFilter = "classification" | "interviewed" | "assigned";
 const coded: readonly CodedFilter[] = ["classification", "interviewed", "assigned"];
-const settleMs = 300;
 
 type Typed = { q: string; area: string };
 
@@ -22,12 +22,7 @@ export function useListState(investigationId: string) {
   const [typed, setTypedState] = useState<Typed>(
     () => queryClient.getQueryData<Typed>(typedKey) ?? { q: "", area: "" },
   );
-  const [settled, setSettled] = useState(typed);
-
-  useEffect(() => {
-    const timer = setTimeout(() => setSettled(typed), settleMs);
-    return () => clearTimeout(timer);
-  }, [typed]);
+  const settled = useSettled(typed);
 
   function set(changes: Record<string, string | undefined>) {
     setParams(

@@ -31,13 +31,10 @@ export type LineListFiltersProps = {
 /** Search and filters above the line list. */
 export function LineListFilters({ state, keys, areas }: LineListFiltersProps) {
   const id = useId();
-  const named = keys.has("name") || keys.size === 0;
   return (
     <>
       <label htmlFor={`${id}-q`} className="text-sm">
-        <span className="mb-1 block text-ink-2">
-          {named ? "Find by name, telephone, reference or study number" : "Find by study number"}
-        </span>
+        <span className="mb-1 block text-ink-2">{searchWords(keys)}</span>
         <input
           id={`${id}-q`}
           type="search"
@@ -107,4 +104,10 @@ function Labelled({ words, children }: { words: string; children: React.ReactNod
       {children}
     </div>
   );
+}
+
+/** What this reader's search looks through, by what the answers hold. */
+function searchWords(keys: ReadonlySet<string>): string {
+  if (keys.has("name")) return "Find by name, telephone, reference or study number";
+  return keys.has("ref") ? "Find by reference or study number" : "Find by study number";
 }

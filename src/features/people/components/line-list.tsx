@@ -85,8 +85,8 @@ export function LineList({ memberNames }: LineListProps) {
           )
         }
       />
-      <div className="mt-2">
-        <MarkLegend />
+      <div className="mt-3">
+        <MarkLegend layout="row" />
       </div>
     </>
   );

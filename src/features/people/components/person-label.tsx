@@ -10,7 +10,7 @@ export type PersonLabelProps = {
 export function PersonLabel({ person }: PersonLabelProps) {
   const mark = personMarkOf(person);
   return (
-    <span className="inline-flex items-baseline gap-1.5 whitespace-nowrap">
+    <span className="inline-flex items-center gap-1.5 whitespace-nowrap">
       {mark ? (
         <PersonMark {...mark} size={16} />
       ) : (

@@ -20,7 +20,7 @@ export function QueueItem({ person, mine, today, personTo, interviewTo }: QueueI
   return (
     <li
       className="grid grid-cols-[minmax(0,1fr)_auto] items-center gap-x-4 gap-y-0.5 border-b border-rule
-        py-1.5 sm:grid-cols-[8rem_minmax(0,1.4fr)_minmax(0,2fr)_auto]"
+        py-1.5 sm:grid-cols-[8rem_minmax(0,1.4fr)_minmax(0,2fr)_6rem]"
     >
       <Link
         to={personTo}
@@ -47,7 +47,7 @@ export function QueueItem({ person, mine, today, personTo, interviewTo }: QueueI
         to={interviewTo}
         size="small"
         variant={mine ? "primary" : "quiet"}
-        className="order-2 sm:order-none"
+        className="order-2 justify-self-end sm:order-none"
       >
         {begun ? "Go on" : "Interview"}
         <span className="sr-only"> {person.studyNumber}</span>

@@ -16,6 +16,8 @@ import { ApiError, errorWords } from "../../../lib/api-error.ts";
 import { contractResolver, showFieldErrors } from "../../../lib/form-errors.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
 import { useRegisterPerson } from "../api/register-person.ts";
+import { AlreadyOnRecord } from "../components/already-on-record.tsx";
+import { DateKeys } from "../components/date-keys.tsx";
 import { PersonFieldInput } from "../components/person-field-input.tsx";
 import { blankPerson, fieldsIn, type PersonSection, type PersonValues } from "../person-fields.ts";
 
@@ -57,7 +59,21 @@ export function Component() {
   }, [made, variables, id, navigate, toast]);
 
   return (
-    <RoomPage title="Register a person" subLine="Whatever is known now; the rest can follow.">
+    <RoomPage
+      title="Register a person"
+      subLine="Whatever is known now; the rest can follow."
+      sideLabel="While typing"
+      side={
+        <>
+          <Section title="Already on record?" level={3}>
+            <AlreadyOnRecord investigationId={id} control={form.control} />
+          </Section>
+          <Section title="Typing dates" level={3}>
+            <DateKeys />
+          </Section>
+        </>
+      }
+    >
       <UnsavedGuard unsaved={isDirty && !register.isSuccess} />
       <form
         noValidate

@@ -24,7 +24,7 @@ export function Component() {
   return (
     <RoomPage
       title="Trace"
-      subLine="Interviews, and everybody on record in your sight."
+      subLine="Everybody on record in your sight."
       actions={
         <>
           {hasDuty(actingRole, "reviewMatches") ? (
