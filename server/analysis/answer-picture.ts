@@ -3,7 +3,7 @@ import { type Components, components } from "../../shared/core/index.ts";
 import { dayRange } from "./answer-report.ts";
 import type { GraphSnapshot } from "./graph-store.ts";
 import { layOut } from "./lay-out.ts";
-import { packGroups } from "./pack-groups.ts";
+import { packGroups, sideOf } from "./pack-groups.ts";
 import type { ReportQuestion } from "./report-question.ts";
 import {
   casesOf,
@@ -98,7 +98,7 @@ export function answerPicture(snapshot: GraphSnapshot, question: PictureQuestion
 
   if (drawn.graph.n > MOST_PEOPLE_DRAWN) {
     const groups = order.filter(([, size]) => size > 1).slice(0, MOST_GROUPS_DRAWN);
-    const places = packGroups(groups.map(([, size]) => Math.sqrt(size)));
+    const places = packGroups(groups.map(([, size]) => sideOf(size)));
     const nodes = groups.map(([founder, size], rank) => ({
       person: founder,
       founder,
@@ -114,7 +114,7 @@ export function answerPicture(snapshot: GraphSnapshot, question: PictureQuestion
   const x = new Float64Array(drawn.graph.n);
   const y = new Float64Array(drawn.graph.n);
   const parts = peopleByComponent(components(drawn.graph));
-  const places = packGroups(parts.map((people) => Math.sqrt(people.length)));
+  const places = packGroups(parts.map((people) => sideOf(people.length)));
   parts.forEach((people, label) => {
     const positions = layOut(drawn.graph, people);
     people.forEach((u, k) => {
