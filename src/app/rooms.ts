@@ -1,5 +1,5 @@
 import type { Session } from "../../shared/contracts/session.ts";
-import { type Duty, hasDuty, ROOMS, ROOMS_OF, type Room } from "../../shared/roles.ts";
+import { type Duty, HOME_ROOM, hasDuty, ROOMS, ROOMS_OF, type Room } from "../../shared/roles.ts";
 import type { Room as RoomLink } from "../components/layouts/app-frame.tsx";
 import { paths, roomPath } from "./paths.ts";
 
@@ -25,7 +25,7 @@ export function roomLinks(session: Session): RoomLink[] {
 
 /** Where the session's acting role starts; the list of investigations when it acts in none. */
 export function homePath(session: Session): string {
-  const home = session.rooms[0];
+  const home = session.actingRole && HOME_ROOM[session.actingRole];
   return home && session.investigationId
     ? roomPath(session.investigationId, home)
     : paths.investigations;
