@@ -175,8 +175,7 @@ describe("question in the address", () => {
         to: undefined,
         asOf: undefined,
       },
-      drawn: "all",
-      group: undefined,
+      drawn: { population: "all", exposures: "all", unpaired: false, group: undefined },
     });
   });
 

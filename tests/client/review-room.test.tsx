@@ -40,9 +40,9 @@ describe("review room", () => {
     const { asked } = open();
     const table = await screen.findByRole("table", { name: "Connected groups" });
     expect(asked).toContain("groups?page=1&pageSize=50&sort=-grownSince");
-    await waitFor(() => expect(within(table).getByRole("row", { name: /G-BBBBB 2 \+4 5 2 3/ })));
-    expect(within(table).getByRole("row", { name: /G-AAAAA 1 0 60 20 40/ })).toBeTruthy();
-    expect(within(table).getByRole("columnheader", { name: /grown since .*00:00/ })).toBeTruthy();
+    await waitFor(() => expect(within(table).getByRole("row", { name: /G-BBBBB \+4 5 2 3 2/ })));
+    expect(within(table).getByRole("row", { name: /G-AAAAA 0 60 20 40 1/ })).toBeTruthy();
+    expect(screen.getByText(/grown = since May 27, 2026, 00:00/)).toBeTruthy();
     expect(screen.getByText(/^1 group grew by 4 people since/)).toBeTruthy();
     expect(screen.getByText(/an epidemiologist decides what a cluster is/)).toBeTruthy();
   });

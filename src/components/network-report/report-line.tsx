@@ -1,24 +1,26 @@
 import type { NetworkSummary } from "../../../shared/contracts/network.ts";
 import { formatInstant, formatNumber } from "../../lib/formatters.ts";
 import { exposureWords, populationNames } from "../../lib/population-words.ts";
+import { VersionWords } from "./version-words.tsx";
 
 export type ReportLineProps = {
   summary: NetworkSummary;
   timeZone: string;
-  /** Only the cut-off and the version, where the population stands beside each figure. */
+  /** A newer answer is on its way. */
+  updating: boolean;
+  /** Only the cut-off and the version, where the sentence or the rows name people and exposures. */
   short?: boolean;
 };
 
 /** People, exposures, cut-off and version of a report, in one quiet line. */
-export function ReportLine({ summary, timeZone, short = false }: ReportLineProps) {
-  const cutOff =
-    `cut-off ${formatInstant(summary.cutOff, timeZone)}, ` +
-    `version ${formatNumber(summary.graphVersion)}`;
-  if (short) return <>{cutOff}</>;
+export function ReportLine({ summary, timeZone, updating, short = false }: ReportLineProps) {
   return (
     <>
-      {populationNames[summary.population]} (n {formatNumber(summary.people)}),{" "}
-      {exposureWords(summary)}, {cutOff}
+      {short
+        ? null
+        : `${populationNames[summary.population]} (n ${formatNumber(summary.people)}), ${exposureWords(summary)}, `}
+      cut-off {formatInstant(summary.cutOff, timeZone)},{" "}
+      <VersionWords graphVersion={summary.graphVersion} updating={updating} />
     </>
   );
 }

@@ -27,7 +27,7 @@ export function ThresholdFigure({ summary, populationAtRisk }: ThresholdFigurePr
         .flatMap(({ day, pairsPerPerson: value }) => (value === null ? [] : [{ day, value }]))}
       hasVerdict={threshold.verdict !== null}
       reason={reasonWords(reasons["threshold.pairsPerPerson"])}
-      sentence={<strong>{sentence}</strong>}
+      sentence={<span className="text-base">{sentence}</span>}
       notes={
         <>
           {notes.map((note) => (

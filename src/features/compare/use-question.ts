@@ -10,13 +10,22 @@ export type CountedWindow = NetworkSummary["window"];
 /** The question of the page and what is drawn; kept in the address, so that it can be sent on. */
 export type CompareQuestion = {
   question: NetworkQuestion;
-  /** People that the picture draws. */
-  drawn: Population;
+  drawn: Drawn;
+};
+
+/** What the picture draws. */
+export type Drawn = {
+  population: Population;
+  /** Every exposure on record, as groups are counted in Review, or those of the figures above. */
+  exposures: "all" | "question";
+  /** Also people without a contact pair among what is drawn. */
+  unpaired: boolean;
   /** Id of the only group that is drawn. */
   group: string | undefined;
 };
 
 const populations: readonly Population[] = ["all", "cases", "interviewed"];
+
 const windows: readonly CountedWindow[] = ["preset", "all", "free"];
 
 /**
@@ -37,8 +46,12 @@ export function readQuestion(search: URLSearchParams): CompareQuestion {
       to: day("to"),
       asOf: day("asOf"),
     },
-    drawn: oneOf(populations, search.get("drawn")) ?? "all",
-    group: search.get("group")?.slice(0, 64) || undefined,
+    drawn: {
+      population: oneOf(populations, search.get("drawn")) ?? "all",
+      exposures: search.get("drawnExposures") === "question" ? "question" : "all",
+      unpaired: search.get("unpaired") === "yes",
+      group: search.get("group")?.slice(0, 64) || undefined,
+    },
   };
 }
 
@@ -53,7 +66,18 @@ function oneOf<T extends string>(values: readonly T[], text: string | null): T |
 
 /** What may be changed; undefined takes a key out of the address. */
 export type QuestionChange = Partial<
-  Record<"population" | "window" | "from" | "to" | "asOf" | "drawn" | "group", string | undefined>
+  Record<
+    | "population"
+    | "window"
+    | "from"
+    | "to"
+    | "asOf"
+    | "drawn"
+    | "drawnExposures"
+    | "unpaired"
+    | "group",
+    string | undefined
+  >
 >;
 
 /** The question in the address, and the way to change it without a step in the history. */

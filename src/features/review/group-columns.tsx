@@ -10,8 +10,8 @@ export function growthText(grown: number): string {
   return `${grown > 0 ? "+" : "−"}${formatNumber(Math.abs(grown))}`;
 }
 
-/** Columns of the groups in Review; `since` says from when growth is counted. */
-export function groupColumns(places: GroupPlaces, since: string): DataColumn<Group>[] {
+/** Columns of the groups in Review: what changed first, so that a phone shows it. */
+export function groupColumns(places: GroupPlaces): DataColumn<Group>[] {
   return [
     {
       id: "group",
@@ -30,17 +30,8 @@ export function groupColumns(places: GroupPlaces, since: string): DataColumn<Gro
       ),
     },
     {
-      id: "place",
-      header: "place by size",
-      numeric: true,
-      cell: ({ id }) => {
-        const place = places.get(id);
-        return place === undefined ? `after ${formatNumber(places.size)}` : formatNumber(place + 1);
-      },
-    },
-    {
       id: "grownSince",
-      header: `grown since ${since}`,
+      header: "grown",
       numeric: true,
       sortKey: "grownSince",
       cell: ({ grownSince }) =>
@@ -70,6 +61,15 @@ export function groupColumns(places: GroupPlaces, since: string): DataColumn<Gro
       numeric: true,
       sortKey: "contacts",
       cell: ({ contacts }) => formatNumber(contacts),
+    },
+    {
+      id: "place",
+      header: "place by size",
+      numeric: true,
+      cell: ({ id }) => {
+        const place = places.get(id);
+        return place === undefined ? `after ${formatNumber(places.size)}` : formatNumber(place + 1);
+      },
     },
   ];
 }

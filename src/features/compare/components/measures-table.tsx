@@ -13,7 +13,9 @@ export function MeasuresTable({ summary }: { summary: NetworkSummary }) {
           <tr>
             <HeadCell>measure</HeadCell>
             <HeadCell numeric>observed</HeadCell>
-            <HeadCell numeric>95 % interval</HeadCell>
+            <HeadCell numeric className="whitespace-nowrap">
+              95 % interval
+            </HeadCell>
             <HeadCell numeric>n</HeadCell>
             <HeadCell>people</HeadCell>
             <HeadCell>what to know</HeadCell>
@@ -22,7 +24,7 @@ export function MeasuresTable({ summary }: { summary: NetworkSummary }) {
         <tbody>
           {measureRows(summary).map((row) => (
             <tr key={row.id}>
-              <HeadCell scope="row" className="min-w-52">
+              <HeadCell scope="row" className="min-w-44 align-baseline">
                 {row.label}
               </HeadCell>
               <Cell numeric>

@@ -1,5 +1,5 @@
 import type { Core, EventObject } from "cytoscape";
-import { useCallback, useEffect, useMemo, useRef } from "react";
+import { useCallback, useEffect, useMemo, useRef, useState } from "react";
 import CytoscapeComponent from "react-cytoscapejs";
 import type { NetworkGraph } from "../../../../shared/contracts/network.ts";
 import { markBlobUrl } from "../../../components/person-mark/mark-svg.ts";
@@ -70,6 +70,8 @@ export function NetworkCanvas({
     drawing.current?.fit(undefined, layout.padding);
   }, [fitKey]);
 
+  const [awake, frame] = useAwake();
+
   const zoomBy = (factor: number) => {
     const cy = drawing.current;
     if (!cy) return;
@@ -79,15 +81,17 @@ export function NetworkCanvas({
 
   return (
     <div className="relative border-y border-rule">
-      <div role="img" aria-label={description}>
+      <div role="img" aria-label={description} ref={frame}>
         <CytoscapeComponent
-          className="relative h-[min(70vh,36rem)] w-full touch-pan-y"
+          className="relative h-[min(70vh,36rem)] w-full"
           elements={elements}
           layout={layout}
           stylesheet={stylesheet}
           cy={attach}
           minZoom={0.05}
           maxZoom={6}
+          userZoomingEnabled={awake}
+          userPanningEnabled={awake}
           autoungrabify
           boxSelectionEnabled={false}
         />
@@ -106,4 +110,32 @@ export function NetworkCanvas({
       </fieldset>
     </div>
   );
+}
+
+/**
+ * Whether wheel and drag work on the picture. Only after a press on it and until the pointer goes
+ * elsewhere: otherwise whoever scrolls down the page would be caught in it.
+ */
+function useAwake(): [boolean, (element: HTMLElement | null) => void] {
+  const [awake, setAwake] = useState(false);
+  const frame = useCallback((element: HTMLElement | null) => {
+    if (!element) return;
+    const onPress = ({ target, pointerType, type }: PointerEvent) => {
+      const inside = target instanceof Node && element.contains(target);
+      // A finger that scrolls past presses too; it wakes the picture with a tap only.
+      if (!inside || pointerType === "mouse" || type === "click") setAwake(inside);
+    };
+    const onLeave = ({ pointerType }: PointerEvent) => {
+      if (pointerType === "mouse") setAwake(false);
+    };
+    document.addEventListener("pointerdown", onPress);
+    element.addEventListener("click", onPress);
+    element.addEventListener("pointerleave", onLeave);
+    return () => {
+      document.removeEventListener("pointerdown", onPress);
+      element.removeEventListener("click", onPress);
+      element.removeEventListener("pointerleave", onLeave);
+    };
+  }, []);
+  return [awake, frame];
 }

@@ -9,7 +9,9 @@ import { FigureWithTable } from "../../../components/ui/figure-with-table.tsx";
 import { LoadingState } from "../../../components/ui/loading-state.tsx";
 import { formatCount } from "../../../lib/formatters.ts";
 import { type GroupPlaces, groupCode } from "../../../lib/group-places.ts";
+import { populationNames } from "../../../lib/population-words.ts";
 import { type PictureNode, pictureNodes } from "../picture-nodes.ts";
+import type { Drawn } from "../use-question.ts";
 import { NodePanel } from "./node-panel.tsx";
 import { NodesTable } from "./nodes-table.tsx";
 
@@ -20,13 +22,9 @@ const NetworkCanvas = lazy(() =>
 export type NetworkPictureProps = {
   graph: NetworkGraph;
   places: GroupPlaces;
-  /** Whom the picture shows: "all people on record". */
-  population: string;
-  /** True while one group is drawn alone. */
-  alone: boolean;
+  drawn: Drawn;
   onGroup: (group: string) => void;
   personTo?: (id: string) => string;
-  fitKey: string;
 };
 
 const marks: readonly PersonMarkInput[] = [
@@ -39,27 +37,25 @@ const marks: readonly PersonMarkInput[] = [
 ];
 
 /** The network as a picture with its legend, and the same people as a table one key away. */
-export function NetworkPicture({
-  graph,
-  places,
-  population,
-  alone,
-  onGroup,
-  personTo,
-  fitKey,
-}: NetworkPictureProps) {
-  const nodes = useMemo(() => pictureNodes(graph, places), [graph, places]);
+export function NetworkPicture({ graph, places, drawn, onGroup, personTo }: NetworkPictureProps) {
+  const everyone = useMemo(() => pictureNodes(graph, places), [graph, places]);
+  const nodes = useMemo(
+    () => (drawn.unpaired ? everyone : everyone.filter(isPaired)),
+    [everyone, drawn.unpaired],
+  );
   const [selected, setSelected] = useState<string | null>(null);
   const select = useCallback((id: string | null) => setSelected(id), []);
   const chosen = nodes.find(({ id }) => id === selected) ?? null;
   if (nodes.length === 0) {
     return (
-      <EmptyState title="Nobody to draw">
-        No one of this population is on record as of the chosen day.
+      <EmptyState title={everyone.length === 0 ? "Nobody to draw" : "No contact pair to draw"}>
+        {everyone.length === 0
+          ? "No one of this population is on record as of the chosen day."
+          : "People without a contact pair can be drawn too; see above."}
       </EmptyState>
     );
   }
-  const description = inWords(nodes, graph, population);
+  const description = inWords(nodes, graph, drawn);
   return (
     <FigureWithTable
       label="Network picture"
@@ -90,21 +86,38 @@ export function NetworkPicture({
           description={`Network picture: ${description}`}
           selected={chosen?.id ?? null}
           onSelect={select}
-          fitKey={fitKey}
+          fitKey={JSON.stringify(drawn)}
         />
       </Suspense>
-      <NodePanel node={chosen} personTo={personTo} onGroup={alone ? undefined : onGroup} />
+      <NodePanel node={chosen} personTo={personTo} onGroup={drawn.group ? undefined : onGroup} />
     </FigureWithTable>
   );
 }
 
-function inWords(nodes: readonly PictureNode[], graph: NetworkGraph, population: string): string {
+/** A group always has pairs; they are just not drawn. */
+function isPaired({ level, pairs }: PictureNode): boolean {
+  return level === "groups" || pairs > 0;
+}
+
+function inWords(nodes: readonly PictureNode[], graph: NetworkGraph, drawn: Drawn): string {
+  const population = populationNames[drawn.population];
   if (graph.level === "groups") {
     const people = nodes.reduce((sum, { size }) => sum + size, 0);
     return `${formatCount(nodes.length, "connected group", "connected groups")} with ${formatCount(people, "person", "people")}, of ${population}.`;
   }
-  const alone = nodes.filter(({ pairs }) => pairs === 0).length;
-  return `${formatCount(nodes.length, "person", "people")} (${population}), ${formatCount(graph.pairs.length, "contact pair", "contact pairs")}; ${formatCount(alone, "person has", "people have")} no contact pair among them.`;
+  const unpaired = graph.nodes.length - new Set(graph.pairs.flatMap(endsOf)).size;
+  const exposures = drawn.exposures === "all" ? "all exposures" : "exposures as chosen above";
+  const left = drawn.unpaired ? "drawn too" : "not drawn";
+  return (
+    `${formatCount(nodes.length, "person", "people")} of ${population} with ` +
+    `${formatCount(graph.pairs.length, "contact pair", "contact pairs")}, ${exposures}; ` +
+    `${formatCount(unpaired, "person has", "people have")} no contact pair among them and ` +
+    `${unpaired === 1 ? "is" : "are"} ${left}.`
+  );
+}
+
+function endsOf({ source, target }: NetworkGraph["pairs"][number]): string[] {
+  return [source, target];
 }
 
 /** Codes of the drawn groups that have a colour, in the order of the colours. */

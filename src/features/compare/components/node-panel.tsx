@@ -18,7 +18,8 @@ export function NodePanel({ node, personTo, onGroup }: NodePanelProps) {
     <div role="status" className="min-h-10 py-2 text-sm">
       {node === null ? (
         <p className="text-ink-2">
-          Tap a mark to see whose it is. Wheel or two fingers bring the picture nearer.
+          Tap a mark to see whose it is. After a tap on the picture, dragging moves it and the wheel
+          or two fingers bring it nearer.
         </p>
       ) : (
         <div className="flex flex-wrap items-center gap-x-4 gap-y-1">

@@ -2,7 +2,7 @@ import type { ReactNode } from "react";
 import type { NetworkSummary } from "../../../../shared/contracts/network.ts";
 import { Answer } from "../../../components/ui/answer.tsx";
 import { Caution } from "../../../components/ui/caution.tsx";
-import { formatCount, formatNumber, formatPart, formatShare } from "../../../lib/formatters.ts";
+import { formatNumber, formatPart, formatShare } from "../../../lib/formatters.ts";
 import { reasonWords } from "../../../lib/reason-words.ts";
 
 /** What the figures below rest on, before any of them: how much of the network was seen at all. */
@@ -11,7 +11,7 @@ export function WhatWasSeen({ summary }: { summary: NetworkSummary }) {
   const complete = threshold.population === "complete";
   return (
     <section aria-label="What was seen" className="mb-6">
-      <dl className="grid gap-x-8 gap-y-2 sm:grid-cols-2 lg:grid-cols-4">
+      <dl className="grid grid-cols-2 gap-x-8 gap-y-3 lg:grid-cols-4">
         <Seen
           term="interviewed"
           value={complete ? "taken as complete" : formatPart(threshold.interviewed, threshold.n)}
@@ -56,10 +56,6 @@ export function WhatWasSeen({ summary }: { summary: NetworkSummary }) {
         These are contacts people told us about. Missing interviews, forgotten contacts and groups
         that could not be named make the true network larger. A line is a contact, not an infection.
       </Caution>
-      <p className="sr-only">
-        {formatCount(threshold.interviewed, "person", "people")} interviewed of{" "}
-        {formatNumber(threshold.n)}.
-      </p>
     </section>
   );
 }

@@ -4,13 +4,13 @@ import { RoomPage } from "../../../components/layouts/room-page.tsx";
 import { Section } from "../../../components/layouts/section.tsx";
 import { ReportLine } from "../../../components/network-report/report-line.tsx";
 import { ThresholdFigure } from "../../../components/network-report/threshold-figure.tsx";
-import { UpdatingLine } from "../../../components/network-report/updating-line.tsx";
 import { Button } from "../../../components/ui/button.tsx";
 import { Caution } from "../../../components/ui/caution.tsx";
 import { ErrorState } from "../../../components/ui/error-state.tsx";
 import { LoadingState } from "../../../components/ui/loading-state.tsx";
 import { errorKind } from "../../../lib/api-error.ts";
 import { useCutOff } from "../../../lib/cut-off-context.ts";
+import { formatPart } from "../../../lib/formatters.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
 import { networkSummaryQuery } from "../../../lib/network-summary-query.ts";
 import { saveText } from "../../../lib/save-text.ts";
@@ -25,7 +25,7 @@ import { isReversed, useQuestion } from "../use-question.ts";
 /** Compare: the recorded network against the threshold, its measures, and its picture. */
 export function Component() {
   const { id, timeZone, populationAtRisk } = useInvestigation();
-  const [{ question, drawn, group }, change] = useQuestion();
+  const [{ question, drawn }, change] = useQuestion();
   const report = useQuery({
     ...networkSummaryQuery(id, question),
     enabled: !isReversed(question),
@@ -39,7 +39,7 @@ export function Component() {
   return (
     <RoomPage
       title="Compare"
-      subLine={summary ? <ReportLine summary={summary} timeZone={timeZone} /> : undefined}
+      subLine={summary ? <ReportLine {...{ summary, timeZone, updating }} /> : undefined}
       actions={
         summary ? (
           <Button
@@ -62,7 +62,6 @@ export function Component() {
           {report.isError ? (
             <ErrorState kind={errorKind(report.error)} onRetry={() => void report.refetch()} />
           ) : null}
-          <UpdatingLine graphVersion={summary.graphVersion} updating={updating} />
           <WhatWasSeen summary={summary} />
           <Section
             title="Threshold strip"
@@ -92,15 +91,17 @@ export function Component() {
           </div>
           <Section
             title="Measures"
-            subLine={<ReportLine summary={summary} timeZone={timeZone} short />}
+            subLine={<ReportLine {...{ summary, timeZone, updating }} short />}
           >
             <MeasuresTable summary={summary} />
             <Caution className="mt-2">
-              A difference from random mixing can come from how people were traced. “—” means not
+              A difference from random mixing can come from how people were traced. Compare only
+              within interviewed people (share interviewed:{" "}
+              {formatPart(summary.threshold.interviewed, summary.threshold.n)}). “—” means not
               worked out; it is not 0.
             </Caution>
           </Section>
-          <PictureSection question={question} drawn={drawn} group={group} onChange={change} />
+          <PictureSection question={question} drawn={drawn} onChange={change} />
         </div>
       )}
     </RoomPage>

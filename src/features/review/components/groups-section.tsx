@@ -5,12 +5,12 @@ import type { SortState } from "../../../components/data-table/data-column.ts";
 import { sortParameter } from "../../../components/data-table/data-column.ts";
 import { DataTable } from "../../../components/data-table/data-table.tsx";
 import { Section } from "../../../components/layouts/section.tsx";
-import { UpdatingLine } from "../../../components/network-report/updating-line.tsx";
+import { VersionWords } from "../../../components/network-report/version-words.tsx";
 import { Caution } from "../../../components/ui/caution.tsx";
 import { EmptyState } from "../../../components/ui/empty-state.tsx";
 import { withQuery } from "../../../lib/api-client.ts";
 import { errorKind } from "../../../lib/api-error.ts";
-import { formatInstant, formatNumber } from "../../../lib/formatters.ts";
+import { formatInstant } from "../../../lib/formatters.ts";
 import { groupPlaces } from "../../../lib/group-places.ts";
 import { groupsQuery, largestGroupsQuery } from "../../../lib/groups-query.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
@@ -33,8 +33,8 @@ export function GroupsSection() {
   const largest = useQuery(largestGroupsQuery(id));
   const since = formatInstant(groups.data?.since, timeZone);
   const columns = useMemo(
-    () => groupColumns(groupPlaces(largest.data?.items ?? []), since),
-    [largest.data, since],
+    () => groupColumns(groupPlaces(largest.data?.items ?? [])),
+    [largest.data],
   );
   const version = groups.data?.graphVersion;
   const updating = groups.isFetching && groups.data !== undefined;
@@ -43,13 +43,16 @@ export function GroupsSection() {
     <Section
       title="Groups"
       subLine={
-        version === undefined
-          ? undefined
-          : `people connected by contact pairs, all exposures, version ${formatNumber(version)}`
+        version === undefined ? undefined : (
+          <>
+            people connected by contact pairs, all exposures; grown = since {since};{" "}
+            <VersionWords graphVersion={version} updating={updating} />
+          </>
+        )
       }
     >
       {grown.data ? (
-        <p className="text-base">
+        <p className="mb-3 text-base">
           {growthSentence(
             grown.data.items,
             grown.data.total,
@@ -57,7 +60,6 @@ export function GroupsSection() {
           )}
         </p>
       ) : null}
-      <UpdatingLine graphVersion={version} updating={updating} />
       <DataTable
         caption="Connected groups"
         columns={columns}

@@ -3,7 +3,6 @@ import { RoomPage } from "../../../components/layouts/room-page.tsx";
 import { Section } from "../../../components/layouts/section.tsx";
 import { ReportLine } from "../../../components/network-report/report-line.tsx";
 import { ThresholdFigure } from "../../../components/network-report/threshold-figure.tsx";
-import { UpdatingLine } from "../../../components/network-report/updating-line.tsx";
 import { ErrorState } from "../../../components/ui/error-state.tsx";
 import { LoadingState } from "../../../components/ui/loading-state.tsx";
 import { errorKind } from "../../../lib/api-error.ts";
@@ -29,13 +28,17 @@ export function Component() {
     <RoomPage title="Review" subLine={formatDay(today, { style: "long" })}>
       <Section
         title="Threshold strip"
-        subLine={summary ? <ReportLine summary={summary} timeZone={timeZone} /> : undefined}
+        subLine={
+          summary ? (
+            <>
+              contact pairs per person, as seen through the interviews,{" "}
+              <ReportLine {...{ summary, timeZone, updating }} short />
+            </>
+          ) : undefined
+        }
       >
         {summary ? (
-          <>
-            <UpdatingLine graphVersion={summary.graphVersion} updating={updating} />
-            <ThresholdFigure summary={summary} populationAtRisk={populationAtRisk} />
-          </>
+          <ThresholdFigure summary={summary} populationAtRisk={populationAtRisk} />
         ) : report.isError ? (
           <ErrorState kind={errorKind(report.error)} onRetry={() => void report.refetch()} />
         ) : (
