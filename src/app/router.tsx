@@ -18,6 +18,7 @@ const trace: RouteObject[] = [
 const rooms: RouteObject[] = [
   { path: "review", lazy: () => import("../features/review/routes/review-route.tsx") },
   { path: "compare", lazy: () => import("../features/compare/routes/compare-route.tsx") },
+  { path: "safeguard", lazy: () => import("../features/safeguard/routes/safeguard-route.tsx") },
 ];
 
 const routes: RouteObject[] = [

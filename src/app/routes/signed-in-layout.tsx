@@ -1,15 +1,18 @@
 import { useQuery, useQueryClient } from "@tanstack/react-query";
-import { useCallback, useEffect, useRef, useState } from "react";
+import { Suspense, useCallback, useEffect, useRef, useState } from "react";
 import { Navigate, Outlet, useLocation } from "react-router-dom";
 import type { Session } from "../../../shared/contracts/session.ts";
-import { ConfirmDialog } from "../../components/ui/confirm-dialog.tsx";
 import { ErrorState } from "../../components/ui/error-state.tsx";
 import { LoadingState } from "../../components/ui/loading-state.tsx";
 import { readSession, sessionQuery } from "../../features/session/api/get-session.ts";
 import { welcomeQuery } from "../../features/session/api/get-welcome.ts";
 import { switchActing } from "../../features/session/api/switch-acting.ts";
 import { IdleWatch } from "../../features/session/components/idle-watch.tsx";
-import { LockPage } from "../../features/session/components/lock-page.tsx";
+import {
+  ActsElsewhere,
+  fetchSessionDialogs,
+  LockPage,
+} from "../../features/session/components/session-dialogs.ts";
 import { onOtherTab } from "../../features/session/session-channel.ts";
 import { setOnUnauthorized } from "../../lib/api-client.ts";
 import { errorKind } from "../../lib/api-error.ts";
@@ -61,6 +64,8 @@ function Guarded({ session }: { session: Session }) {
   known.current = session;
   const lock = useCallback(() => setLocked(true), []);
 
+  useEffect(fetchSessionDialogs, []);
+
   useEffect(() => {
     setOnUnauthorized(lock);
     return () => setOnUnauthorized(() => {});
@@ -109,16 +114,16 @@ function Guarded({ session }: { session: Session }) {
         <Outlet />
       </div>
       {locked ? null : <IdleWatch session={session} onEnded={lock} />}
-      <LockPage open={locked} session={session} onSignedIn={(next) => void unlock(next)} />
-      <ConfirmDialog
-        open={changedElsewhere && !locked}
-        onOpenChange={setChangedElsewhere}
-        title="You act differently in another tab"
-        description="All tabs of a browser share one session. This page still shows what was open to the role before; it cannot save until it is opened anew."
-        confirmLabel="Open anew"
-        cancelLabel="Copy something first"
-        onConfirm={() => window.location.assign("/")}
-      />
+      {locked ? (
+        <Suspense fallback={<div className="fixed inset-0 z-70 bg-paper" />}>
+          <LockPage session={session} onSignedIn={(next) => void unlock(next)} />
+        </Suspense>
+      ) : null}
+      {changedElsewhere && !locked ? (
+        <Suspense fallback={null}>
+          <ActsElsewhere onLater={() => setChangedElsewhere(false)} />
+        </Suspense>
+      ) : null}
     </SessionContext>
   );
 }

@@ -1,11 +1,16 @@
-import { useState } from "react";
+import { lazy, Suspense, useState } from "react";
 import type { PersonPage } from "../../../../shared/contracts/people.ts";
 import { Section } from "../../../components/layouts/section.tsx";
 import { Button } from "../../../components/ui/button.tsx";
+import { LoadingState } from "../../../components/ui/loading-state.tsx";
 import { type Fact, presentFacts } from "../person-facts.ts";
 import type { PersonSection } from "../person-fields.ts";
-import { EditPersonForm } from "./edit-person-form.tsx";
 import { FactList } from "./fact-list.tsx";
+
+// Most pages are read only; the form comes when it is asked for.
+const EditPersonForm = lazy(() =>
+  import("./edit-person-form.tsx").then((file) => ({ default: file.EditPersonForm })),
+);
 
 export type EditableSectionProps = {
   title: string;
@@ -36,10 +41,12 @@ export function EditableSection(props: EditableSectionProps) {
       }
     >
       {editing ? (
-        <EditPersonForm
-          {...{ investigationId, person, section, today }}
-          onDone={() => setEditing(false)}
-        />
+        <Suspense fallback={<LoadingState label="Opening the form" />}>
+          <EditPersonForm
+            {...{ investigationId, person, section, today }}
+            onDone={() => setEditing(false)}
+          />
+        </Suspense>
       ) : (
         <FactList facts={shown} person={person} />
       )}

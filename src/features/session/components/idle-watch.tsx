@@ -1,12 +1,11 @@
-import { useEffect, useState } from "react";
+import { Suspense, useEffect, useState } from "react";
 import type { Session } from "../../../../shared/contracts/session.ts";
-import { Button } from "../../../components/ui/button.tsx";
-import { Dialog } from "../../../components/ui/dialog.tsx";
 import { Notice } from "../../../components/ui/notice.tsx";
 import { idleState } from "../../../lib/activity.ts";
 import { api } from "../../../lib/api-client.ts";
 import { staySignedIn } from "../api/get-session.ts";
 import { idleStep } from "../idle-step.ts";
+import { IdleWarning } from "./session-dialogs.ts";
 
 export type IdleWatchProps = {
   session: Session;
@@ -15,6 +14,8 @@ export type IdleWatchProps = {
 };
 
 const tickMs = 5_000;
+/** When another tab keeps the session alive, it is enough to ask now and then. */
+const askAgainMs = 60_000;
 
 /**
  * Keeps the session alive while someone types, warns two minutes before it would end, and notices
@@ -24,13 +25,20 @@ export function IdleWatch({ session, onEnded }: IdleWatchProps) {
   const [secondsLeft, setSecondsLeft] = useState<number | null>(null);
   const [endsSoon, setEndsSoon] = useState(false);
 
+  async function stay() {
+    setSecondsLeft(null);
+    // Without an answer the warning comes back at the next tick.
+    await staySignedIn().catch(() => {});
+  }
+
   useEffect(() => {
     let asking = false;
+    let askAfter = 0;
     async function tick() {
       const step = idleStep(idleState(), session, Date.now());
       setEndsSoon(step.endsSoon);
       setSecondsLeft(step.warnSeconds);
-      if (asking || step.ask === "nothing" || !navigator.onLine) return;
+      if (asking || step.ask === "nothing" || !navigator.onLine || Date.now() < askAfter) return;
       asking = true;
       try {
         if (step.ask === "stay") await staySignedIn();
@@ -38,7 +46,8 @@ export function IdleWatch({ session, onEnded }: IdleWatchProps) {
           const { signedIn } = await api.get<{ signedIn: boolean }>("/api/welcome", {
             background: true,
           });
-          if (!signedIn) onEnded();
+          if (signedIn) askAfter = Date.now() + askAgainMs;
+          else onEnded();
         }
       } catch {
         // No answer is no news: the next tick asks again.
@@ -53,35 +62,22 @@ export function IdleWatch({ session, onEnded }: IdleWatchProps) {
   return (
     <>
       {endsSoon ? (
-        <Notice tone="warn" title="This session ends soon." className="mb-2">
+        <Notice
+          tone="warn"
+          title="This session ends soon."
+          className="fixed inset-x-0 bottom-0 z-40"
+        >
           It ends at {new Date(session.endsAt).toLocaleTimeString([], timeStyle)} whatever you do;
           you then sign in again. What is typed and not saved stays in this tab.
         </Notice>
       ) : null}
-      <Dialog
-        open={secondsLeft !== null}
-        onOpenChange={(open) => {
-          if (!open) void staySignedIn().then(() => setSecondsLeft(null));
-        }}
-        role="alertdialog"
-        title="Still there?"
-        description={`Nothing was done here for a while. In ${wordsLeft(secondsLeft ?? 0)} the page is locked; what is typed stays in this tab.`}
-        closeLabel="Stay"
-        actions={
-          <Button
-            variant="primary"
-            onClick={() => void staySignedIn().then(() => setSecondsLeft(null))}
-          >
-            Stay signed in
-          </Button>
-        }
-      />
+      {secondsLeft === null ? null : (
+        <Suspense fallback={null}>
+          <IdleWarning secondsLeft={secondsLeft} onStay={() => void stay()} />
+        </Suspense>
+      )}
     </>
   );
 }
 
 const timeStyle = { hour: "2-digit", minute: "2-digit" } as const;
-
-function wordsLeft(seconds: number): string {
-  return seconds > 90 ? "two minutes" : seconds > 45 ? "one minute" : "a few seconds";
-}

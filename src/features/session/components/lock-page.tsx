@@ -5,7 +5,6 @@ import { Button } from "../../../components/ui/button.tsx";
 import { SignInForm } from "./sign-in-form.tsx";
 
 export type LockPageProps = {
-  open: boolean;
   /** Whose work lies underneath. */
   session: Session;
   onSignedIn: (session: Session) => void;
@@ -15,9 +14,9 @@ export type LockPageProps = {
  * Covers the page when the session has ended, without taking it down: what was typed is still
  * there after signing in again. Nothing underneath can be read or reached meanwhile.
  */
-export function LockPage({ open, session, onSignedIn }: LockPageProps) {
+export function LockPage({ session, onSignedIn }: LockPageProps) {
   return (
-    <Primitive.Root open={open}>
+    <Primitive.Root open>
       <Primitive.Portal>
         <Primitive.Content
           data-dialog="open"

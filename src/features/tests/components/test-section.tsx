@@ -1,5 +1,5 @@
 import { useQuery } from "@tanstack/react-query";
-import { useState } from "react";
+import { lazy, Suspense, useState } from "react";
 import { Section } from "../../../components/layouts/section.tsx";
 import { Answer } from "../../../components/ui/answer.tsx";
 import { Button } from "../../../components/ui/button.tsx";
@@ -9,7 +9,9 @@ import { Cell, HeadCell, Table } from "../../../components/ui/table.tsx";
 import { errorKind } from "../../../lib/api-error.ts";
 import { formatCount, formatDay } from "../../../lib/formatters.ts";
 import { testsQuery } from "../api/list-tests.ts";
-import { TestForm } from "./test-form.tsx";
+
+// Most pages are read only; the form comes when it is asked for.
+const TestForm = lazy(() => import("./test-form.tsx").then((file) => ({ default: file.TestForm })));
 
 export type TestSectionProps = {
   investigationId: string;
@@ -75,7 +77,9 @@ export function TestSection({ investigationId, personId, today, canAdd }: TestSe
         </div>
       ) : null}
       {adding ? (
-        <TestForm {...{ investigationId, personId, today }} onDone={() => setAdding(false)} />
+        <Suspense fallback={<LoadingState label="Opening the form" />}>
+          <TestForm {...{ investigationId, personId, today }} onDone={() => setAdding(false)} />
+        </Suspense>
       ) : null}
     </Section>
   );
