@@ -1,5 +1,5 @@
 import { QueryClient, QueryClientProvider } from "@tanstack/react-query";
-import { act, render, screen } from "@testing-library/react";
+import { act, render, screen, waitFor } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { createMemoryRouter, RouterProvider } from "react-router-dom";
 import { vi } from "vitest";
@@ -168,6 +168,9 @@ export async function openInterview() {
     </QueryClientProvider>,
   );
   await screen.findByRole("form", { name: "Interview of D-0412" });
+  await waitFor(() => {
+    if (!document.querySelector("#places-all option")) throw new Error("no places yet");
+  });
   return { user: userEvent.setup({ delay: null }), router };
 }
 

@@ -1,0 +1,21 @@
+import { createContext, useContext } from "react";
+import type { PersonPage } from "../../../../shared/contracts/people.ts";
+import type { PlaceBook } from "../form/place-book.ts";
+
+/** What every row of an interview form needs to know. */
+export interface FormSurroundings {
+  investigationId: string;
+  person: PersonPage;
+  /** The investigation's day. */
+  today: string;
+  places: PlaceBook;
+}
+
+export const FormSurroundingsContext = createContext<FormSurroundings | null>(null);
+
+/** The surroundings of the form. Throws outside of one. */
+export function useFormSurroundings(): FormSurroundings {
+  const value = useContext(FormSurroundingsContext);
+  if (!value) throw new Error("useFormSurroundings is used outside of an interview form");
+  return value;
+}
