@@ -65,20 +65,24 @@ function windowWords({ threshold: { criticalHalfWidth: half } }: NetworkSummary)
 }
 
 /** How the network was seen: exposures, who told, out of whom. */
-function seenThrough(summary: NetworkSummary, { populationAtRisk }: ThresholdContext): string {
-  const { threshold, population } = summary;
+function seenThrough(summary: NetworkSummary, context: ThresholdContext): string {
+  const { threshold } = summary;
   const { n, interviewed } = threshold;
   const exposures = exposureWords(summary);
   if (threshold.population === "complete") {
     return `${exposures}, in a network taken as complete (${formatNumber(n)} people)`;
   }
-  const people =
-    population === "cases"
-      ? "cases"
-      : n === populationAtRisk
-        ? "people at risk, as declared"
-        : "people on record";
+  const people = peopleWords(summary, context);
   return `${exposures}, seen through interviews with ${formatNumber(interviewed)} of ${formatNumber(n)} ${people}`;
+}
+
+/** Who the n people of the threshold figure are. */
+export function peopleWords(
+  { population, threshold: { n } }: NetworkSummary,
+  { populationAtRisk }: ThresholdContext,
+): string {
+  if (population === "cases") return "cases";
+  return n === populationAtRisk ? "people at risk, as declared" : "people on record";
 }
 
 /** What random mixing would give above the threshold; a figure only where it may be compared. */

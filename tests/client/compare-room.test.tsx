@@ -101,7 +101,7 @@ describe("compare room", () => {
     const { asked } = open(`/room?group=${ids.large}`);
     await screen.findByText(/^Above the threshold/);
     expect(screen.getByText("Group G-AAAAA")).toBeTruthy();
-    expect(scrolled).toHaveBeenCalledOnce();
+    await waitFor(() => expect(scrolled).toHaveBeenCalledOnce());
     expect(asked.filter((path) => path.startsWith("network/graph"))).toEqual([]);
   });
 });

@@ -24,7 +24,7 @@ export function MeasuresTable({ summary }: { summary: NetworkSummary }) {
         <tbody>
           {measureRows(summary).map((row) => (
             <tr key={row.id}>
-              <HeadCell scope="row" className="min-w-44 align-baseline">
+              <HeadCell scope="row" className="min-w-44 align-baseline!">
                 {row.label}
               </HeadCell>
               <Cell numeric>

@@ -117,6 +117,11 @@ function PictureError({ error, ofGroup, onRetry }: PictureErrorProps) {
 function useScrollTo(group: string | undefined): void {
   const first = useRef(group);
   useEffect(() => {
-    if (first.current) document.getElementById("network-picture")?.scrollIntoView();
+    if (!first.current) return;
+    // After the frame of the page has set a new page to its top.
+    const frame = requestAnimationFrame(() =>
+      document.getElementById("network-picture")?.scrollIntoView(),
+    );
+    return () => cancelAnimationFrame(frame);
   }, []);
 }

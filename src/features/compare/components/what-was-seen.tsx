@@ -4,9 +4,16 @@ import { Answer } from "../../../components/ui/answer.tsx";
 import { Caution } from "../../../components/ui/caution.tsx";
 import { formatNumber, formatPart, formatShare } from "../../../lib/formatters.ts";
 import { reasonWords } from "../../../lib/reason-words.ts";
+import { peopleWords } from "../../../lib/threshold-sentence.ts";
+
+export type WhatWasSeenProps = {
+  summary: NetworkSummary;
+  /** Population at risk declared for the investigation, or null. */
+  populationAtRisk: number | null;
+};
 
 /** What the figures below rest on, before any of them: how much of the network was seen at all. */
-export function WhatWasSeen({ summary }: { summary: NetworkSummary }) {
+export function WhatWasSeen({ summary, populationAtRisk }: WhatWasSeenProps) {
   const { threshold, window, undated, unresolvedGroupExposures } = summary;
   const complete = threshold.population === "complete";
   return (
@@ -18,9 +25,7 @@ export function WhatWasSeen({ summary }: { summary: NetworkSummary }) {
           remark={
             complete
               ? "pairs came without any word on interviews"
-              : summary.population === "cases"
-                ? "of the cases"
-                : "of the people in question"
+              : `of ${peopleWords(summary, { populationAtRisk })}`
           }
         />
         <Seen

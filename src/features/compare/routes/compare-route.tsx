@@ -62,7 +62,7 @@ export function Component() {
           {report.isError ? (
             <ErrorState kind={errorKind(report.error)} onRetry={() => void report.refetch()} />
           ) : null}
-          <WhatWasSeen summary={summary} />
+          <WhatWasSeen summary={summary} populationAtRisk={populationAtRisk} />
           <Section
             title="Threshold strip"
             subLine="contact pairs per person, as seen through the interviews"

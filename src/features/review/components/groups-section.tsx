@@ -45,7 +45,7 @@ export function GroupsSection() {
       subLine={
         version === undefined ? undefined : (
           <>
-            people connected by contact pairs, all exposures; grown = since {since};{" "}
+            people connected by contact pairs, all exposures; growth since {since};{" "}
             <VersionWords graphVersion={version} updating={updating} />
           </>
         )
