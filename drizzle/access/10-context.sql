@@ -3,135 +3,164 @@
 -- the login of its own role and only while the membership lasts.
 -- Every function pins its search path with the temporary schema last: left out, that schema would be
 -- searched first, and a login could put types of its own under the owner's feet.
+-- They are written in PL/pgSQL, whose plans last as long as the connection: a function in SQL would
+-- be planned again for each statement that row security touches.
 create or replace function core.ctx(out account_id uuid, out investigation_id uuid, out role text)
-language sql stable security definer set search_path = pg_catalog, pg_temp as $$
-  select c.account_id, c.investigation_id, c.role
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+#variable_conflict use_column
+begin
+  select c.account_id, c.investigation_id, c.role into $1, $2, $3
   from auth.ctx_live c
   join core.member m on m.account_id = c.account_id and m.investigation_id = c.investigation_id
     and m.role = c.role and m.ended_at is null
   where c.nonce = nullif(current_setting('app.ctx', true), '')::uuid
     and c.expires_at > now()
-    and session_user = ('strandline_' || c.role)
-$$;
+    and session_user = ('strandline_' || c.role);
+end $$;
 
 create or replace function core.ctx_user() returns uuid
-language sql stable security definer set search_path = pg_catalog, pg_temp as $$ select account_id from core.ctx() $$;
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+begin return (select c.account_id from core.ctx() c); end $$;
 
 create or replace function core.ctx_investigation() returns uuid
-language sql stable security definer set search_path = pg_catalog, pg_temp as $$ select investigation_id from core.ctx() $$;
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+begin return (select c.investigation_id from core.ctx() c); end $$;
 
 create or replace function core.ctx_role() returns text
-language sql stable security definer set search_path = pg_catalog, pg_temp as $$ select role from core.ctx() $$;
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+begin return (select c.role from core.ctx() c); end $$;
 
 -- People assigned to the acting tracer or one of their teams.
 create or replace function core.ctx_held() returns uuid[]
-language sql stable security definer set search_path = pg_catalog, pg_temp as $$
-  select coalesce(array_agg(p.id), '{}')
-  from core.ctx() c
-  join core.person p on p.investigation_id = c.investigation_id and p.withdrawn_at is null
-  where p.assigned_account_id = c.account_id
-     or p.assigned_team_id in (
-       select m.team_id from core.member m
-       where m.account_id = c.account_id and m.investigation_id = c.investigation_id
-         and m.role = c.role and m.ended_at is null and m.team_id is not null)
-$$;
-
--- Is a person held: assigned to the account, or to a team of theirs? Called by the functions below
--- with the context they have read already; no login may call it.
-create or replace function core.ctx_holds(
-  p_account uuid, p_investigation uuid, p_role text, p_person uuid) returns boolean
-language sql stable set search_path = pg_catalog, pg_temp as $$
-  select exists (
-    select 1 from core.person h
-    where h.id = p_person and h.investigation_id = p_investigation and h.withdrawn_at is null
-      and (h.assigned_account_id = p_account
-        or exists (
-          select 1 from core.member m
-          where m.team_id = h.assigned_team_id and m.account_id = p_account
-            and m.investigation_id = p_investigation and m.role = p_role and m.ended_at is null)))
-$$;
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+declare c record;
+begin
+  select * into c from core.ctx();
+  -- Two look-ups by index; as one condition they would read every person.
+  return array(
+    select p.id from core.person p
+    where p.assigned_account_id = c.account_id and p.investigation_id = c.investigation_id
+      and p.withdrawn_at is null
+    union
+    select p.id from core.member m
+    join core.person p on p.assigned_team_id = m.team_id
+      and p.investigation_id = c.investigation_id and p.withdrawn_at is null
+    where m.account_id = c.account_id and m.investigation_id = c.investigation_id
+      and m.role = c.role and m.ended_at is null);
+end $$;
 
 -- The tracer's scope: held people and those one contact pair away.
 create or replace function core.ctx_people() returns uuid[]
-language sql stable security definer set search_path = pg_catalog, pg_temp as $$
-  with held as (select core.ctx_held() as ids)
-  select coalesce(array_agg(distinct id), '{}') from (
-    select unnest(ids) as id from held
-    union all
-    select cp.person_b from held, core.contact_pair cp
-    where cp.person_a = any (ids) and cp.withdrawn_at is null
-    union all
-    select cp.person_a from held, core.contact_pair cp
-    where cp.person_b = any (ids) and cp.withdrawn_at is null
-  ) scope
-$$;
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+declare v_held uuid[] := core.ctx_held();
+begin
+  return array(
+    select h.id from unnest(v_held) h (id)
+    union
+    select cp.person_b from unnest(v_held) h (id)
+    join core.contact_pair cp on cp.person_a = h.id and cp.withdrawn_at is null
+    union
+    select cp.person_a from unnest(v_held) h (id)
+    join core.contact_pair cp on cp.person_b = h.id and cp.withdrawn_at is null);
+end $$;
 
 -- People whose identity a tracer may open: held people, and contacts (not cases) of held cases.
 -- A case seen from a held contact stays a study number: a contact is not told who the case is.
 create or replace function core.ctx_named_people() returns uuid[]
-language sql stable security definer set search_path = pg_catalog, pg_temp as $$
-  with held as (select core.ctx_held() as ids),
-  cases as (
-    select coalesce(array_agg(p.id), '{}') as ids from held, core.person p
-    where p.id = any (held.ids) and p.classification in ('confirmed', 'probable', 'suspected'))
-  select coalesce(array_agg(distinct id), '{}') from (
-    select unnest(ids) as id from held
-    union all
-    select p.id from cases, core.contact_pair cp, core.person p
-    where cp.person_a = any (cases.ids) and cp.withdrawn_at is null and p.id = cp.person_b
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+declare
+  v_held uuid[] := core.ctx_held();
+  v_cases uuid[];
+begin
+  v_cases := array(
+    select p.id from unnest(v_held) h (id)
+    join core.person p on p.id = h.id
+      and p.classification in ('confirmed', 'probable', 'suspected'));
+  return array(
+    select h.id from unnest(v_held) h (id)
+    union
+    select p.id from unnest(v_cases) h (id)
+    join core.contact_pair cp on cp.person_a = h.id and cp.withdrawn_at is null
+    join core.person p on p.id = cp.person_b
       and (p.classification is null or p.classification in ('contact', 'not_a_case'))
-    union all
-    select p.id from cases, core.contact_pair cp, core.person p
-    where cp.person_b = any (cases.ids) and cp.withdrawn_at is null and p.id = cp.person_a
-      and (p.classification is null or p.classification in ('contact', 'not_a_case'))
-  ) scope
-$$;
+    union
+    select p.id from unnest(v_cases) h (id)
+    join core.contact_pair cp on cp.person_b = h.id and cp.withdrawn_at is null
+    join core.person p on p.id = cp.person_a
+      and (p.classification is null or p.classification in ('contact', 'not_a_case')));
+end $$;
 
--- May the acting person attach something to this person? In scope, or made by them just now. Asked
--- once per row of a form, so it looks at this person and their pairs only, never at a whole scope.
+-- Is a person held, or does one of their neighbours (only cases, if asked) make them so? Looks at
+-- this person and their pairs only, because it is asked once per row of a form. Called by the
+-- functions below with the context they have read; no login may call it.
+create or replace function core.ctx_near(
+  p_account uuid, p_investigation uuid, p_role text, p_person uuid, p_of_cases boolean)
+returns boolean
+language plpgsql stable set search_path = pg_catalog, pg_temp as $$
+declare
+  v_teams uuid[] := array(
+    select m.team_id from core.member m
+    where m.account_id = p_account and m.investigation_id = p_investigation and m.role = p_role
+      and m.ended_at is null and m.team_id is not null);
+begin
+  if exists (
+    select 1 from core.person h where h.id = p_person and h.withdrawn_at is null
+      and (h.assigned_account_id = p_account or h.assigned_team_id = any (v_teams))) then
+    return true;
+  end if;
+  return exists (
+    select 1 from (
+      select cp.person_b as id from core.contact_pair cp
+      where cp.person_a = p_person and cp.withdrawn_at is null
+      union all
+      select cp.person_a from core.contact_pair cp
+      where cp.person_b = p_person and cp.withdrawn_at is null) n
+    join core.person h on h.id = n.id and h.investigation_id = p_investigation
+      and h.withdrawn_at is null
+    where (h.assigned_account_id = p_account or h.assigned_team_id = any (v_teams))
+      and (not p_of_cases or h.classification in ('confirmed', 'probable', 'suspected')));
+end $$;
+
+-- May the acting person attach something to this person? In scope, or made by them just now.
 create or replace function core.ctx_can_link(p_person uuid) returns boolean
-language sql stable security definer set search_path = pg_catalog, pg_temp as $$
-  select exists (
-    select 1 from core.ctx() c
-    join core.person p on p.id = p_person and p.investigation_id = c.investigation_id
-    where c.role in ('supervisor', 'officer')
-       or p.recorded_by = c.account_id
-       or core.ctx_holds(c.account_id, c.investigation_id, c.role, p.id)
-       or exists (
-         select 1 from (
-           select cp.person_b as id from core.contact_pair cp
-           where cp.person_a = p.id and cp.withdrawn_at is null
-           union all
-           select cp.person_a from core.contact_pair cp
-           where cp.person_b = p.id and cp.withdrawn_at is null) n
-         where core.ctx_holds(c.account_id, c.investigation_id, c.role, n.id)))
-$$;
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+declare
+  c record;
+  v_recorder uuid;
+begin
+  select * into c from core.ctx();
+  select p.recorded_by into v_recorder from core.person p
+  where p.id = p_person and p.investigation_id = c.investigation_id;
+  if not found then return false; end if;
+  if c.role in ('supervisor', 'officer') or v_recorder = c.account_id then return true; end if;
+  return core.ctx_near(c.account_id, c.investigation_id, c.role, p_person, false);
+end $$;
 
 create or replace function core.ctx_can_tell(p_pair uuid) returns boolean
-language sql stable security definer set search_path = pg_catalog, pg_temp as $$
-  select exists (
-    select 1 from core.contact_pair cp
-    where cp.id = p_pair and core.ctx_can_link(cp.person_a) and core.ctx_can_link(cp.person_b))
-$$;
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+declare v_pair record;
+begin
+  select cp.person_a, cp.person_b into v_pair from core.contact_pair cp where cp.id = p_pair;
+  if not found then return false; end if;
+  return core.ctx_can_link(v_pair.person_a) and core.ctx_can_link(v_pair.person_b);
+end $$;
 
 -- Identity scope of the acting role, as one predicate: the same people as core.ctx_named_people(),
 -- asked from the person's side.
 create or replace function core.ctx_may_name(p_person uuid) returns boolean
-language sql stable security definer set search_path = pg_catalog, pg_temp as $$
-  select exists (
-    select 1 from core.ctx() c
-    join core.person p on p.id = p_person and p.investigation_id = c.investigation_id
-    where c.role in ('supervisor', 'officer')
-       or (c.role = 'tracer' and (
-         core.ctx_holds(c.account_id, c.investigation_id, c.role, p.id)
-         or ((p.classification is null or p.classification in ('contact', 'not_a_case')) and exists (
-           select 1 from (
-             select cp.person_b as id from core.contact_pair cp
-             where cp.person_a = p.id and cp.withdrawn_at is null
-             union all
-             select cp.person_a from core.contact_pair cp
-             where cp.person_b = p.id and cp.withdrawn_at is null) n
-           join core.person q on q.id = n.id
-             and q.classification in ('confirmed', 'probable', 'suspected')
-           where core.ctx_holds(c.account_id, c.investigation_id, c.role, n.id))))))
-$$;
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+declare
+  c record;
+  v_class text;
+begin
+  select * into c from core.ctx();
+  select p.classification into v_class from core.person p
+  where p.id = p_person and p.investigation_id = c.investigation_id;
+  if not found then return false; end if;
+  if c.role in ('supervisor', 'officer') then return true; end if;
+  if c.role <> 'tracer' then return false; end if;
+  if v_class is null or v_class in ('contact', 'not_a_case') then
+    return core.ctx_near(c.account_id, c.investigation_id, c.role, p_person, true);
+  end if;
+  return p_person = any (core.ctx_held());
+end $$;

@@ -47,10 +47,12 @@ end $$;
 -- Contacts under follow-up whom the acting person may see, with day 0: the latest last exposure day
 -- to a case (or to someone not yet classified) over all their pairs, because one contact has one
 -- follow-up whoever named them. Partial and missing days give no day 0. A person not yet classified
--- counts as a contact once a case has named them.
+-- counts as a contact once a case has named them. Planned anew each time: the list of people may
+-- hold ten or a hundred thousand.
 create or replace function core.follow_up_days()
 returns table (person_id uuid, day_zero text)
-language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp
+set plan_cache_mode = force_custom_plan as $$
 declare
   c record;
   v_people uuid[];

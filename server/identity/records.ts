@@ -265,18 +265,29 @@ export function searchTokens(keys: InvestigationKeys, typed: string, country: st
   };
 }
 
-/** Sends possible matches that the acting person may not see to the supervisor's list. */
+/**
+ * Sends possible matches of new people that the acting person may not see to the supervisor's list:
+ * the same telephone number, or all parts of the name.
+ */
 export async function flagHiddenMatches(
   tx: Tx,
   keys: InvestigationKeys,
-  personId: string,
-  typed: { name: string | null; phone: string | null },
+  people: readonly { personId: string; name: string | null; phone: string | null }[],
   country: string,
 ): Promise<void> {
-  const phone = typed.phone ? searchTokens(keys, typed.phone, country).any : [];
-  const names = typed.name ? searchTokens(keys, typed.name, country).all : [];
-  if (phone.length + names.length === 0) return;
+  const hex = (tokens: readonly Buffer[]) => tokens.map((token) => token.toString("hex"));
+  const rows = people
+    .map(({ personId, name, phone }) => ({
+      person_id: personId,
+      phone: known(phone) ? hex(searchTokens(keys, phone, country).any) : [],
+      names: known(name) ? hex(searchTokens(keys, name, country).all) : [],
+    }))
+    .filter((row) => row.phone.length + row.names.length > 0);
+  if (rows.length === 0) return;
   await tx.execute(
-    sql`select identity.flag_hidden_matches(${personId}::uuid, ${byteArray(phone)}, ${byteArray(names)})`,
+    sql`select identity.flag_hidden_matches(r.person_id,
+          array(select decode(token, 'hex') from jsonb_array_elements_text(r.phone) p (token)),
+          array(select decode(token, 'hex') from jsonb_array_elements_text(r.names) n (token)))
+        from jsonb_to_recordset(${JSON.stringify(rows)}::jsonb) as r (person_id uuid, phone jsonb, names jsonb)`,
   );
 }

@@ -27,7 +27,7 @@ const FUNCTIONS: Record<string, readonly (Role | "system")[]> = {
   "core.ctx_can_link(uuid)": ["tracer", "supervisor", "officer"],
   "core.ctx_can_tell(uuid)": ["tracer", "supervisor", "officer"],
   "core.ctx_may_name(uuid)": ["tracer", "supervisor", "officer"],
-  "core.ctx_holds(uuid, uuid, text, uuid)": [],
+  "core.ctx_near(uuid, uuid, text, uuid, boolean)": [],
   "core.pairs_for(uuid, uuid[])": ["tracer", "supervisor", "officer"],
   "core.follow_up_days()": ["tracer", "supervisor"],
   "core.bump_graph()": ["tracer", "supervisor", "officer"],

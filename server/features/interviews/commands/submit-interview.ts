@@ -85,9 +85,8 @@ async function registerContacts(desk: Desk, fresh: readonly NewContact[]): Promi
     identity: { name, phone },
   }));
   await putPeople(tx, keys, identities, country);
-  for (const { id, name, phone } of fresh) {
-    await flagHiddenMatches(tx, keys, id, { name, phone }, country);
-  }
+  const typed = fresh.map(({ id, name, phone }) => ({ personId: id, name, phone }));
+  await flagHiddenMatches(tx, keys, typed, country);
 }
 
 /** Fields that a submission fills, by name: what the access record keeps instead of values. */

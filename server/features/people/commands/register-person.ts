@@ -81,7 +81,7 @@ export async function registerPerson(
   for (const key of IDENTITY_KEYS) identity[key] = input[key] ?? null;
   await putPeople(tx, keys, [{ personId: person.id, identity }], settings.countryCode);
   const typed = { name: input.name, phone: input.phone };
-  await flagHiddenMatches(tx, keys, person.id, typed, settings.countryCode);
+  await flagHiddenMatches(tx, keys, [{ personId: person.id, ...typed }], settings.countryCode);
   if (input.specimenDate || input.result || input.resultDate) {
     await insertTests(tx, actor, [
       {
