@@ -1,7 +1,7 @@
 import type { Import } from "../../shared/contracts/imports.ts";
 import type { Member } from "./factories.ts";
 
-const WAIT_MS = 20_000;
+const WAIT_MS = 60_000;
 
 /** Uploads a file and answers the staged import; throws when it was refused. */
 export async function stage(

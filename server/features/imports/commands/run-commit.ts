@@ -30,10 +30,14 @@ const AFTER_ROWS: ReadonlySet<FieldErrorCode> = new Set([
   "commit_no_access",
 ] as const);
 
-/** Long imports are one transaction, so its limits are raised for it alone. */
+/**
+ * A long import is one transaction, so the limits are raised for it alone. It reads by index only:
+ * the planner knows nothing yet of tables that this very transaction fills.
+ */
 export async function raiseLimits(tx: Tx): Promise<void> {
   await tx.execute(sql`select set_config('statement_timeout', '10min', true),
-    set_config('idle_in_transaction_session_timeout', '10min', true)`);
+    set_config('idle_in_transaction_session_timeout', '10min', true),
+    set_config('enable_seqscan', 'off', true)`);
 }
 
 /** Writes progress from outside the transaction, where others can see it before it ends. */
