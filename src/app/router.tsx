@@ -10,12 +10,22 @@ const trace: RouteObject[] = [
     lazy: () => import("../features/people/routes/register-person-route.tsx"),
   },
   { path: "trace/people/:personId", lazy: () => import("./routes/person-route.tsx") },
+  {
+    path: "trace/people/:personId/interview",
+    lazy: () => import("../features/interviews/routes/interview-route.tsx"),
+  },
   { path: "trace/places", lazy: () => import("../features/places/routes/places-route.tsx") },
+  { path: "trace/import", lazy: () => import("../features/imports/routes/import-route.tsx") },
+  {
+    path: "trace/import/:importId",
+    lazy: () => import("../features/imports/routes/import-route.tsx"),
+  },
   { path: "trace/matches", lazy: () => import("../features/people/routes/matches-route.tsx") },
 ];
 
 /** The other rooms. */
 const rooms: RouteObject[] = [
+  { path: "follow", lazy: () => import("../features/follow-up/routes/follow-route.tsx") },
   { path: "review", lazy: () => import("../features/review/routes/review-route.tsx") },
   { path: "compare", lazy: () => import("../features/compare/routes/compare-route.tsx") },
   { path: "safeguard", lazy: () => import("../features/safeguard/routes/safeguard-route.tsx") },

@@ -1,5 +1,6 @@
 import pg from "pg";
 import { afterAll, beforeAll, expect, inject, test } from "vitest";
+import { applyAccess } from "../../server/db/access/apply-access.ts";
 import { ALL_TABLES, loginOf } from "../../server/db/access/policies.ts";
 import { createPools, endPools, type Pools } from "../../server/db/pools.ts";
 import { LOGIN_NAMES } from "../../server/db/roles.ts";
@@ -160,6 +161,32 @@ test("a login may select exactly the columns the registry gives its role in full
 function name({ table, column }: { table: string; column: string }): string {
   return `${table}.${column}`;
 }
+
+test("a start takes back what was granted, opened or switched off behind the registry's back", async () => {
+  await admin.query(`grant select (name_cipher) on identity.person to strandline_tracer, public;
+    grant select on core.outbox to strandline_officer;
+    grant execute on function identity.open_people(uuid[], text[], text) to strandline_epidemiologist;
+    create policy wide on core.person for select to strandline_tracer using (true);
+    alter table audit.event no force row level security;
+    insert into auth.field_right (role, field) values ('officer', 'note')`);
+  await applyAccess(admin);
+  const found = await admin.query(`select
+    has_column_privilege('strandline_tracer', 'identity.person', 'name_cipher', 'select') as cipher,
+    has_any_column_privilege('strandline_officer', 'core.outbox', 'select') as outbox,
+    has_function_privilege('strandline_epidemiologist',
+      'identity.open_people(uuid[], text[], text)', 'execute') as opening,
+    exists (select 1 from pg_policies where policyname = 'wide') as wide,
+    not (select relforcerowsecurity from pg_class where oid = 'audit.event'::regclass) as unforced,
+    exists (select 1 from auth.field_right where role = 'officer' and field = 'note') as note`);
+  expect(found.rows[0]).toEqual({
+    cipher: false,
+    outbox: false,
+    opening: false,
+    wide: false,
+    unforced: false,
+    note: false,
+  });
+});
 
 test("views belong to one role each and keep a barrier against leaking functions", async () => {
   const found = await admin.query(

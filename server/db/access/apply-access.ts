@@ -1,4 +1,3 @@
-import { createHash } from "node:crypto";
 import { readdir, readFile } from "node:fs/promises";
 import { fileURLToPath } from "node:url";
 import pg from "pg";
@@ -20,7 +19,8 @@ export async function refuseTemporary(client: pg.ClientBase): Promise<void> {
 
 /**
  * Brings functions, row policies, views and grants to what the code and the field registry say, in
- * one transaction. Does nothing when they were made from the same text before.
+ * one transaction. Done at every start (a fraction of a second), so that a right changed behind the
+ * registry's back does not outlive a restart.
  *
  * @param client a connection that owns the schemas (an administrator's)
  */
@@ -29,9 +29,6 @@ export async function applyAccess(client: pg.ClientBase): Promise<void> {
   const files = (await readdir(FOLDER)).filter((name) => name.endsWith(".sql")).sort();
   const sources = await Promise.all(files.map((name) => readFile(`${FOLDER}${name}`, "utf8")));
   const statements = [...sources, ...views(), ...grants(), ...rowPolicies()];
-  const hash = createHash("sha256").update(statements.join("\n")).digest("hex");
-  const known = await client.query("select value from auth.meta where key = 'access'");
-  if (known.rows[0]?.value === hash) return;
   await client.query("begin");
   try {
     await client.query("select pg_advisory_xact_lock(7203114)");
@@ -39,10 +36,6 @@ export async function applyAccess(client: pg.ClientBase): Promise<void> {
     // One functions file may use another's, so bodies are checked when first called.
     await client.query("set local check_function_bodies = off");
     for (const statement of statements) await client.query(statement);
-    await client.query(
-      "insert into auth.meta (key, value) values ('access', $1) on conflict (key) do update set value = excluded.value",
-      [hash],
-    );
     await client.query("commit");
   } catch (error) {
     await client.query("rollback");

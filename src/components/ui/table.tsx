@@ -28,8 +28,12 @@ export function HeadCell({ numeric = false, className, scope = "col", ...rest }:
       {...rest}
       scope={scope}
       className={clsx(
-        "border-b border-rule px-2 py-1.5 align-bottom text-sm font-normal first:ps-0 last:pe-0",
-        scope === "col" ? "text-ink-2" : "text-[0.9375rem] text-ink",
+        "border-b border-rule px-2 py-1.5 text-sm font-normal first:ps-0 last:pe-0",
+        scope === "row"
+          ? "align-baseline text-[0.9375rem] text-ink"
+          : scope === "col"
+            ? "align-bottom text-ink-2"
+            : "align-bottom text-[0.9375rem] text-ink",
         numeric ? "text-end" : "text-start",
         className,
       )}

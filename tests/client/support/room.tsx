@@ -1,7 +1,7 @@
 import { QueryClient, QueryClientProvider } from "@tanstack/react-query";
 import { render } from "@testing-library/react";
 import type { ComponentType } from "react";
-import { MemoryRouter, Route, Routes, useLocation } from "react-router-dom";
+import { createMemoryRouter, RouterProvider, useLocation } from "react-router-dom";
 import { vi } from "vitest";
 import type { Investigation } from "../../../shared/contracts/investigations.ts";
 import type { Session } from "../../../shared/contracts/session.ts";
@@ -37,17 +37,19 @@ export type RoomOptions = {
   at: string;
   rooms: Session["rooms"];
   answers: Answers;
+  /** More of the session, where the room looks at it. */
+  session?: Partial<Session>;
 };
 
 /** Renders a room on answers of one's own; gives what was asked for and the cut-offs it showed. */
-export function renderRoom({ room: Room, at, rooms, answers }: RoomOptions) {
+export function renderRoom({ room: Room, at, rooms, answers, session: more }: RoomOptions) {
   const asked: string[] = [];
   const cutOffs: unknown[] = [];
   const start = `/api/investigations/${ids.investigation}/`;
-  vi.stubGlobal("fetch", async (address: string) => {
+  vi.stubGlobal("fetch", async (address: string, { method = "GET" }: RequestInit = {}) => {
     const url = new URL(address, "http://localhost");
     const path = url.pathname.replace(start, "");
-    asked.push(`${path}${url.search}`);
+    asked.push(`${method === "GET" ? "" : `${method} `}${path}${url.search}`);
     const answer = answers(path, url.searchParams);
     if (answer instanceof Response) return answer;
     return new Response(JSON.stringify(answer), {
@@ -63,18 +65,20 @@ export function renderRoom({ room: Room, at, rooms, answers }: RoomOptions) {
     },
   );
   const queryClient = new QueryClient({ defaultOptions: { queries: { retry: false } } });
-  const session = { rooms } as Session;
+  const session = { rooms, ...more } as Session;
+  const router = createMemoryRouter(
+    [
+      { path: "/room", element: <Room /> },
+      { path: "*", element: <Elsewhere /> },
+    ],
+    { initialEntries: [at] },
+  );
   render(
     <QueryClientProvider client={queryClient}>
       <SessionContext value={session}>
         <InvestigationContext value={investigation}>
           <CutOffContext value={(cutOff) => void cutOffs.push(cutOff)}>
-            <MemoryRouter initialEntries={[at]}>
-              <Routes>
-                <Route path="/room" element={<Room />} />
-                <Route path="*" element={<Elsewhere />} />
-              </Routes>
-            </MemoryRouter>
+            <RouterProvider router={router} />
           </CutOffContext>
         </InvestigationContext>
       </SessionContext>

@@ -1,0 +1,82 @@
+import { useState } from "react";
+import { useForm } from "react-hook-form";
+import { memberInput } from "../../../../shared/contracts/investigations.ts";
+import { ROLE_NAMES, ROLES } from "../../../../shared/roles.ts";
+import { SelectField } from "../../../components/fields/select-field.tsx";
+import { TextField } from "../../../components/fields/text-field.tsx";
+import { Button } from "../../../components/ui/button.tsx";
+import { Notice } from "../../../components/ui/notice.tsx";
+import { UnsavedGuard } from "../../../components/ui/unsaved-guard.tsx";
+import { errorWords } from "../../../lib/api-error.ts";
+import { contractResolver, fieldWords, showFieldErrors } from "../../../lib/form-errors.ts";
+import { type MemberInput, useAddMember } from "../api/members.ts";
+
+type Values = Record<"email" | "role" | "team", string>;
+
+export type AddMemberFormProps = {
+  investigationId: string;
+  /** Called with the words of what was done; without them nothing was. */
+  onDone: (done?: string) => void;
+};
+
+/** Gives an account a role in this investigation, found by its e-mail. */
+export function AddMemberForm({ investigationId, onDone }: AddMemberFormProps) {
+  const [idempotencyKey, renewKey] = useState(() => crypto.randomUUID());
+  const add = useAddMember(investigationId, idempotencyKey);
+  const form = useForm<Values, unknown, MemberInput>({
+    resolver: contractResolver<Values, MemberInput>(memberInput),
+    defaultValues: { email: "", role: "", team: "" },
+  });
+  const { errors, isDirty } = form.formState;
+  return (
+    <form
+      noValidate
+      className="max-w-4xl"
+      onSubmit={form.handleSubmit((body) => {
+        add.mutate(body, {
+          onSuccess: () => onDone(`${ROLE_NAMES[body.role]} added`),
+          onError: (error) => {
+            showFieldErrors(error, form.setError, (path) => path in body);
+            // What is sent next is another request.
+            renewKey(crypto.randomUUID());
+          },
+        });
+      })}
+    >
+      <UnsavedGuard unsaved={isDirty && !add.isSuccess} />
+      {add.isError ? (
+        <Notice tone="error" title="Not added." className="mb-3">
+          {errorWords(add.error)}.
+        </Notice>
+      ) : null}
+      <div className="grid gap-4 sm:grid-cols-3">
+        <TextField
+          label="E-mail of the account"
+          type="email"
+          hint="The account must exist already."
+          error={fieldWords(errors.email?.message)}
+          {...form.register("email")}
+        />
+        <SelectField
+          label="Role here"
+          emptyLabel="choose"
+          options={ROLES.map((value) => ({ value, label: ROLE_NAMES[value] }))}
+          error={fieldWords(errors.role?.message)}
+          {...form.register("role")}
+        />
+        <TextField
+          label="Team"
+          hint="If they work in one; a new name makes a new team."
+          error={fieldWords(errors.team?.message)}
+          {...form.register("team")}
+        />
+      </div>
+      <p className="mt-3 flex flex-wrap gap-2">
+        <Button variant="primary" type="submit" pending={add.isPending} disabled={!isDirty}>
+          Add the member
+        </Button>
+        <Button onClick={() => onDone()}>Cancel</Button>
+      </p>
+    </form>
+  );
+}

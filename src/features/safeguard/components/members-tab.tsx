@@ -1,0 +1,116 @@
+import { useQuery } from "@tanstack/react-query";
+import { useMemo, useState } from "react";
+import type { Member } from "../../../../shared/contracts/investigations.ts";
+import type { DataColumn } from "../../../components/data-table/data-column.ts";
+import { DataTable } from "../../../components/data-table/data-table.tsx";
+import { Section } from "../../../components/layouts/section.tsx";
+import { Button } from "../../../components/ui/button.tsx";
+import { useToast } from "../../../components/ui/use-toast.ts";
+import { errorKind } from "../../../lib/api-error.ts";
+import { formatInstant, noValue } from "../../../lib/formatters.ts";
+import { useInvestigation } from "../../../lib/investigation-context.ts";
+import { useSession } from "../../../lib/session-context.ts";
+import { membersQuery } from "../api/members.ts";
+import { roleWord } from "../safeguard-words.ts";
+import { AddMemberForm } from "./add-member-form.tsx";
+import { EndMemberDialog } from "./end-member-dialog.tsx";
+
+function memberColumns(
+  timeZone: string,
+  accountId: string,
+  end: (member: Member) => void,
+): DataColumn<Member>[] {
+  return [
+    {
+      id: "name",
+      header: "Name",
+      rowHeader: true,
+      cell: (member) =>
+        member.accountId === accountId ? `${member.displayName} (you)` : member.displayName,
+    },
+    { id: "email", header: "E-mail", cell: (member) => member.email },
+    { id: "role", header: "Role", cell: (member) => roleWord(member.role) },
+    { id: "team", header: "Team", cell: (member) => member.team ?? noValue },
+    { id: "since", header: "Since", cell: (member) => formatInstant(member.since, timeZone) },
+    {
+      id: "end",
+      header: "Change",
+      cell: (member) => (
+        <Button
+          size="small"
+          aria-label={`End the role of ${member.displayName} as ${roleWord(member.role).toLowerCase()}`}
+          onClick={() => end(member)}
+        >
+          End …
+        </Button>
+      ),
+    },
+  ];
+}
+
+/** Who holds which role here; a person with several roles stands here once for each. */
+export function MembersTab() {
+  const { id, timeZone } = useInvestigation();
+  const { accountId } = useSession();
+  const toast = useToast();
+  const [page, setPage] = useState(1);
+  const [pageSize, setPageSize] = useState(50);
+  const [adding, setAdding] = useState(false);
+  const [ending, setEnding] = useState<Member | null>(null);
+  const members = useQuery(membersQuery(id, page, pageSize));
+  const columns = useMemo(
+    () => memberColumns(timeZone, accountId, setEnding),
+    [timeZone, accountId],
+  );
+  return (
+    <>
+      {adding ? (
+        <Section title="New member">
+          <AddMemberForm
+            investigationId={id}
+            onDone={(done) => {
+              if (done) toast({ text: done, tone: "done" });
+              setAdding(false);
+            }}
+          />
+        </Section>
+      ) : null}
+      <DataTable<Member>
+        caption="Members of this investigation, by name"
+        noun="memberships"
+        columns={columns}
+        rows={members.data?.items ?? []}
+        rowId={(member) => member.id}
+        total={members.data?.total ?? 0}
+        page={page}
+        pageSize={pageSize}
+        onPageChange={setPage}
+        onPageSizeChange={(size) => {
+          setPageSize(size);
+          setPage(1);
+        }}
+        sort={null}
+        onSortChange={() => {}}
+        state={members.data ? "ready" : members.isError ? "error" : "loading"}
+        updating={members.isPlaceholderData}
+        errorKind={errorKind(members.error)}
+        onRetry={() => void members.refetch()}
+        tools={
+          adding ? undefined : (
+            <Button variant="primary" onClick={() => setAdding(true)}>
+              Add a member
+            </Button>
+          )
+        }
+      />
+      {ending ? (
+        <EndMemberDialog
+          investigationId={id}
+          member={ending}
+          own={ending.accountId === accountId}
+          onClose={() => setEnding(null)}
+        />
+      ) : null}
+    </>
+  );
+}

@@ -1,0 +1,43 @@
+import { useSearchParams } from "react-router-dom";
+import { RoomPage } from "../../../components/layouts/room-page.tsx";
+import { Caution } from "../../../components/ui/caution.tsx";
+import { ErrorState } from "../../../components/ui/error-state.tsx";
+import { Tabs } from "../../../components/ui/tabs.tsx";
+import { useSession } from "../../../lib/session-context.ts";
+import { EventsTab } from "../components/events-tab.tsx";
+import { MembersTab } from "../components/members-tab.tsx";
+import { PolicyTab } from "../components/policy-tab.tsx";
+
+const tabs = [
+  { id: "policy", label: "Field policy", content: <PolicyTab /> },
+  { id: "events", label: "Access events", content: <EventsTab /> },
+  { id: "members", label: "Members", content: <MembersTab /> },
+];
+
+/** Safeguard: who may see which field, who looked, and who works here. */
+export function Component() {
+  const { actingRole } = useSession();
+  const [params, setParams] = useSearchParams();
+  const asked = params.get("tab");
+  const tab = tabs.some((one) => one.id === asked) ? (asked as string) : "policy";
+  return (
+    <RoomPage title="Safeguard" subLine="Who may see which field, who looked, who works here.">
+      {actingRole === "officer" ? (
+        <>
+          <Tabs
+            label="Parts of Safeguard"
+            items={tabs}
+            value={tab}
+            onValueChange={(id) => setParams({ tab: id }, { replace: true })}
+          />
+          <Caution className="mt-6">
+            A contact network identifies people even without names. People stand here by study
+            number; reading this room is itself on record.
+          </Caution>
+        </>
+      ) : (
+        <ErrorState kind="no-permission" />
+      )}
+    </RoomPage>
+  );
+}
