@@ -3,13 +3,16 @@ import type { DayStripRow, DueState } from "./day-strip-row.ts";
 import { dueWords } from "./day-strip-row.ts";
 import { DueMark } from "./due-marks.tsx";
 
-const dueStates: readonly DueState[] = ["seen", "missed", "due", "to_come"];
+const dueStates: readonly DueState[] = ["seen", "missed", "no_check", "due", "to_come"];
 
 /** What the shapes mean; only those that the rows use. */
 export function DayStripLegend({ rows }: { rows: readonly DayStripRow[] }) {
   const uses = (type: DayStripRow["type"]) => rows.some((row) => row.type === type);
   const windows = (kind: "source" | "infectious") =>
     rows.some((row) => row.type === "window" && row.window === kind);
+  const due = dueStates.filter((state) =>
+    rows.some((row) => row.type === "due" && row.days.some((day) => day.state === state)),
+  );
   const incomplete = rows.some((row) => row.type === "onsets" && row.incompleteFrom);
   return (
     <ul className="flex flex-wrap gap-x-5 gap-y-1 text-sm text-ink-2" aria-label="What is drawn">
@@ -64,13 +67,11 @@ export function DayStripLegend({ rows }: { rows: readonly DayStripRow[] }) {
           />
         </Item>
       ) : null}
-      {uses("due")
-        ? dueStates.map((state) => (
-            <Item key={state} words={dueWords[state]}>
-              <DueMark state={state} x={4} y={2} size={12} />
-            </Item>
-          ))
-        : null}
+      {due.map((state) => (
+        <Item key={state} words={dueWords[state]}>
+          <DueMark state={state} x={4} y={2} size={12} />
+        </Item>
+      ))}
       {uses("onsets") ? (
         <Item words="one onset">
           <rect x="3" y="5" width="14" height="7" fill="var(--ink)" />

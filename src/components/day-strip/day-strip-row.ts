@@ -42,9 +42,12 @@ export type GroupRow = RowBase & {
   count: string;
 };
 
-export type DueState = "seen" | "missed" | "due" | "to_come";
+export type DueState = "seen" | "missed" | "due" | "to_come" | "no_check";
 
-/** Follow-up days of one contact. `due` is today's, not seen yet. */
+/**
+ * Follow-up days of one contact. `due` is today's, not seen yet; `no_check` is a past day of which
+ * nothing was recorded here, which says neither that the contact was seen nor that they were missed.
+ */
 export type DueRow = RowBase & {
   type: "due";
   days: readonly { day: string; state: DueState }[];
@@ -68,4 +71,5 @@ export const dueWords: Readonly<Record<DueState, string>> = {
   missed: "missed",
   due: "due today",
   to_come: "to come",
+  no_check: "no check recorded here",
 };

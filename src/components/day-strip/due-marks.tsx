@@ -1,7 +1,10 @@
 import type { DayScale } from "./day-scale.ts";
 import type { DueRow, DueState } from "./day-strip-row.ts";
 
-/** One due day of `size` pixels: filled = seen, cross = missed, frame = due today, line = to come. */
+/**
+ * One due day of `size` pixels: filled = seen, cross = missed, frame = due today, line = to come,
+ * dot = nothing recorded.
+ */
 export function DueMark({
   state,
   x,
@@ -35,6 +38,15 @@ export function DueMark({
           fill="none"
           stroke="var(--coral)"
           strokeWidth={2}
+        />
+      );
+    case "no_check":
+      return (
+        <circle
+          cx={x + size / 2}
+          cy={y + size / 2}
+          r={Math.max(1.5, size / 6)}
+          fill="var(--ink-2)"
         />
       );
     case "to_come":

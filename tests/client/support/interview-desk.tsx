@@ -1,5 +1,5 @@
 import { QueryClient, QueryClientProvider } from "@tanstack/react-query";
-import { act, render, screen, waitFor } from "@testing-library/react";
+import { act, configure, render, screen, waitFor } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { createMemoryRouter, RouterProvider } from "react-router-dom";
 import { vi } from "vitest";
@@ -8,6 +8,9 @@ import type { Match, PersonPage } from "../../../shared/contracts/people.ts";
 import { ToastProvider } from "../../../src/components/ui/toast-provider.tsx";
 import { Component } from "../../../src/features/interviews/routes/interview-route.tsx";
 import { InvestigationContext } from "../../../src/lib/investigation-context.ts";
+
+// Many keys, and perhaps a busy machine.
+configure({ asyncUtilTimeout: 15_000 });
 
 export const caseId = "0b0e7c1e-6d0a-4f7e-9d0e-0d8f1c2b3a41";
 export const knownId = "5f5c1d8a-3f0e-4f5c-8a69-6a1c4a8d7e02";

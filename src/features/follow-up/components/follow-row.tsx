@@ -1,0 +1,80 @@
+import { Link } from "react-router-dom";
+import type { FollowUpItem } from "../../../../shared/contracts/follow-up.ts";
+import { paths } from "../../../app/paths.ts";
+import { PersonMark } from "../../../components/person-mark/person-mark.tsx";
+import { Answer } from "../../../components/ui/answer.tsx";
+import { formatDay } from "../../../lib/formatters.ts";
+import { dayWords } from "../lib/due-days.ts";
+import { DueStrip, type DueStripProps } from "./due-strip.tsx";
+import { followColumns } from "./follow-grid.ts";
+
+export type FollowRowProps = Omit<DueStripProps, "item"> & {
+  item: FollowUpItem;
+  investigationId: string;
+};
+
+/** A number that can be dialled: digits, with a plus in front. */
+function dialled(phone: string): string | null {
+  const digits = phone.replace(/[^\d+]/g, "");
+  return /^\+?\d{4,}$/.test(digits) ? digits : null;
+}
+
+/** One contact: who, how to reach them, which day it is, and the strip of due days. */
+export function FollowRow({ item, investigationId, ...strip }: FollowRowProps) {
+  return (
+    <li className={`border-b border-rule py-2 ${followColumns}`}>
+      <p className="flex min-w-0 items-baseline gap-2">
+        <PersonMark classification={item.classification ?? "contact"} />
+        <Link
+          to={paths.person(investigationId, item.id)}
+          className="min-w-0 py-0.5 text-kelp underline decoration-1 underline-offset-4
+            [overflow-wrap:anywhere] pointer-coarse:py-2"
+        >
+          {item.name ?? item.studyNumber}
+        </Link>
+        {item.name ? <span className="text-sm text-ink-2">{item.studyNumber}</span> : null}
+      </p>
+      <p className="min-w-0 text-end lg:text-start">
+        <Phone item={item} />
+      </p>
+      <p className="text-sm text-ink-2 lg:text-base lg:text-ink">
+        <span className="lg:hidden">area: </span>
+        <Answer value={item.area} />
+      </p>
+      <p className="text-end lg:text-start">
+        {dayWords(item)}
+        <span className="ms-2 block text-sm text-ink-2">
+          {item.dayNumber > item.monitoringDays
+            ? null
+            : `last due ${formatDay(item.lastDueDay, { style: "short" })}`}
+        </span>
+      </p>
+      <div className="col-span-2 min-w-0 lg:col-span-1">
+        <DueStrip item={item} {...strip} />
+      </div>
+    </li>
+  );
+}
+
+/** A link that dials; absent where the number is not the reader's to know. */
+function Phone({ item }: { item: FollowUpItem }) {
+  if (item.phone === undefined) return <span className="text-sm text-ink-2">number not open</span>;
+  if (item.phone === null || item.phone === "unknown" || item.phone === "refused") {
+    return (
+      <span className="text-sm text-ink-2">
+        phone: <Answer value={item.phone} />
+      </span>
+    );
+  }
+  const number = dialled(item.phone);
+  if (number === null) return <span>{item.phone}</span>;
+  return (
+    <a
+      href={`tel:${number}`}
+      className="inline-block py-0.5 text-kelp underline decoration-1 underline-offset-4
+        pointer-coarse:min-h-11 pointer-coarse:py-2.5"
+    >
+      {item.phone}
+    </a>
+  );
+}
