@@ -6,7 +6,8 @@ const words: Record<UndefinedReason, string> = {
   no_two_paths: "nobody here has two contact pairs",
   no_one_interviewed: "nobody has been interviewed",
   too_few_people: "fewer than 30 people, or fewer than 30 of them interviewed",
-  free_range: "the exposure range was chosen freely; any network passes 1 if the range is widened",
+  free_range:
+    "the exposures are not those of one preset window; any network passes 1 if the range is widened",
   coverage_low: "fewer than 90 % of the people were interviewed",
   recall_unknown: "without a recall estimate the figure is a lower bound",
   recall_low: "corrected for recall, the figure may reach the threshold",

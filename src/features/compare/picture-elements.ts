@@ -102,9 +102,10 @@ export function pictureStyle(theme: Theme): StylesheetJsonBlock[] {
     {
       selector: "node:selected",
       style: {
-        "border-width": 2,
-        "border-color": blue,
-        "border-opacity": 1,
+        "overlay-color": blue,
+        "overlay-opacity": 0.3,
+        "overlay-padding": 8,
+        "font-size": 20,
         "min-zoomed-font-size": 0,
         "font-weight": "bold",
         "z-index": 10,

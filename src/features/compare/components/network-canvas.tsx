@@ -1,5 +1,5 @@
 import type { Core, EventObject } from "cytoscape";
-import { useCallback, useEffect, useMemo, useRef, useState } from "react";
+import { useCallback, useEffect, useMemo, useRef } from "react";
 import CytoscapeComponent from "react-cytoscapejs";
 import type { NetworkGraph } from "../../../../shared/contracts/network.ts";
 import { markBlobUrl } from "../../../components/person-mark/mark-svg.ts";
@@ -7,6 +7,7 @@ import { Button } from "../../../components/ui/button.tsx";
 import { useTheme } from "../../../lib/theme.ts";
 import { pictureElements, pictureStyle } from "../picture-elements.ts";
 import type { PictureNode } from "../picture-nodes.ts";
+import { useAwake } from "../use-awake.ts";
 
 export type NetworkCanvasProps = {
   nodes: readonly PictureNode[];
@@ -83,7 +84,9 @@ export function NetworkCanvas({
     <div className="relative border-y border-rule">
       <div role="img" aria-label={description} ref={frame}>
         <CytoscapeComponent
-          className="relative h-[min(70vh,36rem)] w-full"
+          // Under a finger the sleeping picture lets everything through, or the page could not be
+          // scrolled over it: the library keeps every touch it gets.
+          className={`relative h-[min(70vh,36rem)] w-full ${awake ? "" : "pointer-coarse:pointer-events-none"}`}
           elements={elements}
           layout={layout}
           stylesheet={stylesheet}
@@ -110,32 +113,4 @@ export function NetworkCanvas({
       </fieldset>
     </div>
   );
-}
-
-/**
- * Whether wheel and drag work on the picture. Only after a press on it and until the pointer goes
- * elsewhere: otherwise whoever scrolls down the page would be caught in it.
- */
-function useAwake(): [boolean, (element: HTMLElement | null) => void] {
-  const [awake, setAwake] = useState(false);
-  const frame = useCallback((element: HTMLElement | null) => {
-    if (!element) return;
-    const onPress = ({ target, pointerType, type }: PointerEvent) => {
-      const inside = target instanceof Node && element.contains(target);
-      // A finger that scrolls past presses too; it wakes the picture with a tap only.
-      if (!inside || pointerType === "mouse" || type === "click") setAwake(inside);
-    };
-    const onLeave = ({ pointerType }: PointerEvent) => {
-      if (pointerType === "mouse") setAwake(false);
-    };
-    document.addEventListener("pointerdown", onPress);
-    element.addEventListener("click", onPress);
-    element.addEventListener("pointerleave", onLeave);
-    return () => {
-      document.removeEventListener("pointerdown", onPress);
-      element.removeEventListener("click", onPress);
-      element.removeEventListener("pointerleave", onLeave);
-    };
-  }, []);
-  return [awake, frame];
 }
