@@ -13,6 +13,8 @@ export const paths = {
     `/i/${investigationId}/trace/people/${personId}/interview`,
   places: (investigationId: string) => `/i/${investigationId}/trace/places`,
   imports: (investigationId: string) => `/i/${investigationId}/trace/import`,
+  oneImport: (investigationId: string, importId: string) =>
+    `/i/${investigationId}/trace/import/${importId}`,
   matches: (investigationId: string) => `/i/${investigationId}/trace/matches`,
   follow: (investigationId: string) => `/i/${investigationId}/follow`,
   review: (investigationId: string) => `/i/${investigationId}/review`,

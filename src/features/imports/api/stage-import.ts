@@ -1,0 +1,26 @@
+import { useMutation, useQueryClient } from "@tanstack/react-query";
+import { importAnswer } from "../../../../shared/contracts/imports.ts";
+import { api, inInvestigation } from "../../../lib/api-client.ts";
+import { investigationKey } from "../../../lib/query-keys.ts";
+
+export type FileToCheck = { kind: "people" | "pairs"; file: File; idempotencyKey: string };
+
+/** Sends a file to be checked; nothing of it reaches the record yet. */
+export function useStageImport(investigationId: string) {
+  const queryClient = useQueryClient();
+  return useMutation({
+    mutationFn: ({ kind, file, idempotencyKey }: FileToCheck) => {
+      const body = new FormData();
+      body.set("kind", kind);
+      // Its own name may say who is in it, and the server has no use for it.
+      body.set("file", file, `${kind}.csv`);
+      return api.post(inInvestigation(investigationId, "imports"), {
+        body,
+        idempotencyKey,
+        schema: importAnswer,
+      });
+    },
+    onSuccess: () =>
+      queryClient.invalidateQueries({ queryKey: investigationKey(investigationId, "imports") }),
+  });
+}
