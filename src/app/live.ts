@@ -1,6 +1,7 @@
 import { type QueryClient, useQueryClient } from "@tanstack/react-query";
 import { useEffect } from "react";
 import type { Topic } from "../../shared/events.ts";
+import { readWelcome } from "../features/session/api/get-welcome.ts";
 import { inInvestigation } from "../lib/api-client.ts";
 import { investigationKey, type QueryWord } from "../lib/query-keys.ts";
 
@@ -12,6 +13,8 @@ export const STALE_BY_TOPIC: Readonly<Record<Topic, readonly QueryWord[]>> = {
   imports: ["imports", "people", "groups", "network"],
   members: ["members", "people"],
 };
+
+const allTopics = Object.keys(STALE_BY_TOPIC) as Topic[];
 
 /** Messages that come together are answered together, so that an import does not refetch in a row. */
 const gatherMs = 250;
@@ -49,7 +52,8 @@ export function useLive(investigationId: string): void {
     let reopen: ReturnType<typeof setTimeout> | undefined;
     let gather: ReturnType<typeof setTimeout> | undefined;
     let pause = firstPauseMs;
-    let lost = false;
+    let failures = 0;
+    let over = false;
     const gathered = new Set<Topic>();
 
     function flush() {
@@ -61,28 +65,48 @@ export function useLive(investigationId: string): void {
       for (const topic of topics) gathered.add(topic);
       gather ??= setTimeout(flush, gatherMs);
     }
+    function later() {
+      reopen = setTimeout(() => void tryAgain(), pause);
+      pause = Math.min(longestPauseMs, pause * 2);
+    }
+    async function tryAgain() {
+      // Asked first, because a refused stream is an error in the console and says no reason.
+      const signedIn = await readWelcome().then(
+        (welcome) => welcome.signedIn,
+        () => false,
+      );
+      if (over) return;
+      if (!signedIn) {
+        later();
+        return;
+      }
+      // The net under the stream: where none gets through, the pages ask every minute.
+      if (failures > 1) note(allTopics);
+      open();
+    }
     function open() {
-      source = new EventSource(inInvestigation(investigationId, "live"));
-      source.onopen = () => {
+      const opened = new EventSource(inInvestigation(investigationId, "live"));
+      source = opened;
+      opened.onopen = () => {
         pause = firstPauseMs;
         // Messages may have been missed while there was no stream.
-        if (lost) note(Object.keys(STALE_BY_TOPIC) as Topic[]);
-        lost = false;
+        if (failures > 0) note(allTopics);
+        failures = 0;
       };
-      source.onmessage = (message: MessageEvent<string>) => {
+      opened.onmessage = (message: MessageEvent<string>) => {
         const topic = topicOf(message.data);
         if (topic) note([topic]);
       };
-      source.onerror = () => {
-        lost = true;
-        // The browser reopens a stream that broke off, but not one that was refused.
-        if (source?.readyState !== EventSource.CLOSED) return;
-        reopen = setTimeout(open, pause);
-        pause = Math.min(longestPauseMs, pause * 2);
+      opened.onerror = () => {
+        // Reopened by ourselves: the browser would go on after a sign-out, and not after a refusal.
+        opened.close();
+        failures += 1;
+        later();
       };
     }
     open();
     return () => {
+      over = true;
       source?.close();
       clearTimeout(reopen);
       clearTimeout(gather);

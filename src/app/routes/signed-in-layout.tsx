@@ -5,7 +5,7 @@ import type { Session } from "../../../shared/contracts/session.ts";
 import { ErrorState } from "../../components/ui/error-state.tsx";
 import { LoadingState } from "../../components/ui/loading-state.tsx";
 import { readSession, sessionQuery } from "../../features/session/api/get-session.ts";
-import { welcomeQuery } from "../../features/session/api/get-welcome.ts";
+import { readWelcome, welcomeQuery } from "../../features/session/api/get-welcome.ts";
 import { switchActing } from "../../features/session/api/switch-acting.ts";
 import { IdleWatch } from "../../features/session/components/idle-watch.tsx";
 import {
@@ -74,8 +74,7 @@ function Guarded({ session }: { session: Session }) {
   useEffect(() => {
     async function compare() {
       try {
-        const welcome = await queryClient.fetchQuery({ ...welcomeQuery(), staleTime: 0 });
-        if (!welcome.signedIn) {
+        if (!(await readWelcome()).signedIn) {
           lock();
           return;
         }
@@ -85,7 +84,7 @@ function Guarded({ session }: { session: Session }) {
       }
     }
     return onOtherTab(() => void compare());
-  }, [queryClient, lock]);
+  }, [lock]);
 
   async function unlock(next: Session) {
     const before = known.current;

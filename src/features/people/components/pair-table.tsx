@@ -42,7 +42,7 @@ export function PairTable({ person, investigationId }: PairTableProps) {
             {person.pairs.flatMap((pair) =>
               (pair.exposures.length > 0 ? pair.exposures : [null]).map((exposure, index) => (
                 <tr key={exposure?.id ?? pair.pairId}>
-                  <HeadCell scope="row" className="whitespace-nowrap">
+                  <HeadCell scope="row" className="whitespace-nowrap align-baseline">
                     <Link
                       to={paths.person(investigationId, pair.personId)}
                       className="underline decoration-rule underline-offset-4 hover:decoration-kelp"
@@ -59,7 +59,7 @@ export function PairTable({ person, investigationId }: PairTableProps) {
                       format={(code) => wordFor(settingWords, String(code))}
                     />
                   </Cell>
-                  <Cell>
+                  <Cell className="whitespace-nowrap">
                     <Answer value={exposure?.place} />
                   </Cell>
                   <Cell className="whitespace-nowrap">

@@ -10,11 +10,11 @@ export type PersonLabelProps = {
 export function PersonLabel({ person }: PersonLabelProps) {
   const mark = personMarkOf(person);
   return (
-    <span className="inline-flex items-center gap-1.5 whitespace-nowrap">
+    <span className="whitespace-nowrap">
       {mark ? (
-        <PersonMark {...mark} size={16} />
+        <PersonMark {...mark} size={16} className="me-1.5" />
       ) : (
-        <span className="inline-block w-4 text-center text-ink-2" title="not classified">
+        <span className="me-1.5 inline-block w-4 text-center text-ink-2" title="not classified">
           <span aria-hidden="true">·</span>
           <span className="sr-only">not classified</span>
         </span>

@@ -2,8 +2,8 @@ import { Suspense, useEffect, useState } from "react";
 import type { Session } from "../../../../shared/contracts/session.ts";
 import { Notice } from "../../../components/ui/notice.tsx";
 import { idleState } from "../../../lib/activity.ts";
-import { api } from "../../../lib/api-client.ts";
 import { staySignedIn } from "../api/get-session.ts";
+import { readWelcome } from "../api/get-welcome.ts";
 import { idleStep } from "../idle-step.ts";
 import { IdleWarning } from "./session-dialogs.ts";
 
@@ -43,9 +43,7 @@ export function IdleWatch({ session, onEnded }: IdleWatchProps) {
       try {
         if (step.ask === "stay") await staySignedIn();
         else {
-          const { signedIn } = await api.get<{ signedIn: boolean }>("/api/welcome", {
-            background: true,
-          });
+          const { signedIn } = await readWelcome();
           if (signedIn) askAfter = Date.now() + askAgainMs;
           else onEnded();
         }

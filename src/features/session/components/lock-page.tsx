@@ -27,9 +27,7 @@ export function LockPage({ session, onSignedIn }: LockPageProps) {
         >
           <div className="mx-auto max-w-md px-5 pt-[9vh] pb-10">
             <Wordmark size="large" />
-            <Primitive.Title className="mt-6 mb-2 text-xl">
-              Signed out after a while
-            </Primitive.Title>
+            <Primitive.Title className="mt-6 mb-2 text-xl">Signed out</Primitive.Title>
             <p className="mb-5 text-ink-2">
               {session.displayName}, what you typed is still in this tab. Sign in to go on where you
               were.
