@@ -200,7 +200,6 @@ test("views belong to one role each and keep a barrier against leaking functions
   );
   const readers = Object.fromEntries(found.rows.map((row) => [row.name, row.readers]));
   expect(readers).toEqual({
-    account_of_email: ["strandline_officer", "strandline_supervisor"],
     field_right: ["strandline_officer"],
     member: ["strandline_officer", "strandline_supervisor"],
     person_officer: ["strandline_officer"],

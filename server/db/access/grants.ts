@@ -30,6 +30,7 @@ const FUNCTIONS: Record<string, readonly (Role | "system")[]> = {
   "core.ctx_near(uuid, uuid, text, uuid, boolean)": [],
   "core.pairs_for(uuid, uuid[])": ["tracer", "supervisor", "officer"],
   "core.follow_up_days()": ["tracer", "supervisor"],
+  "core.account_of_email(text)": ["supervisor", "officer"],
   "core.bump_graph()": ["tracer", "supervisor", "officer"],
   "core.next_numbers(integer)": ["tracer", "supervisor", "officer"],
   "core.announce(text, uuid, bigint)": ["tracer", "supervisor", "officer"],
@@ -91,9 +92,6 @@ export function views(): string[] {
      from core.member m join auth.account a on a.id = m.account_id
      left join core.team t on t.id = m.team_id
      where m.investigation_id = (select core.ctx_investigation())`,
-    `create view views.account_of_email with (security_barrier) as
-     select a.id, lower(a.email) as email, a.demo from auth.account a where a.disabled_at is null
-       and (select core.ctx_role()) in ('supervisor', 'officer')`,
     `create view views.field_right with (security_barrier) as
      select role, field from auth.field_right where (select core.ctx_role()) = 'officer'`,
   );
@@ -143,7 +141,7 @@ export function grants(): string[] {
     );
   }
   for (const role of ["supervisor", "officer"] as const) {
-    out.push(`grant select on views.member, views.account_of_email to ${loginOf(role)}`);
+    out.push(`grant select on views.member to ${loginOf(role)}`);
   }
   out.push(`grant select on audit.event, views.field_right to ${loginOf("officer")}`);
   for (const table of CORE_TABLES) out.push(`grant select on ${table} to ${loginOf("system")}`);

@@ -51,7 +51,7 @@ export async function accountOfEmail(
   email: string,
 ): Promise<{ id: string; demo: boolean } | null> {
   const found = await tx.execute<{ id: string; demo: boolean }>(
-    sql`select id, demo from views.account_of_email where email = ${email.toLowerCase()}`,
+    sql`select id, demo from core.account_of_email(${email})`,
   );
   return found.rows[0] ?? null;
 }
