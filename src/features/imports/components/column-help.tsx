@@ -25,7 +25,7 @@ export function ColumnHelp({ kind }: ColumnHelpProps) {
         {columns.map((column, at) => (
           <span key={column}>
             {at > 0 ? ", " : ""}
-            <code className="text-ink">{column}</code>
+            <code className="font-sans font-bold text-ink">{column}</code>
             {required.has(column) ? " (required)" : ""}
           </span>
         ))}
@@ -33,18 +33,20 @@ export function ColumnHelp({ kind }: ColumnHelpProps) {
       </p>
       <p className="mt-2">
         UTF-8 text with commas. Days are written 2026-05-18, or 2026-05 when only the month is
-        known. Leave a cell blank when nobody asked; write <code>unknown</code> or{" "}
-        <code>refused</code> when they did.
+        known. Leave a cell blank when nobody asked; write{" "}
+        <code className="font-sans font-bold text-ink">unknown</code> or{" "}
+        <code className="font-sans font-bold text-ink">refused</code> when they did.
       </p>
       {codes[kind].map(([column, words]) => (
         <p key={column} className="mt-1">
-          <code className="text-ink">{column}</code>: {words.join(", ")}
+          <code className="font-sans font-bold text-ink">{column}</code>: {words.join(", ")}
         </p>
       ))}
       {kind === "pairs" ? (
         <p className="mt-2">
-          One row is one telling of a contact; <code className="text-ink">named_by</code> is the
-          reference of the one who told, or blank.
+          One row is one telling of a contact;{" "}
+          <code className="font-sans font-bold text-ink">named_by</code> is the reference of the one
+          who told, or blank.
         </p>
       ) : null}
     </div>

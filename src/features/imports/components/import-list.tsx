@@ -20,6 +20,7 @@ function columnsIn(timeZone: string): DataColumn<Import>[] {
       rowHeader: true,
       cell: (one) => formatInstant(one.recordedAt, timeZone),
     },
+    { id: "state", header: "State", cell: (one) => stateWords[one.state] },
     { id: "kind", header: "Lists", cell: (one) => kindWords[one.kind] },
     { id: "rows", header: "Rows", numeric: true, cell: (one) => formatNumber(one.rows) },
     {
@@ -28,7 +29,6 @@ function columnsIn(timeZone: string): DataColumn<Import>[] {
       numeric: true,
       cell: (one) => formatNumber(one.problemCount),
     },
-    { id: "state", header: "State", cell: (one) => stateWords[one.state] },
   ];
 }
 

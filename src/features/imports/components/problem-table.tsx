@@ -1,4 +1,4 @@
-import { useState } from "react";
+import { useMemo, useState } from "react";
 import type { Import } from "../../../../shared/contracts/imports.ts";
 import { Section } from "../../../components/layouts/section.tsx";
 import { Button } from "../../../components/ui/button.tsx";
@@ -9,13 +9,32 @@ import { formatCount, formatNumber } from "../../../lib/formatters.ts";
 import { saveText } from "../../../lib/save-text.ts";
 import { toCsv } from "../../../lib/to-csv.ts";
 
-const pageSize = 50;
+const pageSize = 25;
+/** Kinds of problem named above the table. */
+const mostKinds = 8;
 
 export type ProblemTableProps = { problems: Import["problems"]; problemCount: number };
+
+const columnWords = (column: string) => (column === "row" ? "whole row" : column);
+
+type Kind = { column: string; code: string; count: number };
+
+/** Listed problems by column and code, the most frequent first. */
+function kindsOf(problems: Import["problems"]): Kind[] {
+  const kinds = new Map<string, Kind>();
+  for (const { column, code } of problems) {
+    const key = `${column} ${code}`;
+    const kind = kinds.get(key) ?? { column, code, count: 0 };
+    kind.count += 1;
+    kinds.set(key, kind);
+  }
+  return [...kinds.values()].sort((a, b) => b.count - a.count);
+}
 
 /** What is wrong where: line of the file, column, meaning. Values stay in the file. */
 export function ProblemTable({ problems, problemCount }: ProblemTableProps) {
   const [page, setPage] = useState(1);
+  const kinds = useMemo(() => kindsOf(problems), [problems]);
   const last = Math.max(1, Math.ceil(problems.length / pageSize));
   const shown = Math.min(page, last);
   const rows = problems.slice((shown - 1) * pageSize, shown * pageSize);
@@ -33,13 +52,23 @@ export function ProblemTable({ problems, problemCount }: ProblemTableProps) {
       }
       actions={<Button onClick={download}>Download as CSV</Button>}
     >
+      {kinds.length > 1 || problems.length > pageSize ? (
+        <ul className="mb-3 max-w-[70ch] text-ink-2">
+          {kinds.slice(0, mostKinds).map(({ column, code, count }) => (
+            <li key={`${column} ${code}`}>
+              {formatNumber(count)} × {columnWords(column)}: {fieldWords(code)}
+            </li>
+          ))}
+          {kinds.length > mostKinds ? <li>and other kinds</li> : null}
+        </ul>
+      ) : null}
       <Table caption="Problems by line of the file; the heading is line 1" hideCaption>
         <thead>
           <tr>
-            <HeadCell numeric className="w-20">
+            <HeadCell numeric className="w-16">
               Line
             </HeadCell>
-            <HeadCell className="w-48">Column</HeadCell>
+            <HeadCell className="sm:w-48">Column</HeadCell>
             <HeadCell>Meaning</HeadCell>
           </tr>
         </thead>
@@ -49,7 +78,7 @@ export function ProblemTable({ problems, problemCount }: ProblemTableProps) {
             // biome-ignore lint/suspicious/noArrayIndexKey: rows never move
             <tr key={`${line} ${column} ${code} ${at}`}>
               <Cell numeric>{formatNumber(line)}</Cell>
-              <Cell>{column === "row" ? "whole row" : <code>{column}</code>}</Cell>
+              <Cell>{columnWords(column)}</Cell>
               <Cell>{fieldWords(code)}</Cell>
             </tr>
           ))}
