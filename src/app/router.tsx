@@ -20,11 +20,13 @@ const trace: RouteObject[] = [
     path: "trace/import/:importId",
     lazy: () => import("../features/imports/routes/import-route.tsx"),
   },
+  { path: "trace/import", lazy: () => import("../features/imports/routes/import-route.tsx") },
   { path: "trace/matches", lazy: () => import("../features/people/routes/matches-route.tsx") },
 ];
 
 /** The other rooms. */
 const rooms: RouteObject[] = [
+  { path: "follow", lazy: () => import("../features/follow-up/routes/follow-route.tsx") },
   { path: "follow", lazy: () => import("../features/follow-up/routes/follow-route.tsx") },
   { path: "review", lazy: () => import("../features/review/routes/review-route.tsx") },
   { path: "compare", lazy: () => import("../features/compare/routes/compare-route.tsx") },

@@ -41,7 +41,7 @@ export function FieldFrame({
     <div className={clsx("min-w-0", className)}>
       <label htmlFor={id} className={hideLabel ? "sr-only" : "mb-1 block text-sm font-bold"}>
         {label}
-        {required ? <span className="ms-1.5 font-normal text-ink-2">required</span> : null}
+        {required ? <span className="font-normal text-ink-2"> required</span> : null}
       </label>
       {children}
       <FieldNotes id={id} hint={hint} error={error} />
