@@ -52,9 +52,18 @@ begin
       select 1 from core.person p
       where p.household_id = i.place_id and p.id = any ((select core.ctx_named_people())::uuid[])));
   if cardinality(v_places) = 0 then return; end if;
-  insert into audit.event (investigation_id, account_id, role, action, fields, counts)
-  values (c.investigation_id, c.account_id, c.role, 'places.opened', '{household}',
-    jsonb_build_object('places', cardinality(v_places)));
+  -- Opened along with people, households belong to the event of that opening, which says whose they
+  -- are; it is still this transaction's own (an event's time is its transaction's).
+  update audit.event set fields = array_append(fields, 'household') where id = (
+    select e.id from audit.event e
+    where e.investigation_id = c.investigation_id and e.at = now() and e.account_id = c.account_id
+      and cardinality(e.person_ids) > 0 and 'name' = any (e.fields)
+    order by cardinality(e.fields) desc limit 1);
+  if not found then
+    insert into audit.event (investigation_id, account_id, role, action, fields, counts)
+    values (c.investigation_id, c.account_id, c.role, 'places.opened', '{household}',
+      jsonb_build_object('places', cardinality(v_places)));
+  end if;
   return query select i.place_id, i.name_cipher from identity.place i where i.place_id = any (v_places);
 end $$;
 
