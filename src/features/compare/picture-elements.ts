@@ -26,7 +26,7 @@ export function pictureElements(
     const look =
       level === "people"
         ? { side: markSide, mark: markUrl(node.mark) }
-        : { side: Math.max(smallestDisc, markSide * Math.sqrt(size)), fill: fillOf(color, theme) };
+        : { ...discOf(size), fill: fillOf(color, theme) };
     return {
       group: "nodes",
       classes: level,
@@ -41,6 +41,12 @@ export function pictureElements(
     }),
   );
   return [...drawn, ...lines];
+}
+
+/** A disc whose area is its people; its words grow with it, to be read when all are in sight. */
+function discOf(size: number) {
+  const side = Math.max(smallestDisc, markSide * Math.sqrt(size));
+  return { side, letters: Math.max(11, side / 5) };
 }
 
 function fillOf(color: number | "rest", theme: Theme): string {
@@ -85,8 +91,8 @@ export function pictureStyle(theme: Theme): StylesheetJsonBlock[] {
         "background-color": "data(fill)",
         "border-color": ink,
         "border-width": 1.5,
-        "font-size": 11,
-        "min-zoomed-font-size": 7,
+        "font-size": "data(letters)",
+        "min-zoomed-font-size": 8,
       },
     },
     {
@@ -105,11 +111,11 @@ export function pictureStyle(theme: Theme): StylesheetJsonBlock[] {
         "overlay-color": blue,
         "overlay-opacity": 0.3,
         "overlay-padding": 8,
-        "font-size": 20,
-        "min-zoomed-font-size": 0,
+        "overlay-shape": "ellipse",
         "font-weight": "bold",
         "z-index": 10,
       },
     },
+    { selector: "node.people:selected", style: { "font-size": 20, "min-zoomed-font-size": 0 } },
   ];
 }

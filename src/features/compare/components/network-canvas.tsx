@@ -86,12 +86,12 @@ export function NetworkCanvas({
         <CytoscapeComponent
           // Under a finger the sleeping picture lets everything through, or the page could not be
           // scrolled over it: the library keeps every touch it gets.
-          className={`relative h-[min(70vh,36rem)] w-full ${awake ? "" : "pointer-coarse:pointer-events-none"}`}
+          className={`relative h-[min(60vh,24rem)] sm:h-[min(70vh,36rem)] w-full ${awake ? "" : "pointer-coarse:pointer-events-none"}`}
           elements={elements}
           layout={layout}
           stylesheet={stylesheet}
           cy={attach}
-          minZoom={0.05}
+          minZoom={0.002}
           maxZoom={6}
           userZoomingEnabled={awake}
           userPanningEnabled={awake}
