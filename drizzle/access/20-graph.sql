@@ -49,7 +49,8 @@ end $$;
 -- follow-up whoever named them. Partial and missing days give no day 0. A person not yet classified
 -- counts as a contact once a case has named them. Planned anew each time: the list of people may
 -- hold ten or a hundred thousand.
-create or replace function core.follow_up_days()
+drop function if exists core.follow_up_days();
+create or replace function core.follow_up_days(p_only uuid)
 returns table (person_id uuid, day_zero text)
 language plpgsql stable security definer set search_path = pg_catalog, pg_temp
 set plan_cache_mode = force_custom_plan as $$
@@ -64,11 +65,13 @@ begin
   if c.role = 'tracer' then
     select coalesce(array_agg(p.id), '{}') into v_people from core.person p
     where p.id = any ((select core.ctx_people())::uuid[]) and p.withdrawn_at is null
-      and (p.classification = 'contact' or p.classification is null);
+      and (p.classification = 'contact' or p.classification is null)
+      and (p_only is null or p.id = p_only);
   else
     select coalesce(array_agg(p.id), '{}') into v_people from core.person p
     where p.investigation_id = c.investigation_id and p.withdrawn_at is null
-      and (p.classification = 'contact' or p.classification is null);
+      and (p.classification = 'contact' or p.classification is null)
+      and (p_only is null or p.id = p_only);
   end if;
   return query
     with sides as (

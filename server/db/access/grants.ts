@@ -29,7 +29,7 @@ const FUNCTIONS: Record<string, readonly (Role | "system")[]> = {
   "core.ctx_may_name(uuid)": ["tracer", "supervisor", "officer"],
   "core.ctx_near(uuid, uuid, text, uuid, boolean)": [],
   "core.pairs_for(uuid, uuid[])": ["tracer", "supervisor", "officer"],
-  "core.follow_up_days()": ["tracer", "supervisor"],
+  "core.follow_up_days(uuid)": ["tracer", "supervisor"],
   "core.account_of_email(text)": ["supervisor", "officer"],
   "core.bump_graph()": ["tracer", "supervisor", "officer"],
   "core.next_numbers(integer)": ["tracer", "supervisor", "officer"],

@@ -67,7 +67,7 @@ export async function listFollowUp(
     total: number;
     withoutDayZero: number;
   }>(
-    sql`with days as materialized (select person_id, day_zero from core.follow_up_days()),
+    sql`with days as materialized (select person_id, day_zero from core.follow_up_days(null)),
         listed as (
           select p.id, p.study_number, p.area, p.classification, p.assigned_account_id, d.day_zero,
             row_number() over (order by ${order}) as place

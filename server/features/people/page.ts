@@ -94,6 +94,27 @@ async function pairsOf(tx: Tx, ring: KeyRing, actor: Actor, rows: readonly Expos
 }
 
 /**
+ * Day 0 of a contact: as Follow has it where the role has Follow (all cases count, also those out of
+ * the acting person's sight), else the latest exposure to a case on this page.
+ */
+async function dayZeroOf(
+  tx: Tx,
+  actor: Actor,
+  person: CorePerson,
+  pairs: Awaited<ReturnType<typeof pairsOf>>,
+): Promise<(string | null)[]> {
+  if (actor.role === "tracer" || actor.role === "supervisor") {
+    const found = await tx.execute<{ day_zero: string | null }>(
+      sql`select day_zero from core.follow_up_days(${person.id}::uuid)`,
+    );
+    return found.rows.map((row) => row.day_zero);
+  }
+  return pairs
+    .filter((pair) => isCase(pair.classification))
+    .flatMap((pair) => pair.exposures.map((exposure) => exposure.lastExposure));
+}
+
+/**
  * Everything beside the person on a person's page: windows, monitoring, history, pairs, attempts.
  * A neighbour's name is there only when it is the acting person's to know.
  */
@@ -133,6 +154,7 @@ export async function personPageParts(
         from core.interview where person_id = ${person.id} and withdrawn_at is null
         order by held_at desc, id`,
   );
+  const pairs = await pairsOf(tx, ring, actor, exposures);
   return {
     windows: {
       infectious: sick ? infectiousWindow(dates, settings) : null,
@@ -140,12 +162,9 @@ export async function personPageParts(
     },
     monitoring: sick
       ? null
-      : monitoringPeriod(
-          exposures.map((row) => row.lastExposure),
-          settings.monitoringDays,
-        ),
+      : monitoringPeriod(await dayZeroOf(tx, actor, person, pairs), settings.monitoringDays),
     classifications: history.rows,
-    pairs: await pairsOf(tx, ring, actor, exposures),
+    pairs,
     groupExposures: groups.rows.map(({ placeNumber, ...row }) => ({
       ...row,
       place: placeLabel({

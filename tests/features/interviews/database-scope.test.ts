@@ -72,7 +72,7 @@ test("the tracer's login makes no pair with a person out of scope", async () => 
 
 test("it reads neither others' interviews and follow-up nor what happened to the whole graph", async () => {
   expect(await asTracer(sql`select id from core.interview`)).toEqual([]);
-  expect(await asTracer(sql`select * from core.follow_up_days()`)).toEqual([]);
+  expect(await asTracer(sql`select * from core.follow_up_days(null)`)).toEqual([]);
   expect(await stateOf(sql`select person_a from core.graph_change`)).toBe("42501");
   expect(await stateOf(sql`select * from core.match_review`)).toBe("42501");
   expect(await stateOf(sql`select * from identity.interview_draft`)).toBe("42501");
