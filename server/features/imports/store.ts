@@ -58,23 +58,28 @@ export async function openImport(
   actor: Actor,
   kind: ImportKind,
   sha256: string,
-): Promise<{ id: string; state: ImportRow["state"]; fresh: boolean }> {
+): Promise<{ id: string; state: ImportRow["state"]; unknownRows: number; fresh: boolean }> {
   const id = randomUUID();
   const made = await tx.execute(
     sql`insert into core.import (id, investigation_id, kind, sha256, state, recorded_by)
         values (${id}, ${actor.investigationId}, ${kind}, ${sha256}, 'checking', ${actor.accountId})
         on conflict do nothing`,
   );
-  if (made.rowCount === 1) return { id, state: "checking", fresh: true };
-  const found = await tx.execute<{ id: string; state: ImportRow["state"] }>(
-    sql`select id, state from core.import where kind = ${kind} and sha256 = ${sha256} for update`,
+  if (made.rowCount === 1) return { id, state: "checking", unknownRows: 0, fresh: true };
+  const found = await tx.execute<{ id: string; state: ImportRow["state"]; unknownRows: number }>(
+    sql`select id, state, coalesce((counts ->> 'unknownRows')::int, 0) as "unknownRows"
+        from core.import where kind = ${kind} and sha256 = ${sha256} for update`,
   );
   const row = found.rows[0];
   if (!row) throw new Error("an import of this file is there and is not");
   return { ...row, fresh: false };
 }
 
-/** Stores what an import has come to. */
+/**
+ * Stores what an import has come to.
+ *
+ * @throws Error when the acting person no longer sees the import
+ */
 export async function keepImport(
   tx: Tx,
   id: string,
@@ -85,7 +90,7 @@ export async function keepImport(
     committed?: boolean;
   },
 ): Promise<void> {
-  await tx.execute(
+  const done = await tx.execute(
     sql`update core.import set state = ${change.state}, row_count = ${change.counts.rows ?? 0},
           counts = ${JSON.stringify(change.counts)}::jsonb,
           problems = ${JSON.stringify(change.problems)}::jsonb,
@@ -93,6 +98,7 @@ export async function keepImport(
           committed_at = ${change.committed ? sql`now()` : null}
         where id = ${id}`,
   );
+  if (done.rowCount !== 1) throw new Error("the import is out of sight");
 }
 
 /**

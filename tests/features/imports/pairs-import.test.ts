@@ -141,6 +141,18 @@ describe("references that are not on record", () => {
     expect(await count("core.person")).toBe(3);
   });
 
+  it("open the file again when it is brought again: what is on record is not added twice", async () => {
+    const part = "ref_a,ref_b\nA,C\nA,P1\n";
+    const first = await bringIn(supervisor, "pairs", part);
+    expect(first.counts).toMatchObject({ addedExposures: 1, skipped: 1 });
+    await bringIn(supervisor, "people", "ref,classification\nP1,contact\n");
+    const again = await stage(supervisor, "pairs", part);
+    expect(again).toMatchObject({ id: first.id, state: "ready", problems: [] });
+    const done = await commit(supervisor, again.id);
+    expect(done.counts).toMatchObject({ addedExposures: 1, repeated: 1, skipped: 0 });
+    expect((await stage(supervisor, "pairs", part)).state).toBe("committed");
+  });
+
   it("become people with nothing but a reference when that is chosen", async () => {
     const staged = await stage(supervisor, "pairs", `${text}\n`);
     const done = await commit(supervisor, staged.id, { createMissing: true });

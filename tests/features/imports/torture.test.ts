@@ -198,4 +198,31 @@ describe("a commit that cannot be finished", () => {
     const done = await commit(supervisor, importId);
     expect(done).toMatchObject({ state: "committed", problems: [], counts: { addedPeople: 2 } });
   });
+
+  it("because the person signed out meanwhile", async () => {
+    const people = (await stored()).people;
+    const leaving = await signInAs(app, "supervisor", id);
+    const { id: importId } = await stage(leaving, "people", "ref,name\nS-1,Sol One\n");
+    await admin.query(
+      `create function public.wait() returns trigger language plpgsql as
+         $$ begin perform pg_sleep(0.5); return new; end $$`,
+    );
+    await admin.query(
+      "create trigger wait before insert on core.person execute function public.wait()",
+    );
+    const path = `${supervisor.base}/imports/${importId}`;
+    const begun = await leaving.client.call("post", `${path}/commit`, { body: {} });
+    expect(begun.status).toBe(202);
+    await leaving.client.call("delete", "/api/session");
+    let body = (await supervisor.client.get(path)).body;
+    const end = Date.now() + 20_000;
+    while (body.state === "committing" && Date.now() < end) {
+      await new Promise((resolve) => setTimeout(resolve, 25));
+      body = (await supervisor.client.get(path)).body;
+    }
+    await admin.query("drop function public.wait() cascade");
+    expect(body).toMatchObject({ state: "failed", problems: [{ line: 0, column: "file" }] });
+    expect((await stored()).people).toBe(people);
+    expect((await commit(supervisor, importId)).counts).toMatchObject({ addedPeople: 1 });
+  });
 });

@@ -82,7 +82,8 @@ async function commitInTx(services: CommitServices, actor: Actor, id: string, tx
   );
   if (!alone.rows[0]?.alone) return;
   const row = await loadImport(tx, id);
-  if (row?.state !== "committing") return;
+  if (!row) throw new AccessEndedError();
+  if (row.state !== "committing") return;
   const settings = await loadInvestigation(tx, actor.investigationId);
   const keys = await services.keys.of(tx, actor.investigationId);
   const problems = new ProblemList();
@@ -131,7 +132,11 @@ async function commitInTx(services: CommitServices, actor: Actor, id: string, tx
   }
 }
 
+/** The person who asked for the commit no longer acts in this investigation. */
+class AccessEndedError extends Error {}
+
 function failureCode(error: unknown): FieldErrorCode {
+  if (error instanceof AccessEndedError) return "commit_no_access";
   const state = sqlState(error);
   if (state === "23505") return "commit_clash";
   return state === "42501" ? "commit_no_access" : "commit_failed";

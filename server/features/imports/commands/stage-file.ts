@@ -87,8 +87,8 @@ async function checkRows<T>(
 
 /**
  * Checks every row of a file and stages the good ones; nothing reaches the record. The same file
- * for the same kind is the same import: one that was committed stays as it is, one that was not is
- * checked again against what is on record now.
+ * for the same kind is the same import: one that is on record whole stays as it is. One that is not, or
+ * of which rows were left out for a reference that was not on record, is checked again.
  *
  * @returns id of the import
  * @throws HttpProblem 422 when the file as a whole cannot be read; nothing is kept then
@@ -102,13 +102,13 @@ export async function stageFile(
 ): Promise<string> {
   await raiseLimits(tx);
   const pause = createPause();
-  const { id, state, fresh } = await openImport(
+  const { id, state, unknownRows, fresh } = await openImport(
     tx,
     actor,
     kind,
     await fingerprint(kind, bytes, pause),
   );
-  if (state === "committing" || state === "committed") return id;
+  if (state === "committing" || (state === "committed" && unknownRows === 0)) return id;
   if (!fresh) await dropStage(tx, id);
   const settings = await loadInvestigation(tx, actor.investigationId);
   const keys = await services.keys.of(tx, actor.investigationId);
