@@ -96,6 +96,7 @@ export interface Problem {
   title: string;
   status: number;
   code: ErrorCode;
-  instance: string;
+  /** Names the request; absent where absent and hidden records must answer alike (404). */
+  instance?: string;
   errors?: FieldError[];
 }

@@ -9,6 +9,7 @@ const SAFE = new Set(["GET", "HEAD", "OPTIONS"]);
 /** Gives each request an id; it stands in every problem and log line. */
 export function requestId(_request: Request, response: Response, next: NextFunction): void {
   response.locals.requestId = randomUUID();
+  response.setHeader("X-Request-Id", response.locals.requestId);
   next();
 }
 

@@ -28,7 +28,9 @@ export function problemBody(problem: HttpProblem, requestId: string): Problem {
     title,
     status,
     code: problem.code,
-    instance: `urn:uuid:${requestId}`,
+    // A record out of scope and one that does not exist give the same bytes; the request's id
+    // stands in a header all the same.
+    ...(status === 404 ? {} : { instance: `urn:uuid:${requestId}` }),
     ...(problem.errors ? { errors: problem.errors } : {}),
   };
 }

@@ -192,7 +192,7 @@ describe("what each role gets", () => {
     const hidden = await team.tracer.client.get(`${team.tracer.base}/people/${other}`);
     const absent = await team.tracer.client.get(`${team.tracer.base}/people/${randomUUID()}`);
     expect([hidden.status, absent.status]).toEqual([404, 404]);
-    expect({ ...hidden.body, instance: "" }).toEqual({ ...absent.body, instance: "" });
+    expect(hidden.text).toBe(absent.text);
   });
 
   it("refuses roles that never have the route", async () => {
