@@ -33,31 +33,16 @@ function Inside({ investigationId }: { investigationId: string }) {
   const session = useSession();
   const { pathname } = useLocation();
   const investigation = useQuery(investigationQuery(investigationId));
-  if (!investigation.data) {
-    return (
-      <Frame>
-        {investigation.isError ? (
-          <div className="pt-6">
-            <ErrorState
-              kind={errorKind(investigation.error)}
-              onRetry={() => void investigation.refetch()}
-            />
-          </div>
-        ) : (
-          <LoadingState label="Opening the investigation" rows={6} />
-        )}
-      </Frame>
-    );
-  }
+  const { data } = investigation;
+  // One frame for all states, so that what is open in the header survives the arrival of the page.
   return (
-    <InvestigationContext value={investigation.data}>
+    <InvestigationContext value={data ?? null}>
       <Frame
-        investigation={investigation.data}
-        readAt={new Date(investigation.dataUpdatedAt).toISOString()}
+        investigation={data}
+        readAt={data && new Date(investigation.dataUpdatedAt).toISOString()}
       >
-        {mayOpen(session, pathname) ? (
-          <Outlet />
-        ) : (
+        {data && mayOpen(session, pathname) ? <Outlet /> : null}
+        {data && !mayOpen(session, pathname) ? (
           // Said here, so that no page is opened only to be refused by the server.
           <div className="pt-6">
             <ErrorState
@@ -65,7 +50,18 @@ function Inside({ investigationId }: { investigationId: string }) {
               actions={<LinkButton to={homePath(session)}>Back to your room</LinkButton>}
             />
           </div>
-        )}
+        ) : null}
+        {investigation.isPending ? (
+          <LoadingState label="Opening the investigation" rows={6} />
+        ) : null}
+        {!data && investigation.isError ? (
+          <div className="pt-6">
+            <ErrorState
+              kind={errorKind(investigation.error)}
+              onRetry={() => void investigation.refetch()}
+            />
+          </div>
+        ) : null}
       </Frame>
     </InvestigationContext>
   );

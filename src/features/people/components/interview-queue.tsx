@@ -61,7 +61,7 @@ export function InterviewQueue() {
         ))}
       </ul>
       {rest > 0 || all ? (
-        <Button variant="plain" className="px-0" onClick={() => setAll(!all)}>
+        <Button variant="plain" className="-ms-3.5" onClick={() => setAll(!all)}>
           {all ? "Show the first few" : `Show ${rest} more`}
         </Button>
       ) : null}
