@@ -1,6 +1,7 @@
 import { existsSync } from "node:fs";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
+import compression from "compression";
 import express, { type Express, type NextFunction, type Request, type Response } from "express";
 import session from "express-session";
 import { IDLE_MINUTES } from "../shared/roles.ts";
@@ -113,6 +114,8 @@ export function createApp(services: Services, dev?: express.Handler): Express {
 }
 
 function serveClient(app: Express): void {
+  // Files only: an answer that mixes secrets with what somebody typed is better left uncompressed.
+  app.use(compression());
   app.use(
     express.static(CLIENT, {
       index: false,
