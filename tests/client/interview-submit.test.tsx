@@ -90,7 +90,7 @@ describe("recording", () => {
     const minutes = screen.getAllByRole("textbox", { name: "minutes together in all" });
     expect(minutes.map((box) => box.getAttribute("aria-invalid"))).toEqual([null, null, "true"]);
     expect(screen.getByText("Not a number")).toBeTruthy();
-    expect(screen.getByText("Not one of the choices")).toBeTruthy();
+    expect(screen.getByText("Needed")).toBeTruthy();
   });
 
   it("puts the server's errors beside the rows they belong to and goes to the first", async () => {

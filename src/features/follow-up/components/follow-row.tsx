@@ -23,16 +23,20 @@ function dialled(phone: string): string | null {
 export function FollowRow({ item, investigationId, ...strip }: FollowRowProps) {
   return (
     <li className={`border-b border-rule py-2 ${followColumns}`}>
-      <p className="flex min-w-0 items-baseline gap-2">
-        <PersonMark classification={item.classification ?? "contact"} />
-        <Link
-          to={paths.person(investigationId, item.id)}
-          className="min-w-0 py-0.5 text-kelp underline decoration-1 underline-offset-4
-            [overflow-wrap:anywhere] pointer-coarse:py-2"
-        >
-          {item.name ?? item.studyNumber}
-        </Link>
-        {item.name ? <span className="text-sm text-ink-2">{item.studyNumber}</span> : null}
+      <p className="flex min-w-0 items-start gap-1.5">
+        <PersonMark classification={item.classification ?? "contact"} className="mt-[0.125em]" />
+        <span className="min-w-0 [overflow-wrap:anywhere]">
+          <Link
+            to={paths.person(investigationId, item.id)}
+            className="me-2 text-kelp underline decoration-1 underline-offset-4
+              pointer-coarse:inline-block pointer-coarse:py-2"
+          >
+            {item.name ?? item.studyNumber}
+          </Link>
+          {item.name ? (
+            <span className="whitespace-nowrap text-sm text-ink-2">{item.studyNumber}</span>
+          ) : null}
+        </span>
       </p>
       <p className="min-w-0 text-end lg:text-start">
         <Phone item={item} />
@@ -43,11 +47,12 @@ export function FollowRow({ item, investigationId, ...strip }: FollowRowProps) {
       </p>
       <p className="text-end lg:text-start">
         {dayWords(item)}
-        <span className="ms-2 block text-sm text-ink-2">
-          {item.dayNumber > item.monitoringDays
-            ? null
-            : `last due ${formatDay(item.lastDueDay, { style: "short" })}`}
-        </span>
+        {item.dayNumber > item.monitoringDays ? null : (
+          <span className="text-sm text-ink-2">
+            {" "}
+            · last due {formatDay(item.lastDueDay, { style: "short" })}
+          </span>
+        )}
       </p>
       <div className="col-span-2 min-w-0 lg:col-span-1">
         <DueStrip item={item} {...strip} />

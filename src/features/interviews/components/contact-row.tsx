@@ -124,8 +124,8 @@ export const ContactRow = memo(function ContactRow(props: ContactRowProps) {
       <div className={`grid ${contactColumns}`}>
         <div
           aria-hidden="true"
-          className="col-span-2 self-center font-bold text-ink-2 lg:col-span-12
-            min-[85rem]:col-span-1 min-[85rem]:font-normal"
+          className="order-first self-center font-bold text-ink-2 lg:col-span-6
+            min-[85rem]:col-span-1 min-[85rem]:self-start min-[85rem]:pt-1.5 min-[85rem]:font-normal"
         >
           <span className="min-[85rem]:hidden">Contact </span>
           {row + 1}
@@ -146,6 +146,20 @@ export const ContactRow = memo(function ContactRow(props: ContactRowProps) {
               onKeyDown={toMatches}
               {...boxes.register("phone")}
             />
+            {matches.length > 0 ? (
+              // Right under the name where rows are stacked, under the whole line elsewhere.
+              <div
+                className="col-span-2 lg:order-last lg:col-span-12 min-[85rem]:col-start-2
+                  min-[85rem]:-col-end-1"
+              >
+                <MatchList
+                  matches={matches}
+                  taken={takenPeople(form.getValues("contacts"), row)}
+                  onChoose={tie}
+                  onLeave={() => onFocusBox(row, "name")}
+                />
+              </div>
+            ) : null}
           </>
         )}
         <ChoiceBox
@@ -181,16 +195,6 @@ export const ContactRow = memo(function ContactRow(props: ContactRowProps) {
           <span className="font-bold">Look again: </span>
           {notice}
         </p>
-      ) : null}
-      {matches.length > 0 && values.known === null ? (
-        <div className="mt-1.5 min-[85rem]:ps-[1.875rem]">
-          <MatchList
-            matches={matches}
-            taken={takenPeople(form.getValues("contacts"), row)}
-            onChoose={tie}
-            onLeave={() => onFocusBox(row, "name")}
-          />
-        </div>
       ) : null}
     </fieldset>
   );

@@ -111,7 +111,7 @@ export function ContactRows({ onStep, autoFocus, notes }: ContactRowsProps) {
 
   return (
     <Section title="Contacts" subLine="people the case can name; each becomes a contact pair">
-      <div className="mb-1 hidden flex-wrap gap-x-5 gap-y-1 pointer-fine:flex">
+      <div className="mb-1 hidden flex-wrap gap-x-5 gap-y-1 lg:pointer-fine:flex">
         <KeyboardHint keys={["Enter"]}>next box, at the end next row</KeyboardHint>
         <KeyboardHint keys={["Ctrl", "Enter"]}>next row</KeyboardHint>
         <KeyboardHint keys={["Alt", "↑", "↓"]}>row above, below</KeyboardHint>

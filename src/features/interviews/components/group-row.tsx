@@ -25,8 +25,8 @@ type BoxName = keyof typeof heads;
 const spans: Record<BoxName, string> = {
   setting: "",
   place: "col-span-2 lg:col-span-1",
-  firstExposure: "",
-  lastExposure: "",
+  firstExposure: "col-span-2 lg:col-span-1",
+  lastExposure: "col-span-2 lg:col-span-1",
   count: "col-span-1",
 };
 
@@ -78,7 +78,7 @@ export function GroupRow({ row, onRemove, onCarry }: GroupRowProps) {
   return (
     <fieldset className="min-w-0 border-b border-rule py-2 lg:py-1.5">
       <legend className="sr-only">Group {row + 1}</legend>
-      <div className="grid grid-cols-2 gap-2 lg:grid-cols-[8.5rem_minmax(9rem,1fr)_8rem_8rem_14rem_auto]">
+      <div className="grid grid-cols-2 gap-2 lg:grid-cols-[8.5rem_minmax(9rem,1fr)_8rem_8rem_13rem_auto]">
         <ChoiceBox
           {...frame("setting")}
           choices={settingChoices}
@@ -96,7 +96,10 @@ export function GroupRow({ row, onRemove, onCarry }: GroupRowProps) {
           />
           <p className="mt-0.5 text-sm text-ink-2">{countReading(values.count)}</p>
         </div>
-        <div className="self-end lg:self-start lg:pt-5">
+        <p aria-hidden="true" className="order-first self-center font-bold text-ink-2 lg:hidden">
+          Group {row + 1}
+        </p>
+        <div className="order-first lg:order-none lg:pt-5">
           <RowTools row={row} noun="group" onCarry={onCarry} onRemove={onRemove} />
         </div>
       </div>

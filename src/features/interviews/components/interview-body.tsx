@@ -65,7 +65,10 @@ export function InterviewBody(props: InterviewBodyProps) {
   }
 
   const strip = (
-    <Section title="Days" subLine="windows, and contacts laid on the days of exposure">
+    <Section
+      title="Days"
+      subLine="contacts appear here on their days of exposure as they are typed"
+    >
       <InterviewStrip />
     </Section>
   );
@@ -108,7 +111,9 @@ export function InterviewBody(props: InterviewBodyProps) {
       </div>
       {wide ? (
         // Of one height from the start, so that no row moves while it is typed.
-        <div className="h-72 overflow-y-auto border-b border-rule">{strip}</div>
+        <div className="h-60 overflow-y-auto border-b border-rule [@media(min-height:56rem)]:h-80">
+          {strip}
+        </div>
       ) : null}
       <div ref={contacts} className="pt-3">
         <ContactRows onStep={() => keeper.flush()} autoFocus={wide} />
@@ -128,7 +133,11 @@ export function InterviewBody(props: InterviewBodyProps) {
         <Button type="submit" variant="primary" pending={sending || done} pendingLabel="Recording">
           Record the interview
         </Button>
-        <LinkButton to={paths.person(investigationId, person.id)} variant="plain">
+        <LinkButton
+          to={paths.person(investigationId, person.id)}
+          variant="plain"
+          className="hidden! px-1! sm:inline-flex!"
+        >
           Leave, keep the draft
         </LinkButton>
         <div className="ms-auto">

@@ -1,4 +1,4 @@
-import { type KeyboardEvent, useRef } from "react";
+import { type KeyboardEvent, useEffect, useRef } from "react";
 import type { Match } from "../../../../shared/contracts/people.ts";
 
 const reasons: Record<Match["matchedOn"][number], string> = {
@@ -18,7 +18,13 @@ export type MatchListProps = {
 
 /** People already on record, offered under the row that is being typed. */
 export function MatchList({ matches, taken, onChoose, onLeave }: MatchListProps) {
+  const box = useRef<HTMLDivElement>(null);
   const list = useRef<HTMLUListElement>(null);
+
+  // The foot of the page must not cover what is being offered.
+  useEffect(() => {
+    if (matches.length > 0) box.current?.scrollIntoView?.({ block: "nearest" });
+  }, [matches.length]);
 
   function onKeyDown(event: KeyboardEvent) {
     const items = [...(list.current?.querySelectorAll("button") ?? [])];
@@ -33,10 +39,11 @@ export function MatchList({ matches, taken, onChoose, onLeave }: MatchListProps)
   }
 
   return (
-    <div className="border-s-2 border-kelp ps-2">
+    <div ref={box} className="scroll-mb-24 border-s-2 border-kelp ps-2">
       <p className="text-sm text-ink-2" role="status">
         {matches.length === 1 ? "1 person" : `${matches.length} people`} already on record may be
-        meant. Down, then Enter: the row becomes that person.
+        meant; choosing ties the row to that person.
+        <span className="hidden lg:inline"> Down, then Enter.</span>
       </p>
       <ul ref={list} onKeyDown={onKeyDown} data-matches="" className="max-w-3xl">
         {matches.map((match) => {

@@ -78,7 +78,7 @@ export function boxAttributes(id: string, frame: RowBoxFrame) {
     "aria-invalid": frame.error ? true : undefined,
     "aria-describedby": described.length > 0 ? described.join(" ") : undefined,
     className: clsx(
-      "field-box scroll-mt-80 px-1.5",
+      "field-box scroll-mt-80 scroll-mb-24 px-1.5",
       frame.noticeId && !frame.error && "border-ochre",
     ),
   } as const;

@@ -7,8 +7,8 @@ export type RowToolsProps = {
 };
 
 const look =
-  "min-h-9 min-w-8 px-1 text-ink-2 hover:text-ink hover:bg-paper-2 rounded-[2px] " +
-  "pointer-coarse:min-h-11 pointer-coarse:px-2";
+  "min-h-9 min-w-7 px-1 text-ink-2 hover:text-ink hover:bg-paper-2 rounded-[2px] " +
+  "pointer-coarse:min-h-11 pointer-coarse:px-1.5";
 
 /**
  * Same as above, and taking the row away. Outside the order of Tab, so that a row ends with its
@@ -17,8 +17,10 @@ const look =
 export function RowTools({ row, noun, onCarry, onRemove }: RowToolsProps) {
   return (
     <div
-      className="col-span-2 flex items-center justify-end gap-1 self-start lg:col-span-12
-        min-[85rem]:col-span-1"
+      // Stacked rows have their tools beside the heading, wide ones at the end of the line.
+      className="order-first flex flex-wrap items-center justify-end gap-x-2 lg:col-span-6
+        min-[85rem]:order-none min-[85rem]:col-span-1 min-[85rem]:flex-nowrap min-[85rem]:gap-x-0
+        min-[85rem]:self-start"
     >
       {onCarry ? (
         <button
@@ -32,9 +34,7 @@ export function RowTools({ row, noun, onCarry, onRemove }: RowToolsProps) {
           <span aria-hidden="true" className="hidden min-[85rem]:inline">
             ″
           </span>
-          <span className="text-sm underline underline-offset-4 min-[85rem]:sr-only">
-            same as above
-          </span>
+          <span className="text-sm underline underline-offset-4 min-[85rem]:sr-only">as above</span>
         </button>
       ) : null}
       <button
@@ -48,8 +48,9 @@ export function RowTools({ row, noun, onCarry, onRemove }: RowToolsProps) {
         <span aria-hidden="true" className="hidden min-[85rem]:inline">
           ×
         </span>
-        <span className="text-sm underline underline-offset-4 min-[85rem]:sr-only">
-          take {noun} {row + 1} away
+        <span className="text-sm underline underline-offset-4 min-[85rem]:sr-only">take away</span>
+        <span className="sr-only">
+          {noun} {row + 1}
         </span>
       </button>
     </div>

@@ -12,7 +12,7 @@ export type TiedPersonProps = {
 /** Instead of name and phone: the person on record that the row is, and the way back. */
 export function TiedPerson({ row, known, error, onUntie }: TiedPersonProps) {
   return (
-    <div className="col-span-2 min-w-0 self-center lg:col-span-6 min-[85rem]:col-span-2">
+    <div className="col-span-2 min-w-0 lg:col-span-6 min-[85rem]:col-span-2">
       <div className="flex min-h-9 items-baseline gap-2 border-s-2 border-kelp ps-2">
         <span className="min-w-0 flex-1 [overflow-wrap:anywhere]">
           <strong>{known.studyNumber}</strong> {known.name ?? ""}

@@ -15,13 +15,13 @@ export type TouchChipsProps = {
 };
 
 /**
- * Answers under a box that a thumb gives faster than a keyboard. Shown on touch screens only and
+ * Answers under a box that a thumb gives faster than a keyboard. Shown on small and on touch screens only and
  * left out of the order of Tab, since every one of them can also be typed.
  */
 export function TouchChips({ boxLabel, chips, onChoose, calendar = false }: TouchChipsProps) {
   const picker = useRef<HTMLInputElement>(null);
   return (
-    <div className="mt-1 hidden flex-wrap gap-x-3 gap-y-1 pointer-coarse:flex">
+    <div className="mt-1 flex flex-wrap gap-x-3 gap-y-1 lg:hidden lg:pointer-coarse:flex">
       {chips.map(({ label, value }) => (
         <button
           key={label}

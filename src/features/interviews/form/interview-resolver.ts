@@ -17,10 +17,11 @@ export function checkInterviewForm(
   const sent = toSendable(values, context);
   const parsed = interviewInput.safeParse(sent.body);
   if (parsed.success) return { checked: { input: parsed.data, sent }, errors: [] };
-  const errors = parsed.error.issues.map(({ path, message }): [string, string] => [
-    boxPath(path.map(String).join("."), sent),
-    message,
-  ]);
+  const errors = parsed.error.issues.map(({ path, message }): [string, string] => {
+    const box = boxPath(path.map(String).join("."), sent);
+    // Nothing chosen is said as such; the contract sees only a word that is not in its list.
+    return [box, box === "outcome" && values.outcome === "" ? "required" : message];
+  });
   return { checked: null, errors };
 }
 

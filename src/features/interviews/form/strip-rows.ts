@@ -9,7 +9,7 @@ import { settingWord } from "./words.ts";
 type Subject = Pick<PersonPage, "windows" | "onsetDate" | "specimenDate">;
 
 const longestLabel = 24;
-const mostDays = 70;
+const mostDays = 42;
 const daysWithoutWindows = 21;
 
 /** Rows for the two windows of a case, with the day that they are counted from. */
