@@ -35,7 +35,7 @@ export function InterviewQueue() {
     return (
       <Section title="To interview">
         <EmptyState title="No interviews are waiting">
-          Every case in sight has been interviewed, or has refused.
+          No case in sight waits for one: they are complete, refused, or not registered yet.
         </EmptyState>
       </Section>
     );

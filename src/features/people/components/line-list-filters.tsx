@@ -108,6 +108,7 @@ function Labelled({ words, children }: { words: string; children: React.ReactNod
 
 /** What this reader's search looks through, by what the answers hold. */
 function searchWords(keys: ReadonlySet<string>): string {
+  if (keys.size === 0) return "Find";
   if (keys.has("name")) return "Find by name, telephone, reference or study number";
   return keys.has("ref") ? "Find by reference or study number" : "Find by study number";
 }

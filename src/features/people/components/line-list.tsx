@@ -85,9 +85,11 @@ export function LineList({ memberNames }: LineListProps) {
           )
         }
       />
-      <div className="mt-3">
-        <MarkLegend layout="row" />
-      </div>
+      {rows.length > 0 ? (
+        <div className="mt-3">
+          <MarkLegend layout="row" />
+        </div>
+      ) : null}
     </>
   );
 }
