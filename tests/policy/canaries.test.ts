@@ -246,6 +246,40 @@ test("answers to what goes wrong repeat nothing of what was sent", async () => {
   }
 });
 
+test("the live stream tells of ids and versions only, and a tracer of no ids", async () => {
+  const stop = new AbortController();
+  const path = `${world.app.origin}${world.everyone.officer.base}/live`;
+  const heard = await Promise.all(
+    ROLES.map(async (role) => {
+      const answer = await fetch(path, { headers: { Cookie: cookies[role] }, signal: stop.signal });
+      expect(answer.status).toBe(200);
+      const reader = answer.body?.pipeThrough(new TextDecoderStream()).getReader();
+      return { role, reader };
+    }),
+  );
+  const { supervisor } = world.everyone;
+  const test = { specimenDate: "2026-03-01", kind: "PCR", result: "positive" };
+  const tested = await supervisor.client.post(
+    `${supervisor.base}/people/${world.people.held}/tests`,
+    test,
+  );
+  expect(tested.status).toBe(201);
+  try {
+    for (const { role, reader } of heard) {
+      let text = "";
+      for (let chunk = 0; chunk < 20 && !text.includes("data:"); chunk++) {
+        text += (await reader?.read())?.value ?? "";
+      }
+      expect(world.scan.hits(text), role).toEqual([]);
+      const message = JSON.parse(/data: (.*)/.exec(text)?.[1] ?? "null");
+      expect(Object.keys(message).sort(), role).toEqual(["id", "topic", "version"]);
+      if (role === "tracer") expect(message.id).toBeNull();
+    }
+  } finally {
+    stop.abort();
+  }
+});
+
 test("a failing database tells nothing either, to the caller or to the log", async () => {
   const body = { ...world.marked.held, ref: "ZQR-BIMO-9" };
   await world.admin.query("alter table core.person rename column area to area_gone");
