@@ -12,6 +12,7 @@ import { startImportUpkeep } from "./features/imports/upkeep.ts";
 import { firstOfficerToken } from "./features/session/first-officer.ts";
 import { safeError } from "./http/translate-error.ts";
 import { createKeyRing } from "./identity/keys.ts";
+import { startHousekeeping } from "./jobs/housekeeping.ts";
 import type { Services } from "./services.ts";
 
 const STOP_MS = 10_000;
@@ -76,6 +77,7 @@ async function main(): Promise<void> {
   await analysis.start();
   const imports = await startImportUpkeep({ pools, log });
   const dispatcher = await startDispatcher({ pools, systemUrl, analysis, hub, log });
+  const housekeeping = startHousekeeping(pools, log);
   const services: Services = { env, secrets, pools, keys, analysis, hub, log };
 
   const dev = env.dev ? await (await import("./dev-client.ts")).devClient() : undefined;
@@ -119,6 +121,7 @@ async function main(): Promise<void> {
     hub.close();
     server.close(async () => {
       imports.stop();
+      housekeeping.stop();
       await dispatcher.stop();
       await analysis.stop();
       await dev?.close();

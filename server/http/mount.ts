@@ -78,13 +78,22 @@ async function claimKey(tx: Tx, key: string, route: string, hash: string): Promi
 
 const RETRIED = new Set(["40001", "40P01"]);
 
+/** True for a failure that another try of the whole transaction can mend. */
+function mayPass(error: unknown): boolean {
+  const state = sqlState(error) ?? "";
+  if (RETRIED.has(state)) return true;
+  // A random study number was taken already: the next try draws another.
+  const cause = (error as { cause?: { constraint?: string } }).cause;
+  return state === "23505" && cause?.constraint === "person_study_number";
+}
+
 /** Repeats a transaction that lost against another one, a few times with a growing pause. */
 async function retried<T>(work: () => Promise<T>): Promise<T> {
   for (let attempt = 1; ; attempt++) {
     try {
       return await work();
     } catch (error) {
-      if (attempt >= 3 || !RETRIED.has(sqlState(error) ?? "")) throw error;
+      if (attempt >= 3 || !mayPass(error)) throw error;
       await new Promise((resolve) => setTimeout(resolve, attempt * 20 * (1 + Math.random())));
     }
   }

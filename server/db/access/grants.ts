@@ -145,7 +145,7 @@ export function grants(): string[] {
   }
   out.push(`grant select on audit.event, views.field_right to ${loginOf("officer")}`);
   for (const table of CORE_TABLES) out.push(`grant select on ${table} to ${loginOf("system")}`);
-  out.push(`grant update (done_at) on core.outbox to ${loginOf("system")}`);
+  out.push(`grant update (done_at), delete on core.outbox to ${loginOf("system")}`);
   out.push(`grant update (state, progress) on core.import to ${loginOf("system")}`);
   const auth = loginOf("auth");
   out.push(

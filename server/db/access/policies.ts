@@ -245,6 +245,7 @@ export function rowPolicies(): string[] {
     out.push(policy(table, "read_system", "select", loginOf("system"), "using (true)"));
   }
   out.push(policy("core.outbox", "change_system", "update", loginOf("system"), "using (true)"));
+  out.push(policy("core.outbox", "end_system", "delete", loginOf("system"), "using (true)"));
   out.push(policy("core.import", "change_system", "update", loginOf("system"), "using (true)"));
   for (const table of [
     ...AUTH_TABLES.filter((t) => t !== "auth.field_right"),

@@ -1,4 +1,3 @@
-import { sql } from "drizzle-orm";
 import { z } from "zod";
 import { listQuery, uuid } from "../../../shared/contracts/common.ts";
 import {
@@ -23,6 +22,7 @@ import { loadInvestigation } from "../investigations/store.ts";
 import { changePerson } from "./commands/change-person.ts";
 import { registerPerson } from "./commands/register-person.ts";
 import { matchPeople } from "./match.ts";
+import { listMatchReviews } from "./match-reviews.ts";
 import { personPageParts } from "./page.ts";
 import { LIST_FIELDS, PAGE_FIELDS, presentPeople } from "./present.ts";
 import { listPeople, peopleById } from "./queries.ts";
@@ -155,29 +155,17 @@ export const peopleRoutes: AnyRoute[] = [
     query: listQuery,
     output: matchReviewList,
     async run({ tx, actor, query }) {
-      const where = sql`r.investigation_id = ${actor.investigationId} and r.state = 'open'`;
-      const total = await tx.execute<{ count: number }>(
-        sql`select count(*)::int as count from core.match_review r where ${where}`,
-      );
-      const found = await tx.execute<{ personId: string; otherId: string }>(
-        sql`select r.id, r.person_id as "personId", p.study_number as "studyNumber",
-              r.other_id as "otherId", o.study_number as "otherStudyNumber",
-              r.matched_on as "matchedOn", r.recorded_at as "recordedAt"
-            from core.match_review r
-            join core.person p on p.id = r.person_id join core.person o on o.id = r.other_id
-            where ${where} order by r.recorded_at desc, r.id
-            limit ${query.pageSize} offset ${(query.page - 1) * query.pageSize}`,
-      );
+      const { rows, total } = await listMatchReviews(tx, actor, query);
       await recordEvent(tx, {
         action: "match_reviews.listed",
         accountId: actor.accountId,
         role: actor.role,
         investigationId: actor.investigationId,
-        personIds: [...new Set(found.rows.flatMap((row) => [row.personId, row.otherId]))],
+        personIds: [...new Set(rows.flatMap((row) => [row.personId, row.otherId]))],
       });
       return {
-        items: found.rows,
-        total: total.rows[0]?.count ?? 0,
+        items: rows,
+        total,
         page: query.page,
         pageSize: query.pageSize,
       };
