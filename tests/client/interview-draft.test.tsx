@@ -166,4 +166,34 @@ describe("draft of an interview", () => {
     expect(screen.queryByText("This interview is open in another window of yours.")).toBeNull();
     expect((server.draft.body as Stored).form.contacts[0]?.name).toBe("Ada Brook");
   });
+
+  it("is sent on its way out when the page is left while it waits", async () => {
+    const server = interviewServer();
+    await openInterview();
+    type("Ada");
+    await pass(100);
+    fireEvent.click(screen.getByRole("link", { name: "Leave, keep the draft" }));
+    await screen.findByText("another page");
+    await pass(50);
+    expect((server.draft.body as Stored).form.contacts[0]?.name).toBe("Ada");
+  });
+
+  it("can be emptied, and put back", async () => {
+    const server = interviewServer();
+    await openInterview();
+    type("Ada");
+    await pass(900);
+    cleanup();
+    await openInterview();
+    const name = () => screen.getByRole<HTMLInputElement>("textbox", { name: "Name" }).value;
+    const { submitKey } = server.draft.body as Stored;
+    fireEvent.click(screen.getByRole("button", { name: "Begin anew" }));
+    await pass(900);
+    expect(name()).toBe("");
+    expect((server.draft.body as Stored).submitKey).not.toBe(submitKey);
+    fireEvent.click(screen.getByRole("button", { name: "Put it back" }));
+    await pass(900);
+    expect(name()).toBe("Ada");
+    expect((server.draft.body as Stored).form.contacts[0]?.name).toBe("Ada");
+  });
 });

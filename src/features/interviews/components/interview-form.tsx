@@ -5,6 +5,7 @@ import type { PersonPage } from "../../../../shared/contracts/people.ts";
 import { Button } from "../../../components/ui/button.tsx";
 import { Notice } from "../../../components/ui/notice.tsx";
 import { UnsavedGuard } from "../../../components/ui/unsaved-guard.tsx";
+import { useToast } from "../../../components/ui/use-toast.ts";
 import { formatInstant } from "../../../lib/formatters.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
 import { useDraftKeeper } from "../draft/use-draft-keeper.ts";
@@ -28,6 +29,8 @@ export function InterviewForm({ person, draft, places }: InterviewFormProps) {
     if (start.form.heldAt === "") start.form.heldAt = wallTime(Date.now(), zone);
     return { start, restored: restored !== null && holdsSomething(restored.form) };
   });
+  const [anew, setAnew] = useState(false);
+  const toast = useToast();
   const submitKey = useRef(opened.start.submitKey);
   const sendContext = useRef({
     personId: person.id,
@@ -68,15 +71,25 @@ export function InterviewForm({ person, draft, places }: InterviewFormProps) {
     form.reset(body.form);
   }
 
+  function beginAnew() {
+    const before = structuredClone(bodyNow());
+    takeOver(freshDraft(wallTime(Date.now(), zone)));
+    setAnew(true);
+    toast({
+      text: "The draft was emptied",
+      action: { label: "Put it back", run: () => takeOver(before) },
+    });
+  }
+
   return (
     <FormSurroundingsContext value={surroundings}>
       <FormProvider {...form}>
-        {opened.restored ? (
+        {opened.restored && !anew ? (
           <Notice
             title="Taken up again."
             className="mb-4"
             actions={
-              <Button size="small" onClick={() => takeOver(freshDraft(wallTime(Date.now(), zone)))}>
+              <Button size="small" onClick={beginAnew}>
                 Begin anew
               </Button>
             }
@@ -94,7 +107,7 @@ export function InterviewForm({ person, draft, places }: InterviewFormProps) {
           onTakeOver={takeOver}
         />
         <UnsavedGuard
-          unsaved={state.kind !== "saved"}
+          unsaved={state.kind === "failed" || state.kind === "conflict"}
           description="The last words typed here have not reached the server. Leaving drops them."
         />
       </FormProvider>

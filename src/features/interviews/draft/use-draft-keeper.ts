@@ -28,8 +28,20 @@ export function useDraftKeeper(
     return () => {
       window.removeEventListener("online", keeper.reconnect);
       document.removeEventListener("visibilitychange", hidden);
-      keeper.flush();
+      // A page left while saving fails was left knowingly: see the question that guards it.
+      const { kind } = keeper.state();
+      if (kind === "failed" || kind === "conflict") keeper.finish();
+      else keeper.flush();
     };
   }, [keeper]);
-  return [keeper, useSyncExternalStore(keeper.subscribe, keeper.state)];
+  const state = useSyncExternalStore(keeper.subscribe, keeper.state);
+  // Going elsewhere in the application sends what waits; closing the tab would cut that short.
+  const underWay = state.kind === "waiting" || state.kind === "saving";
+  useEffect(() => {
+    if (!underWay) return;
+    const ask = (event: BeforeUnloadEvent) => event.preventDefault();
+    window.addEventListener("beforeunload", ask);
+    return () => window.removeEventListener("beforeunload", ask);
+  }, [underWay]);
+  return [keeper, state];
 }

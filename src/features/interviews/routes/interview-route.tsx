@@ -58,7 +58,8 @@ export function Component() {
   }
   const one = person.data;
   const title = `Interview of ${one.studyNumber}`;
-  if (!one.can.interview) {
+  // An open form stays: a case handed on meanwhile must not take with it what was typed.
+  if (!one.can.interview && !draft.data) {
     return (
       <RoomPage title={title} actions={back}>
         <ErrorState kind="no-permission" title="This interview is not yours to hold">
