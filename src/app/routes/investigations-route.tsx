@@ -69,7 +69,7 @@ export function Component() {
                 if (one.id === session.investigationId) return <Tag tone="kelp">acting here</Tag>;
                 return role ? (
                   <Button size="small" onClick={() => switchTo(role, one.id)}>
-                    Act here<span className="sr-only"> in {one.name}</span>
+                    Act here <span className="sr-only">in {one.name}</span>
                   </Button>
                 ) : null;
               }}

@@ -35,7 +35,7 @@ export function EditableSection(props: EditableSectionProps) {
       actions={
         person.can.edit && !editing ? (
           <Button size="small" onClick={() => setEditing(true)}>
-            Change<span className="sr-only"> {title}</span>
+            Change <span className="sr-only">{title}</span>
           </Button>
         ) : null
       }

@@ -49,8 +49,7 @@ export function QueueItem({ person, mine, today, personTo, interviewTo }: QueueI
         variant={mine ? "primary" : "quiet"}
         className="order-2 justify-self-end sm:order-none"
       >
-        {begun ? "Go on" : "Interview"}
-        <span className="sr-only"> {person.studyNumber}</span>
+        {begun ? "Go on" : "Interview"} <span className="sr-only">{person.studyNumber}</span>
       </LinkButton>
     </li>
   );
