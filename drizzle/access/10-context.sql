@@ -1,6 +1,6 @@
 -- Who is asking, inside one transaction. The nonce in app.ctx was made by the server at sign-in or
 -- at a change of role and stands in auth.ctx_live, which no role login can read; it counts only for
--- the login of its own role and only while the membership lasts.
+-- the login of its own role and only while membership and account last.
 -- Every function pins its search path with the temporary schema last: left out, that schema would be
 -- searched first, and a login could put types of its own under the owner's feet.
 -- They are written in PL/pgSQL, whose plans last as long as the connection: a function in SQL would
@@ -13,6 +13,7 @@ begin
   from auth.ctx_live c
   join core.member m on m.account_id = c.account_id and m.investigation_id = c.investigation_id
     and m.role = c.role and m.ended_at is null
+  join auth.account a on a.id = c.account_id and a.disabled_at is null
   where c.nonce = nullif(current_setting('app.ctx', true), '')::uuid
     and c.expires_at > now()
     and session_user = ('strandline_' || c.role);

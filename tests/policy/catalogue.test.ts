@@ -158,6 +158,23 @@ test("a login may select exactly the columns the registry gives its role in full
   }
 });
 
+test("the logins of accounts and of background work reach no identity either", async () => {
+  const readable = async (login: string) => {
+    const found = await admin.query(
+      `select distinct table_schema || '.' || table_name as name from information_schema.columns c
+       where table_schema in ('identity', 'auth', 'views', 'audit')
+         and has_column_privilege($1, format('%I.%I', table_schema, table_name), column_name, 'select')
+       order by 1`,
+      [login],
+    );
+    return found.rows.map((row) => row.name);
+  };
+  expect(await readable(loginOf("system"))).toEqual([]);
+  // Wrapped data keys only: the accounts login makes one with each investigation.
+  const accounts = (await readable(loginOf("auth"))).filter((one) => !one.startsWith("auth."));
+  expect(accounts).toEqual(["identity.data_key"]);
+});
+
 function name({ table, column }: { table: string; column: string }): string {
   return `${table}.${column}`;
 }
