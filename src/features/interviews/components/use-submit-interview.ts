@@ -46,6 +46,9 @@ async function send(investigationId: string, input: InterviewInput, key: string)
 export function receiptWords(input: InterviewInput, graphVersion: number): string {
   const contacts = input.contacts.length;
   const groups = input.groupExposures.length;
+  if (contacts + groups === 0 && nobodyReached.includes(input.outcome)) {
+    return "Attempt recorded: nobody was reached this time.";
+  }
   const told = [
     counted(contacts, "contact"),
     ...(groups > 0 ? [`${counted(groups, "group")} not named`] : []),
