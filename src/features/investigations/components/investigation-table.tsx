@@ -34,7 +34,7 @@ export function InvestigationTable({ investigations, action }: InvestigationTabl
         <tbody>
           {investigations.map((one) => (
             <tr key={one.id}>
-              <HeadCell scope="row">
+              <HeadCell scope="row" className="whitespace-nowrap">
                 {one.name} {one.invented ? <Tag tone="ochre">invented</Tag> : null}
               </HeadCell>
               <Cell>{one.roles.map((role) => ROLE_NAMES[role]).join(", ")}</Cell>
