@@ -9,9 +9,9 @@ import {
   peopleList,
   peopleQuery,
   peopleSearch,
-  personInput,
   personPage,
   personPatch,
+  personRegistration,
 } from "../../../shared/contracts/people.ts";
 import { openableKeys } from "../../../shared/fields.ts";
 import { ROLES } from "../../../shared/roles.ts";
@@ -92,7 +92,7 @@ export const peopleRoutes: AnyRoute[] = [
     summary: "Register a person",
     policy: ["tracer", "supervisor"],
     params,
-    body: personInput,
+    body: personRegistration,
     output: z.strictObject({ id: uuid, studyNumber: z.string(), version: z.int() }),
     creates: true,
     async run({ tx, actor, services, body }) {

@@ -48,6 +48,33 @@ async function register(who: Member, body: Record<string, unknown>): Promise<str
 }
 
 describe("registering a person", () => {
+  it("takes every column of a people file, an earlier interview as one held on its day", async () => {
+    const told = { ...KEPT, ref: "MR-1002", interviewed: "yes", interviewDate: "2026-05-05" };
+    const id = await register(team.supervisor, told);
+    const page = await team.supervisor.client.get(`${team.supervisor.base}/people/${id}`);
+    expect(page.body).toMatchObject({
+      interviewed: "yes",
+      interviewDate: "2026-05-05",
+      interviewState: "complete",
+    });
+    expect(page.body.attempts).toMatchObject([{ outcome: "complete" }]);
+    expect(page.body.attempts[0].heldAt).toBe("2026-05-05T12:00:00.000Z");
+    const coming = await team.tracer.client.post(`${team.tracer.base}/people`, {
+      name: "Nobody Yet",
+      interviewed: "yes",
+      interviewDate: "2099-01-01",
+    });
+    expect(coming.body.errors).toEqual([{ path: "interviewDate", code: "in_future" }]);
+  });
+
+  it("refuses a form in which nothing is known", async () => {
+    for (const body of [{}, { name: " ", area: "" }]) {
+      const refused = await team.tracer.client.post(`${team.tracer.base}/people`, body);
+      expect(refused.status).toBe(422);
+      expect(refused.body.errors).toEqual([{ path: "name", code: "required" }]);
+    }
+  });
+
   it("keeps every field and gives it back, e-mail in lower case and partial dates partial", async () => {
     const id = await register(team.supervisor, KEPT);
     const page = await team.supervisor.client.get(`${team.supervisor.base}/people/${id}`);
