@@ -11,6 +11,7 @@ const trace: RouteObject[] = [
   { path: "trace/people/:personId/interview", lazy: pages.interview },
   { path: "trace/places", lazy: pages.places },
   { path: "trace/import", lazy: pages.imports },
+  { path: "trace/import/:importId", lazy: pages.imports },
   { path: "trace/matches", lazy: pages.matches },
 ];
 
