@@ -41,6 +41,16 @@ async function list(
   const keys = names ? await services.keys.of(tx, actor.investigationId) : null;
   const { rows, total } = await listPeople(tx, keys, actor, query, settings.countryCode);
   const action = query.q ? "people.searched" : "people.listed";
+  if (query.q && names && !rows.some((row) => row.mine)) {
+    // Nobody's identity is opened, and still somebody was looked for.
+    await recordEvent(tx, {
+      action,
+      accountId: actor.accountId,
+      role: actor.role,
+      investigationId: actor.investigationId,
+      counts: { found: total },
+    });
+  }
   return {
     items: await presentPeople(tx, services.keys, actor, rows, LIST_FIELDS, action),
     total,
