@@ -203,6 +203,21 @@ describe("what each role gets", () => {
     expect(sorted.status).toBe(200);
   });
 
+  it("lets a tracer take a person, and a supervisor give them to somebody else or to nobody", async () => {
+    const id = await register(team.tracer, { name: "Taken Person" });
+    const path = `${team.tracer.base}/people/${id}`;
+    const give = (who: Member, version: number, assignedTo: string | null) =>
+      who.client.call("patch", path, { body: { version, assignedTo } });
+    const back = await give(team.tracer, 1, null);
+    expect([back.status, back.body.errors]).toEqual([
+      422,
+      [{ path: "assignedTo", code: "not_known" }],
+    ]);
+    expect((await give(team.tracer, 1, team.tracer.accountId)).status).toBe(200);
+    expect((await give(team.supervisor, 2, null)).status).toBe(200);
+    expect((await team.tracer.client.get(path)).status).toBe(404);
+  });
+
   it("shows a tracer their own people only, and hides the rest like the absent", async () => {
     const theirs = await register(team.tracer, {
       name: "Held Person",
