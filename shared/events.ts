@@ -22,6 +22,8 @@ export const EVENTS = [
   "interview.submitted",
   "interviews.listed",
   "follow_up.listed",
+  "follow_check.recorded",
+  "follow_checks.opened",
   "match_reviews.listed",
   "import.staged",
   "import.committed",

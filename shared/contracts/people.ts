@@ -3,6 +3,7 @@ import { accessTo, personKeys } from "../fields.ts";
 import type { Role } from "../roles.ts";
 import {
   AGE_BANDS,
+  CHECK_OUTCOMES,
   CLASSIFICATIONS,
   INTERVIEW_OUTCOMES,
   OUTCOMES,
@@ -234,7 +235,13 @@ export function personPage(role: Role) {
   return personAnswer(role).extend({
     windows: z.strictObject({ infectious: infectiousAnswer, source: windowAnswer }),
     monitoring: z
-      .strictObject({ dayZero: z.string(), lastDueDay: z.string(), dueDays: z.array(z.string()) })
+      .strictObject({
+        dayZero: z.string(),
+        lastDueDay: z.string(),
+        dueDays: z.array(z.string()),
+        expectedFrom: z.string(),
+        outcomes: z.array(z.strictObject({ day: z.string(), outcome: z.enum(CHECK_OUTCOMES) })),
+      })
       .nullable(),
     classifications: z.array(
       z.strictObject({
@@ -271,7 +278,15 @@ export type PersonPage = Person & {
     infectious: { from: string; to: string; basis: "onset" | "specimen" } | null;
     source: { from: string; to: string } | null;
   };
-  monitoring: { dayZero: string; lastDueDay: string; dueDays: string[] } | null;
+  monitoring: {
+    dayZero: string;
+    lastDueDay: string;
+    dueDays: string[];
+    /** First day on which the absence of a check counts as missed. */
+    expectedFrom: string;
+    /** Best outcome of each day with a check, also of days that are no longer due. */
+    outcomes: { day: string; outcome: (typeof CHECK_OUTCOMES)[number] }[];
+  } | null;
   classifications: { classification: string; caseDefinitionVersion: number; recordedAt: string }[];
   pairs: PersonPair[];
   groupExposures: {

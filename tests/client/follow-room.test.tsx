@@ -7,6 +7,7 @@ import { afterEach, describe, expect, it, vi } from "vitest";
 import type { FollowUpItem } from "../../shared/contracts/follow-up.ts";
 import { commonScale, dayWords, dueDays } from "../../src/features/follow-up/lib/due-days.ts";
 import { Component } from "../../src/features/follow-up/routes/follow-route.tsx";
+import { addDays } from "../../src/lib/calendar-day.ts";
 import { InvestigationContext } from "../../src/lib/investigation-context.ts";
 import { investigation } from "./support/interview-desk.tsx";
 
@@ -26,6 +27,17 @@ const item = (over: Partial<FollowUpItem>): FollowUpItem => ({
   lastDueDay: "2026-06-04",
   dayNumber: 6,
   monitoringDays: 14,
+  mine: true,
+  version: 3,
+  state: "under_follow_up",
+  symptomatic: false,
+  lastCheck: null,
+  expectedFrom: "2026-05-22",
+  dueDays: Array.from({ length: 14 }, (_, index) => ({
+    day: addDays("2026-05-22", index),
+    outcome: null,
+  })),
+  together: null,
   ...over,
 });
 
@@ -37,7 +49,15 @@ function open(items: FollowUpItem[], { at = "/follow", withoutDayZero = 0, total
     const url = new URL(address, "http://localhost");
     asked.push(url.searchParams);
     const page = Number(url.searchParams.get("page"));
-    const body = { items, total, page, pageSize: 50, today, withoutDayZero };
+    const body = {
+      items,
+      total,
+      page,
+      pageSize: 50,
+      today,
+      withoutDayZero,
+      lostAfterDays: 3,
+    };
     return new Response(JSON.stringify(body), { headers: { "content-type": "application/json" } });
   });
   const router = createMemoryRouter(

@@ -153,7 +153,15 @@ describe("the day strip of a person", () => {
   it("shows due days from today on and counts from day 0", () => {
     const dueDays = ["2026-05-26", "2026-05-27", "2026-05-28"];
     const strip = personStrip(
-      page({ monitoring: { dayZero: "2026-05-25", lastDueDay: "2026-05-28", dueDays } }),
+      page({
+        monitoring: {
+          dayZero: "2026-05-25",
+          lastDueDay: "2026-05-28",
+          dueDays,
+          expectedFrom: "2026-05-26",
+          outcomes: [],
+        },
+      }),
       today,
     );
     expect(strip?.rows[0]).toMatchObject({

@@ -25,6 +25,8 @@ export const actionWords: Readonly<Record<EventName, string>> = {
   "interview.submitted": "submitted an interview",
   "interviews.listed": "read the interviews",
   "follow_up.listed": "read the follow-up list",
+  "follow_check.recorded": "recorded a check",
+  "follow_checks.opened": "read the notes of checks",
   "match_reviews.listed": "read possible matches",
   "import.staged": "checked a file",
   "import.committed": "took a file in",
