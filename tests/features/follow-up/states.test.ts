@@ -18,12 +18,7 @@ afterAll(async () => {
 });
 
 describe("states", () => {
-  const CASES: [
-    name: string,
-    lastExposure: number,
-    rows: Round[],
-    state: string,
-  ][] = [
+  const CASES: [name: string, lastExposure: number, rows: Round[], state: string][] = [
     ["nobody tried yet", 1, [], "to_be_notified"],
     ["tried in vain once", 2, [[1, "not_reached"]], "to_be_notified"],
     ["a message was left", 2, [[1, "message"]], "under_follow_up"],
