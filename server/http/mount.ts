@@ -216,7 +216,7 @@ export function mount(
         next();
       };
       if (multipart) at[verb](template, guardUpload, upload.single("file"), handler);
-      else at[verb](template, handler);
+      else at[verb](template, refuseUpload, handler);
     }
     if (methods.includes("GET")) methods.push("HEAD");
     at.all((_request, response) => {
@@ -224,6 +224,12 @@ export function mount(
       throw new HttpProblem("method_not_allowed");
     });
   }
+}
+
+/** One route takes files; the others read JSON only, whatever the name of the form. */
+function refuseUpload(request: Request, _response: Response, next: NextFunction): void {
+  if (request.is("multipart/form-data")) throw new HttpProblem("json_required");
+  next();
 }
 
 /** Nobody's upload is read into memory before it is known who sends it. */

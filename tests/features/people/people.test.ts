@@ -1,4 +1,5 @@
 import { randomUUID } from "node:crypto";
+import pg from "pg";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import type { Role } from "../../../shared/roles.ts";
 import { startTestApp, type TestApp } from "../../support/app.ts";
@@ -48,6 +49,33 @@ async function register(who: Member, body: Record<string, unknown>): Promise<str
 }
 
 describe("registering a person", () => {
+  it("takes every column of a people file, an earlier interview as one held on its day", async () => {
+    const told = { ...KEPT, ref: "MR-1002", interviewed: "yes", interviewDate: "2026-05-05" };
+    const id = await register(team.supervisor, told);
+    const page = await team.supervisor.client.get(`${team.supervisor.base}/people/${id}`);
+    expect(page.body).toMatchObject({
+      interviewed: "yes",
+      interviewDate: "2026-05-05",
+      interviewState: "complete",
+    });
+    expect(page.body.attempts).toMatchObject([{ outcome: "complete" }]);
+    expect(page.body.attempts[0].heldAt).toBe("2026-05-05T12:00:00.000Z");
+    const coming = await team.tracer.client.post(`${team.tracer.base}/people`, {
+      name: "Nobody Yet",
+      interviewed: "yes",
+      interviewDate: "2099-01-01",
+    });
+    expect(coming.body.errors).toEqual([{ path: "interviewDate", code: "in_future" }]);
+  });
+
+  it("refuses a form in which nothing is known", async () => {
+    for (const body of [{}, { name: " ", area: "" }]) {
+      const refused = await team.tracer.client.post(`${team.tracer.base}/people`, body);
+      expect(refused.status).toBe(422);
+      expect(refused.body.errors).toEqual([{ path: "name", code: "required" }]);
+    }
+  });
+
   it("keeps every field and gives it back, e-mail in lower case and partial dates partial", async () => {
     const id = await register(team.supervisor, KEPT);
     const page = await team.supervisor.client.get(`${team.supervisor.base}/people/${id}`);
@@ -333,33 +361,61 @@ describe("tests of a person", () => {
 });
 
 describe("the access record", () => {
+  interface Event {
+    action: string;
+    person_ids: string[];
+    fields: string[];
+    counts: Record<string, number>;
+  }
+  async function eventsOf(investigationId: string): Promise<Event[]> {
+    const admin = new pg.Client({ connectionString: app.adminUrl });
+    await admin.connect();
+    const found = await admin.query(
+      `select action, person_ids, fields, counts from audit.event
+       where investigation_id = $1 order by at`,
+      [investigationId],
+    );
+    await admin.end();
+    return found.rows;
+  }
+
   it("writes one event for a list, one for a page, none for an answer without identity", async () => {
     const inv = await buildInvestigation(app);
     const supervisor = await signInAs(app, "supervisor", inv);
     const epidemiologist = await signInAs(app, "epidemiologist", inv);
     const id = await register(supervisor, { name: "Watched Person", address: "2 Invented Street" });
-    const events = async () =>
-      (
-        await app.pools.system.query("select 1").then(async () => {
-          const pg = (await import("pg")).default;
-          const admin = new pg.Client({ connectionString: app.adminUrl });
-          await admin.connect();
-          const rows = await admin.query(
-            "select action, person_ids, fields from audit.event where investigation_id = $1 order by at",
-            [inv],
-          );
-          await admin.end();
-          return rows;
-        })
-      ).rows as { action: string; person_ids: string[]; fields: string[] }[];
-    const before = (await events()).length;
+    const before = (await eventsOf(inv)).length;
     await supervisor.client.get(`${supervisor.base}/people`);
     await epidemiologist.client.get(`${epidemiologist.base}/people`);
     await supervisor.client.get(`${supervisor.base}/people/${id}`);
-    const added = (await events()).slice(before);
+    const added = (await eventsOf(inv)).slice(before);
     expect(added.map((e) => e.action)).toEqual(["people.listed", "person.opened"]);
     expect(added[0]).toMatchObject({ person_ids: [id] });
     expect(added[0]?.fields.sort()).toEqual(["name", "phone", "ref"]);
     expect(JSON.stringify(added)).not.toMatch(/Watched|Invented/);
+  });
+
+  it("has one event for a page with those met on it, and one for a search that finds nobody", async () => {
+    const inv = await buildInvestigation(app);
+    const supervisor = await signInAs(app, "supervisor", inv);
+    const id = await register(supervisor, { name: "Watched Case", household: "The Watched" });
+    await supervisor.client.post(`${supervisor.base}/interviews`, {
+      personId: id,
+      outcome: "complete",
+      contacts: [{ name: "Named Contact" }],
+    });
+    const before = (await eventsOf(inv)).length;
+    const page = await supervisor.client.get(`${supervisor.base}/people/${id}`);
+    await supervisor.client.post(`${supervisor.base}/people/search`, { q: "Absentee" });
+    const [opened, searched, ...more] = (await eventsOf(inv)).slice(before);
+    expect(more).toEqual([]);
+    expect(opened?.action).toBe("person.opened");
+    expect(opened?.person_ids.sort()).toEqual([id, page.body.pairs[0].personId].sort());
+    expect(opened?.fields).toEqual(expect.arrayContaining(["address", "household", "name"]));
+    expect(searched).toMatchObject({
+      action: "people.searched",
+      person_ids: [],
+      counts: { found: 0 },
+    });
   });
 });
