@@ -5,6 +5,7 @@ import {
   AGE_BANDS,
   CHECK_OUTCOMES,
   CLASSIFICATIONS,
+  FOLLOW_STATES,
   INTERVIEW_OUTCOMES,
   OUTCOMES,
   SEXES,
@@ -252,6 +253,7 @@ export function personPage(role: Role) {
         lastDueDay: z.string(),
         dueDays: z.array(z.string()),
         expectedFrom: z.string(),
+        state: z.enum(FOLLOW_STATES),
         outcomes: z.array(z.strictObject({ day: z.string(), outcome: z.enum(CHECK_OUTCOMES) })),
       })
       .nullable(),
@@ -296,6 +298,7 @@ export type PersonPage = Person & {
     dueDays: string[];
     /** First day on which the absence of a check counts as missed. */
     expectedFrom: string;
+    state: (typeof FOLLOW_STATES)[number];
     /** Best outcome of each day with a check, also of days that are no longer due. */
     outcomes: { day: string; outcome: (typeof CHECK_OUTCOMES)[number] }[];
   } | null;

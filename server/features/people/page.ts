@@ -1,9 +1,9 @@
 import { sql } from "drizzle-orm";
 import { accessTo, openableKeys, readableColumns } from "../../../shared/fields.ts";
-import { bestOutcomes } from "../../../shared/follow-state.ts";
-import { isCase } from "../../../shared/vocabulary.ts";
+import { bestOutcomes, followState } from "../../../shared/follow-state.ts";
+import { type Classification, isCase } from "../../../shared/vocabulary.ts";
 import { infectiousWindow, monitoringPeriod, sourceWindow } from "../../../shared/windows.ts";
-import { dayIn, shiftDay } from "../../clock.ts";
+import { dayIn, now, shiftDay } from "../../clock.ts";
 import type { Tx } from "../../db/with-tx.ts";
 import type { Actor } from "../../http/route.ts";
 import type { KeyRing } from "../../identity/keys.ts";
@@ -118,10 +118,26 @@ async function dayZeroOf(
 }
 
 /** Days on which the contact was tried, with the best outcome; and from when on a gap is a miss. */
-async function checkedDays(tx: Tx, person: CorePerson, settings: InvestigationRow) {
+async function checkedDays(
+  tx: Tx,
+  person: CorePerson,
+  settings: InvestigationRow,
+  dayZero: string,
+) {
   const checks = (await checksOf(tx, [person.id])).get(person.id) ?? [];
+  const expectedFrom = shiftDay(dayIn(settings.timeZone, String(person.recordedAt)), 1);
+  const { monitoringDays, lostAfterDays } = settings;
   return {
-    expectedFrom: shiftDay(dayIn(settings.timeZone, String(person.recordedAt)), 1),
+    expectedFrom,
+    state: followState({
+      classification: person.classification as Classification | null,
+      dayZero,
+      monitoringDays,
+      today: dayIn(settings.timeZone, now()),
+      expectedFrom,
+      lostAfterDays,
+      checks,
+    }),
     outcomes: [...bestOutcomes(checks)].map(([day, outcome]) => ({ day, outcome })),
   };
 }
@@ -176,7 +192,10 @@ export async function personPageParts(
       infectious: sick ? infectiousWindow(dates, settings) : null,
       source: sick ? sourceWindow(dates, settings) : null,
     },
-    monitoring: monitoring && { ...monitoring, ...(await checkedDays(tx, person, settings)) },
+    monitoring: monitoring && {
+      ...monitoring,
+      ...(await checkedDays(tx, person, settings, monitoring.dayZero)),
+    },
     classifications: history.rows,
     pairs,
     groupExposures: groups.rows.map(({ placeNumber, ...row }) => ({

@@ -1,0 +1,93 @@
+import { lazy, Suspense, useState } from "react";
+import { CHECK_OUTCOMES, type CheckOutcome } from "../../../../shared/vocabulary.ts";
+import { Button } from "../../../components/ui/button.tsx";
+import { LoadingState } from "../../../components/ui/loading-state.tsx";
+import { Notice } from "../../../components/ui/notice.tsx";
+import { useToast } from "../../../components/ui/use-toast.ts";
+import { ApiError, errorWords } from "../../../lib/api-error.ts";
+import { fieldWords } from "../../../lib/form-errors.ts";
+import { checkWords } from "../../../lib/words.ts";
+import { useRecordCheck } from "../api/record-check.ts";
+import { type CheckDetails, checkBody, noDetails } from "../lib/check-details.ts";
+import { MakeCase } from "./make-case.tsx";
+
+// Most checks are one press; what is asked beside it comes when it is wanted.
+const DetailsForm = lazy(() =>
+  import("./check-details-form.tsx").then((file) => ({ default: file.CheckDetailsForm })),
+);
+
+export type CheckedPerson = {
+  id: string;
+  version: number;
+  /** Name where it is the reader's to know, else the study number. */
+  called: string;
+  /** True when the reader may change the record. */
+  mine: boolean;
+};
+
+export type CheckBarProps = { investigationId: string; person: CheckedPerson; today: string };
+
+function refusal(error: unknown): string {
+  const field = error instanceof ApiError ? error.errors[0] : undefined;
+  return field ? (fieldWords(field.code) ?? errorWords(error)) : errorWords(error);
+}
+
+/** One press records how a contact was reached; with the details open, these go with it. */
+export function CheckBar({ investigationId, person, today }: CheckBarProps) {
+  const [details, setDetails] = useState<CheckDetails | null>(null);
+  const record = useRecordCheck(investigationId, person.id);
+  const toast = useToast();
+
+  function press(outcome: CheckOutcome) {
+    record.mutate(checkBody(outcome, details, today), {
+      onSuccess() {
+        setDetails(null);
+        toast({ text: `${person.called}: ${checkWords[outcome]}`, tone: "done" });
+      },
+    });
+  }
+
+  return (
+    <div className="mt-1.5">
+      {details ? (
+        <Suspense fallback={<LoadingState label="Opening the form" rows={2} />}>
+          <DetailsForm
+            called={person.called}
+            name={`check-${person.id}`}
+            value={details}
+            today={today}
+            onChange={setDetails}
+          />
+        </Suspense>
+      ) : null}
+      <fieldset className="flex flex-wrap items-center gap-x-1.5 gap-y-1.5">
+        <legend className="sr-only">Check of {person.called}</legend>
+        {CHECK_OUTCOMES.map((outcome) => (
+          <Button
+            key={outcome}
+            size="small"
+            className="grow sm:grow-0"
+            pending={record.isPending && record.variables.outcome === outcome}
+            onClick={() => (record.isPending ? undefined : press(outcome))}
+          >
+            {checkWords[outcome]}
+          </Button>
+        ))}
+        <Button
+          size="small"
+          variant="plain"
+          aria-expanded={details !== null}
+          onClick={() => setDetails(details ? null : noDetails(today))}
+        >
+          {details ? "without details" : "symptoms, note"}
+        </Button>
+        {person.mine ? <MakeCase investigationId={investigationId} person={person} /> : null}
+      </fieldset>
+      {record.isError ? (
+        <Notice tone="error" title="Not recorded." className="mt-2">
+          {refusal(record.error)}. Press again to try again.
+        </Notice>
+      ) : null}
+    </div>
+  );
+}
