@@ -48,7 +48,7 @@ export function CheckBar({ investigationId, person, today }: CheckBarProps) {
   }
 
   return (
-    <div className="mt-1.5">
+    <div className={details || record.isError ? "min-w-0 basis-full" : "min-w-0"}>
       {details ? (
         <Suspense fallback={<LoadingState label="Opening the form" rows={2} />}>
           <DetailsForm
@@ -60,13 +60,12 @@ export function CheckBar({ investigationId, person, today }: CheckBarProps) {
           />
         </Suspense>
       ) : null}
-      <fieldset className="flex flex-wrap items-center gap-x-1.5 gap-y-1.5">
+      <fieldset className="grid grid-cols-2 items-center gap-1.5 sm:flex sm:flex-wrap">
         <legend className="sr-only">Check of {person.called}</legend>
         {CHECK_OUTCOMES.map((outcome) => (
           <Button
             key={outcome}
             size="small"
-            className="grow sm:grow-0"
             pending={record.isPending && record.variables.outcome === outcome}
             onClick={() => (record.isPending ? undefined : press(outcome))}
           >

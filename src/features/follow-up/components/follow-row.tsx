@@ -64,7 +64,7 @@ export function FollowRow({ item, investigationId, ...strip }: FollowRowProps) {
       <div className="col-span-2 min-w-0 lg:col-span-1">
         <DueStrip item={item} {...strip} />
       </div>
-      <div className="col-span-full min-w-0">
+      <div className="col-span-full flex min-w-0 flex-wrap items-center gap-x-5 gap-y-1.5">
         <FollowStatus item={item} />
         {isFollowed(item.state) ? (
           <CheckBar

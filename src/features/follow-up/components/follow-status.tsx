@@ -33,7 +33,7 @@ function togetherWords(together: string): string {
 export function FollowStatus({ item }: { item: FollowUpItem }) {
   const { lastCheck } = item;
   return (
-    <p className="flex flex-wrap items-baseline gap-x-2 gap-y-1 text-sm text-ink-2">
+    <p className="flex flex-wrap items-baseline gap-x-2 gap-y-1 text-sm text-ink-2 xl:w-[33rem]">
       {item.symptomatic ? (
         <Tag tone="coral" className="font-bold">
           symptoms reported
