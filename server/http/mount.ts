@@ -215,7 +215,7 @@ export function mount(
         r.locals.route = path;
         next();
       };
-      if (multipart) at[verb](template, guardUpload, upload.single("file"), handler);
+      if (multipart) at[verb](template, guardUpload, readUpload, handler);
       else at[verb](template, refuseUpload, handler);
     }
     if (methods.includes("GET")) methods.push("HEAD");
@@ -224,6 +224,16 @@ export function mount(
       throw new HttpProblem("method_not_allowed");
     });
   }
+}
+
+const oneFile = upload.single("file");
+
+/** Reads an upload. What breaks off or has no boundary is the sender's fault, not ours. */
+function readUpload(request: Request, response: Response, next: NextFunction): void {
+  oneFile(request, response, (error: unknown) => {
+    const known = error instanceof multer.MulterError || error instanceof HttpProblem;
+    next(error && !known ? new HttpProblem("malformed_request") : error);
+  });
 }
 
 /** One route takes files; the others read JSON only, whatever the name of the form. */

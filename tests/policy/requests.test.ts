@@ -61,6 +61,29 @@ describe("a body", () => {
   });
 });
 
+describe("an upload", () => {
+  const part = '--b\r\nContent-Disposition: form-data; name="kind"\r\n\r\npeople\r\n';
+  it.each([
+    ["nothing at all", "", "multipart/form-data; boundary=b"],
+    ["no part", "anything", "multipart/form-data; boundary=b"],
+    ["no end", part, "multipart/form-data; boundary=b"],
+    ["no boundary", `${part}--b--\r\n`, "multipart/form-data"],
+  ])("with %s is refused, not a fault of ours", async (_what, body, type) => {
+    const supervisor = await signInAs(app, "supervisor", tracer.investigationId);
+    const answer = await fetch(`${app.origin}${supervisor.base}/imports`, {
+      method: "POST",
+      headers: {
+        Cookie: await cookieOf(app, supervisor.email),
+        Origin: app.origin,
+        "Idempotency-Key": crypto.randomUUID(),
+        "Content-Type": type,
+      },
+      body,
+    });
+    expect([400, 422]).toContain(answer.status);
+  });
+});
+
 it.each(["/healthz", "/readyz", "/api/openapi.json"])("%s is only read", async (path) => {
   for (const method of ["POST", "PUT", "PATCH", "DELETE"]) {
     const answer = await fetch(`${app.origin}${path}`, { method, headers: { Origin: app.origin } });

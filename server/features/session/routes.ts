@@ -11,6 +11,7 @@ import { ABSOLUTE_HOURS, IDLE_MINUTES, ROOMS_OF } from "../../../shared/roles.ts
 import { recordEvent } from "../../audit/record-event.ts";
 import { now } from "../../clock.ts";
 import { withTx } from "../../db/with-tx.ts";
+import { checkStreamsOf } from "../../events/open-streams.ts";
 import { HttpProblem } from "../../http/problem.ts";
 import { definePlainRoute, type PlainRoute } from "../../http/route.ts";
 import {
@@ -166,7 +167,16 @@ export function sessionRoutes(services: Services): PlainRoute[] {
         if (!acting) throw new HttpProblem("not_found");
         const account = { id: who.accountId, epoch: request.session.epoch ?? 0 };
         const startedAt = request.session.startedAt ?? now().toISOString();
-        return start(request, services, account, acting, "session.role_changed", startedAt);
+        const changed = await start(
+          request,
+          services,
+          account,
+          acting,
+          "session.role_changed",
+          startedAt,
+        );
+        await checkStreamsOf(who.accountId);
+        return changed;
       },
     }),
     definePlainRoute({
@@ -179,6 +189,7 @@ export function sessionRoutes(services: Services): PlainRoute[] {
       async handle(request, response) {
         const who = signedInOf(request);
         await endSession(request, services.pools.auth);
+        await checkStreamsOf(who.accountId);
         await withTx({ pool: services.pools.auth, nonce: null }, (tx) =>
           recordEvent(tx, {
             action: "session.ended",

@@ -1,14 +1,8 @@
 import { randomUUID } from "node:crypto";
-import pg from "pg";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import type { Role } from "../../../shared/roles.ts";
 import { startTestApp, type TestApp } from "../../support/app.ts";
-import {
-  buildInvestigation,
-  type Member,
-  signInAs,
-  signInEveryone,
-} from "../../support/factories.ts";
+import { buildInvestigation, type Member, signInEveryone } from "../../support/factories.ts";
 
 let app: TestApp;
 let investigation: string;
@@ -209,6 +203,21 @@ describe("what each role gets", () => {
     expect(sorted.status).toBe(200);
   });
 
+  it("lets a tracer take a person, and a supervisor give them to somebody else or to nobody", async () => {
+    const id = await register(team.tracer, { name: "Taken Person" });
+    const path = `${team.tracer.base}/people/${id}`;
+    const give = (who: Member, version: number, assignedTo: string | null) =>
+      who.client.call("patch", path, { body: { version, assignedTo } });
+    const back = await give(team.tracer, 1, null);
+    expect([back.status, back.body.errors]).toEqual([
+      422,
+      [{ path: "assignedTo", code: "not_known" }],
+    ]);
+    expect((await give(team.tracer, 1, team.tracer.accountId)).status).toBe(200);
+    expect((await give(team.supervisor, 2, null)).status).toBe(200);
+    expect((await team.tracer.client.get(path)).status).toBe(404);
+  });
+
   it("shows a tracer their own people only, and hides the rest like the absent", async () => {
     const theirs = await register(team.tracer, {
       name: "Held Person",
@@ -357,65 +366,5 @@ describe("tests of a person", () => {
       resultDate: "2026-04-01",
     });
     expect(wrong.body.errors).toEqual([{ path: "resultDate", code: "result_before_specimen" }]);
-  });
-});
-
-describe("the access record", () => {
-  interface Event {
-    action: string;
-    person_ids: string[];
-    fields: string[];
-    counts: Record<string, number>;
-  }
-  async function eventsOf(investigationId: string): Promise<Event[]> {
-    const admin = new pg.Client({ connectionString: app.adminUrl });
-    await admin.connect();
-    const found = await admin.query(
-      `select action, person_ids, fields, counts from audit.event
-       where investigation_id = $1 order by at`,
-      [investigationId],
-    );
-    await admin.end();
-    return found.rows;
-  }
-
-  it("writes one event for a list, one for a page, none for an answer without identity", async () => {
-    const inv = await buildInvestigation(app);
-    const supervisor = await signInAs(app, "supervisor", inv);
-    const epidemiologist = await signInAs(app, "epidemiologist", inv);
-    const id = await register(supervisor, { name: "Watched Person", address: "2 Invented Street" });
-    const before = (await eventsOf(inv)).length;
-    await supervisor.client.get(`${supervisor.base}/people`);
-    await epidemiologist.client.get(`${epidemiologist.base}/people`);
-    await supervisor.client.get(`${supervisor.base}/people/${id}`);
-    const added = (await eventsOf(inv)).slice(before);
-    expect(added.map((e) => e.action)).toEqual(["people.listed", "person.opened"]);
-    expect(added[0]).toMatchObject({ person_ids: [id] });
-    expect(added[0]?.fields.sort()).toEqual(["name", "phone", "ref"]);
-    expect(JSON.stringify(added)).not.toMatch(/Watched|Invented/);
-  });
-
-  it("has one event for a page with those met on it, and one for a search that finds nobody", async () => {
-    const inv = await buildInvestigation(app);
-    const supervisor = await signInAs(app, "supervisor", inv);
-    const id = await register(supervisor, { name: "Watched Case", household: "The Watched" });
-    await supervisor.client.post(`${supervisor.base}/interviews`, {
-      personId: id,
-      outcome: "complete",
-      contacts: [{ name: "Named Contact" }],
-    });
-    const before = (await eventsOf(inv)).length;
-    const page = await supervisor.client.get(`${supervisor.base}/people/${id}`);
-    await supervisor.client.post(`${supervisor.base}/people/search`, { q: "Absentee" });
-    const [opened, searched, ...more] = (await eventsOf(inv)).slice(before);
-    expect(more).toEqual([]);
-    expect(opened?.action).toBe("person.opened");
-    expect(opened?.person_ids.sort()).toEqual([id, page.body.pairs[0].personId].sort());
-    expect(opened?.fields).toEqual(expect.arrayContaining(["address", "household", "name"]));
-    expect(searched).toMatchObject({
-      action: "people.searched",
-      person_ids: [],
-      counts: { found: 0 },
-    });
   });
 });
