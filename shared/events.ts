@@ -23,6 +23,7 @@ export const EVENTS = [
   "interviews.listed",
   "follow_up.listed",
   "follow_check.recorded",
+  "follow_check.withdrawn",
   "follow_checks.opened",
   "match_reviews.listed",
   "import.staged",

@@ -66,7 +66,7 @@ function open(
       sent.push({
         path: url.pathname.replace(/^.*\/follow-up\/|^.*\/people\//, ""),
         key: new Headers(init.headers).get("idempotency-key"),
-        body: JSON.parse(String(init.body)),
+        body: init.body ? JSON.parse(String(init.body)) : null,
       });
       return answer(sent.length);
     }
@@ -228,6 +228,10 @@ describe("follow room", () => {
     expect(keys[0]).toMatch(/^[0-9a-f-]{36}$/);
     expect(keys[1]).toBe(keys[0]);
     expect(keys[2]).not.toBe(keys[0]);
+    const [takeBack] = await screen.findAllByRole("button", { name: "Take back" });
+    await user.click(takeBack as HTMLElement);
+    await waitFor(() => expect(sent).toHaveLength(4));
+    expect(sent[3]?.path).toBe(`${item({}).id}/checks/${item({}).id}`);
   });
 
   it("takes symptoms, respondent and note along, with the words of care beside them", async () => {

@@ -12,6 +12,7 @@ import { findPeople, openPeople } from "../../identity/records.ts";
 import { loadInvestigation } from "../investigations/store.ts";
 import { listChecks } from "./checks.ts";
 import { recordCheck } from "./commands/record-check.ts";
+import { withdrawCheck } from "./commands/withdraw-check.ts";
 import { presentFollowUp } from "./present.ts";
 import { listFollowUp } from "./queries.ts";
 import { checksOf } from "./store.ts";
@@ -87,5 +88,16 @@ export const followUpRoutes: AnyRoute[] = [
       const settings = await loadInvestigation(tx, actor.investigationId);
       return { id: await recordCheck(tx, services.keys, actor, settings, personId, body) };
     },
+  }),
+  defineRoute({
+    method: "delete",
+    path: "/api/investigations/:id/follow-up/:personId/checks/:checkId",
+    summary: "Take back a check that was entered by mistake",
+    policy: ["tracer", "supervisor"],
+    params: personParams.extend({ checkId: z.uuid() }),
+    output: z.null(),
+    status: 204,
+    run: ({ tx, actor, params: { personId, checkId } }) =>
+      withdrawCheck(tx, actor, personId, checkId),
   }),
 ];

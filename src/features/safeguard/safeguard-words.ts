@@ -26,6 +26,7 @@ export const actionWords: Readonly<Record<EventName, string>> = {
   "interviews.listed": "read the interviews",
   "follow_up.listed": "read the follow-up list",
   "follow_check.recorded": "recorded a check",
+  "follow_check.withdrawn": "took back a check",
   "follow_checks.opened": "read the notes of checks",
   "match_reviews.listed": "read possible matches",
   "import.staged": "checked a file",

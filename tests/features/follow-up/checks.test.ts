@@ -117,6 +117,23 @@ describe("recording", () => {
     expect((await check(desk.tracer, undated, { outcome: "seen" })).status).toBe(201);
   });
 
+  test("a check entered by mistake is taken back, once, by who sees the contact", async () => {
+    const person = await desk.contact("Taken Back", ago(2));
+    const made = await check(desk.tracer, person, { outcome: "seen", symptoms: "yes" });
+    expect(await desk.itemOf(person)).toMatchObject({ symptomatic: true });
+    const remove = (member: Member, of = person) =>
+      member.client.call("delete", `${member.base}/follow-up/${of}/checks/${made.body.id}`);
+    expect((await remove(stranger)).status).toBe(404);
+    expect((await remove(desk.tracer, id)).status).toBe(404);
+    expect((await remove(desk.tracer)).status).toBe(204);
+    expect((await remove(desk.tracer)).status).toBe(404);
+    expect(await desk.itemOf(person)).toMatchObject({ symptomatic: false, lastCheck: null });
+    const list = await desk.tracer.client.get(`${desk.tracer.base}/follow-up/${person}/checks`);
+    expect(list.body).toMatchObject({ items: [], total: 0 });
+    const event = (await eventsNamed(app, desk.investigationId, "follow_check.withdrawn")).at(-1);
+    expect(event).toMatchObject({ account_id: desk.tracer.accountId, person_ids: [person] });
+  });
+
   test("a case who was no contact is not followed up", async () => {
     const answer = await check(desk.tracer, desk.caseId, { outcome: "seen" });
     expect([answer.status, answer.body.errors]).toEqual([

@@ -8,6 +8,7 @@ import { ApiError, errorWords } from "../../../lib/api-error.ts";
 import { fieldWords } from "../../../lib/form-errors.ts";
 import { checkWords } from "../../../lib/words.ts";
 import { useRecordCheck } from "../api/record-check.ts";
+import { useWithdrawCheck } from "../api/withdraw-check.ts";
 import { type CheckDetails, checkBody, noDetails } from "../lib/check-details.ts";
 import { MakeCase } from "./make-case.tsx";
 
@@ -36,13 +37,25 @@ function refusal(error: unknown): string {
 export function CheckBar({ investigationId, person, today }: CheckBarProps) {
   const [details, setDetails] = useState<CheckDetails | null>(null);
   const record = useRecordCheck(investigationId, person.id);
+  const withdraw = useWithdrawCheck(investigationId, person.id);
   const toast = useToast();
+
+  function takeBack(checkId: string) {
+    withdraw.mutate(checkId, {
+      onSuccess: () => toast({ text: `${person.called}: the check is taken back`, tone: "info" }),
+      onError: (error) => toast({ text: `Not taken back: ${errorWords(error)}`, tone: "error" }),
+    });
+  }
 
   function press(outcome: CheckOutcome) {
     record.mutate(checkBody(outcome, details, today), {
-      onSuccess() {
+      onSuccess({ id }) {
         setDetails(null);
-        toast({ text: `${person.called}: ${checkWords[outcome]}`, tone: "done" });
+        toast({
+          text: `${person.called}: ${checkWords[outcome]}`,
+          tone: "done",
+          action: { label: "Take back", run: () => takeBack(id) },
+        });
       },
     });
   }
