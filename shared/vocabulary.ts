@@ -43,6 +43,47 @@ export const INTERVIEW_OUTCOMES = [
 ] as const;
 export type InterviewOutcome = (typeof INTERVIEW_OUTCOMES)[number];
 
+/** How a contact was reached on a day, best first; the best of a day counts. */
+export const CHECK_OUTCOMES = ["seen", "spoken", "message", "not_reached"] as const;
+export type CheckOutcome = (typeof CHECK_OUTCOMES)[number];
+
+/** States of a contact's follow-up (methods A.3); all but the last two follow from the checks. */
+export const FOLLOW_STATES = [
+  "to_be_notified",
+  "under_follow_up",
+  "completed",
+  "lost",
+  "became_case",
+  "not_a_contact",
+] as const;
+export type FollowState = (typeof FOLLOW_STATES)[number];
+
+/** Who answered when a contact was asked. */
+export const RESPONDENTS = [
+  "self",
+  "parent_or_guardian",
+  "relative",
+  "carer",
+  "facility_staff",
+] as const;
+
+/** Symptoms that can be ticked beside a check. */
+export const SYMPTOMS = [
+  "fever",
+  "rash",
+  "cough",
+  "sore_throat",
+  "breathlessness",
+  "headache",
+  "muscle_pain",
+  "tiredness",
+  "vomiting",
+  "diarrhoea",
+  "bleeding",
+  "other",
+] as const;
+export type Symptom = (typeof SYMPTOMS)[number];
+
 export const CHANNELS = ["telephone", "visit", "other"] as const;
 /** Words that stand for a value that was asked for and not got; blank (null) means not asked. */
 export const MISSING = ["unknown", "refused"] as const;

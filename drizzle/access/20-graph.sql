@@ -47,8 +47,9 @@ end $$;
 -- Contacts under follow-up whom the acting person may see, with day 0: the latest last exposure day
 -- to a case (or to someone not yet classified) over all their pairs, because one contact has one
 -- follow-up whoever named them. Partial and missing days give no day 0. A person not yet classified
--- counts as a contact once a case has named them. Planned anew each time: the list of people may
--- hold ten or a hundred thousand.
+-- counts as a contact once a case has named them. Contacts who became a case, or were found to be
+-- none, keep their day 0 and with it their history; what they themselves told does not move it.
+-- Planned anew each time: the list of people may hold ten or a hundred thousand.
 drop function if exists core.follow_up_days();
 create or replace function core.follow_up_days(p_only uuid)
 returns table (person_id uuid, day_zero text)
@@ -65,12 +66,16 @@ begin
   if c.role = 'tracer' then
     select coalesce(array_agg(p.id), '{}') into v_people from core.person p
     where p.id = any ((select core.ctx_people())::uuid[]) and p.withdrawn_at is null
-      and (p.classification = 'contact' or p.classification is null)
+      and (p.classification = 'contact' or p.classification is null or p.became_case
+        or p.classification = 'not_a_case' and exists (select 1 from core.classification k
+          where k.person_id = p.id and k.classification = 'contact'))
       and (p_only is null or p.id = p_only);
   else
     select coalesce(array_agg(p.id), '{}') into v_people from core.person p
     where p.investigation_id = c.investigation_id and p.withdrawn_at is null
-      and (p.classification = 'contact' or p.classification is null)
+      and (p.classification = 'contact' or p.classification is null or p.became_case
+        or p.classification = 'not_a_case' and exists (select 1 from core.classification k
+          where k.person_id = p.id and k.classification = 'contact'))
       and (p_only is null or p.id = p_only);
   end if;
   return query
@@ -88,7 +93,8 @@ begin
       join core.person q on q.id = s.source and q.withdrawn_at is null
       join core.exposure e on e.pair_id = s.id and e.withdrawn_at is null
       where q.classification in ('confirmed', 'probable', 'suspected')
-          and (p.classification = 'contact' or e.named_by = q.id)
+          and (p.classification = 'contact' or e.named_by = q.id
+            or p.classification is not null and e.named_by is distinct from p.id)
         or q.classification is null and p.classification = 'contact'
       group by s.contact)
     select p.id, t.day_zero from core.person p

@@ -23,6 +23,8 @@ export const investigation = core.table("investigation", {
   incubationMin: integer("incubation_min").notNull(),
   incubationMax: integer("incubation_max").notNull(),
   monitoringDays: integer("monitoring_days").notNull(),
+  // Due days in a row without being reached after which a contact counts as lost.
+  lostAfterDays: integer("lost_after_days").notNull().default(3),
   caseDefinitionVersion: integer("case_definition_version").notNull().default(1),
   graphVersion: bigint("graph_version", { mode: "number" }).notNull().default(0),
   nextNumber: integer("next_number").notNull().default(1),

@@ -4,6 +4,7 @@ import { householdToken, placeName } from "../../server/identity/records.ts";
 import { ageBandOf, isCase } from "../../shared/vocabulary.ts";
 import type { Outbreak } from "./generator/types.ts";
 import { insertRows } from "./insert-rows.ts";
+import { loadChecks } from "./load-checks.ts";
 import { loadIdentity } from "./load-identity.ts";
 import { loadInterviews } from "./load-interviews.ts";
 import type { LoadTarget } from "./load-target.ts";
@@ -177,4 +178,5 @@ export async function loadOutbreak(target: LoadTarget, outbreak: Outbreak): Prom
     })),
   );
   await loadInterviews(target, outbreak, idOf, placeOf);
+  await loadChecks(target, outbreak, idOf);
 }

@@ -3,7 +3,9 @@ import { accessTo, personKeys } from "../fields.ts";
 import type { Role } from "../roles.ts";
 import {
   AGE_BANDS,
+  CHECK_OUTCOMES,
   CLASSIFICATIONS,
+  FOLLOW_STATES,
   INTERVIEW_OUTCOMES,
   OUTCOMES,
   SEXES,
@@ -246,7 +248,14 @@ export function personPage(role: Role) {
   return personAnswer(role).extend({
     windows: z.strictObject({ infectious: infectiousAnswer, source: windowAnswer }),
     monitoring: z
-      .strictObject({ dayZero: z.string(), lastDueDay: z.string(), dueDays: z.array(z.string()) })
+      .strictObject({
+        dayZero: z.string(),
+        lastDueDay: z.string(),
+        dueDays: z.array(z.string()),
+        expectedFrom: z.string(),
+        state: z.enum(FOLLOW_STATES),
+        outcomes: z.array(z.strictObject({ day: z.string(), outcome: z.enum(CHECK_OUTCOMES) })),
+      })
       .nullable(),
     classifications: z.array(
       z.strictObject({
@@ -283,7 +292,16 @@ export type PersonPage = Person & {
     infectious: { from: string; to: string; basis: "onset" | "specimen" } | null;
     source: { from: string; to: string } | null;
   };
-  monitoring: { dayZero: string; lastDueDay: string; dueDays: string[] } | null;
+  monitoring: {
+    dayZero: string;
+    lastDueDay: string;
+    dueDays: string[];
+    /** First day on which the absence of a check counts as missed. */
+    expectedFrom: string;
+    state: (typeof FOLLOW_STATES)[number];
+    /** Best outcome of each day with a check, also of days that are no longer due. */
+    outcomes: { day: string; outcome: (typeof CHECK_OUTCOMES)[number] }[];
+  } | null;
   classifications: { classification: string; caseDefinitionVersion: number; recordedAt: string }[];
   pairs: PersonPair[];
   groupExposures: {

@@ -86,6 +86,11 @@ export const IDENTITY_OTHER_FIELDS = [
     ["name_cipher", "direct", "FFNN", { cipher: true }],
     ["name_token", "direct", "NNNN"],
   ]),
+  ...table("identity.follow_check", [
+    ["check_id", "operational", "NNNN"],
+    ["investigation_id", "operational", "NNNN"],
+    ["note_cipher", "direct", "FFNN", { cipher: true }],
+  ]),
   ...table("identity.interview_draft", [
     ["person_id", "operational", "NNNN"],
     ["investigation_id", "operational", "NNNN"],

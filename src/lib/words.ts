@@ -1,4 +1,10 @@
-import type { Classification, InterviewOutcome, Setting } from "../../shared/vocabulary.ts";
+import type {
+  CheckOutcome,
+  Classification,
+  FollowState,
+  InterviewOutcome,
+  Setting,
+} from "../../shared/vocabulary.ts";
 
 /** Stored words as they are shown. Coded values are kept in English and lower case. */
 export const classificationWords: Readonly<Record<Classification, string>> = {
@@ -27,6 +33,22 @@ export const interviewWords: Readonly<Record<InterviewOutcome, string>> = {
   unreachable: "unreachable",
   died: "died",
   not_able: "not able",
+};
+
+export const followStateWords: Readonly<Record<FollowState, string>> = {
+  to_be_notified: "to be notified",
+  under_follow_up: "under follow-up",
+  completed: "completed",
+  lost: "lost to follow-up",
+  became_case: "became a case",
+  not_a_contact: "not a contact",
+};
+
+export const checkWords: Readonly<Record<CheckOutcome, string>> = {
+  seen: "seen",
+  spoken: "spoken to",
+  message: "message left",
+  not_reached: "not reached",
 };
 
 /** The word for a stored code; the code itself with its underscores opened where none is kept. */

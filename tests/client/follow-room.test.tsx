@@ -5,8 +5,15 @@ import userEvent from "@testing-library/user-event";
 import { createMemoryRouter, RouterProvider } from "react-router-dom";
 import { afterEach, describe, expect, it, vi } from "vitest";
 import type { FollowUpItem } from "../../shared/contracts/follow-up.ts";
-import { commonScale, dayWords, dueDays } from "../../src/features/follow-up/lib/due-days.ts";
+import { ToastProvider } from "../../src/components/ui/toast-provider.tsx";
+import {
+  commonScale,
+  dayWords,
+  dueDays,
+  followMark,
+} from "../../src/features/follow-up/lib/due-days.ts";
 import { Component } from "../../src/features/follow-up/routes/follow-route.tsx";
+import { addDays } from "../../src/lib/calendar-day.ts";
 import { InvestigationContext } from "../../src/lib/investigation-context.ts";
 import { investigation } from "./support/interview-desk.tsx";
 
@@ -26,18 +33,54 @@ const item = (over: Partial<FollowUpItem>): FollowUpItem => ({
   lastDueDay: "2026-06-04",
   dayNumber: 6,
   monitoringDays: 14,
+  mine: true,
+  version: 3,
+  state: "under_follow_up",
+  symptomatic: false,
+  lastCheck: null,
+  expectedFrom: "2026-05-22",
+  dueDays: Array.from({ length: 14 }, (_, index) => ({
+    day: addDays("2026-05-22", index),
+    outcome: null,
+  })),
+  together: null,
   ...over,
 });
 
 const today = "2026-05-27";
 
-function open(items: FollowUpItem[], { at = "/follow", withoutDayZero = 0, total = 120 } = {}) {
+function open(
+  items: FollowUpItem[],
+  {
+    at = "/follow",
+    withoutDayZero = 0,
+    total = 120,
+    answer = (_count: number) => Response.json({ id: item({}).id }, { status: 201 }),
+  } = {},
+) {
   const asked: URLSearchParams[] = [];
-  vi.stubGlobal("fetch", async (address: string) => {
+  const sent: { path: string; key: string | null; body: unknown }[] = [];
+  vi.stubGlobal("fetch", async (address: string, init: RequestInit = {}) => {
     const url = new URL(address, "http://localhost");
+    if (init.method !== "GET") {
+      sent.push({
+        path: url.pathname.replace(/^.*\/follow-up\/|^.*\/people\//, ""),
+        key: new Headers(init.headers).get("idempotency-key"),
+        body: init.body ? JSON.parse(String(init.body)) : null,
+      });
+      return answer(sent.length);
+    }
     asked.push(url.searchParams);
     const page = Number(url.searchParams.get("page"));
-    const body = { items, total, page, pageSize: 50, today, withoutDayZero };
+    const body = {
+      items,
+      total,
+      page,
+      pageSize: 50,
+      today,
+      withoutDayZero,
+      lostAfterDays: 3,
+    };
     return new Response(JSON.stringify(body), { headers: { "content-type": "application/json" } });
   });
   const router = createMemoryRouter(
@@ -52,21 +95,45 @@ function open(items: FollowUpItem[], { at = "/follow", withoutDayZero = 0, total
       client={new QueryClient({ defaultOptions: { queries: { retry: false } } })}
     >
       <InvestigationContext value={investigation}>
-        <RouterProvider router={router} />
+        <ToastProvider>
+          <RouterProvider router={router} />
+        </ToastProvider>
       </InvestigationContext>
     </QueryClientProvider>,
   );
-  return { asked, router, user: userEvent.setup({ delay: null }) };
+  return { asked, sent, router, user: userEvent.setup({ delay: null }) };
 }
 
 describe("due days", () => {
-  it("run from day 1 to day M; a past day is neither seen nor missed", () => {
-    const days = dueDays(item({}), today);
-    expect(days).toHaveLength(14);
-    expect(days[0]).toEqual({ day: "2026-05-22", state: "no_check" });
-    expect(days[5]).toEqual({ day: today, state: "due" });
-    expect(days[13]).toEqual({ day: "2026-06-04", state: "to_come" });
-    expect(days.some(({ state }) => state === "seen" || state === "missed")).toBe(false);
+  it("show what is known of each day, and leave out what nobody could do", () => {
+    const outcomes = ["seen", "spoken", "message", "not_reached", null, "not_reached", null];
+    const days = Array.from({ length: 14 }, (_, index) => ({
+      day: addDays("2026-05-22", index),
+      outcome: (outcomes[index] ?? null) as FollowUpItem["dueDays"][number]["outcome"],
+    }));
+    const states = (over: Partial<FollowUpItem>) =>
+      dueDays(item({ dueDays: days, ...over }), today).map(({ state }) => state);
+    expect(states({}).slice(0, 7)).toEqual([
+      "seen",
+      "seen",
+      "message",
+      "missed",
+      "missed",
+      "due",
+      "to_come",
+    ]);
+    expect(states({ expectedFrom: "2026-05-27" })[4]).toBe("no_check");
+    const lastCheck = {
+      day: "2026-05-23",
+      outcome: "spoken",
+      symptoms: "yes",
+      recordedAt: "2026-05-23T10:00:00Z",
+    } as const;
+    expect(states({ state: "became_case", lastCheck })).toEqual(["seen", "seen"]);
+    expect(followMark(item({ dueDays: days, state: "lost" }))).toEqual({
+      share: 2 / 14,
+      state: "lost",
+    });
   });
 
   it("are said in words at every stage", () => {
@@ -97,7 +164,7 @@ describe("follow room", () => {
     expect(within(row).getByText("day 6 of 14")).toBeTruthy();
     expect(
       within(row).getByRole("img", {
-        name: /^day 6 of 14: 5 past days without a check recorded here, due today, 8 to come/,
+        name: /^day 6 of 14: 5 missed, due today, 8 to come/,
       }),
     ).toBeTruthy();
     expect(screen.getByText(/This system does not watch for emergencies/)).toBeTruthy();
@@ -136,6 +203,98 @@ describe("follow room", () => {
     await user.type(box, "k4t-2");
     await waitFor(() => expect(asked.at(-1)?.get("q")).toBe("K4T-2"));
     expect(router.state.location.search).toBe("?show=ended&q=K4T-2");
+  });
+
+  it("records by one press, and a press tried again is the same record", async () => {
+    const { sent, user } = open([item({})], {
+      answer: (count) =>
+        count === 1
+          ? Response.json({ code: "unavailable" }, { status: 503 })
+          : Response.json({ id: item({}).id }, { status: 201 }),
+    });
+    const bar = within(await screen.findByRole("group", { name: "Check of Linnet Marsh" }));
+    await user.click(bar.getByRole("button", { name: "not reached" }));
+    expect(await screen.findByText("Not recorded.")).toBeTruthy();
+    await user.click(bar.getByRole("button", { name: "not reached" }));
+    expect(await screen.findByText("Linnet Marsh: not reached")).toBeTruthy();
+    await user.click(bar.getByRole("button", { name: "seen" }));
+    await waitFor(() => expect(sent).toHaveLength(3));
+    expect(sent.map(({ body }) => body)).toEqual([
+      { outcome: "not_reached" },
+      { outcome: "not_reached" },
+      { outcome: "seen" },
+    ]);
+    const keys = sent.map(({ key }) => key);
+    expect(keys[0]).toMatch(/^[0-9a-f-]{36}$/);
+    expect(keys[1]).toBe(keys[0]);
+    expect(keys[2]).not.toBe(keys[0]);
+    const [takeBack] = await screen.findAllByRole("button", { name: "Take back" });
+    await user.click(takeBack as HTMLElement);
+    await waitFor(() => expect(sent).toHaveLength(4));
+    expect(sent[3]?.path).toBe(`${item({}).id}/checks/${item({}).id}`);
+  });
+
+  it("takes symptoms, respondent and note along, with the words of care beside them", async () => {
+    const { sent, user } = open([item({})]);
+    const bar = within(await screen.findByRole("group", { name: "Check of Linnet Marsh" }));
+    await user.click(bar.getByRole("button", { name: "symptoms, note" }));
+    await user.click(await screen.findByRole("radio", { name: "yes" }));
+    expect(screen.getAllByText(/call local emergency services/)).toHaveLength(2);
+    await user.click(screen.getByRole("checkbox", { name: "fever" }));
+    await user.selectOptions(screen.getByRole("combobox", { name: "Who answered" }), "relative");
+    await user.type(screen.getByRole("textbox", { name: "Note" }), "asks for a visit");
+    await user.click(bar.getByRole("button", { name: "spoken to" }));
+    await waitFor(() => expect(sent).toHaveLength(1));
+    expect(sent[0]).toMatchObject({
+      path: `${item({}).id}/checks`,
+      body: {
+        outcome: "spoken",
+        symptoms: "yes",
+        symptomCodes: ["fever"],
+        respondent: "relative",
+        note: "asks for a visit",
+      },
+    });
+    await waitFor(() => expect(screen.queryByRole("textbox", { name: "Note" })).toBeNull());
+  });
+
+  it("says the state, symptoms and who stands together; a case is checked no more", async () => {
+    open([
+      item({ symptomatic: true, state: "lost", together: "household-12" }),
+      item({
+        id: "5f5c1d8a-3f0e-4f5c-8a69-6a1c4a8d7e03",
+        name: "Teal Rowan",
+        classification: "confirmed",
+        state: "became_case",
+        together: "phone-1",
+      }),
+    ]);
+    const [first, second] = await screen.findAllByRole("listitem");
+    expect(within(first as HTMLElement).getByText("symptoms reported")).toBeTruthy();
+    expect(within(first as HTMLElement).getByText("lost to follow-up")).toBeTruthy();
+    expect(within(first as HTMLElement).getByText("with household 12")).toBeTruthy();
+    expect(
+      within(first as HTMLElement).getByRole("img", { name: /contact, lost to follow-up/ }),
+    ).toBeTruthy();
+    expect(within(second as HTMLElement).getByText("shares a telephone")).toBeTruthy();
+    expect(
+      within(second as HTMLElement).getByRole("img", { name: /case, was a contact before/ }),
+    ).toBeTruthy();
+    expect(within(second as HTMLElement).queryByRole("button")).toBeNull();
+  });
+
+  it("makes a contact a case after a question", async () => {
+    const { sent, user } = open([item({})], { answer: () => Response.json({}) });
+    await user.click(await screen.findByRole("button", { name: "meets the definition" }));
+    const question = within(await screen.findByRole("alertdialog"));
+    await user.click(question.getByRole("radio", { name: "probable case" }));
+    await user.click(question.getByRole("button", { name: "Make a case" }));
+    await waitFor(() => expect(sent).toHaveLength(1));
+    expect(sent[0]).toMatchObject({
+      path: item({}).id,
+      body: { version: 3, classification: "probable" },
+    });
+    await waitFor(() => expect(screen.queryByRole("alertdialog")).toBeNull());
   });
 
   it("says in words when nobody is due", async () => {

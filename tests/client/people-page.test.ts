@@ -2,6 +2,7 @@ import { describe, expect, it } from "vitest";
 import type { Person, PersonPage } from "../../shared/contracts/people.ts";
 import { HIDDEN_AT_FIRST, peopleColumns } from "../../src/features/people/people-columns.tsx";
 import { ILLNESS_FACTS, presentFacts, WHO_FACTS } from "../../src/features/people/person-facts.ts";
+import { personMarkOf } from "../../src/features/people/person-mark-of.ts";
 import { countWords, dayRange, personStrip } from "../../src/features/people/strip-rows.ts";
 import { orderQueue } from "../../src/features/people/use-interview-queue.ts";
 
@@ -150,19 +151,50 @@ describe("the day strip of a person", () => {
     });
   });
 
-  it("shows due days from today on and counts from day 0", () => {
-    const dueDays = ["2026-05-26", "2026-05-27", "2026-05-28"];
-    const strip = personStrip(
-      page({ monitoring: { dayZero: "2026-05-25", lastDueDay: "2026-05-28", dueDays } }),
-      today,
-    );
-    expect(strip?.rows[0]).toMatchObject({
-      label: "day 2 of 3",
+  const monitoring = {
+    dayZero: "2026-05-24",
+    lastDueDay: "2026-05-28",
+    dueDays: ["2026-05-25", "2026-05-26", "2026-05-27", "2026-05-28"],
+    expectedFrom: "2026-05-25",
+    state: "under_follow_up",
+    outcomes: [{ day: "2026-05-25", outcome: "spoken" }],
+  } as const;
+  const copy = (over: object) =>
+    ({ ...structuredClone(monitoring), ...over }) as unknown as PersonPage["monitoring"];
+  const dueOf = (person: PersonPage) =>
+    personStrip(person, today)?.rows.find((row) => row.type === "due");
+
+  it("shows each due day with what is known of it and counts from day 0", () => {
+    expect(dueOf(page({ monitoring: copy({}) }))).toMatchObject({
+      label: "day 3 of 4",
       days: [
+        { day: "2026-05-25", state: "seen" },
+        { day: "2026-05-26", state: "missed" },
         { day: "2026-05-27", state: "due" },
         { day: "2026-05-28", state: "to_come" },
       ],
     });
+  });
+
+  it("keeps the checks of a contact who became a case, and no days to come", () => {
+    const person = page({
+      classification: "confirmed",
+      becameCase: true,
+      monitoring: copy({ state: "became_case" }),
+    });
+    expect(dueOf(person)).toMatchObject({
+      label: "due days",
+      days: [{ day: "2026-05-25", state: "seen" }],
+    });
+    expect(personMarkOf(person)).toEqual({ classification: "confirmed", wasContact: true });
+  });
+
+  it("draws the share of due days done in the mark, and says when it is broken", () => {
+    const mark = (over: object) =>
+      personMarkOf(page({ classification: "contact", monitoring: copy(over) }))?.followUp;
+    expect(mark({})).toEqual({ share: 0.25, state: "active" });
+    expect(mark({ state: "lost" })?.state).toBe("lost");
+    expect(mark({ state: "completed" })?.state).toBe("completed");
   });
 
   it("names a neighbour only where the answer does", () => {

@@ -310,6 +310,11 @@ test("nothing is left in logs, sessions, receipts, the access record or any tabl
     body: { version: 0, body: { contacts: [world.marked.named] } },
   });
   expect(draft.status).toBe(200);
+  const checked = await client.post(`${base}/follow-up/${world.people.named}/checks`, {
+    outcome: "spoken",
+    note: `${world.marked.named.name}, ${world.marked.named.phone}`,
+  });
+  expect(checked.status).toBe(201);
   const csv = `ref,name,phone,address\n${randomUUID()},${world.marked.named.name},${world.marked.named.phone},${world.marked.named.address}\n`;
   const { supervisor } = world.everyone;
   const staged = await supervisor.client.upload(

@@ -27,6 +27,7 @@ beforeAll(async () => {
   cookies = await cookiesOf(world);
   objects = {
     personId: { own: world.people.held, other: world.foreign },
+    checkId: { own: await checkOf(world.people.held), other: await checkOf(world.foreign) },
     memberId: {
       own: world.everyone.epidemiologist.memberId,
       other: world.others.epidemiologist.memberId,
@@ -46,6 +47,17 @@ beforeAll(async () => {
 afterAll(async () => {
   await world?.close();
 });
+
+/** A check of a person, whoever may see it. */
+async function checkOf(personId: string): Promise<string> {
+  const made = await world.admin.query(
+    `insert into core.follow_check (id, investigation_id, person_id, day, outcome)
+     select gen_random_uuid(), investigation_id, id, '2026-03-04', 'seen' from core.person
+     where id = $1 returning id`,
+    [personId],
+  );
+  return made.rows[0].id;
+}
 
 type Where = "own" | "other" | "random" | "malformed";
 const WHERE: readonly Where[] = ["own", "other", "random", "malformed"];
@@ -68,6 +80,9 @@ async function addressOf(route: AnyRoute, where: Where, object: Where): Promise<
       // What a deletion may end is made for it.
       const account = await buildAccount(world.app);
       own = await buildMember(world.app, world.here, account.id, "tracer");
+    }
+    if (route.method === "delete" && object === "own" && name === "checkId") {
+      own = await checkOf(world.people.held);
     }
     path = path.replace(`:${name}`, pick(object, own, known.other));
   }

@@ -190,7 +190,7 @@ describe("dispatcher", () => {
       end: () => {},
     });
     const { version } = await interviewed(graph, 2);
-    await until(() => heard.length > 0);
+    await until(() => heard.some(([message]) => message.version === version));
     const mine = heard.find(([message]) => message.version === version);
     expect(mine).toEqual([{ topic: "graph", id: null, version }, version]);
     leave();

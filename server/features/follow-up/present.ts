@@ -1,9 +1,12 @@
 import type { FollowUpItem } from "../../../shared/contracts/follow-up.ts";
 import { dayNumber } from "../../../shared/core/index.ts";
+import { bestOutcomes, followState } from "../../../shared/follow-state.ts";
 import type { Classification } from "../../../shared/vocabulary.ts";
-import { shiftDay } from "../../clock.ts";
+import { dayIn, shiftDay } from "../../clock.ts";
 import type { OpenedPeople } from "../../identity/records.ts";
+import type { InvestigationRow } from "../investigations/store.ts";
 import type { FollowUpRow } from "./queries.ts";
+import type { CheckRow } from "./store.ts";
 
 /** Whole days from one day to another. */
 function daysBetween(from: string, to: string): number {
@@ -15,24 +18,59 @@ function daysBetween(from: string, to: string): number {
 /**
  * A contact under follow-up: day 0 is the last exposure day, `dayNumber` is today's, and follow-up
  * is due on days 1 … M. Name and number are there only where they are the acting person's to know.
+ *
+ * @param checks this contact's checks, oldest first
  */
 export function presentFollowUp(
   row: FollowUpRow,
   opened: OpenedPeople,
+  checks: readonly CheckRow[],
   today: string,
-  monitoringDays: number,
+  settings: Pick<InvestigationRow, "monitoringDays" | "lostAfterDays" | "timeZone">,
 ): FollowUpItem {
   const identity = opened.get(row.id);
+  const { monitoringDays, lostAfterDays } = settings;
+  const classification = row.classification as Classification | null;
+  const { dayZero } = row;
+  const expectedFrom = shiftDay(dayIn(settings.timeZone, row.recordedAt), 1);
+  const best = bestOutcomes(checks);
+  const last = checks.at(-1);
   return {
     id: row.id,
     studyNumber: row.studyNumber,
     ...(row.mine ? { name: identity?.name ?? null, phone: identity?.phone ?? null } : {}),
     area: row.area,
-    classification: row.classification as Classification | null,
+    classification,
     assignedTo: row.assignedTo,
-    dayZero: row.dayZero,
-    lastDueDay: shiftDay(row.dayZero, monitoringDays),
-    dayNumber: daysBetween(row.dayZero, today),
+    mine: row.mine,
+    version: row.version,
+    dayZero,
+    lastDueDay: shiftDay(dayZero, monitoringDays),
+    dayNumber: daysBetween(dayZero, today),
     monitoringDays,
+    state: followState({
+      classification,
+      dayZero,
+      monitoringDays,
+      today,
+      expectedFrom,
+      lostAfterDays,
+      checks,
+    }),
+    symptomatic: row.symptomatic,
+    lastCheck: last
+      ? {
+          day: last.day,
+          outcome: last.outcome,
+          symptoms: last.symptoms,
+          recordedAt: last.recordedAt,
+        }
+      : null,
+    expectedFrom,
+    dueDays: Array.from({ length: monitoringDays }, (_, index) => {
+      const day = shiftDay(dayZero, index + 1);
+      return { day, outcome: best.get(day) ?? null };
+    }),
+    together: row.together,
   };
 }

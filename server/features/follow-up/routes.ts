@@ -1,18 +1,30 @@
 import { z } from "zod";
-import { followUpList, followUpQuery } from "../../../shared/contracts/follow-up.ts";
+import { listQuery, receipt } from "../../../shared/contracts/common.ts";
+import {
+  followCheckInput,
+  followCheckList,
+  followUpList,
+  followUpQuery,
+} from "../../../shared/contracts/follow-up.ts";
 import { dayIn, now } from "../../clock.ts";
 import { type AnyRoute, defineRoute } from "../../http/route.ts";
 import { findPeople, openPeople } from "../../identity/records.ts";
 import { loadInvestigation } from "../investigations/store.ts";
+import { listChecks } from "./checks.ts";
+import { recordCheck } from "./commands/record-check.ts";
+import { withdrawCheck } from "./commands/withdraw-check.ts";
 import { presentFollowUp } from "./present.ts";
 import { listFollowUp } from "./queries.ts";
+import { checksOf } from "./store.ts";
 
-/** The list of contacts to be followed up. */
+const personParams = z.object({ id: z.uuid(), personId: z.uuid() });
+
+/** Contacts to be followed up, and the checks made of them. */
 export const followUpRoutes: AnyRoute[] = [
   defineRoute({
     method: "get",
     path: "/api/investigations/:id/follow-up",
-    summary: "Contacts with their due days, those ending first at the top",
+    summary: "Contacts with their due days: symptomatic ones on top, then those ending first",
     policy: ["tracer", "supervisor"],
     params: z.object({ id: z.uuid() }),
     query: followUpQuery,
@@ -24,24 +36,68 @@ export const followUpRoutes: AnyRoute[] = [
       const found = query.q
         ? (await findPeople(tx, keys, query.q, settings.countryCode)).map((one) => one.personId)
         : null;
-      const { monitoringDays } = settings;
       const { rows, total, withoutDayZero } = await listFollowUp(
         tx,
         query,
         found,
         today,
-        monitoringDays,
+        settings.monitoringDays,
       );
       const mine = rows.filter((row) => row.mine).map((row) => row.id);
       const opened = await openPeople(tx, keys, mine, ["name", "phone"], "follow_up.listed");
+      const checks = await checksOf(
+        tx,
+        rows.map((row) => row.id),
+      );
       return {
-        items: rows.map((row) => presentFollowUp(row, opened, today, monitoringDays)),
+        items: rows.map((row) =>
+          presentFollowUp(row, opened, checks.get(row.id) ?? [], today, settings),
+        ),
         total,
         page: query.page,
         pageSize: query.pageSize,
         today,
         withoutDayZero,
+        lostAfterDays: settings.lostAfterDays,
       };
     },
+  }),
+  defineRoute({
+    method: "get",
+    path: "/api/investigations/:id/follow-up/:personId/checks",
+    summary: "Checks of a contact, the latest first",
+    policy: ["tracer", "supervisor"],
+    params: personParams,
+    query: listQuery,
+    output: followCheckList,
+    async run({ tx, actor, services, params: { personId }, query }) {
+      const { items, total } = await listChecks(tx, services.keys, actor, personId, query);
+      return { items, total, page: query.page, pageSize: query.pageSize };
+    },
+  }),
+  defineRoute({
+    method: "post",
+    path: "/api/investigations/:id/follow-up/:personId/checks",
+    summary: "Record a check of a contact",
+    policy: ["tracer", "supervisor"],
+    params: personParams,
+    body: followCheckInput,
+    output: receipt,
+    creates: true,
+    async run({ tx, actor, services, params: { personId }, body }) {
+      const settings = await loadInvestigation(tx, actor.investigationId);
+      return { id: await recordCheck(tx, services.keys, actor, settings, personId, body) };
+    },
+  }),
+  defineRoute({
+    method: "delete",
+    path: "/api/investigations/:id/follow-up/:personId/checks/:checkId",
+    summary: "Take back a check that was entered by mistake",
+    policy: ["tracer", "supervisor"],
+    params: personParams.extend({ checkId: z.uuid() }),
+    output: z.null(),
+    status: 204,
+    run: ({ tx, actor, params: { personId, checkId } }) =>
+      withdrawCheck(tx, actor, personId, checkId),
   }),
 ];

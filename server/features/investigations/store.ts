@@ -18,6 +18,8 @@ export interface InvestigationRow {
   incubationMin: number;
   incubationMax: number;
   monitoringDays: number;
+  /** Due days in a row without being reached after which a contact counts as lost. */
+  lostAfterDays: number;
   caseDefinitionVersion: number;
   graphVersion: number;
   version: number;
@@ -27,6 +29,7 @@ const COLUMNS = sql.raw(`id, name, invented, time_zone as "timeZone", country_co
   population_at_risk as "populationAtRisk", infectious_before as "infectiousBefore",
   infectious_after as "infectiousAfter", incubation_min as "incubationMin",
   incubation_max as "incubationMax", monitoring_days as "monitoringDays",
+  lost_after_days as "lostAfterDays",
   case_definition_version as "caseDefinitionVersion", graph_version::float8 as "graphVersion", version`);
 
 /** The acting investigation with its settings. Row security lets no other one through. */

@@ -1,11 +1,14 @@
 import { sql } from "drizzle-orm";
 import { accessTo, openableKeys, readableColumns } from "../../../shared/fields.ts";
-import { isCase } from "../../../shared/vocabulary.ts";
+import { bestOutcomes, followState } from "../../../shared/follow-state.ts";
+import { type Classification, isCase } from "../../../shared/vocabulary.ts";
 import { infectiousWindow, monitoringPeriod, sourceWindow } from "../../../shared/windows.ts";
+import { dayIn, now, shiftDay } from "../../clock.ts";
 import type { Tx } from "../../db/with-tx.ts";
 import type { Actor } from "../../http/route.ts";
 import type { KeyRing } from "../../identity/keys.ts";
 import { openPeople } from "../../identity/records.ts";
+import { checksOf } from "../follow-up/store.ts";
 import type { InvestigationRow } from "../investigations/store.ts";
 import { type CorePerson, peopleById } from "./queries.ts";
 
@@ -114,6 +117,31 @@ async function dayZeroOf(
     .flatMap((pair) => pair.exposures.map((exposure) => exposure.lastExposure));
 }
 
+/** Days on which the contact was tried, with the best outcome; and from when on a gap is a miss. */
+async function checkedDays(
+  tx: Tx,
+  person: CorePerson,
+  settings: InvestigationRow,
+  dayZero: string,
+) {
+  const checks = (await checksOf(tx, [person.id])).get(person.id) ?? [];
+  const expectedFrom = shiftDay(dayIn(settings.timeZone, String(person.recordedAt)), 1);
+  const { monitoringDays, lostAfterDays } = settings;
+  return {
+    expectedFrom,
+    state: followState({
+      classification: person.classification as Classification | null,
+      dayZero,
+      monitoringDays,
+      today: dayIn(settings.timeZone, now()),
+      expectedFrom,
+      lostAfterDays,
+      checks,
+    }),
+    outcomes: [...bestOutcomes(checks)].map(([day, outcome]) => ({ day, outcome })),
+  };
+}
+
 /**
  * Everything beside the person on a person's page: windows, monitoring, history, pairs, attempts.
  * A neighbour's name is there only when it is the acting person's to know.
@@ -155,14 +183,19 @@ export async function personPageParts(
         order by held_at desc, id`,
   );
   const pairs = await pairsOf(tx, ring, actor, exposures);
+  const monitoring =
+    sick && !person.becameCase
+      ? null
+      : monitoringPeriod(await dayZeroOf(tx, actor, person, pairs), settings.monitoringDays);
   return {
     windows: {
       infectious: sick ? infectiousWindow(dates, settings) : null,
       source: sick ? sourceWindow(dates, settings) : null,
     },
-    monitoring: sick
-      ? null
-      : monitoringPeriod(await dayZeroOf(tx, actor, person, pairs), settings.monitoringDays),
+    monitoring: monitoring && {
+      ...monitoring,
+      ...(await checkedDays(tx, person, settings, monitoring.dayZero)),
+    },
     classifications: history.rows,
     pairs,
     groupExposures: groups.rows.map(({ placeNumber, ...row }) => ({

@@ -3,7 +3,7 @@ import type { DayStripRow, DueState } from "./day-strip-row.ts";
 import { dueWords } from "./day-strip-row.ts";
 import { DueMark } from "./due-marks.tsx";
 
-const dueStates: readonly DueState[] = ["seen", "missed", "no_check", "due", "to_come"];
+const dueStates: readonly DueState[] = ["seen", "message", "missed", "no_check", "due", "to_come"];
 
 /** What the shapes mean; only those that the rows use. */
 export function DayStripLegend({ rows }: { rows: readonly DayStripRow[] }) {

@@ -42,10 +42,11 @@ export type GroupRow = RowBase & {
   count: string;
 };
 
-export type DueState = "seen" | "missed" | "due" | "to_come" | "no_check";
+export type DueState = "seen" | "message" | "missed" | "due" | "to_come" | "no_check";
 
 /**
- * Follow-up days of one contact. `due` is today's, not seen yet; `no_check` is a past day of which
+ * Follow-up days of one contact. `message` is a day on which word was left and nothing heard; `due`
+ * is today's, not seen yet; `no_check` is a past day of which
  * nothing was recorded here, which says neither that the contact was seen nor that they were missed.
  */
 export type DueRow = RowBase & {
@@ -68,6 +69,7 @@ export type DayStripRow = WindowRow | ExposureRow | GroupRow | DueRow | OnsetRow
 /** Words for the states of a due day. */
 export const dueWords: Readonly<Record<DueState, string>> = {
   seen: "seen",
+  message: "message left",
   missed: "missed",
   due: "due today",
   to_come: "to come",

@@ -2,8 +2,8 @@ import type { DayScale } from "./day-scale.ts";
 import type { DueRow, DueState } from "./day-strip-row.ts";
 
 /**
- * One due day of `size` pixels: filled = seen, cross = missed, frame = due today, line = to come,
- * dot = nothing recorded.
+ * One due day of `size` pixels: filled = seen, half filled = message left, cross = missed, frame =
+ * due today, line = to come, dot = nothing recorded.
  */
 export function DueMark({
   state,
@@ -19,6 +19,14 @@ export function DueMark({
   switch (state) {
     case "seen":
       return <rect x={x} y={y} width={size} height={size} fill="var(--seen)" />;
+    case "message":
+      return (
+        <path
+          d={`M${x} ${y + size}V${y}L${x + size} ${y + size}Z`}
+          fill="var(--seen)"
+          stroke="var(--seen)"
+        />
+      );
     case "missed":
       return (
         <path

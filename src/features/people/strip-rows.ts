@@ -2,6 +2,7 @@ import type { PersonPage, PersonPair } from "../../../shared/contracts/people.ts
 import { isCase } from "../../../shared/vocabulary.ts";
 import type { DayStripRow, ExposureRow } from "../../components/day-strip/day-strip-row.ts";
 import { addDays, dayFromNumber, dayNumber, daysBetween } from "../../lib/calendar-day.ts";
+import { dueState } from "../../lib/due-state.ts";
 import { settingWords, wordFor } from "../../lib/words.ts";
 import { personMarkOf } from "./person-mark-of.ts";
 
@@ -85,19 +86,26 @@ function windowRows(person: PersonPage): DayStripRow[] {
   ];
 }
 
-/** Due days from today on. Days gone by are left out: visits are not part of this page's answer. */
+/** Due days with what is known of each; of a contact who became a case, up to the last check. */
 function dueRow(person: PersonPage, today: string): DayStripRow[] {
   const { monitoring } = person;
   if (!monitoring) return [];
-  const days = monitoring.dueDays.filter((day) => day >= today);
+  const outcomes = new Map(monitoring.outcomes.map(({ day, outcome }) => [day, outcome]));
+  const over = monitoring.state === "became_case" || monitoring.state === "not_a_contact";
+  const last = [...outcomes.keys()].sort().at(-1) ?? "";
+  const days = monitoring.dueDays.filter((day) => !over || day <= last);
   if (days.length === 0) return [];
   const nth = daysBetween(monitoring.dayZero, today) ?? 0;
+  const running = !over && nth > 0 && nth <= monitoring.dueDays.length;
   return [
     {
       type: "due",
       id: "due",
-      label: nth > 0 ? `day ${nth} of ${monitoring.dueDays.length}` : "due days",
-      days: days.map((day) => ({ day, state: day === today ? "due" : "to_come" })),
+      label: running ? `day ${nth} of ${monitoring.dueDays.length}` : "due days",
+      days: days.map((day) => ({
+        day,
+        state: dueState(day, outcomes.get(day), today, monitoring.expectedFrom),
+      })),
     },
   ];
 }

@@ -30,6 +30,11 @@ const BODIES: Record<string, (world: World) => unknown> = {
     kind: "PCR",
     result: "negative",
   }),
+  "post /api/investigations/:id/follow-up/:personId/checks": () => ({
+    outcome: "spoken",
+    symptoms: "no",
+    respondent: "self",
+  }),
   "post /api/investigations/:id/places": () => ({ name: "Hall", setting: "workplace" }),
   "post /api/investigations/:id/interviews": (world) => ({
     personId: world.people.held,

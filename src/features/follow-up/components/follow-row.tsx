@@ -4,9 +4,11 @@ import { paths } from "../../../app/paths.ts";
 import { PersonMark } from "../../../components/person-mark/person-mark.tsx";
 import { Answer } from "../../../components/ui/answer.tsx";
 import { formatDay } from "../../../lib/formatters.ts";
-import { dayWords } from "../lib/due-days.ts";
+import { dayWords, followMark } from "../lib/due-days.ts";
+import { CheckBar } from "./check-bar.tsx";
 import { DueStrip, type DueStripProps } from "./due-strip.tsx";
 import { followColumns } from "./follow-grid.ts";
+import { FollowStatus, isFollowed } from "./follow-status.tsx";
 
 export type FollowRowProps = Omit<DueStripProps, "item"> & {
   item: FollowUpItem;
@@ -26,6 +28,8 @@ export function FollowRow({ item, investigationId, ...strip }: FollowRowProps) {
       <p className="flex min-w-0 items-start gap-1.5">
         <PersonMark
           classification={item.classification ?? "contact"}
+          wasContact={item.state === "became_case"}
+          followUp={followMark(item)}
           className="mt-[0.125em] pointer-coarse:mt-2.5"
         />
         <span className="min-w-0 [overflow-wrap:anywhere]">
@@ -59,6 +63,16 @@ export function FollowRow({ item, investigationId, ...strip }: FollowRowProps) {
       </p>
       <div className="col-span-2 min-w-0 lg:col-span-1">
         <DueStrip item={item} {...strip} />
+      </div>
+      <div className="col-span-full flex min-w-0 flex-wrap items-center gap-x-5 gap-y-1.5">
+        <FollowStatus item={item} />
+        {isFollowed(item.state) ? (
+          <CheckBar
+            investigationId={investigationId}
+            person={{ ...item, called: item.name ?? item.studyNumber }}
+            today={strip.today}
+          />
+        ) : null}
       </div>
     </li>
   );

@@ -1,20 +1,31 @@
 import type { FollowUpItem } from "../../../../shared/contracts/follow-up.ts";
-import type { DueState } from "../../../components/day-strip/day-strip-row.ts";
+import { isSeen } from "../../../../shared/follow-state.ts";
+import { type DueState, dueWords } from "../../../components/day-strip/day-strip-row.ts";
+import type { PersonMarkInput } from "../../../components/person-mark/person-mark-input.ts";
 import { addDays } from "../../../lib/calendar-day.ts";
+import { dueState } from "../../../lib/due-state.ts";
 import { formatDay } from "../../../lib/formatters.ts";
 
 type Monitored = Pick<FollowUpItem, "dayZero" | "lastDueDay" | "dayNumber" | "monitoringDays">;
+type Followed = Monitored & Pick<FollowUpItem, "dueDays" | "expectedFrom" | "state" | "lastCheck">;
 
-/**
- * The due days of a contact, day 1 to day M. Nothing is known here of visits, so a past day is
- * neither seen nor missed.
- */
-export function dueDays(item: Monitored, today: string): { day: string; state: DueState }[] {
-  return Array.from({ length: item.monitoringDays }, (_, index) => {
-    const day = addDays(item.dayZero, index + 1);
-    const state = day < today ? "no_check" : day === today ? "due" : "to_come";
-    return { day, state };
-  });
+/** The due days of a contact, day 1 to day M; of one who is none any more, up to the last check. */
+export function dueDays(item: Followed, today: string): { day: string; state: DueState }[] {
+  const over = item.state === "became_case" || item.state === "not_a_contact";
+  const last = item.lastCheck?.day ?? "";
+  return item.dueDays
+    .filter(({ day }) => !over || day <= last)
+    .map(({ day, outcome }) => ({
+      day,
+      state: dueState(day, outcome, today, item.expectedFrom),
+    }));
+}
+
+/** Follow-up as a person mark draws it: the share of due days done, and whether it is broken. */
+export function followMark(item: Followed): NonNullable<PersonMarkInput["followUp"]> {
+  const done = item.dueDays.filter(({ outcome }) => isSeen(outcome)).length;
+  const state = item.state === "completed" || item.state === "lost" ? item.state : "active";
+  return { share: done / Math.max(1, item.dueDays.length), state };
 }
 
 /** "day 6 of 14", "day 0, first due tomorrow", "ended on 3 Jun". */
@@ -27,18 +38,15 @@ export function dayWords(item: Monitored): string {
 }
 
 /** The strip of a contact in words, for readers. */
-export function stripWords(item: Monitored, today: string): string {
+export function stripWords(item: Followed, today: string): string {
   const days = dueDays(item, today);
-  const count = (state: DueState) => days.filter((one) => one.state === state).length;
-  const past = count("no_check");
-  const parts = [
-    ...(past > 0
-      ? [`${past} past ${past === 1 ? "day" : "days"} without a check recorded here`]
-      : []),
-    ...(count("due") > 0 ? ["due today"] : []),
-    `${count("to_come")} to come`,
-  ];
-  return `${dayWords(item)}: ${parts.join(", ")}; last due day ${formatDay(item.lastDueDay)}`;
+  const parts = (Object.keys(dueWords) as DueState[]).flatMap((state) => {
+    const count = days.filter((one) => one.state === state).length;
+    if (count === 0) return [];
+    return [state === "due" ? dueWords.due : `${count} ${dueWords[state]}`];
+  });
+  const said = parts.length > 0 ? parts.join(", ") : "no due days";
+  return `${dayWords(item)}: ${said}; last due day ${formatDay(item.lastDueDay)}`;
 }
 
 /** One scale for all rows of a page: from the earliest first due day to the latest last one. */

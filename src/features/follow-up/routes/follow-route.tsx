@@ -8,7 +8,7 @@ import { LoadingState } from "../../../components/ui/loading-state.tsx";
 import { Notice } from "../../../components/ui/notice.tsx";
 import { Pagination } from "../../../components/ui/pagination.tsx";
 import { errorKind } from "../../../lib/api-error.ts";
-import { formatDay, formatNumber } from "../../../lib/formatters.ts";
+import { formatCount, formatDay, formatNumber } from "../../../lib/formatters.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
 import { type FollowUpAsk, useFollowUp } from "../api/use-follow-up.ts";
 import { FollowList } from "../components/follow-list.tsx";
@@ -114,8 +114,8 @@ export function Component() {
             </Notice>
           ) : null}
           <p className="mt-3 text-sm text-ink-2">
-            Checks are not entered here yet: a past day shows a dot, which says neither seen nor
-            missed.
+            Completed is who was seen or spoken to on the last due day or after it; lost is who was
+            not reached on {formatCount(data.lostAfterDays, "due day", "due days")} in a row.
           </p>
         </>
       )}

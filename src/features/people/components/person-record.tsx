@@ -12,7 +12,7 @@ import { LoadingState } from "../../../components/ui/loading-state.tsx";
 import { errorKind } from "../../../lib/api-error.ts";
 import { formatCount, formatDay } from "../../../lib/formatters.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
-import { classificationWords } from "../../../lib/words.ts";
+import { classificationWords, followStateWords } from "../../../lib/words.ts";
 import { personQuery } from "../api/get-person.ts";
 import { ILLNESS_FACTS, WHO_FACTS } from "../person-facts.ts";
 import { personMarkOf } from "../person-mark-of.ts";
@@ -27,13 +27,15 @@ export type PersonRecordProps = {
   personId: string;
   /** Tests are another feature: the page is put together by the application. */
   tests: (person: PersonPage) => ReactNode;
+  /** So is the follow-up of those who are or were a contact. */
+  followUp?: (person: PersonPage) => ReactNode;
 };
 
 /** A person's page. Who reads it decides what the answer holds; the page shows what is there. */
-export function PersonRecord({ personId, tests }: PersonRecordProps) {
+export function PersonRecord({ personId, ...features }: PersonRecordProps) {
   const { id: investigationId } = useInvestigation();
   const person = useQuery(personQuery(investigationId, personId));
-  if (person.data) return <Record person={person.data} tests={tests} />;
+  if (person.data) return <Record person={person.data} {...features} />;
   return (
     <div className="pt-6">
       {person.isError ? (
@@ -49,7 +51,11 @@ export function PersonRecord({ personId, tests }: PersonRecordProps) {
   );
 }
 
-function Record({ person, tests }: { person: PersonPage; tests: PersonRecordProps["tests"] }) {
+function Record({
+  person,
+  tests,
+  followUp,
+}: { person: PersonPage } & Omit<PersonRecordProps, "personId">) {
   const { id: investigationId, today, timeZone } = useInvestigation();
   const shared = { person, investigationId, today };
   const mark = personMarkOf(person);
@@ -81,6 +87,7 @@ function Record({ person, tests }: { person: PersonPage; tests: PersonRecordProp
       <PersonStrip person={person} today={today} />
       <EditableSection title="Who" section="who" facts={WHO_FACTS} {...shared} />
       <EditableSection title="Illness" section="illness" facts={ILLNESS_FACTS} {...shared} />
+      {person.monitoring ? followUp?.(person) : null}
       {tests(person)}
       <Section title="Contact pairs" subLine={formatCount(person.pairs.length, "pair", "pairs")}>
         <PairTable person={person} investigationId={investigationId} />
@@ -118,7 +125,10 @@ function Side(props: { person: PersonPage; investigationId: string; timeZone: st
 
 function monitoringWords(person: PersonPage, today: string): string {
   if (!person.monitoring) return "";
-  const { lastDueDay } = person.monitoring;
+  const { lastDueDay, state } = person.monitoring;
+  if (state !== "to_be_notified" && state !== "under_follow_up") {
+    return state === "became_case" ? " · was a contact before" : ` · ${followStateWords[state]}`;
+  }
   const words = lastDueDay < today ? "monitoring period ended" : "monitored until";
   return ` · ${words} ${formatDay(lastDueDay)}`;
 }
