@@ -6,6 +6,7 @@ import express, { type Express, type NextFunction, type Request, type Response }
 import session from "express-session";
 import { IDLE_MINUTES } from "../shared/roles.ts";
 import { headers, jsonOnly, originGate, requestId } from "./http/guards.ts";
+import { lateCookies } from "./http/late-cookie.ts";
 import { mount } from "./http/mount.ts";
 import { openApiDocument } from "./http/openapi.ts";
 import { HttpProblem, problemBody } from "./http/problem.ts";
@@ -93,7 +94,7 @@ export function createApp(services: Services, dev?: express.Handler): Express {
 
   app.use("/api", originGate(services.env), jsonOnly);
   app.use("/api", express.json({ limit: "256kb", inflate: false, strict: true }));
-  app.use("/api", sessions(services));
+  app.use("/api", lateCookies, sessions(services));
   app.use("/api", async (request: Request, response: Response, next: NextFunction) => {
     if (request.get("x-strandline-background") === "1" && request.session) {
       // Live updates are not activity: the store leaves the idle clock of a marked session alone.
