@@ -30,7 +30,8 @@ const rooms: RouteObject[] = [
   { path: "follow", lazy: () => import("../features/follow-up/routes/follow-route.tsx") },
   { path: "review", lazy: () => import("../features/review/routes/review-route.tsx") },
   { path: "compare", lazy: () => import("../features/compare/routes/compare-route.tsx") },
-  { path: "safeguard", lazy: () => import("../features/safeguard/routes/safeguard-route.tsx") },
+  { path: "safeguard", lazy: () => import("./routes/safeguard-route.tsx") },
+  { path: "members", lazy: () => import("./routes/members-route.tsx") },
 ];
 
 const routes: RouteObject[] = [
@@ -48,10 +49,24 @@ const routes: RouteObject[] = [
         lazy: () => import("../features/session/routes/first-officer-route.tsx"),
       },
       {
+        path: "/invitation",
+        lazy: () => import("../features/session/routes/invitation-route.tsx"),
+      },
+      {
+        path: "/forgotten-password",
+        lazy: () => import("../features/session/routes/forgotten-password-route.tsx"),
+      },
+      {
+        path: "/new-password",
+        lazy: () => import("../features/session/routes/new-password-route.tsx"),
+      },
+      { path: "/inbox", lazy: () => import("../features/session/routes/inbox-route.tsx") },
+      {
         lazy: () => import("./routes/signed-in-layout.tsx"),
         children: [
           { index: true, lazy: () => import("./routes/home-route.tsx") },
           { path: "acting", lazy: () => import("./routes/acting-route.tsx") },
+          { path: "password", lazy: () => import("./routes/password-route.tsx") },
           { path: "investigations", lazy: () => import("./routes/investigations-route.tsx") },
           {
             path: "i/:investigationId",

@@ -1,3 +1,4 @@
+import type { ReactNode } from "react";
 import { useSearchParams } from "react-router-dom";
 import { RoomPage } from "../../../components/layouts/room-page.tsx";
 import { Caution } from "../../../components/ui/caution.tsx";
@@ -5,17 +6,20 @@ import { ErrorState } from "../../../components/ui/error-state.tsx";
 import { Tabs } from "../../../components/ui/tabs.tsx";
 import { useSession } from "../../../lib/session-context.ts";
 import { EventsTab } from "../components/events-tab.tsx";
-import { MembersTab } from "../components/members-tab.tsx";
 import { PolicyTab } from "../components/policy-tab.tsx";
 
-const tabs = [
-  { id: "policy", label: "Field policy", content: <PolicyTab /> },
-  { id: "events", label: "Access events", content: <EventsTab /> },
-  { id: "members", label: "Members", content: <MembersTab /> },
-];
+export type SafeguardRouteProps = {
+  /** Who works here: a part that other pages show as well, handed in by the page that joins both. */
+  members: ReactNode;
+};
 
 /** Safeguard: who may see which field, who looked, and who works here. */
-export function Component() {
+export function SafeguardRoute({ members }: SafeguardRouteProps) {
+  const tabs = [
+    { id: "policy", label: "Field policy", content: <PolicyTab /> },
+    { id: "events", label: "Access events", content: <EventsTab /> },
+    { id: "members", label: "Members", content: members },
+  ];
   const { actingRole } = useSession();
   const [params, setParams] = useSearchParams();
   const asked = params.get("tab");
