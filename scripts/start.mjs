@@ -13,6 +13,8 @@ import { endProcess, isAlive, processIdentity, startedBy, stopCaptured } from ".
 import { dataFolder, makeDataFolder, projectRoot } from "./lib/project.mjs";
 import { checkSettings } from "./lib/settings.mjs";
 
+/** The server's exit code for a boot it refused in plain words. */
+const REFUSED = 78;
 const SERVER_GRACE_MS = 15_000;
 /** The terminal and npm may both pass on one Ctrl-C: signals this close together are one. */
 const SAME_SIGNAL_MS = 1_000;
@@ -172,6 +174,8 @@ async function serve({ data, address, dev, lock, end }) {
     lock.update({ address, stopping: true });
     if (first.outcome) {
       const { code, why } = first.outcome;
+      // The server has said in one line why it does not start.
+      if (code === REFUSED) return 1;
       if (code !== 0 || why) complain(`the server ended (${why ?? `exit code ${code}`})`);
       return code;
     }

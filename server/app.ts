@@ -5,7 +5,15 @@ import compression from "compression";
 import express, { type Express, type NextFunction, type Request, type Response } from "express";
 import session from "express-session";
 import { IDLE_MINUTES } from "../shared/roles.ts";
-import { headers, jsonOnly, originGate, requestId } from "./http/guards.ts";
+import {
+  cookieWithoutEnd,
+  headers,
+  jsonOnly,
+  originGate,
+  readableBytes,
+  requestId,
+  shallowBody,
+} from "./http/guards.ts";
 import { lateCookies } from "./http/late-cookie.ts";
 import { mount } from "./http/mount.ts";
 import { openApiDocument } from "./http/openapi.ts";
@@ -92,9 +100,17 @@ export function createApp(services: Services, dev?: express.Handler): Express {
     response.json(document);
   });
 
+  for (const path of ["/healthz", "/readyz", "/api/openapi.json"]) {
+    app.route(path).all((_request, response) => {
+      response.setHeader("Allow", "GET, HEAD");
+      throw new HttpProblem("method_not_allowed");
+    });
+  }
+
   app.use("/api", originGate(services.env), jsonOnly);
-  app.use("/api", express.json({ limit: "256kb", inflate: false, strict: true }));
-  app.use("/api", lateCookies, sessions(services));
+  const json = { limit: "256kb", inflate: false, strict: true, verify: readableBytes };
+  app.use("/api", express.json(json), shallowBody);
+  app.use("/api", cookieWithoutEnd, lateCookies, sessions(services));
   app.use("/api", async (request: Request, response: Response, next: NextFunction) => {
     if (request.get("x-strandline-background") === "1" && request.session) {
       // Live updates are not activity: the store leaves the idle clock of a marked session alone.

@@ -17,6 +17,8 @@ import { startMail } from "./mail/mail.ts";
 import type { Services } from "./services.ts";
 
 const STOP_MS = 10_000;
+/** Exit code of a boot that was refused in plain words; the start script adds none of its own. */
+const REFUSED = 78;
 
 /** Stores the key check at the first boot and refuses another master key afterwards. */
 async function checkKey(services: Pick<Services, "pools" | "keys">): Promise<void> {
@@ -145,11 +147,10 @@ async function main(): Promise<void> {
 
 main().catch((error: unknown) => {
   // A refused setting is said in its own words; anything else by name only, for it may carry data.
-  const line =
+  const plain =
     error instanceof EnvError ||
-    (error instanceof Error && !("code" in error) && !("cause" in error))
-      ? (error as Error).message
-      : JSON.stringify(safeError(error));
+    (error instanceof Error && !("code" in error) && !("cause" in error));
+  const line = plain ? error.message : JSON.stringify(safeError(error));
   process.stderr.write(`strandline: ${line}\n`);
-  process.exit(1);
+  process.exit(plain ? REFUSED : 1);
 });

@@ -20,8 +20,19 @@ begin
   where p.id = any (p_people) and p.investigation_id = c.investigation_id
     and (c.role <> 'tracer' or p.id = any ((select core.ctx_named_people())::uuid[]));
   if cardinality(v_people) = 0 then return; end if;
-  insert into audit.event (investigation_id, account_id, role, action, person_ids, fields)
-  values (c.investigation_id, c.account_id, c.role, p_action, v_people, v_fields);
+  -- One reading is one event: what a request opens in parts (a person, then the names of those met)
+  -- is added to the event that the first part wrote in this transaction.
+  update audit.event set
+    person_ids = (select array_agg(distinct p) from unnest(person_ids || v_people) p),
+    fields = (select array_agg(distinct f) from unnest(fields || v_fields) f)
+  where id = (
+    select e.id from audit.event e
+    where e.investigation_id = c.investigation_id and e.at = now() and e.account_id = c.account_id
+      and e.action = p_action limit 1);
+  if not found then
+    insert into audit.event (investigation_id, account_id, role, action, person_ids, fields)
+    values (c.investigation_id, c.account_id, c.role, p_action, v_people, v_fields);
+  end if;
   return query
     select i.person_id, f.field, f.cipher
     from identity.person i

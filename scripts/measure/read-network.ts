@@ -1,4 +1,5 @@
 import type { PairEnds } from "../../shared/core/index.ts";
+import { checkCells } from "./check-cells.ts";
 import { type BadRow, type CsvTable, readCsv } from "./read-csv.ts";
 
 /** Counts of pairs with two interviewed ends, by how many of the two named the other. */
@@ -26,7 +27,7 @@ const INTERVIEWED = new Set(["yes", "no", "", "unknown", "refused"]);
 type People = { numbers: Map<string, number>; interviewed: boolean[] };
 
 function readPeople(table: CsvTable, people: People): BadRow[] {
-  const bad = [...table.bad];
+  const bad = [...table.bad, ...checkCells("people", table)];
   for (const { line, get } of table.rows) {
     const ref = get("ref");
     const interviewed = get("interviewed");
@@ -47,7 +48,7 @@ type Telling = { a: number; b: number; namedBy: number | null };
 
 /** Reads the pairs; with `closed` people every reference must be among them already. */
 function readPairs(table: CsvTable, people: People, closed: boolean, tellings: Telling[]) {
-  const bad = [...table.bad];
+  const bad = [...table.bad, ...checkCells("pairs", table)];
   for (const { line, get } of table.rows) {
     const ends: number[] = [];
     const refs = [get("ref_a"), get("ref_b")] as const;

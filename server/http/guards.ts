@@ -1,3 +1,4 @@
+import { isUtf8 } from "node:buffer";
 import { randomUUID } from "node:crypto";
 import type { NextFunction, Request, RequestHandler, Response } from "express";
 import helmet from "helmet";
@@ -83,6 +84,29 @@ export function originGate(env: Services["env"]): RequestHandler {
   };
 }
 
+/** How deep a body may be nested; the deepest of ours, a draft's rows, needs six. */
+const MOST_DEPTH = 32;
+
+/**
+ * Bytes that are no UTF-8 would be kept as replacement characters, another name than was sent; they
+ * are refused before they are read.
+ */
+export function readableBytes(_request: unknown, _response: unknown, bytes: Buffer): void {
+  if (!isUtf8(bytes)) throw new HttpProblem("malformed_request");
+}
+
+/** Refuses a body nested deeper than any form of ours: what writes it out again is recursive. */
+export function shallowBody(request: Request, _response: Response, next: NextFunction): void {
+  let level: unknown[] = [request.body];
+  for (let depth = 0; level.length > 0; depth++) {
+    if (depth > MOST_DEPTH) throw new HttpProblem("malformed_request");
+    level = level.flatMap((value) =>
+      value !== null && typeof value === "object" ? Object.values(value) : [],
+    );
+  }
+  next();
+}
+
 /** Bodies are JSON, except one upload. */
 export function jsonOnly(request: Request, _response: Response, next: NextFunction): void {
   if (SAFE.has(request.method)) {
@@ -95,5 +119,22 @@ export function jsonOnly(request: Request, _response: Response, next: NextFuncti
   if (hasBody && type !== "application/json" && type !== "multipart/form-data") {
     throw new HttpProblem("json_required");
   }
+  next();
+}
+
+/**
+ * The session cookie ends with the browser, and on the server when it is due: the date that the
+ * session's own library writes into it is taken out. A cookie being cleared keeps its date.
+ */
+export function cookieWithoutEnd(_request: Request, response: Response, next: NextFunction): void {
+  const setHeader = response.setHeader.bind(response);
+  const undated = (cookie: string) =>
+    /^[^=;]+=;/.test(cookie) ? cookie : cookie.replace(/; Expires=[^;]*/i, "");
+  response.setHeader = (name, value) => {
+    if (name.toLowerCase() !== "set-cookie" || typeof value === "number") {
+      return setHeader(name, value);
+    }
+    return setHeader(name, typeof value === "string" ? undated(value) : value.map(undated));
+  };
   next();
 }

@@ -215,8 +215,8 @@ export function mount(
         r.locals.route = path;
         next();
       };
-      if (multipart) at[verb](template, guardUpload, upload.single("file"), handler);
-      else at[verb](template, handler);
+      if (multipart) at[verb](template, guardUpload, readUpload, handler);
+      else at[verb](template, refuseUpload, handler);
     }
     if (methods.includes("GET")) methods.push("HEAD");
     at.all((_request, response) => {
@@ -224,6 +224,22 @@ export function mount(
       throw new HttpProblem("method_not_allowed");
     });
   }
+}
+
+const oneFile = upload.single("file");
+
+/** Reads an upload. What breaks off or has no boundary is the sender's fault, not ours. */
+function readUpload(request: Request, response: Response, next: NextFunction): void {
+  oneFile(request, response, (error: unknown) => {
+    const known = error instanceof multer.MulterError || error instanceof HttpProblem;
+    next(error && !known ? new HttpProblem("malformed_request") : error);
+  });
+}
+
+/** One route takes files; the others read JSON only, whatever the name of the form. */
+function refuseUpload(request: Request, _response: Response, next: NextFunction): void {
+  if (request.is("multipart/form-data")) throw new HttpProblem("json_required");
+  next();
 }
 
 /** Nobody's upload is read into memory before it is known who sends it. */

@@ -35,7 +35,8 @@ const settings = {
 
 export const investigationInput = z.strictObject({
   name: text(LIMITS.name, 1),
-  invented: z.boolean({ error: "wrong_type" }).default(false),
+  /** Left out: as the account that opens it, invented for one of the demo. */
+  invented: z.boolean({ error: "wrong_type" }).optional(),
   timeZone: timeZone.default("UTC"),
   countryCode: z
     .string()
@@ -87,6 +88,11 @@ export const memberInput = z.strictObject({
   role: z.enum(ROLES, { error: "not_in_list" }),
   team: text(LIMITS.shortText).optional(),
 });
+/** Which membership ends: by its id, or the account's e-mail and the role it holds here. */
+export const memberEndInput = z.union(
+  [z.strictObject({ id: uuid }), memberInput.pick({ email: true, role: true })],
+  { error: "invalid" },
+);
 export const memberAnswer = z.strictObject({
   id: uuid,
   accountId: uuid,

@@ -53,11 +53,23 @@ export const personFields = {
   note: optionalText(LIMITS.note),
 };
 
-/** Registering a person by form. Interview facts come from interviews, not from here. */
+/** The form of a person. Interview facts come from interviews, not from here. */
 export const personInput = z
   .strictObject(personFields)
   .omit({ interviewDate: true, interviewed: true });
 export type PersonInput = z.output<typeof personInput>;
+
+/**
+ * Registering a person: every key that a row of a people file has, so that what another system
+ * holds can be entered as it is. Something must be known; an empty form is nobody.
+ */
+export const personRegistration = z
+  .strictObject(personFields)
+  .refine((person) => Object.values(person).some((value) => value !== null), {
+    path: ["name"],
+    error: "required",
+  });
+export type PersonRegistration = z.output<typeof personRegistration>;
 
 /** A person as a row of a people file carries it (same keys as the columns in camelCase). */
 export const personRow = z

@@ -8,7 +8,7 @@ export const PERSON_FIELDS = table("core.person", [
   ["sex", "quasi", "FFFF", { key: "sex", sortable: true }],
   ["age_band", "quasi", "FFFF", { key: "ageBand", sortable: true }],
   ["area", "quasi", "FFFF", { key: "area", sortable: true }],
-  ["occupation", "quasi", "FFFN", { key: "occupation" }],
+  ["occupation", "quasi", "FFFN", { key: "occupation", sortable: true }],
   ["household_id", "quasi", "FFFF"],
   ["classification", "health", "FFFF", { key: "classification", sortable: true }],
   ["case_definition_version", "operational", "FFFF"],

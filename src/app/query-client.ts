@@ -14,6 +14,9 @@ export function createQueryClient(): QueryClient {
   return new QueryClient({
     defaultOptions: {
       queries: {
+        // Asked even without a signal, so that a page says so instead of waiting without a word; it
+        // asks again by itself when the signal is back.
+        networkMode: "always",
         staleTime: 15_000,
         gcTime: 5 * 60_000,
         retry: worthRetrying,

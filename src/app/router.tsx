@@ -1,37 +1,27 @@
 import { createBrowserRouter, type RouteObject } from "react-router-dom";
 import { LoadingState } from "../components/ui/loading-state.tsx";
-import { PageError } from "./routes/page-error.tsx";
+import { pages } from "./pages.ts";
+import { NoSuchPage, PageError } from "./routes/page-error.tsx";
 
-/** Pages of the Trace room. Each is a file of its own, fetched when it is first opened. */
+/** Pages of the Trace room. */
 const trace: RouteObject[] = [
-  { path: "trace", lazy: () => import("../features/people/routes/trace-route.tsx") },
-  {
-    path: "trace/people/new",
-    lazy: () => import("../features/people/routes/register-person-route.tsx"),
-  },
-  { path: "trace/people/:personId", lazy: () => import("./routes/person-route.tsx") },
-  {
-    path: "trace/people/:personId/interview",
-    lazy: () => import("../features/interviews/routes/interview-route.tsx"),
-  },
-  { path: "trace/places", lazy: () => import("../features/places/routes/places-route.tsx") },
-  { path: "trace/import", lazy: () => import("../features/imports/routes/import-route.tsx") },
-  {
-    path: "trace/import/:importId",
-    lazy: () => import("../features/imports/routes/import-route.tsx"),
-  },
-  { path: "trace/import", lazy: () => import("../features/imports/routes/import-route.tsx") },
-  { path: "trace/matches", lazy: () => import("../features/people/routes/matches-route.tsx") },
+  { path: "trace", lazy: pages.trace },
+  { path: "trace/people/new", lazy: pages.register },
+  { path: "trace/people/:personId", lazy: pages.person },
+  { path: "trace/people/:personId/interview", lazy: pages.interview },
+  { path: "trace/places", lazy: pages.places },
+  { path: "trace/import", lazy: pages.imports },
+  { path: "trace/import/:importId", lazy: pages.imports },
+  { path: "trace/matches", lazy: pages.matches },
 ];
 
 /** The other rooms. */
 const rooms: RouteObject[] = [
-  { path: "follow", lazy: () => import("../features/follow-up/routes/follow-route.tsx") },
-  { path: "follow", lazy: () => import("../features/follow-up/routes/follow-route.tsx") },
-  { path: "review", lazy: () => import("../features/review/routes/review-route.tsx") },
-  { path: "compare", lazy: () => import("../features/compare/routes/compare-route.tsx") },
-  { path: "safeguard", lazy: () => import("./routes/safeguard-route.tsx") },
-  { path: "members", lazy: () => import("./routes/members-route.tsx") },
+  { path: "follow", lazy: pages.follow },
+  { path: "review", lazy: pages.review },
+  { path: "compare", lazy: pages.compare },
+  { path: "safeguard", lazy: pages.safeguard },
+  { path: "members", lazy: pages.members },
 ];
 
 const routes: RouteObject[] = [
@@ -74,11 +64,7 @@ const routes: RouteObject[] = [
             children: [
               {
                 errorElement: <PageError />,
-                children: [
-                  ...trace,
-                  ...rooms,
-                  { path: "*", lazy: () => import("./routes/not-found-route.tsx") },
-                ],
+                children: [...trace, ...rooms, { path: "*", element: <NoSuchPage /> }],
               },
             ],
           },

@@ -1,14 +1,10 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import type { FieldValues, Path, Resolver, UseFormSetError } from "react-hook-form";
 import type { z } from "zod";
-import { FIELD_ERRORS } from "../../shared/errors.ts";
 import { ApiError } from "./api-error.ts";
 
-/** Words beside a field for an error code; undefined when there is no error. */
-export function fieldWords(code: string | undefined): string | undefined {
-  if (code === undefined) return undefined;
-  return code in FIELD_ERRORS ? FIELD_ERRORS[code as keyof typeof FIELD_ERRORS] : "Not valid";
-}
+// Apart, so that a page with codes to show and no form does not fetch the form library.
+export { fieldWords } from "./field-words.ts";
 
 /**
  * Checks a form with a contract of the API, so that both sides refuse the same things. `Values` is

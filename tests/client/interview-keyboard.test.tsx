@@ -160,4 +160,18 @@ describe("interview by keyboard", () => {
     const body = server.of("POST", "interviews")[0]?.body as { contacts: unknown[] };
     expect(body.contacts[0]).toMatchObject({ placeId, place: null, setting: "other" });
   });
+
+  it("asks for facilities by name, and never puts a household into an address", async () => {
+    const server = interviewServer();
+    const { user } = await openInterview();
+    await user.keyboard("Ada{Tab}{Tab}h{Tab}12 Gull Row{Tab}");
+    await user.keyboard("{Control>}{Enter}{/Control}Bo{Tab}{Tab}{Tab}14 Gull Row{Tab}");
+    await user.keyboard("{Control>}{Enter}{/Control}Cy{Tab}{Tab}w{Tab}Ropewalk{Tab}");
+    await waitFor(() => {
+      expect(server.of("GET", "places").map(({ query }) => query)).toContain(
+        "?q=Ropewalk&pageSize=200",
+      );
+    });
+    expect(server.sent.some(({ query }) => query.includes("Gull"))).toBe(false);
+  });
 });

@@ -43,6 +43,17 @@ describe("reading files", () => {
     ["an open quote", 'ref_a,ref_b\n"a,b\n', ["line 2: row: unclosed_quote"]],
     ["a stray quote", 'ref_a,ref_b\n"a"x,b\n', ["line 2: row: not_csv"]],
     [
+      "cells the import would refuse",
+      "ref_a,ref_b,first_exposure,last_exposure,setting,minutes,distance_m\n" +
+        "a,b,2026-02-30,,pub,many,\nb,c,2026-03-02,2026-03-01,unknown,15,1.5\nc,d,2026-03,refused,,,\n",
+      [
+        "line 2: first_exposure: not_a_day",
+        "line 2: setting: not_in_list",
+        "line 2: minutes: not_a_number",
+        "line 3: last_exposure: last_before_first",
+      ],
+    ],
+    [
       "somebody else naming the pair",
       "ref_a,ref_b,named_by\na,b,c\n",
       ["line 2: named_by: named_by_other"],

@@ -4,6 +4,7 @@ import { investigationOf, signInByForm } from "./support/accounts.ts";
 import { readApi } from "./support/api.ts";
 import { tabTo, typeBoxes } from "./support/keys.ts";
 import { collectAnswers } from "./support/leaks.ts";
+import { settled } from "./support/settled.ts";
 import { type Watch, watch } from "./support/watch.ts";
 
 type Group = { id: string; size: number };
@@ -159,8 +160,7 @@ test("a 12-contact interview, followed by everybody whose work it is", async ({ 
   await reached.addPage(epidemiologist);
   for (const path of ["review", "trace", `trace/people/${caseId}`]) {
     await epidemiologist.goto(`/i/${id}/${path}`);
-    await expect(epidemiologist.getByRole("heading", { level: 1 })).toBeVisible();
-    await epidemiologist.waitForLoadState("networkidle");
+    await settled(epidemiologist);
     await reached.addPage(epidemiologist);
   }
   // Looked for by name and by number: nobody is found, and nothing is given away.

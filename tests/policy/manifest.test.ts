@@ -17,7 +17,10 @@ afterAll(async () => {
 });
 
 /** Outside the manifest by design: health, the document itself, and what catches the rest. */
-const APART = ["GET /healthz", "GET /readyz", "GET /api/openapi.json", "GET /{*path}"];
+const APART = [
+  ...["/healthz", "/readyz", "/api/openapi.json"].flatMap((path) => [`GET ${path}`, `ALL ${path}`]),
+  "GET /{*path}",
+];
 
 const declared = () =>
   [...ROUTES, ...plainRoutes(app.services)].map(

@@ -43,11 +43,8 @@ export async function buildInvestigation(
   overrides: Partial<InvestigationInput> = {},
 ): Promise<string> {
   const owner = await buildAccount(app);
-  const input = investigationInput.parse({
-    name: "Test investigation",
-    invented: true,
-    ...overrides,
-  });
+  const parsed = investigationInput.parse({ name: "Test investigation", ...overrides });
+  const input = { ...parsed, invented: overrides.invented ?? true };
   return withTx({ pool: app.pools.auth, nonce: null }, (tx) =>
     insertInvestigation(tx, app.keys, input, owner.id, []),
   );

@@ -6,7 +6,7 @@ import { recordEvent } from "../../audit/record-event.ts";
 import { HttpProblem, invalid } from "../../http/problem.ts";
 import { type AnyRoute, defineRoute } from "../../http/route.ts";
 import { insertInvitation, listInvitations } from "./invitations-store.ts";
-import { accountOfEmail, holdsRole, lockMembers, teamOfName } from "./members-store.ts";
+import { accountOfEmail, membershipOf, lockMembers, teamOfName } from "./members-store.ts";
 import { loadInvestigation } from "./store.ts";
 
 const LEADERS = ["supervisor", "officer"] as const;
@@ -45,7 +45,7 @@ export const invitationRoutes: AnyRoute[] = [
         throw invalid({ path: "email", code: "demo_only" });
       }
       await lockMembers(tx, actor.investigationId);
-      if (account && (await holdsRole(tx, account.id, body.role))) {
+      if (account && (await membershipOf(tx, account.id, body.role))) {
         throw invalid({ path: "role", code: "already_member" });
       }
       const teamId = body.team ? await teamOfName(tx, actor.investigationId, body.team) : null;

@@ -56,13 +56,13 @@ export async function accountOfEmail(
   return found.rows[0] ?? null;
 }
 
-/** True when the account already holds the role here. */
-export async function holdsRole(tx: Tx, accountId: string, role: Role): Promise<boolean> {
-  const found = await tx.execute(
-    sql`select 1 from core.member
+/** Id of the live membership by which an account holds a role here; null when it does not. */
+export async function membershipOf(tx: Tx, accountId: string, role: Role): Promise<string | null> {
+  const found = await tx.execute<{ id: string }>(
+    sql`select id from core.member
       where account_id = ${accountId} and role = ${role} and ended_at is null`,
   );
-  return found.rows.length > 0;
+  return found.rows[0]?.id ?? null;
 }
 
 /** Id of the team of that name (case aside), made when there is none. */

@@ -1,7 +1,11 @@
 import { sql } from "drizzle-orm";
 import { z } from "zod";
 import { listQuery, receipt } from "../../../shared/contracts/common.ts";
-import { memberInput, memberList } from "../../../shared/contracts/investigations.ts";
+import {
+  memberEndInput,
+  memberInput,
+  memberList,
+} from "../../../shared/contracts/investigations.ts";
 import { recordEvent } from "../../audit/record-event.ts";
 import type { Tx } from "../../db/with-tx.ts";
 import { HttpProblem, invalid } from "../../http/problem.ts";
@@ -9,11 +13,11 @@ import { type Actor, type AnyRoute, defineRoute } from "../../http/route.ts";
 import {
   accountOfEmail,
   endMember,
-  holdsRole,
   insertMember,
   listMembers,
   liveMember,
   lockMembers,
+  membershipOf,
   teamOfName,
 } from "./members-store.ts";
 import { loadInvestigation } from "./store.ts";
@@ -35,6 +39,21 @@ async function recordMember(
     investigationId: actor.investigationId,
     fields: [`role:${role}`],
   });
+}
+
+/** Ends a membership; the caller holds the lock on members. */
+async function endMembership(tx: Tx, actor: Actor, memberId: string): Promise<null> {
+  const member = await liveMember(tx, memberId);
+  if (!member) throw new HttpProblem("not_found");
+  // Somebody must be left who can let others in.
+  if (member.otherLeaders === 0 && (LEADERS as readonly string[]).includes(member.role)) {
+    throw new HttpProblem("conflict", { errors: [{ path: "memberId", code: "last_leader" }] });
+  }
+  // Before the change: whoever ends their own membership has no context after it.
+  await recordMember(tx, actor, "member.ended", member.role);
+  await tx.execute(sql`select core.announce('members', ${memberId}::uuid, null)`);
+  await endMember(tx, memberId);
+  return null;
 }
 
 /** Who works on the investigation: list, add by e-mail, end. */
@@ -70,7 +89,7 @@ export const memberRoutes: AnyRoute[] = [
         throw invalid({ path: "email", code: "demo_only" });
       }
       await lockMembers(tx, actor.investigationId);
-      if (await holdsRole(tx, account.id, body.role)) {
+      if (await membershipOf(tx, account.id, body.role)) {
         throw invalid({ path: "role", code: "already_member" });
       }
       const teamId = body.team ? await teamOfName(tx, actor.investigationId, body.team) : null;
@@ -90,17 +109,26 @@ export const memberRoutes: AnyRoute[] = [
     status: 204,
     async run({ tx, actor, params: { memberId } }) {
       await lockMembers(tx, actor.investigationId);
-      const member = await liveMember(tx, memberId);
-      if (!member) throw new HttpProblem("not_found");
-      // Somebody must be left who can let others in.
-      if (member.otherLeaders === 0 && (LEADERS as readonly string[]).includes(member.role)) {
-        throw new HttpProblem("conflict", { errors: [{ path: "memberId", code: "last_leader" }] });
-      }
-      // Before the change: whoever ends their own membership has no context after it.
-      await recordMember(tx, actor, "member.ended", member.role);
-      await tx.execute(sql`select core.announce('members', ${memberId}::uuid, null)`);
-      await endMember(tx, memberId);
-      return null;
+      return endMembership(tx, actor, memberId);
+    },
+  }),
+  defineRoute({
+    method: "delete",
+    path: "/api/investigations/:id/members",
+    summary: "End a membership named in the body",
+    policy: LEADERS,
+    params,
+    body: memberEndInput,
+    output: z.null(),
+    status: 204,
+    async run({ tx, actor, body }) {
+      await lockMembers(tx, actor.investigationId);
+      if ("id" in body) return endMembership(tx, actor, body.id);
+      const account = await accountOfEmail(tx, body.email);
+      if (!account) throw invalid({ path: "email", code: "account_unknown" });
+      const memberId = await membershipOf(tx, account.id, body.role);
+      if (!memberId) throw new HttpProblem("not_found");
+      return endMembership(tx, actor, memberId);
     },
   }),
 ];

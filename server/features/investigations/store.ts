@@ -55,7 +55,7 @@ export async function listInvestigations(
 export async function insertInvestigation(
   tx: Tx,
   keys: KeyRing,
-  input: InvestigationInput,
+  input: InvestigationInput & { invented: boolean },
   accountId: string,
   roles: readonly Role[],
 ): Promise<string> {

@@ -9,6 +9,7 @@ const DATES = [
   "specimenDate",
   "resultDate",
   "reportDate",
+  "interviewDate",
   "isolationDate",
   "diedDate",
   "outcomeDate",

@@ -68,9 +68,15 @@ export async function peopleById(
 function ordering(sort: string | undefined, role: Role): SQL {
   if (!sort) return sql`p.recorded_at desc, p.id`;
   const down = sort.startsWith("-");
-  const column = sortableColumns(role)[down ? sort.slice(1) : sort];
-  if (!column) throw invalid({ path: "sort", code: "not_sortable" });
-  const by = sql`p.${sql.identifier(column)}`;
+  const key = down ? sort.slice(1) : sort;
+  const columns = sortableColumns(role);
+  const column = columns[key];
+  // The day somebody died is the day of their outcome, where that is what it was.
+  const died = key === "diedDate" && columns.outcome && columns.outcomeDate;
+  if (!column && !died) throw invalid({ path: "sort", code: "not_sortable" });
+  const by = column
+    ? sql`p.${sql.identifier(column)}`
+    : sql`case when p.outcome = 'died' then p.outcome_date end`;
   return down ? sql`${by} desc nulls last, p.id` : sql`${by} asc nulls last, p.id`;
 }
 

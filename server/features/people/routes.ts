@@ -9,9 +9,9 @@ import {
   peopleList,
   peopleQuery,
   peopleSearch,
-  personInput,
   personPage,
   personPatch,
+  personRegistration,
 } from "../../../shared/contracts/people.ts";
 import { openableKeys } from "../../../shared/fields.ts";
 import { ROLES } from "../../../shared/roles.ts";
@@ -41,6 +41,16 @@ async function list(
   const keys = names ? await services.keys.of(tx, actor.investigationId) : null;
   const { rows, total } = await listPeople(tx, keys, actor, query, settings.countryCode);
   const action = query.q ? "people.searched" : "people.listed";
+  if (query.q && names && !rows.some((row) => row.mine)) {
+    // Nobody's identity is opened, and still somebody was looked for.
+    await recordEvent(tx, {
+      action,
+      accountId: actor.accountId,
+      role: actor.role,
+      investigationId: actor.investigationId,
+      counts: { found: total },
+    });
+  }
   return {
     items: await presentPeople(tx, services.keys, actor, rows, LIST_FIELDS, action),
     total,
@@ -92,7 +102,7 @@ export const peopleRoutes: AnyRoute[] = [
     summary: "Register a person",
     policy: ["tracer", "supervisor"],
     params,
-    body: personInput,
+    body: personRegistration,
     output: z.strictObject({ id: uuid, studyNumber: z.string(), version: z.int() }),
     creates: true,
     async run({ tx, actor, services, body }) {

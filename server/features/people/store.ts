@@ -143,3 +143,35 @@ export async function refreshTestCopies(tx: Tx, personIds: readonly string[]): P
       where p.id = t.person_id`,
   );
 }
+
+/**
+ * One complete interview for each person of whom it is said that they were interviewed before this
+ * record knew of it. The day is the one told and nothing else: where that is missing the day is
+ * "unknown", and the instant is that of recording.
+ *
+ * @param timeZone zone of the investigation; a told day stands at its noon
+ */
+export async function insertHeldInterviews(
+  tx: Tx,
+  actor: Actor,
+  source: "form" | "import",
+  timeZone: string,
+  interviews: readonly { personId: string; day: string | null }[],
+): Promise<void> {
+  if (interviews.length === 0) return;
+  const rows = interviews.map(({ personId, day }) => ({
+    id: randomUUID(),
+    person_id: personId,
+    day: day ?? "unknown",
+    noon: day !== null && /^\d{4}-\d{2}-\d{2}$/.test(day) ? `${day} 12:00` : null,
+  }));
+  // Noon of today may be still to come; nothing on record is held later than it was recorded.
+  await tx.execute(
+    sql`insert into core.interview (id, investigation_id, person_id, outcome, held_at, day, source, recorded_by)
+        select id, ${actor.investigationId}, person_id, 'complete',
+          least(coalesce(noon::timestamp at time zone ${timeZone}, now()), now()), day, ${source},
+          ${actor.accountId}
+        from jsonb_to_recordset(${JSON.stringify(rows)}::jsonb)
+          as r (id uuid, person_id uuid, day text, noon text)`,
+  );
+}

@@ -58,7 +58,8 @@ export async function makeFirstOfficer(
       sql`insert into auth.account (id, email, display_name, password_hash)
           values (${accountId}, ${input.email.toLowerCase()}, ${input.displayName}, ${passwordHash})`,
     );
-    const id = await insertInvestigation(tx, services.keys, investigation, accountId, [
+    const real = { ...investigation, invented: false };
+    const id = await insertInvestigation(tx, services.keys, real, accountId, [
       "officer",
       "supervisor",
     ]);

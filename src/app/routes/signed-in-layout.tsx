@@ -17,6 +17,7 @@ import { onOtherTab } from "../../features/session/session-channel.ts";
 import { setOnUnauthorized } from "../../lib/api-client.ts";
 import { errorKind } from "../../lib/api-error.ts";
 import { SessionContext } from "../../lib/session-context.ts";
+import { fetchAhead } from "../pages.ts";
 
 /** Every page after sign-in: the session, its lock, and its watch over idle time. */
 export function Component() {
@@ -65,6 +66,7 @@ function Guarded({ session }: { session: Session }) {
   const lock = useCallback(() => setLocked(true), []);
 
   useEffect(fetchSessionDialogs, []);
+  useEffect(() => fetchAhead(session.rooms), [session.rooms]);
 
   useEffect(() => {
     setOnUnauthorized(lock);

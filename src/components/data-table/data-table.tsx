@@ -147,6 +147,8 @@ export function DataTable<Row extends object>(props: DataTableProps<Row>) {
             className="relative -mx-1 max-h-[70vh] overflow-auto px-1"
             aria-busy={props.updating || undefined}
             data-table-scroll=""
+            // Where rows are no stops of the tab key, the scrolled part is one.
+            {...(openRow ? {} : { role: "region", "aria-label": caption, tabIndex: 0 })}
           >
             <Table
               caption={caption}

@@ -48,7 +48,7 @@ export function DayStrip({
 }: DayStripProps) {
   const [ref, width] = useWidth(860);
   const stacked = width < narrow;
-  const labelWidth = stacked ? 0 : Math.min(250, Math.max(150, width * 0.23));
+  const labelWidth = stacked ? 0 : roomForLabels(rows, width);
   const scale = createDayScale(from, to, labelWidth + (stacked ? 1 : 10), width - 2);
 
   let y = bare ? 2 : dayAxisHeight + 2;
@@ -107,6 +107,21 @@ export function DayStrip({
   );
 }
 
+/** Mean width of a letter at the size of labels, rather too much than too little. */
+const letter = 6.9;
+
+/** Width of the labels' column: as the longest needs, within what the plot can spare. */
+function roomForLabels(rows: readonly DayStripRow[], width: number): number {
+  const needed = rows.map((row) => row.label.length * letter + (row.mark ? markSize + 6 : 0));
+  return Math.min(width * 0.4, 270, Math.max(150, width * 0.23, ...needed));
+}
+
+/** A label cut to its room; the whole of it stands in the table and in what is read. */
+function fitted(label: string, room: number): string {
+  const letters = Math.floor(room / letter);
+  return label.length <= letters ? label : `${label.slice(0, Math.max(1, letters - 1)).trimEnd()}…`;
+}
+
 function RowLabel(props: { row: DayStripRow; stacked: boolean; x: number; y: number }) {
   const { row, stacked, x, y } = props;
   const mark = row.mark;
@@ -127,7 +142,7 @@ function RowLabel(props: { row: DayStripRow; stacked: boolean; x: number; y: num
         textAnchor={stacked ? "start" : "end"}
         className={quiet ? "t-quiet" : undefined}
       >
-        {row.label}
+        {fitted(row.label, stacked ? Number.POSITIVE_INFINITY : x - room)}
       </text>
     </>
   );

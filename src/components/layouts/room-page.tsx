@@ -2,6 +2,8 @@ import { type ReactNode, useEffect, useRef } from "react";
 
 export type RoomPageProps = {
   title: string;
+  /** What the browser's tab and history say instead of the title: never who somebody is. */
+  tabTitle?: string;
   /** Population, range, what the page is about: one quiet line beside the title. */
   subLine?: ReactNode;
   actions?: ReactNode;
@@ -14,6 +16,7 @@ export type RoomPageProps = {
 /** A page inside a room. The title takes focus when the page opens, so that readers hear where they are. */
 export function RoomPage({
   title,
+  tabTitle = title,
   subLine,
   actions,
   side,
@@ -22,8 +25,8 @@ export function RoomPage({
 }: RoomPageProps) {
   const heading = useRef<HTMLHeadingElement>(null);
   useEffect(() => {
-    document.title = `${title} · Strandline`;
-  }, [title]);
+    document.title = `${tabTitle} · Strandline`;
+  }, [tabTitle]);
   useEffect(() => {
     // Not over a field that asked for focus itself, and without moving the page.
     if (document.activeElement === document.body) heading.current?.focus({ preventScroll: true });

@@ -1,4 +1,5 @@
 import { type KeyboardEvent, type ReactNode, useId, useState } from "react";
+import { ScrollRegion } from "./scroll-region.tsx";
 
 export type FigureWithTableProps = {
   /** Names the figure for readers. */
@@ -41,7 +42,7 @@ export function FigureWithTable({
       className="mb-4 min-w-0 outline-offset-4"
     >
       <div id={id}>
-        {asTable ? <div className="relative overflow-x-auto">{table}</div> : children}
+        {asTable ? <ScrollRegion label={`${label}, as a table`}>{table}</ScrollRegion> : children}
       </div>
       <figcaption className="flex flex-wrap items-start gap-x-6 gap-y-1">
         {notes ? <div className="min-w-0 flex-1 basis-72">{notes}</div> : null}

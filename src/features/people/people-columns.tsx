@@ -49,7 +49,12 @@ const SPECS: readonly Spec[] = [
   { key: "ageBand", header: "Age", sortKey: "ageBand", cell: plain("ageBand") },
   { key: "sex", header: "Sex", sortKey: "sex", cell: plain("sex") },
   { key: "area", header: "Area", sortKey: "area", cell: plain("area") },
-  { key: "occupation", header: "Occupation", cell: plain("occupation") },
+  {
+    key: "occupation",
+    header: "Occupation",
+    sortKey: "occupation",
+    cell: plain("occupation"),
+  },
   { key: "household", header: "Household", cell: plain("household") },
   {
     key: "householdNumber",

@@ -83,7 +83,13 @@ export const match: Match = {
   matchedOn: ["phone", "name"],
 };
 
-type Sent = { method: string; path: string; body: Record<string, unknown>; key: string | null };
+type Sent = {
+  method: string;
+  path: string;
+  body: Record<string, unknown>;
+  key: string | null;
+  query: string;
+};
 type Draft = { version: number; body: unknown; updatedAt: string | null };
 
 const json = (body: unknown, status = 200) =>
@@ -144,14 +150,14 @@ export function interviewServer() {
     const method = init.method ?? "GET";
     const key = new Headers(init.headers).get("Idempotency-Key");
     if (server.offline) throw new TypeError("no network");
-    server.sent.push({ method, path, body, key });
+    server.sent.push({ method, path, body, key, query: url.search });
     return answer(method, path, body);
   });
   return server;
 }
 
-/** Opens the interview of the case, with the cursor where the page puts it. */
-export async function openInterview() {
+/** Opens the page of the interview of the case, whatever it shows. */
+export function renderInterview() {
   const queryClient = new QueryClient({ defaultOptions: { queries: { retry: false } } });
   const at = `/i/${investigationId}/trace/people/${caseId}/interview`;
   const router = createMemoryRouter(
@@ -170,11 +176,17 @@ export async function openInterview() {
       </ToastProvider>
     </QueryClientProvider>,
   );
+  return { user: userEvent.setup({ delay: null }), router };
+}
+
+/** Opens the interview of the case, with the cursor where the page puts it. */
+export async function openInterview() {
+  const opened = renderInterview();
   await screen.findByRole("form", { name: "Interview of D-0412" });
   await waitFor(() => {
     if (!document.querySelector("#places-all option")) throw new Error("no places yet");
   });
-  return { user: userEvent.setup({ delay: null }), router };
+  return opened;
 }
 
 /** Lets time pass for timers and what follows from them; with fake timers only. */

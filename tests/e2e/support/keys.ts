@@ -2,7 +2,7 @@ import { expect, type Locator, type Page } from "@playwright/test";
 
 /** Presses Tab until a control has the focus; fails when it is not reached. */
 export async function tabTo(page: Page, target: Locator, most = 60): Promise<void> {
-  const reached = () => target.evaluate((element) => element === document.activeElement);
+  const reached = async () => (await target.and(page.locator(":focus")).count()) > 0;
   for (let presses = 0; presses < most && !(await reached()); presses++) {
     await page.keyboard.press("Tab");
   }

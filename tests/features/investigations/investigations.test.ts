@@ -61,11 +61,15 @@ test("a tracer opens none, and a demo account only an invented one", async () =>
   await buildMember(app, id, account.id, "officer");
   const client = new TestClient(app);
   await client.signIn(account.email, PASSWORD);
-  const refused = await client.post("/api/investigations", { name: "Real" });
+  const refused = await client.post("/api/investigations", { name: "Real", invented: false });
   expect(refused.status).toBe(422);
   expect(refused.body.errors).toEqual([{ path: "invented", code: "demo_only" }]);
-  const made = await client.post("/api/investigations", { name: "Play", invented: true });
+  const made = await client.post("/api/investigations", { name: "Play" });
   expect(made.status).toBe(201);
+  const listed = await client.get("/api/investigations");
+  expect(listed.body.items).toContainEqual(
+    expect.objectContaining({ id: made.body.id, invented: true }),
+  );
 });
 
 test("settings change under their version only, by supervisor and officer", async () => {

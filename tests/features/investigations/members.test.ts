@@ -186,3 +186,21 @@ test("a member of another investigation is not found and sorting is refused", as
   expect(sorted.status).toBe(422);
   expect(sorted.body.errors).toEqual([{ path: "sort", code: "not_sortable" }]);
 });
+
+test("a membership also ends by the address of the list, named by id or by e-mail and role", async () => {
+  const account = await buildAccount(app);
+  const end = (body: unknown) =>
+    supervisor.client.call("delete", `${supervisor.base}/members`, { body });
+  for (const by of ["id", "e-mail"]) {
+    const added = await supervisor.client.post(`${supervisor.base}/members`, {
+      email: account.email,
+      role: "tracer",
+    });
+    const body =
+      by === "id" ? { id: added.body.id } : { email: account.email.toUpperCase(), role: "tracer" };
+    expect((await end(body)).status, by).toBe(204);
+    expect((await end(body)).status, by).toBe(404);
+  }
+  expect((await end({ email: "nobody@team.example", role: "tracer" })).status).toBe(422);
+  expect((await end({})).status).toBe(422);
+});

@@ -1,11 +1,11 @@
 import { randomUUID } from "node:crypto";
 import { sql } from "drizzle-orm";
 import { ageBandOf } from "../../../../shared/vocabulary.ts";
-import { insertTests, refreshTestCopies } from "../../people/store.ts";
+import { insertHeldInterviews, insertTests, refreshTestCopies } from "../../people/store.ts";
 import { type Comparison, compareKnown } from "../known-people.ts";
 import type { StagedPerson } from "../staged-row.ts";
 import type { CommitContext } from "./commit-context.ts";
-import { identityOf, outcomeOf, putIdentity, putInterviews, testOf } from "./put-new-people.ts";
+import { identityOf, outcomeOf, putIdentity, testOf } from "./put-new-people.ts";
 
 const idList = (ids: readonly string[]) => sql`${sql.param(`{${ids.join(",")}}`)}::uuid[]`;
 
@@ -182,7 +182,13 @@ export async function fillKnownPeople(
         ? null
         : (cellsOf.get(personId)?.interview_date ?? null),
     }));
-  await putInterviews(context, interviews);
+  await insertHeldInterviews(
+    context.tx,
+    context.actor,
+    "import",
+    context.settings.timeZone,
+    interviews,
+  );
   counts.addedInterviews += interviews.length;
   counts.filledPeople += filled.length;
 }

@@ -1,10 +1,14 @@
 import { randomUUID } from "node:crypto";
-import { sql } from "drizzle-orm";
 import { ageBandOf } from "../../../../shared/vocabulary.ts";
 import { savepoint } from "../../../db/with-tx.ts";
 import { sqlState } from "../../../http/translate-error.ts";
 import { type Identity, putPeople } from "../../../identity/records.ts";
-import { insertPeople, insertTests, type NewPerson } from "../../people/store.ts";
+import {
+  insertHeldInterviews,
+  insertPeople,
+  insertTests,
+  type NewPerson,
+} from "../../people/store.ts";
 import { isMissingWord } from "../check-cell.ts";
 import type { StagedPerson } from "../staged-row.ts";
 import type { CommitContext } from "./commit-context.ts";
@@ -64,32 +68,6 @@ export async function putIdentity(
 }
 
 /**
- * One complete interview for each row that says so. The day is the file's interview date and
- * nothing else: where that is missing the day is "unknown", and the instant is that of recording.
- */
-export async function putInterviews(
-  context: CommitContext,
-  interviews: readonly { personId: string; day: string | null }[],
-): Promise<void> {
-  if (interviews.length === 0) return;
-  const { tx, actor } = context;
-  const rows = interviews.map(({ personId, day }) => ({
-    id: randomUUID(),
-    person_id: personId,
-    day: day ?? "unknown",
-    noon: day !== null && day.length === 10 && !isMissingWord(day) ? `${day} 12:00` : null,
-  }));
-  await tx.execute(
-    sql`insert into core.interview (id, investigation_id, person_id, outcome, held_at, day, source, recorded_by)
-        select id, ${actor.investigationId}, person_id, 'complete',
-          coalesce(noon::timestamp at time zone ${context.settings.timeZone}, now()), day, 'import',
-          ${actor.accountId}
-        from jsonb_to_recordset(${JSON.stringify(rows)}::jsonb)
-          as r (id uuid, person_id uuid, day text, noon text)`,
-  );
-}
-
-/**
  * Records new people from rows: core, identity, classification history, the row's test and its
  * interview.
  *
@@ -140,7 +118,13 @@ export async function putNewPeople(
   const interviews = rows
     .filter(({ cells }) => cells.interviewed === "yes")
     .map(({ cells }) => ({ personId: idOf(cells), day: cells.interview_date ?? null }));
-  await putInterviews(context, interviews);
+  await insertHeldInterviews(
+    context.tx,
+    context.actor,
+    "import",
+    context.settings.timeZone,
+    interviews,
+  );
   counts.addedPeople += people.length;
   counts.addedTests += tests.length;
   counts.addedInterviews += interviews.length;

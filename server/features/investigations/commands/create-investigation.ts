@@ -20,7 +20,8 @@ export async function createInvestigation(
 ): Promise<{ id: string; version: number }> {
   if (!who.actingRole) throw new HttpProblem("role_refused");
   const role = who.actingRole;
-  if (who.demo && !input.invented) {
+  const invented = input.invented ?? who.demo;
+  if (who.demo && !invented) {
     throw new HttpProblem("invalid", { errors: [{ path: "invented", code: "demo_only" }] });
   }
   const hash = createHash("sha256").update(JSON.stringify(input)).digest("base64url");
@@ -41,7 +42,9 @@ export async function createInvestigation(
       if (!earlier || earlier.request_hash !== hash) throw new HttpProblem("key_reused");
       return earlier.receipt;
     }
-    const id = await insertInvestigation(tx, services.keys, input, who.accountId, [role]);
+    const id = await insertInvestigation(tx, services.keys, { ...input, invented }, who.accountId, [
+      role,
+    ]);
     await recordEvent(tx, {
       action: "investigation.created",
       accountId: who.accountId,

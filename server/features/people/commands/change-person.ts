@@ -29,12 +29,13 @@ const COLUMNS: Partial<Record<keyof PersonPatch, string>> = {
   assignedTo: "assigned_account_id",
 };
 
-async function checkAssignee(tx: Tx, actor: Actor, accountId: string): Promise<void> {
+async function checkAssignee(tx: Tx, actor: Actor, accountId: string | null): Promise<void> {
   if (actor.role === "tracer") {
-    // A tracer can take or give back, and hands over through the supervisor.
+    // A tracer takes; giving back and handing over go through the supervisor.
     if (accountId !== actor.accountId) throw invalid({ path: "assignedTo", code: "not_known" });
     return;
   }
+  if (accountId === null) return;
   const found = await tx.execute(
     sql`select 1 from views.member where account_id = ${accountId} and role = 'tracer' and ended_at is null`,
   );
@@ -61,7 +62,7 @@ export async function changePerson(
   if (patch.ref && (await refTaken(tx, refToken(keys, patch.ref), person.id))) {
     throw invalid({ path: "ref", code: "ref_taken" });
   }
-  if (patch.assignedTo) await checkAssignee(tx, actor, patch.assignedTo);
+  if (patch.assignedTo !== undefined) await checkAssignee(tx, actor, patch.assignedTo);
   const values = { ...patch };
   if (patch.diedDate !== undefined) {
     values.outcome = patch.diedDate === null ? (patch.outcome ?? null) : "died";

@@ -1,10 +1,10 @@
 import { sql } from "drizzle-orm";
-import type { PersonInput } from "../../../../shared/contracts/people.ts";
+import type { PersonRegistration } from "../../../../shared/contracts/people.ts";
 import { ageBandOf } from "../../../../shared/vocabulary.ts";
 import { recordEvent } from "../../../audit/record-event.ts";
 import { dayIn, now } from "../../../clock.ts";
 import type { Tx } from "../../../db/with-tx.ts";
-import { recordGraphChange } from "../../../events/record-graph-change.ts";
+import { type GraphChange, recordGraphChange } from "../../../events/record-graph-change.ts";
 import { invalid } from "../../../http/problem.ts";
 import type { Actor } from "../../../http/route.ts";
 import type { KeyRing } from "../../../identity/keys.ts";
@@ -18,7 +18,7 @@ import {
 import type { InvestigationRow } from "../../investigations/store.ts";
 import { placeFor } from "../../places/store.ts";
 import { checkPerson } from "../check-person.ts";
-import { insertPeople, insertTests } from "../store.ts";
+import { insertHeldInterviews, insertPeople, insertTests } from "../store.ts";
 
 /** True when another person of the investigation has this reference. */
 export async function refTaken(tx: Tx, token: Buffer, except: string | null): Promise<boolean> {
@@ -39,7 +39,7 @@ export async function registerPerson(
   ring: KeyRing,
   actor: Actor,
   settings: InvestigationRow,
-  input: PersonInput,
+  input: PersonRegistration,
 ): Promise<{ id: string; studyNumber: string; version: number }> {
   const today = dayIn(settings.timeZone, now());
   checkPerson(input, today);
@@ -67,6 +67,9 @@ export async function registerPerson(
         classification: input.classification,
         onsetDate: input.onsetDate,
         reportDate: input.reportDate,
+        interviewDate: input.interviewDate,
+        interviewed: input.interviewed,
+        interviewState: input.interviewed === "yes" ? "complete" : null,
         isolationDate: input.isolationDate,
         outcome: input.diedDate ? "died" : input.outcome,
         outcomeDate: input.diedDate ?? input.outcomeDate,
@@ -93,7 +96,13 @@ export async function registerPerson(
       },
     ]);
   }
-  await recordGraphChange(tx, actor, [{ kind: "person", personA: person.id }], person.id);
+  const changes: GraphChange[] = [{ kind: "person", personA: person.id }];
+  if (input.interviewed === "yes") {
+    const held = { personId: person.id, day: input.interviewDate };
+    await insertHeldInterviews(tx, actor, "form", settings.timeZone, [held]);
+    changes.push({ kind: "interview", personA: person.id });
+  }
+  await recordGraphChange(tx, actor, changes, person.id);
   await recordEvent(tx, {
     action: "person.registered",
     accountId: actor.accountId,

@@ -1,5 +1,6 @@
 import type { NetworkSummary } from "../../../../shared/contracts/network.ts";
 import { Answer } from "../../../components/ui/answer.tsx";
+import { ScrollRegion } from "../../../components/ui/scroll-region.tsx";
 import { Cell, HeadCell, Table } from "../../../components/ui/table.tsx";
 import { formatInterval, formatNumber, formatShare } from "../../../lib/formatters.ts";
 import { type MeasureRow, measureRows } from "../measure-rows.ts";
@@ -7,7 +8,7 @@ import { type MeasureRow, measureRows } from "../measure-rows.ts";
 /** Every measure of the report with its people and, where it is missing, why. "—" is not 0. */
 export function MeasuresTable({ summary }: { summary: NetworkSummary }) {
   return (
-    <div className="relative overflow-x-auto">
+    <ScrollRegion label="Table of measures">
       <Table caption="Measures of the network" hideCaption>
         <thead>
           <tr>
@@ -43,7 +44,7 @@ export function MeasuresTable({ summary }: { summary: NetworkSummary }) {
           ))}
         </tbody>
       </Table>
-    </div>
+    </ScrollRegion>
   );
 }
 

@@ -24,7 +24,10 @@ export function FollowRow({ item, investigationId, ...strip }: FollowRowProps) {
   return (
     <li className={`border-b border-rule py-2 ${followColumns}`}>
       <p className="flex min-w-0 items-start gap-1.5">
-        <PersonMark classification={item.classification ?? "contact"} className="mt-[0.125em]" />
+        <PersonMark
+          classification={item.classification ?? "contact"}
+          className="mt-[0.125em] pointer-coarse:mt-2.5"
+        />
         <span className="min-w-0 [overflow-wrap:anywhere]">
           <Link
             to={paths.person(investigationId, item.id)}
@@ -41,7 +44,7 @@ export function FollowRow({ item, investigationId, ...strip }: FollowRowProps) {
       <p className="min-w-0 text-end lg:text-start">
         <Phone item={item} />
       </p>
-      <p className="text-sm text-ink-2 lg:text-base lg:text-ink">
+      <p className="text-sm text-ink-2 lg:text-[0.9375rem] lg:text-ink">
         <span className="lg:hidden">area: </span>
         <Answer value={item.area} />
       </p>

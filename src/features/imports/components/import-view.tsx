@@ -1,7 +1,7 @@
 import type { Import } from "../../../../shared/contracts/imports.ts";
 import { Notice } from "../../../components/ui/notice.tsx";
 import { Progress } from "../../../components/ui/progress.tsx";
-import { fieldWords } from "../../../lib/form-errors.ts";
+import { fieldWords } from "../../../lib/field-words.ts";
 import { formatCount, formatInstant, formatShare } from "../../../lib/formatters.ts";
 import { doneSentences, previewSentences } from "../import-words.ts";
 import { CommitForm } from "./commit-form.tsx";

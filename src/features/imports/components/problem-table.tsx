@@ -4,7 +4,7 @@ import { Section } from "../../../components/layouts/section.tsx";
 import { Button } from "../../../components/ui/button.tsx";
 import { Pagination } from "../../../components/ui/pagination.tsx";
 import { Cell, HeadCell, Table } from "../../../components/ui/table.tsx";
-import { fieldWords } from "../../../lib/form-errors.ts";
+import { fieldWords } from "../../../lib/field-words.ts";
 import { formatCount, formatNumber } from "../../../lib/formatters.ts";
 import { saveText } from "../../../lib/save-text.ts";
 import { toCsv } from "../../../lib/to-csv.ts";

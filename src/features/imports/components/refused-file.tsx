@@ -1,6 +1,6 @@
 import { Notice } from "../../../components/ui/notice.tsx";
 import { ApiError, errorWords } from "../../../lib/api-error.ts";
-import { fieldWords } from "../../../lib/form-errors.ts";
+import { fieldWords } from "../../../lib/field-words.ts";
 import { placeOfError } from "../import-words.ts";
 
 export type RefusedFileProps = { error: Error };

@@ -204,7 +204,8 @@ export const ContactRow = memo(function ContactRow(props: ContactRowProps) {
 function takenPeople(rows: readonly { known: KnownPerson | null }[], row: number) {
   const taken = new Map<string, string>();
   rows.forEach(({ known }, index) => {
-    if (known && index !== row) taken.set(known.personId, `already row ${index + 1}`);
+    if (known && index !== row)
+      taken.set(known.personId, `also row ${index + 1}: a further exposure`);
   });
   return taken;
 }

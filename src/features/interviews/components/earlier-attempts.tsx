@@ -14,8 +14,8 @@ export function EarlierAttempts({ person }: { person: PersonPage }) {
   const named = person.pairs.length;
   return (
     <p className="mb-3 text-sm text-ink-2">
-      {counted(person.attempts.length, "attempt")} before; the latest on{" "}
-      {formatInstant(latest.heldAt, timeZone)}
+      {counted(person.attempts.length, "interview or attempt", "interviews and attempts")} before;
+      the latest on {formatInstant(latest.heldAt, timeZone)}
       {latest.channel ? ` by ${latest.channel}` : ""}: {latest.outcome.replace("_", " ")}.{" "}
       {named > 0 ? `${counted(named, "contact pair")} on record already.` : ""}
     </p>

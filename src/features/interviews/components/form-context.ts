@@ -1,6 +1,6 @@
 import { createContext, useContext } from "react";
 import type { PersonPage } from "../../../../shared/contracts/people.ts";
-import type { PlaceBook } from "../form/place-book.ts";
+import type { LivePlaceBook } from "./use-places.ts";
 
 /** What every row of an interview form needs to know. */
 export interface FormSurroundings {
@@ -8,7 +8,7 @@ export interface FormSurroundings {
   person: PersonPage;
   /** The investigation's day. */
   today: string;
-  places: PlaceBook;
+  places: LivePlaceBook;
 }
 
 export const FormSurroundingsContext = createContext<FormSurroundings | null>(null);

@@ -86,28 +86,16 @@ export function InterviewBody(props: InterviewBodyProps) {
       }}
     >
       <DraftWatch onChange={props.onChange} />
-      {state.kind === "conflict" ? (
-        <div className="mb-4">
-          <DraftConflict
-            state={state}
-            zone={zone}
-            mine={bodyNow()}
-            onKeepMine={() => keeper.keepMine(bodyNow())}
-            onTakeTheirs={(theirs) => {
-              props.onTakeOver(theirs);
-              keeper.takeTheirs();
-            }}
-          />
-        </div>
-      ) : null}
-      <div className="mb-4 flex flex-wrap items-start justify-between gap-x-8 gap-y-3">
+      <div className="mb-4 flex flex-wrap items-start justify-between gap-x-8 gap-y-3 lg:flex-nowrap">
         <div className="min-w-0 space-y-2">
           <WindowWords person={person} />
           <Caution>
             Do not tell a contact who the case is. Open only the records you need; views are logged.
           </Caution>
         </div>
-        <Button onClick={nobodyReached}>Nobody reached: record the attempt</Button>
+        <Button onClick={nobodyReached} title="Sets the outcome to attempted" className="shrink-0">
+          Nobody reached
+        </Button>
       </div>
       {wide ? (
         // Of one height from the start, so that no row moves while it is typed.
@@ -130,6 +118,20 @@ export function InterviewBody(props: InterviewBodyProps) {
         className="sticky bottom-0 z-20 -mx-4 flex flex-wrap items-center gap-x-4 gap-y-2 border-t
           border-rule bg-paper px-4 py-2 sm:-mx-6 sm:px-6"
       >
+        {state.kind === "conflict" ? (
+          <div className="w-full">
+            <DraftConflict
+              state={state}
+              zone={zone}
+              mine={bodyNow()}
+              onKeepMine={() => keeper.keepMine(bodyNow())}
+              onTakeTheirs={(theirs) => {
+                props.onTakeOver(theirs);
+                keeper.takeTheirs();
+              }}
+            />
+          </div>
+        ) : null}
         <Button type="submit" variant="primary" pending={sending || done} pendingLabel="Recording">
           Record the interview
         </Button>

@@ -13,12 +13,12 @@ import { type DraftBody, freshDraft, holdsSomething, readDraft } from "../form/d
 import { wallTime } from "../form/held-at.ts";
 import { type CheckedInterview, interviewResolver } from "../form/interview-resolver.ts";
 import type { InterviewValues } from "../form/interview-values.ts";
-import type { PlaceBook } from "../form/place-book.ts";
 import { FormSurroundingsContext } from "./form-context.ts";
 import { InterviewBody } from "./interview-body.tsx";
 import { PlaceLists } from "./place-lists.tsx";
+import type { LivePlaceBook } from "./use-places.ts";
 
-export type InterviewFormProps = { person: PersonPage; draft: Draft; places: PlaceBook };
+export type InterviewFormProps = { person: PersonPage; draft: Draft; places: LivePlaceBook };
 
 /** The form of one interview: opened from its draft, kept saved, and sent once. */
 export function InterviewForm({ person, draft, places }: InterviewFormProps) {

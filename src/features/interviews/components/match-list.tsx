@@ -9,7 +9,7 @@ const reasons: Record<Match["matchedOn"][number], string> = {
 
 export type MatchListProps = {
   matches: readonly Match[];
-  /** Why somebody cannot be chosen here, by person id: "already in row 2". */
+  /** Which row somebody stands in already, by person id; choosing again adds an exposure. */
   taken: ReadonlyMap<string, string>;
   onChoose: (match: Match) => void;
   /** Back to the box, by Escape or by going up from the first one. */
@@ -53,13 +53,9 @@ export function MatchList({ matches, taken, onChoose, onLeave }: MatchListProps)
               <button
                 type="button"
                 tabIndex={-1}
-                aria-disabled={reason ? true : undefined}
-                onClick={() => {
-                  if (!reason) onChoose(match);
-                }}
+                onClick={() => onChoose(match)}
                 className="flex min-h-8 w-full flex-wrap items-baseline gap-x-3 px-1 text-start
-                  hover:bg-paper-2 focus-visible:bg-wash focus-visible:outline-offset-[-2px]
-                  aria-disabled:text-ink-2 pointer-coarse:min-h-11 pointer-coarse:py-1"
+                  hover:bg-paper-2 focus-visible:bg-wash focus-visible:outline-offset-[-2px]  pointer-coarse:min-h-11 pointer-coarse:py-1"
               >
                 <span className="font-bold">{match.studyNumber}</span>
                 <span>{match.name ?? "name not on record"}</span>
@@ -73,7 +69,10 @@ export function MatchList({ matches, taken, onChoose, onLeave }: MatchListProps)
                     .join(" · ")}
                 </span>
                 <span className="text-sm text-kelp">
-                  {reason ?? match.matchedOn.map((one) => reasons[one]).join(", ")}
+                  {[
+                    ...match.matchedOn.map((one) => reasons[one]),
+                    ...(reason ? [reason] : []),
+                  ].join(", ")}
                 </span>
               </button>
             </li>

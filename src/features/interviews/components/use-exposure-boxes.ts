@@ -44,6 +44,7 @@ export function useExposureBoxes(list: "contacts" | "groupExposures", row: numbe
     /** A place box: a place on record brings its setting along when none was given. */
     registerPlace: () =>
       form.register(path("place"), {
+        onChange: () => places.lookUp(text("place"), text("setting")),
         onBlur: () => {
           const place = places.find(text("place"), text("setting"));
           if (place?.setting && text("setting") === "") set("setting", place.setting);

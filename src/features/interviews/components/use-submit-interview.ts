@@ -2,6 +2,7 @@ import { useQueryClient } from "@tanstack/react-query";
 import { type RefObject, useEffect, useRef, useState } from "react";
 import { useNavigate } from "react-router-dom";
 import type { InterviewInput } from "../../../../shared/contracts/interviews.ts";
+import type { InterviewOutcome } from "../../../../shared/vocabulary.ts";
 import { paths } from "../../../app/paths.ts";
 import { useToast } from "../../../components/ui/use-toast.ts";
 import { ApiError, errorWords } from "../../../lib/api-error.ts";
@@ -16,6 +17,8 @@ import { boxPath, type Sendable } from "../form/to-input.ts";
 import { counted } from "../form/words.ts";
 import { useInterviewForm } from "./use-exposure-boxes.ts";
 
+/** After these the server keeps the draft: what was half typed is still wanted. */
+const nobodyReached: readonly InterviewOutcome[] = ["attempted", "unreachable"];
 const inFlightTries = 5;
 const inFlightPauseMs = 700;
 
@@ -43,6 +46,9 @@ async function send(investigationId: string, input: InterviewInput, key: string)
 export function receiptWords(input: InterviewInput, graphVersion: number): string {
   const contacts = input.contacts.length;
   const groups = input.groupExposures.length;
+  if (contacts + groups === 0 && nobodyReached.includes(input.outcome)) {
+    return "Attempt recorded: nobody was reached this time.";
+  }
   const told = [
     counted(contacts, "contact"),
     ...(groups > 0 ? [`${counted(groups, "group")} not named`] : []),
@@ -100,8 +106,8 @@ export function useSubmitInterview({
     try {
       const { graphVersion } = await send(investigationId, input, submitKey.current);
       const rows = input.contacts.length + input.groupExposures.length;
-      if (rows === 0) {
-        // A bare attempt may leave the draft standing, with a key that has now been used.
+      if (rows === 0 && nobodyReached.includes(input.outcome)) {
+        // A bare attempt leaves the draft standing, with a key that has now been used.
         await keeper.saveLast(freshDraft("")).catch(() => {});
       }
       keeper.finish();

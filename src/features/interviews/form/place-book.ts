@@ -15,6 +15,17 @@ export interface PlaceBook {
   find: (label: string, setting: string) => ListedPlace | undefined;
 }
 
+/** Settings whose places are named after no private person. */
+const publicSettings = ["workplace", "school", "health_care", "transport"];
+
+/**
+ * True when places may be asked for by what is typed: the question stands in an address, so only
+ * names of facilities go into it, never what may be somebody's home.
+ */
+export function mayLookUp(typed: string, setting: string): boolean {
+  return publicSettings.includes(setting) && typed.trim().length >= 2;
+}
+
 const folded = (text: string) => text.trim().toLocaleLowerCase();
 
 /** Makes the book; a household whose name one may not open goes by its number. */

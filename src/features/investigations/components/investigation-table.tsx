@@ -2,6 +2,7 @@ import type { ReactNode } from "react";
 import type { Investigation } from "../../../../shared/contracts/investigations.ts";
 import { ROLE_NAMES } from "../../../../shared/roles.ts";
 import { Answer } from "../../../components/ui/answer.tsx";
+import { ScrollRegion } from "../../../components/ui/scroll-region.tsx";
 import { Cell, HeadCell, Table } from "../../../components/ui/table.tsx";
 import { Tag } from "../../../components/ui/tag.tsx";
 import { formatNumber } from "../../../lib/formatters.ts";
@@ -15,7 +16,7 @@ export type InvestigationTableProps = {
 /** The investigations one works in, with the settings their reports stand on. */
 export function InvestigationTable({ investigations, action }: InvestigationTableProps) {
   return (
-    <div className="relative overflow-x-auto">
+    <ScrollRegion label="Your investigations">
       <Table caption="Investigations you hold a role in" hideCaption>
         <thead>
           <tr>
@@ -33,7 +34,7 @@ export function InvestigationTable({ investigations, action }: InvestigationTabl
         <tbody>
           {investigations.map((one) => (
             <tr key={one.id}>
-              <HeadCell scope="row">
+              <HeadCell scope="row" className="whitespace-nowrap">
                 {one.name} {one.invented ? <Tag tone="ochre">invented</Tag> : null}
               </HeadCell>
               <Cell>{one.roles.map((role) => ROLE_NAMES[role]).join(", ")}</Cell>
@@ -55,6 +56,6 @@ export function InvestigationTable({ investigations, action }: InvestigationTabl
           ))}
         </tbody>
       </Table>
-    </div>
+    </ScrollRegion>
   );
 }

@@ -25,22 +25,21 @@ export function AlreadyOnRecord({ investigationId, control }: AlreadyOnRecordPro
   );
   const found = name.trim() === "" && phone.trim() === "" ? [] : (matches.data?.items ?? []);
   return (
-    <div aria-live="polite">
-      {found.length === 0 ? (
-        <p className="text-sm text-ink-2">
-          People in your sight who look like the one you type are shown here.
-        </p>
-      ) : (
-        <ul className="border-t border-rule">
-          {found.map((match) => (
-            <li key={match.personId} className="border-b border-rule py-1.5">
-              <Link to={paths.person(investigationId, match.personId)}>
-                {match.name ?? match.studyNumber}
-              </Link>
-              <span className="block text-sm text-ink-2">{detail(match)}</span>
-            </li>
-          ))}
-        </ul>
+    <div aria-live="polite" className="sm:col-span-2">
+      {found.length === 0 ? null : (
+        <div className="border-y border-ochre bg-paper-2 px-3 py-2">
+          <p className="font-bold text-ochre">Already on record?</p>
+          <ul>
+            {found.map((match) => (
+              <li key={match.personId} className="py-1">
+                <Link to={paths.person(investigationId, match.personId)}>
+                  {match.name ?? match.studyNumber}
+                </Link>
+                <span className="ms-2 text-sm text-ink-2">{detail(match)}</span>
+              </li>
+            ))}
+          </ul>
+        </div>
       )}
     </div>
   );

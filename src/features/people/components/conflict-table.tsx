@@ -1,6 +1,7 @@
 import { Answer } from "../../../components/ui/answer.tsx";
 import { Button } from "../../../components/ui/button.tsx";
 import { ErrorState } from "../../../components/ui/error-state.tsx";
+import { ScrollRegion } from "../../../components/ui/scroll-region.tsx";
 import { Cell, HeadCell, Table } from "../../../components/ui/table.tsx";
 import type { PersonField, PersonValues } from "../person-fields.ts";
 
@@ -32,7 +33,7 @@ export function ConflictTable(props: ConflictTableProps) {
       >
         Only the fields you changed are at stake; the rest of the record stays as it was saved.
       </ErrorState>
-      <div className="relative mt-3 overflow-x-auto">
+      <ScrollRegion label="Changed fields" className="mt-3">
         <Table caption="The fields you changed">
           <thead>
             <tr>
@@ -59,7 +60,7 @@ export function ConflictTable(props: ConflictTableProps) {
             ))}
           </tbody>
         </Table>
-      </div>
+      </ScrollRegion>
     </div>
   );
 }

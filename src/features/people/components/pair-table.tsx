@@ -4,6 +4,7 @@ import { paths } from "../../../app/paths.ts";
 import { Answer } from "../../../components/ui/answer.tsx";
 import { Caution } from "../../../components/ui/caution.tsx";
 import { EmptyState } from "../../../components/ui/empty-state.tsx";
+import { ScrollRegion } from "../../../components/ui/scroll-region.tsx";
 import { Cell, HeadCell, Table } from "../../../components/ui/table.tsx";
 import { formatDay, formatNumber } from "../../../lib/formatters.ts";
 import { settingWords, wordFor } from "../../../lib/words.ts";
@@ -25,7 +26,7 @@ export function PairTable({ person, investigationId }: PairTableProps) {
   const named = person.pairs.some((pair) => pair.name);
   return (
     <>
-      <div className="relative max-h-[60vh] overflow-auto">
+      <ScrollRegion label="Table of contact pairs" className="max-h-[60vh]">
         <Table caption={`Contact pairs of ${person.studyNumber}`} hideCaption>
           <thead className="sticky top-0 bg-paper">
             <tr>
@@ -91,7 +92,7 @@ export function PairTable({ person, investigationId }: PairTableProps) {
             )}
           </tbody>
         </Table>
-      </div>
+      </ScrollRegion>
       <Caution className="mt-2">
         These are contacts people told us about; a line shows contact, not infection. Do not tell a
         contact who the case is.

@@ -56,6 +56,7 @@ function Record({ person, tests }: { person: PersonPage; tests: PersonRecordProp
   return (
     <RoomPage
       title={person.name ?? person.studyNumber}
+      tabTitle={person.studyNumber}
       subLine={
         <>
           {mark ? <PersonMark {...mark} decorative className="me-1.5" /> : null}

@@ -8,6 +8,7 @@ import { ErrorState } from "../../../components/ui/error-state.tsx";
 import { LinkButton } from "../../../components/ui/link-button.tsx";
 import { LoadingState } from "../../../components/ui/loading-state.tsx";
 import { Pagination } from "../../../components/ui/pagination.tsx";
+import { ScrollRegion } from "../../../components/ui/scroll-region.tsx";
 import { Cell, HeadCell, Table } from "../../../components/ui/table.tsx";
 import { errorKind } from "../../../lib/api-error.ts";
 import { formatInstant } from "../../../lib/formatters.ts";
@@ -41,7 +42,7 @@ export function Component() {
       ) : null}
       {reviews.data && reviews.data.items.length > 0 ? (
         <>
-          <div className="relative overflow-x-auto">
+          <ScrollRegion label="Table of possible duplicates">
             <Table caption="Two records that may be one person" hideCaption>
               <thead>
                 <tr>
@@ -66,7 +67,7 @@ export function Component() {
                 ))}
               </tbody>
             </Table>
-          </div>
+          </ScrollRegion>
           <Pagination
             page={page}
             pageSize={pageSize}

@@ -1,4 +1,4 @@
-import { useEffect, useState } from "react";
+import { Fragment, useEffect, useState } from "react";
 import { useForm } from "react-hook-form";
 import { useNavigate } from "react-router-dom";
 import { type PersonInput, personInput } from "../../../../shared/contracts/people.ts";
@@ -62,16 +62,11 @@ export function Component() {
     <RoomPage
       title="Register a person"
       subLine="Whatever is known now; the rest can follow."
-      sideLabel="While typing"
+      sideLabel="Typing dates"
       side={
-        <>
-          <Section title="Already on record?" level={3}>
-            <AlreadyOnRecord investigationId={id} control={form.control} />
-          </Section>
-          <Section title="Typing dates" level={3}>
-            <DateKeys />
-          </Section>
-        </>
+        <Section title="Typing dates" level={3}>
+          <DateKeys />
+        </Section>
       }
     >
       <UnsavedGuard unsaved={isDirty && !register.isSuccess} />
@@ -94,7 +89,12 @@ export function Component() {
           <Section key={section} title={title} subLine={subLine}>
             <div className="grid gap-x-6 gap-y-3 sm:grid-cols-2">
               {fieldsIn(section).map((field) => (
-                <PersonFieldInput key={field.key} {...{ field, form, today }} />
+                <Fragment key={field.key}>
+                  <PersonFieldInput {...{ field, form, today }} />
+                  {field.key === "phone" ? (
+                    <AlreadyOnRecord investigationId={id} control={form.control} />
+                  ) : null}
+                </Fragment>
               ))}
             </div>
           </Section>

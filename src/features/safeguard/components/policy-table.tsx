@@ -1,5 +1,6 @@
 import { Fragment } from "react";
 import { ROLE_NAMES, ROLES } from "../../../../shared/roles.ts";
+import { ScrollRegion } from "../../../components/ui/scroll-region.tsx";
 import { Cell, HeadCell, Table } from "../../../components/ui/table.tsx";
 import type { PolicyItem } from "../policy-disagreements.ts";
 import { AccessWord } from "./access-word.tsx";
@@ -21,7 +22,7 @@ function breakable(name: string) {
 /** Columns of one class: for each role what the registry says, and beside it what the database does. */
 export function PolicyTable({ caption, items }: PolicyTableProps) {
   return (
-    <div className="relative -mx-1 overflow-x-auto px-1">
+    <ScrollRegion label={`Table: ${caption}`} className="-mx-1 px-1">
       <Table caption={caption} hideCaption className="min-w-[53rem] table-fixed sm:min-w-[60rem]">
         <colgroup>
           <col className="w-[9rem] sm:w-[15rem] xl:w-[20rem]" />
@@ -79,6 +80,6 @@ export function PolicyTable({ caption, items }: PolicyTableProps) {
           ))}
         </tbody>
       </Table>
-    </div>
+    </ScrollRegion>
   );
 }

@@ -20,6 +20,13 @@ export function LockPage({ session, onSignedIn }: LockPageProps) {
       <Primitive.Portal>
         <Primitive.Content
           data-dialog="open"
+          onOpenAutoFocus={(event) => {
+            // The e-mail is known: only the password is missing.
+            const page = event.currentTarget;
+            if (!(page instanceof HTMLElement)) return;
+            event.preventDefault();
+            page.querySelector<HTMLElement>("input[type='password']")?.focus();
+          }}
           aria-describedby={undefined}
           onEscapeKeyDown={(event) => event.preventDefault()}
           onInteractOutside={(event) => event.preventDefault()}

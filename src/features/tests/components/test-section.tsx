@@ -5,6 +5,7 @@ import { Answer } from "../../../components/ui/answer.tsx";
 import { Button } from "../../../components/ui/button.tsx";
 import { ErrorState } from "../../../components/ui/error-state.tsx";
 import { LoadingState } from "../../../components/ui/loading-state.tsx";
+import { ScrollRegion } from "../../../components/ui/scroll-region.tsx";
 import { Cell, HeadCell, Table } from "../../../components/ui/table.tsx";
 import { errorKind } from "../../../lib/api-error.ts";
 import { formatCount, formatDay } from "../../../lib/formatters.ts";
@@ -45,7 +46,7 @@ export function TestSection({ investigationId, personId, today, canAdd }: TestSe
       ) : null}
       {tests.data?.items.length === 0 ? <p className="text-ink-2">No test on record.</p> : null}
       {tests.data && tests.data.items.length > 0 ? (
-        <div className="relative overflow-x-auto">
+        <ScrollRegion label="Table of tests">
           <Table caption="Tests" hideCaption>
             <thead>
               <tr>
@@ -74,7 +75,7 @@ export function TestSection({ investigationId, personId, today, canAdd }: TestSe
               ))}
             </tbody>
           </Table>
-        </div>
+        </ScrollRegion>
       ) : null}
       {adding ? (
         <Suspense fallback={<LoadingState label="Opening the form" />}>
