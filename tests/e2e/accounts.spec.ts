@@ -18,8 +18,9 @@ test("a supervisor opens an investigation and invites a tracer, who joins from t
   await page.goto("/investigations");
   await page.getByRole("button", { name: "Open a new one" }).click();
   const name = `Invited shore ${Date.now()}`;
-  await page.getByLabel("Name", { exact: true }).fill(name);
-  await page.getByRole("checkbox", { name: /invented/i }).check();
+  const form = page.getByRole("region", { name: "New investigation" });
+  await form.getByLabel(/^Name/).fill(name);
+  await form.getByRole("checkbox", { name: /invented/i }).check();
   await page.getByRole("button", { name: "Open the investigation" }).click();
   await page.getByRole("button", { name: `Act here in ${name}` }).click();
   await expect(page.getByRole("navigation", { name: "Rooms" })).toBeVisible();
@@ -28,7 +29,7 @@ test("a supervisor opens an investigation and invites a tracer, who joins from t
   await page.getByRole("button", { name: displayName }).click();
   await page.getByRole("link", { name: "Members and invitations" }).click();
   await page.getByRole("button", { name: "Invite by e-mail" }).click();
-  await page.getByLabel("E-mail").fill(email);
+  await page.getByRole("textbox", { name: "E-mail" }).fill(email);
   await page.getByLabel("Role here").selectOption("tracer");
   await page.getByRole("button", { name: "Send the invitation" }).click();
   await expect(page.getByRole("table", { name: /Open invitations/ })).toContainText(email);
