@@ -10,6 +10,7 @@ export const EVENTS = [
   "investigation.created",
   "investigation.changed",
   "member.invited",
+  "member.invitation_withdrawn",
   "member.added",
   "member.ended",
   "person.registered",

@@ -28,3 +28,19 @@ begin
   insert into auth.mail (id, sealed, expires_at) values (p_mail, p_sealed, now() + interval '72 hours');
   return true;
 end $$;
+
+-- Takes back an open invitation of the acting investigation: its link opens nothing from now on.
+-- False when there is none.
+create or replace function auth.withdraw_invitation(p_id uuid) returns boolean
+language plpgsql security definer set search_path = pg_catalog, pg_temp as $$
+declare c record;
+begin
+  select * into c from core.ctx();
+  if c.role is null or c.role not in ('supervisor', 'officer') then
+    raise insufficient_privilege;
+  end if;
+  delete from auth.invitation i
+  where i.id = p_id and i.kind = 'invitation' and i.investigation_id = c.investigation_id
+    and i.used_at is null and i.expires_at > now();
+  return found;
+end $$;

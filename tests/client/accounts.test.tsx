@@ -209,6 +209,7 @@ it("the members page invites by e-mail and lists who has not come yet", async ()
     rooms: ["trace"],
     session: { actingRole: "supervisor", accountId: ids.large },
     answers(path) {
+      if (path.startsWith("invitations/")) return new Response(null, { status: 204 });
       if (path !== "invitations") return listOf([]);
       if (asked.at(-1)?.startsWith("POST")) {
         invited = true;
@@ -225,4 +226,7 @@ it("the members page invites by e-mail and lists who has not come yet", async ()
   await screen.findByText("Contact tracer invited");
   const table = await screen.findByRole("table", { name: "Open invitations, the newest first" });
   expect(table.textContent).toContain("rowan@test.example");
+  await user.click(screen.getByRole("button", { name: /^Withdraw the invitation of rowan@/ }));
+  await screen.findByText("Invitation withdrawn");
+  expect(asked).toContain(`DELETE invitations/${ids.small}`);
 });

@@ -31,6 +31,10 @@ beforeAll(async () => {
       own: world.everyone.epidemiologist.memberId,
       other: world.others.epidemiologist.memberId,
     },
+    invitationId: {
+      own: await openInvitation(world.here),
+      other: await openInvitation(world.elsewhere),
+    },
     importId: {
       own: await stageImport(world.everyone.supervisor),
       other: await stageImport(world.others.supervisor),
@@ -46,6 +50,17 @@ beforeAll(async () => {
 afterAll(async () => {
   await world?.close();
 });
+
+/** An invitation that nobody took up, past the routes. */
+async function openInvitation(investigationId: string): Promise<string> {
+  const id = randomUUID();
+  await world.admin.query(
+    `insert into auth.invitation (id, token_hash, kind, email, investigation_id, role, expires_at)
+     values ($1, $2, 'invitation', 'open@body.example', $3, 'tracer', now() + interval '1 hour')`,
+    [id, randomUUID(), investigationId],
+  );
+  return id;
+}
 
 type Where = "own" | "other" | "random" | "malformed";
 const WHERE: readonly Where[] = ["own", "other", "random", "malformed"];
@@ -68,6 +83,9 @@ async function addressOf(route: AnyRoute, where: Where, object: Where): Promise<
       // What a deletion may end is made for it.
       const account = await buildAccount(world.app);
       own = await buildMember(world.app, world.here, account.id, "tracer");
+    }
+    if (route.method === "delete" && object === "own" && name === "invitationId") {
+      own = await openInvitation(world.here);
     }
     path = path.replace(`:${name}`, pick(object, own, known.other));
   }

@@ -37,6 +37,7 @@ const FUNCTIONS: Record<string, readonly (Role | "system")[]> = {
   "core.fill_occupations(uuid, jsonb)": ["supervisor", "officer"],
   "core.sweep_import_stages()": ["system"],
   "auth.invite(uuid, text, text, uuid, text, uuid, bytea)": ["supervisor", "officer"],
+  "auth.withdraw_invitation(uuid)": ["supervisor", "officer"],
   "auth.claim_key(uuid, text, text)": ["tracer", "supervisor", "officer"],
   "auth.keep_receipt(uuid, smallint, jsonb)": ["tracer", "supervisor", "officer"],
   "identity.open_people(uuid[], text[], text)": ["tracer", "supervisor", "officer"],

@@ -46,3 +46,11 @@ export async function insertInvitation(
   );
   return done.rows[0]?.kept ? id : null;
 }
+
+/** Takes an open invitation back; false when there is none here. */
+export async function withdrawInvitation(tx: Tx, id: string): Promise<boolean> {
+  const done = await tx.execute<{ done: boolean }>(
+    sql`select auth.withdraw_invitation(${id}::uuid) as done`,
+  );
+  return done.rows[0]?.done === true;
+}

@@ -5,8 +5,8 @@ import { listQuery, receipt } from "../../../shared/contracts/common.ts";
 import { recordEvent } from "../../audit/record-event.ts";
 import { HttpProblem, invalid } from "../../http/problem.ts";
 import { type AnyRoute, defineRoute } from "../../http/route.ts";
-import { insertInvitation, listInvitations } from "./invitations-store.ts";
-import { accountOfEmail, membershipOf, lockMembers, teamOfName } from "./members-store.ts";
+import { insertInvitation, listInvitations, withdrawInvitation } from "./invitations-store.ts";
+import { accountOfEmail, lockMembers, membershipOf, teamOfName } from "./members-store.ts";
 import { loadInvestigation } from "./store.ts";
 
 const LEADERS = ["supervisor", "officer"] as const;
@@ -62,6 +62,26 @@ export const invitationRoutes: AnyRoute[] = [
       await tx.execute(sql`select core.announce('members', ${id}::uuid, null)`);
       services.mail.soon();
       return { id };
+    },
+  }),
+  defineRoute({
+    method: "delete",
+    path: "/api/investigations/:id/invitations/:invitationId",
+    summary: "Withdraw an invitation that nobody took up",
+    policy: LEADERS,
+    params: params.extend({ invitationId: z.uuid() }),
+    output: z.null(),
+    status: 204,
+    async run({ tx, actor, params: { invitationId } }) {
+      if (!(await withdrawInvitation(tx, invitationId))) throw new HttpProblem("not_found");
+      await recordEvent(tx, {
+        action: "member.invitation_withdrawn",
+        accountId: actor.accountId,
+        role: actor.role,
+        investigationId: actor.investigationId,
+      });
+      await tx.execute(sql`select core.announce('members', ${invitationId}::uuid, null)`);
+      return null;
     },
   }),
 ];

@@ -13,6 +13,7 @@ export const actionWords: Readonly<Record<EventName, string>> = {
   "investigation.created": "opened the investigation",
   "investigation.changed": "changed settings",
   "member.invited": "invited a member",
+  "member.invitation_withdrawn": "withdrew an invitation",
   "member.added": "added a member",
   "member.ended": "ended a membership",
   "person.registered": "registered a person",

@@ -148,6 +148,24 @@ test("a second invitation ends the link of the first, and a late one opens nothi
   }
 });
 
+test("a withdrawn invitation opens nothing, and only its own investigation can withdraw it", async () => {
+  const supervisor = await signInAs(app, "supervisor", await buildInvestigation(app));
+  const elsewhere = await signInAs(app, "officer", await buildInvestigation(app));
+  const email = "withdrawn@test.example";
+  const made = await supervisor.client.post(`${supervisor.base}/invitations`, {
+    email,
+    role: "tracer",
+  });
+  const token = tokenIn((await lettersTo(email))[0]);
+  const end = (who: typeof supervisor) =>
+    who.client.call("delete", `${who.base}/invitations/${made.body.id}`);
+  expect((await end(elsewhere)).status).toBe(404);
+  expect((await publicPost("/api/invitations/look", { token })).status).toBe(200);
+  expect((await end(supervisor)).status).toBe(204);
+  expect((await publicPost("/api/invitations/look", { token })).status).toBe(404);
+  expect((await end(supervisor)).status).toBe(404);
+});
+
 test("demo accounts are invited to invented investigations only", async () => {
   const demo = await buildAccount(app, { demo: true });
   const real = await signInAs(app, "officer", await buildInvestigation(app, { invented: false }));

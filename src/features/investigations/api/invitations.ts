@@ -18,6 +18,22 @@ export function invitationsQuery(investigationId: string, page: number, pageSize
   });
 }
 
+/** Takes back an invitation that nobody took up; its link opens nothing any more. */
+export function useWithdrawInvitation(investigationId: string) {
+  const queryClient = useQueryClient();
+  return useMutation({
+    mutationFn: (id: string) => api.delete(inInvestigation(investigationId, `invitations/${id}`)),
+    // Also when it failed: most likely somebody took it up meanwhile.
+    onSettled: () =>
+      Promise.all([
+        queryClient.invalidateQueries({
+          queryKey: investigationKey(investigationId, "invitations"),
+        }),
+        queryClient.invalidateQueries({ queryKey: investigationKey(investigationId, "members") }),
+      ]),
+  });
+}
+
 /** Sends an invitation by e-mail. */
 export function useInvite(investigationId: string, idempotencyKey: string) {
   const queryClient = useQueryClient();
