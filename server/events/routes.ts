@@ -5,11 +5,10 @@ import { definePlainRoute, type PlainRoute } from "../http/route.ts";
 import { type SignedIn, signedInOf, whoIsAsking } from "../http/sign-in.ts";
 import type { Services } from "../services.ts";
 import type { LiveMessage } from "./live-hub.ts";
+import { enterStream } from "./open-streams.ts";
 
 /** How often a stream says it is alive, and asks whether its session still holds. */
 const PULSE_MS = 20_000;
-/** Streams of one account; opening one more ends the oldest. */
-const MOST_STREAMS = 12;
 
 /** A stream is no activity: it must not move the idle end of its session. */
 function markBackground(request: Request): void {
@@ -33,20 +32,6 @@ async function stillHolds(request: Request, services: Services, was: SignedIn): 
   );
 }
 
-const openStreams = new Map<string, Set<() => void>>();
-
-/** Enters a stream of an account; returns what takes it out again. */
-function enter(accountId: string, end: () => void): () => void {
-  const streams = openStreams.get(accountId) ?? new Set();
-  openStreams.set(accountId, streams.add(end));
-  const [oldest] = streams;
-  if (streams.size > MOST_STREAMS) oldest?.();
-  return () => {
-    streams.delete(end);
-    if (streams.size === 0 && openStreams.get(accountId) === streams) openStreams.delete(accountId);
-  };
-}
-
 function stream(request: Request, response: Response, services: Services): void {
   const who = signedInOf(request);
   markBackground(request);
@@ -61,25 +46,28 @@ function stream(request: Request, response: Response, services: Services): void 
   const write = (text: string) => {
     if (!response.writableEnded) response.write(text);
   };
-  const tell = (message: LiveMessage) => {
-    // A tracer sees a few people only: what changed elsewhere carries no id for them.
-    const id = who.actingRole === "tracer" ? null : message.id;
-    write(`data: ${JSON.stringify({ ...message, id })}\n\n`);
-  };
   const end = () => {
     response.end();
   };
-  const pulse = setInterval(() => {
+  const check = (text: string) =>
     stillHolds(request, services, who)
       .then((holds) => {
-        if (holds) write(": still here\n\n");
+        if (holds) write(text);
         else end();
       })
       // Without the database nobody can say so; the browser asks again by itself.
       .catch(end);
-  }, PULSE_MS);
+  const tell = (message: LiveMessage) => {
+    // A tracer sees a few people only: what changed elsewhere carries no id for them.
+    const id = who.actingRole === "tracer" ? null : message.id;
+    const text = `data: ${JSON.stringify({ ...message, id })}\n\n`;
+    // Whoever is no member any more hears no further word.
+    if (message.topic === "members") void check(text);
+    else write(text);
+  };
+  const pulse = setInterval(() => void check(": still here\n\n"), PULSE_MS);
   const leaveHub = services.hub.subscribe(who.investigationId ?? "", { tell, end });
-  const leaveAccount = enter(who.accountId, end);
+  const leaveAccount = enterStream(who.accountId, { end, check: () => check("") });
   response.on("close", () => {
     clearInterval(pulse);
     leaveHub();

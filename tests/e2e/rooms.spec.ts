@@ -18,6 +18,12 @@ const roomNames: Record<Room, string> = {
   safeguard: "Safeguard",
 };
 
+/** A desk and a phone. */
+const sizes = [
+  [1440, 900],
+  [390, 844],
+] as const;
+
 /** A page that a role may open: its address and the heading by which one knows it is there. */
 type Place = readonly [path: string, heading: string | RegExp];
 
@@ -89,10 +95,7 @@ async function enter(
 }
 
 async function lookAt(page: Page, address: string, heading: string | RegExp, watched: Watch) {
-  for (const [width, height] of [
-    [1440, 900],
-    [390, 844],
-  ] as const) {
+  for (const [width, height] of sizes) {
     const what = `${address} at ${width}`;
     await page.setViewportSize({ width, height });
     await page.emulateMedia({ colorScheme: "light" });
@@ -163,6 +166,7 @@ for (const role of ROLES) {
       await expect(page.getByText("Not open to the role you act in")).toBeVisible();
       await expect(page.getByRole("link", { name: "Back to your room" })).toBeVisible();
     }
+    await expectAccessible(page, "a page not open to the role");
     // Somebody who is not there looks like somebody who is not to be seen.
     watched.clear("rooms");
     await page.goto(`/i/${id}/trace/people/00000000-0000-4000-8000-000000000000`);
@@ -171,6 +175,39 @@ for (const role of ROLES) {
     await expect(page.getByText("No page has this address")).toBeVisible();
   });
 }
+
+test("sign-in and dialogs, wide and narrow, light and dark", async ({ context }) => {
+  test.setTimeout(120_000);
+  const [page, watched] = await newPage(context);
+  const looks = async (what: string) => {
+    for (const [width, height] of sizes) {
+      await page.setViewportSize({ width, height });
+      await page.emulateMedia({ colorScheme: "light" });
+      await expectAccessible(page, `${what} at ${width}, light`);
+      await page.emulateMedia({ colorScheme: "dark" });
+      await expectAccessible(page, `${what} at ${width}, dark`, { contrastOnly: true });
+    }
+  };
+  await page.goto("/");
+  await expect(page.getByText(/Decision support for authorised public-health staff/)).toBeVisible();
+  await looks("the sign-in page");
+
+  const { investigationId: id } = await signIn(page, "officer");
+  await page.goto(`/i/${id}/safeguard?tab=members`);
+  await page.getByRole("button", { name: /^End the role of Demo tracer/ }).click();
+  const dialog = page.getByRole("alertdialog");
+  await expect(dialog).toBeVisible();
+  await looks("a question in a dialog");
+  // Nothing happens without an answer, and the focus goes back to where the question came from.
+  await page.keyboard.press("Escape");
+  await expect(dialog).toBeHidden();
+  await expect(page.getByRole("button", { name: /^End the role of Demo tracer/ })).toBeFocused();
+
+  await page.getByRole("button", { name: "Demo data officer", exact: true }).click();
+  await expect(page.getByRole("dialog", { name: "Account" })).toBeVisible();
+  await looks("the account panel");
+  watched.clear("sign-in and dialogs");
+});
 
 test("keys for rooms stay out of fields and can be switched off", async ({ page }) => {
   const { investigationId: id } = await signIn(page, "supervisor");

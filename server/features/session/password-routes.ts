@@ -11,6 +11,7 @@ import { isGuessable } from "../../../shared/passwords.ts";
 import { recordEvent } from "../../audit/record-event.ts";
 import { now } from "../../clock.ts";
 import { withTx } from "../../db/with-tx.ts";
+import { checkStreamsOf } from "../../events/open-streams.ts";
 import { HttpProblem, invalid } from "../../http/problem.ts";
 import { definePlainRoute, type PlainRoute } from "../../http/route.ts";
 import { signedInOf } from "../../http/sign-in.ts";
@@ -79,7 +80,7 @@ export function passwordRoutes(services: Services, limiter: Limiter): PlainRoute
           throw invalid({ path: "password", code: "common_password" });
         }
         const hash = await hashPassword(password);
-        await withTx(context, async (tx) => {
+        const accountId = await withTx(context, async (tx) => {
           const account = await consumeReset(tx, token);
           if (!account) throw new HttpProblem("not_found");
           await storePassword(tx, account.id, hash);
@@ -92,8 +93,10 @@ export function passwordRoutes(services: Services, limiter: Limiter): PlainRoute
           });
           const order = { kind: "password_changed" as const, to: account.email };
           await queueLetter(tx, keys, order, NOTICE_MINUTES);
+          return account.id;
         });
         services.mail.soon();
+        await checkStreamsOf(accountId);
         return { changed: true };
       },
     }),
@@ -134,7 +137,7 @@ export function passwordRoutes(services: Services, limiter: Limiter): PlainRoute
           ) ?? null;
         const account = { id: who.accountId, epoch };
         const startedAt = request.session.startedAt ?? now().toISOString();
-        return startSession(
+        const changed = await startSession(
           request,
           services,
           account,
@@ -142,6 +145,8 @@ export function passwordRoutes(services: Services, limiter: Limiter): PlainRoute
           "account.password_changed",
           startedAt,
         );
+        await checkStreamsOf(who.accountId);
+        return changed;
       },
     }),
   ];

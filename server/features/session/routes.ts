@@ -10,6 +10,7 @@ import {
 import { recordEvent } from "../../audit/record-event.ts";
 import { now } from "../../clock.ts";
 import { withTx } from "../../db/with-tx.ts";
+import { checkStreamsOf } from "../../events/open-streams.ts";
 import { HttpProblem } from "../../http/problem.ts";
 import { definePlainRoute, type PlainRoute } from "../../http/route.ts";
 import { endSession, loadAccount, signedInOf } from "../../http/sign-in.ts";
@@ -107,7 +108,16 @@ export function sessionRoutes(services: Services): PlainRoute[] {
         if (!acting) throw new HttpProblem("not_found");
         const account = { id: who.accountId, epoch: request.session.epoch ?? 0 };
         const startedAt = request.session.startedAt ?? now().toISOString();
-        return startSession(request, services, account, acting, "session.role_changed", startedAt);
+        const changed = await startSession(
+          request,
+          services,
+          account,
+          acting,
+          "session.role_changed",
+          startedAt,
+        );
+        await checkStreamsOf(who.accountId);
+        return changed;
       },
     }),
     definePlainRoute({
@@ -120,6 +130,7 @@ export function sessionRoutes(services: Services): PlainRoute[] {
       async handle(request, response) {
         const who = signedInOf(request);
         await endSession(request, services.pools.auth);
+        await checkStreamsOf(who.accountId);
         await withTx({ pool: services.pools.auth, nonce: null }, (tx) =>
           recordEvent(tx, {
             action: "session.ended",

@@ -20,7 +20,13 @@ afterAll(async () => {
   await app?.close();
 });
 
-type Stream = { status: number; text: () => string; ended: Promise<void>; close: () => void };
+type Stream = {
+  cookie: string;
+  status: number;
+  text: () => string;
+  ended: Promise<void>;
+  close: () => void;
+};
 
 /** Opens a stream as a browser does. */
 async function openStream(member: Member, path = `${member.base}/live`): Promise<Stream> {
@@ -41,6 +47,7 @@ async function openStream(member: Member, path = `${member.base}/live`): Promise
       });
       const ended = new Promise<void>((done) => response.on("close", done));
       resolve({
+        cookie,
         status: response.statusCode ?? 0,
         text: () => text,
         ended,
@@ -103,5 +110,34 @@ describe("GET live", () => {
     await streams[0]?.ended;
     for (const stream of streams) stream.close();
     await Promise.all(streams.map(({ ended }) => ended));
+  });
+
+  it.each(["signs out", "acts as something else"])(
+    "ends at once when its session %s",
+    async (how) => {
+      const stream = await openStream(supervisor);
+      const session = `${app.origin}/api/session`;
+      const headers = {
+        cookie: stream.cookie,
+        origin: app.origin,
+        "content-type": "application/json",
+      };
+      const acting = { actingRole: "supervisor", investigationId: id };
+      const answer =
+        how === "signs out"
+          ? await fetch(session, { method: "DELETE", headers })
+          : await fetch(session, { method: "PATCH", headers, body: JSON.stringify(acting) });
+      expect(answer.ok).toBe(true);
+      await stream.ended;
+    },
+  );
+
+  it("tells a member whose membership ended nothing more", async () => {
+    const leaving = await signInAs(app, "epidemiologist", id);
+    const stream = await openStream(leaving);
+    const path = `${supervisor.base}/members/${leaving.memberId}`;
+    expect((await supervisor.client.call("delete", path)).status).toBe(204);
+    await stream.ended;
+    expect(messagesOf(stream)).toEqual([]);
   });
 });
