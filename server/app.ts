@@ -14,6 +14,7 @@ import {
   requestId,
   shallowBody,
 } from "./http/guards.ts";
+import { lateCookies } from "./http/late-cookie.ts";
 import { mount } from "./http/mount.ts";
 import { openApiDocument } from "./http/openapi.ts";
 import { HttpProblem, problemBody } from "./http/problem.ts";
@@ -109,7 +110,7 @@ export function createApp(services: Services, dev?: express.Handler): Express {
   app.use("/api", originGate(services.env), jsonOnly);
   const json = { limit: "256kb", inflate: false, strict: true, verify: readableBytes };
   app.use("/api", express.json(json), shallowBody);
-  app.use("/api", cookieWithoutEnd, sessions(services));
+  app.use("/api", cookieWithoutEnd, lateCookies, sessions(services));
   app.use("/api", async (request: Request, response: Response, next: NextFunction) => {
     if (request.get("x-strandline-background") === "1" && request.session) {
       // Live updates are not activity: the store leaves the idle clock of a marked session alone.

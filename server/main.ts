@@ -13,6 +13,7 @@ import { firstOfficerToken } from "./features/session/first-officer.ts";
 import { safeError } from "./http/translate-error.ts";
 import { createKeyRing } from "./identity/keys.ts";
 import { startHousekeeping } from "./jobs/housekeeping.ts";
+import { startMail } from "./mail/mail.ts";
 import type { Services } from "./services.ts";
 
 const STOP_MS = 10_000;
@@ -80,7 +81,10 @@ async function main(): Promise<void> {
   const imports = await startImportUpkeep({ pools, log });
   const dispatcher = await startDispatcher({ pools, systemUrl, analysis, hub, log });
   const housekeeping = startHousekeeping(pools, log);
-  const services: Services = { env, secrets, pools, keys, analysis, hub, log };
+  const address =
+    env.publicUrl ?? `http://${env.host.includes(":") ? `[${env.host}]` : env.host}:${env.port}`;
+  const mail = await startMail({ env, pools, keys, log, base: () => address });
+  const services: Services = { env, secrets, pools, keys, analysis, hub, mail, log };
 
   const dev = env.dev ? await (await import("./dev-client.ts")).devClient() : undefined;
   const app = createApp(services, dev?.middleware);
@@ -97,8 +101,6 @@ async function main(): Promise<void> {
   server.headersTimeout = 10_000;
 
   async function announce(): Promise<void> {
-    const address =
-      env.publicUrl ?? `http://${env.host.includes(":") ? `[${env.host}]` : env.host}:${env.port}`;
     process.stdout.write(`Strandline is ready at ${address}\n`);
     if (env.demo) {
       const { demoNotice } = await import("../drizzle/seed/make-demo.ts");
@@ -124,6 +126,7 @@ async function main(): Promise<void> {
     server.close(async () => {
       imports.stop();
       housekeeping.stop();
+      await mail.stop();
       await dispatcher.stop();
       await analysis.stop();
       await dev?.close();

@@ -3,6 +3,7 @@ import { followUpRoutes } from "./features/follow-up/routes.ts";
 import { groupRoutes } from "./features/groups/routes.ts";
 import { importRoutes } from "./features/imports/routes.ts";
 import { interviewRoutes } from "./features/interviews/routes.ts";
+import { invitationRoutes } from "./features/investigations/invitations.ts";
 import { memberRoutes } from "./features/investigations/members.ts";
 import { investigationPlainRoutes, investigationRoutes } from "./features/investigations/routes.ts";
 import { networkRoutes } from "./features/network/routes.ts";
@@ -18,6 +19,7 @@ import type { Services } from "./services.ts";
 export const ROUTES: readonly AnyRoute[] = [
   ...investigationRoutes,
   ...memberRoutes,
+  ...invitationRoutes,
   ...peopleRoutes,
   ...testRoutes,
   ...placeRoutes,

@@ -5,6 +5,7 @@ import type { Secrets } from "./config/secrets.ts";
 import type { Pools } from "./db/pools.ts";
 import type { LiveHub } from "./events/live-hub.ts";
 import type { KeyRing } from "./identity/keys.ts";
+import type { Mail } from "./mail/mail.ts";
 
 /** What handlers are given; made once at boot (and once per test file). */
 export interface Services {
@@ -14,5 +15,6 @@ export interface Services {
   keys: KeyRing;
   analysis: Analysis;
   hub: LiveHub;
+  mail: Mail;
   log: Logger;
 }

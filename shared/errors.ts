@@ -21,6 +21,7 @@ export const ERRORS = {
   key_reused: { status: 422, title: "This Idempotency-Key was used for another request" },
   too_many_attempts: { status: 429, title: "Too many attempts; wait and try again" },
   internal: { status: 500, title: "Something went wrong on our side" },
+  mail_off: { status: 503, title: "This installation sends no mail; its settings name no server" },
   unavailable: { status: 503, title: "The service is busy or restarting; try again shortly" },
 } as const;
 export type ErrorCode = keyof typeof ERRORS;
@@ -59,6 +60,9 @@ export const FIELD_ERRORS = {
   only_with_symptoms: "Only where symptoms are reported",
   nobody_answered: "Nobody answered, so there is nothing to report",
   not_a_zone: "Not a time zone",
+  common_password: "Too easy to guess; take other words",
+  wrong_password: "Not your password",
+  same_password: "This is the password you have",
   account_unknown: "No account with this e-mail",
   demo_only: "Demo accounts can only join an investigation marked invented",
   already_member: "Already holds this role here",

@@ -50,6 +50,7 @@ export const DUTIES = {
   reviewMatches: ["supervisor"],
   importFiles: ["supervisor", "officer"],
   changeSettings: ["supervisor", "officer"],
+  manageMembers: ["supervisor", "officer"],
 } as const satisfies Record<string, readonly Role[]>;
 export type Duty = keyof typeof DUTIES;
 

@@ -1,6 +1,7 @@
 import { sql } from "drizzle-orm";
 import {
   boolean,
+  check,
   index,
   integer,
   json,
@@ -11,7 +12,7 @@ import {
   uniqueIndex,
   uuid,
 } from "drizzle-orm/pg-core";
-import { at, audit, auth, recordedAt } from "./shared.ts";
+import { at, audit, auth, bytea, recordedAt } from "./shared.ts";
 
 export const account = auth.table(
   "account",
@@ -72,6 +73,55 @@ export const firstOfficerLink = auth.table("first_officer_link", {
   tokenHash: text("token_hash").primaryKey(),
   expiresAt: at("expires_at").notNull(),
   usedAt: at("used_at"),
+});
+
+/** Links sent by mail: an invitation into an investigation, or leave to choose a new password. */
+export const invitation = auth.table(
+  "invitation",
+  {
+    id: uuid("id").primaryKey(),
+    // SHA-256 of the token; the token itself is in the letter only.
+    tokenHash: text("token_hash").notNull(),
+    kind: text("kind").notNull(),
+    email: text("email").notNull(),
+    accountId: uuid("account_id"),
+    investigationId: uuid("investigation_id"),
+    role: text("role"),
+    teamId: uuid("team_id"),
+    expiresAt: at("expires_at").notNull(),
+    usedAt: at("used_at"),
+    recordedBy: uuid("recorded_by"),
+    recordedAt: recordedAt(),
+  },
+  (t) => [
+    uniqueIndex("invitation_token").on(t.tokenHash),
+    index("invitation_investigation").on(t.investigationId),
+    index("invitation_account").on(t.accountId),
+    check("invitation_kind", sql`${t.kind} in ('invitation', 'reset')`),
+  ],
+);
+
+/** Letters to be sent: who gets which, with its token, sealed by the application. */
+export const mail = auth.table(
+  "mail",
+  {
+    id: uuid("id").primaryKey(),
+    sealed: bytea("sealed").notNull(),
+    attempts: smallint("attempts").notNull().default(0),
+    dueAt: at("due_at").notNull().defaultNow(),
+    expiresAt: at("expires_at").notNull(),
+    recordedAt: recordedAt(),
+  },
+  (t) => [index("mail_due").on(t.dueAt)],
+);
+
+/** Failed attempts of the last hour by a hashed key: an address, or an address with an account. */
+export const attempt = auth.table("attempt", {
+  key: text("key").primaryKey(),
+  failures: integer("failures").notNull(),
+  since: at("since").notNull().defaultNow(),
+  // When a known device may try again.
+  freeAt: at("free_at").notNull().defaultNow(),
 });
 
 export const meta = auth.table("meta", {

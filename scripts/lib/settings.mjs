@@ -23,6 +23,22 @@ function isHttpsOrigin(value) {
   return url.href === `${url.origin}/` && !value.includes("?") && !value.includes("#");
 }
 
+// A mail server and nothing else: options behind a `?` could switch its protection off.
+function isMailServer(value) {
+  if (!isUrl(value, ["smtp:", "smtps:"]) || /[?#]/.test(value)) return false;
+  try {
+    const { pathname, username, password } = new URL(value);
+    decodeURIComponent(username + password);
+    return pathname === "" || pathname === "/";
+  } catch {
+    return false;
+  }
+}
+
+// The expression of zod's own e-mail check, which this file may not load.
+const ADDRESS =
+  /^(?:[A-Za-z0-9_'+-]+\.)*[A-Za-z0-9_'+-]*[A-Za-z0-9_+-]@(?:[A-Za-z0-9][A-Za-z0-9-]*\.)+[A-Za-z]{2,}$/;
+
 function isHost(value) {
   return isIP(value) > 0 || /^[a-z0-9]([a-z0-9.-]{0,252}[a-z0-9])?$/i.test(value);
 }
@@ -39,6 +55,11 @@ const RULES = {
   STRANDLINE_DEMO_PASSWORD: [(v) => v.length >= 15 && v.length <= 256, "15 to 256 characters"],
   STRANDLINE_PUBLIC_URL: [isHttpsOrigin, "an https:// address without a path"],
   STRANDLINE_PROXY: [(v) => inRange(v, 1, 10), "the number of proxies in front, 1 to 10"],
+  STRANDLINE_SMTP_URL: [
+    isMailServer,
+    "smtp://… or smtps://… with host, port, user and password only",
+  ],
+  STRANDLINE_MAIL_FROM: [(v) => v.length <= 254 && ADDRESS.test(v), "an e-mail address"],
   STRANDLINE_DEV: [flag, "0 or 1"],
   STRANDLINE_LOG_LEVEL: [(v) => LEVELS.includes(v), `one of ${LEVELS.join(", ")}`],
 };
@@ -72,6 +93,9 @@ export function checkSettings(env) {
   }
   if (url !== proxy) {
     throw new PlainError("STRANDLINE_PUBLIC_URL and STRANDLINE_PROXY are given together or not");
+  }
+  if ((env.STRANDLINE_SMTP_URL === undefined) !== (env.STRANDLINE_MAIL_FROM === undefined)) {
+    throw new PlainError("STRANDLINE_SMTP_URL and STRANDLINE_MAIL_FROM are given together or not");
   }
   if (env.STRANDLINE_DEV === "1" && (!isLoopback(host) || url)) {
     throw new PlainError("the development server runs on loopback only");

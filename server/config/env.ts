@@ -27,6 +27,10 @@ export type Env = {
   proxyHops: number;
   /** Strict cookie: Secure and the `__Host-` prefix. */
   secureCookie: boolean;
+  /** `smtp://` or `smtps://` with user and password; undefined when none is set. */
+  smtpUrl: string | undefined;
+  /** Address that mail comes from; set together with `smtpUrl`. */
+  mailFrom: string | undefined;
   dev: boolean;
   logLevel: LogLevel;
 };
@@ -47,11 +51,26 @@ function isHttpsOrigin(value: string): boolean {
   return url.href === `${url.origin}/`;
 }
 
+/** A mail server and nothing else: options behind a `?` could switch its protection off. */
+function isMailServer(value: string): boolean {
+  if (!isUrl(value, ["smtp:", "smtps:"]) || /[?#]/.test(value)) return false;
+  try {
+    const { pathname, username, password } = new URL(value);
+    decodeURIComponent(username + password);
+    return pathname === "" || pathname === "/";
+  } catch {
+    return false;
+  }
+}
+
+const isAddress = (value: string) => value.length <= 254 && z.email().safeParse(value).success;
+
 function isHost(value: string): boolean {
   return isIP(value) > 0 || /^[a-z0-9]([a-z0-9.-]{0,252}[a-z0-9])?$/i.test(value);
 }
 
-function isLoopback(host: string): boolean {
+/** True for an address that only this machine reaches. */
+export function isLoopback(host: string): boolean {
   return host === "localhost" || host === "::1" || (isIP(host) === 4 && host.startsWith("127."));
 }
 
@@ -84,6 +103,11 @@ const schema = z.object({
     .refine(isHttpsOrigin, "an https:// address without a path")
     .optional(),
   STRANDLINE_PROXY: whole(1, 10, "the number of proxies in front, 1 to 10").optional(),
+  STRANDLINE_SMTP_URL: z
+    .string()
+    .refine(isMailServer, "smtp://… or smtps://… with host, port, user and password only")
+    .optional(),
+  STRANDLINE_MAIL_FROM: z.string().refine(isAddress, "an e-mail address").optional(),
   STRANDLINE_DEV: flag.default(false),
   STRANDLINE_LOG_LEVEL: z.enum(LOG_LEVELS, `one of ${LOG_LEVELS.join(", ")}`).default("info"),
 });
@@ -116,6 +140,9 @@ export function parseEnv(source: Record<string, string | undefined>): Env {
   if ((publicUrl === undefined) !== (env.STRANDLINE_PROXY === undefined)) {
     throw new EnvError("STRANDLINE_PUBLIC_URL and STRANDLINE_PROXY are given together or not");
   }
+  if ((env.STRANDLINE_SMTP_URL === undefined) !== (env.STRANDLINE_MAIL_FROM === undefined)) {
+    throw new EnvError("STRANDLINE_SMTP_URL and STRANDLINE_MAIL_FROM are given together or not");
+  }
   if (env.STRANDLINE_DEV && (!loopback || publicUrl)) {
     throw new EnvError("the development server runs on loopback only");
   }
@@ -130,6 +157,8 @@ export function parseEnv(source: Record<string, string | undefined>): Env {
     publicUrl,
     proxyHops: env.STRANDLINE_PROXY ?? 0,
     secureCookie: publicUrl !== undefined,
+    smtpUrl: env.STRANDLINE_SMTP_URL,
+    mailFrom: env.STRANDLINE_MAIL_FROM,
     dev: env.STRANDLINE_DEV,
     logLevel: env.STRANDLINE_LOG_LEVEL,
   };

@@ -89,7 +89,7 @@ export interface PlainRoute {
   query?: Shape;
   body?: Shape;
   output: Shape;
-  status?: 200 | 201 | 204;
+  status?: 200 | 201 | 202 | 204;
   creates?: boolean;
   handle(request: Request, response: Response, services: Services): Promise<unknown>;
 }

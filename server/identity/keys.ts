@@ -17,6 +17,9 @@ export interface KeyRing {
   of(tx: Tx, investigationId: string): Promise<InvestigationKeys>;
   /** Keys from a wrapped data key at hand. */
   unwrap(investigationId: string, wrapped: Buffer): InvestigationKeys;
+  /** Seals a letter that waits to be sent, bound to its row. */
+  sealLetter(id: string, plain: string): Buffer;
+  openLetter(id: string, sealed: Buffer): string;
   /** Value to store once, and to check at each boot: it opens only with the same master key. */
   checkValue(): string;
   opensCheck(value: string): boolean;
@@ -25,6 +28,7 @@ export interface KeyRing {
 /** Makes the key ring of an installation from its 32-byte master key. */
 export function createKeyRing(masterKey: Buffer): KeyRing {
   const wrapping = subkey(masterKey, "wrap");
+  const letters = subkey(masterKey, "letters");
   const checking = subkey(masterKey, "check");
   const known = new Map<string, InvestigationKeys>();
   const unwrap = (id: string, wrapped: Buffer): InvestigationKeys => {
@@ -46,6 +50,8 @@ export function createKeyRing(masterKey: Buffer): KeyRing {
       known.set(id, keys);
       return keys;
     },
+    sealLetter: (id, plain) => seal(letters, `mail|${id}`, plain),
+    openLetter: (id, sealed) => open(letters, `mail|${id}`, sealed).toString("utf8"),
     checkValue: () => seal(checking, "check", "strandline").toString("base64"),
     opensCheck(value) {
       try {

@@ -10,6 +10,12 @@ const DUE: readonly (readonly ["auth" | "system", string])[] = [
   ["auth", "delete from auth.ctx_live where expires_at < now()"],
   ["auth", "delete from auth.idempotency where recorded_at < now() - interval '24 hours'"],
   ["auth", "delete from auth.first_officer_link where expires_at < now()"],
+  ["auth", "delete from auth.invitation where expires_at < now() - interval '30 days'"],
+  ["auth", "delete from auth.mail where expires_at < now()"],
+  [
+    "auth",
+    "delete from auth.attempt where since < now() - interval '1 hour' and free_at < now() - interval '1 hour'",
+  ],
   ["system", "delete from core.outbox where done_at < now() - interval '24 hours'"],
 ];
 

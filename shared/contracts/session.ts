@@ -1,5 +1,6 @@
 import { z } from "zod";
 import { ROLES, ROOMS } from "../roles.ts";
+import { newPassword } from "./accounts.ts";
 import { LIMITS, uuid } from "./common.ts";
 
 /** What a visitor may know before signing in. */
@@ -7,6 +8,8 @@ export const welcomeAnswer = z.strictObject({
   signedIn: z.boolean(),
   demo: z.boolean(),
   setUpNeeded: z.boolean(),
+  /** Where mail goes: to a server, to the inbox of this installation, nowhere. */
+  mail: z.enum(["smtp", "inbox", "off"]).default("off"),
 });
 
 export const signInInput = z.strictObject({
@@ -60,10 +63,7 @@ export const firstOfficerInput = z.strictObject({
     .min(1, { error: "required" })
     .max(LIMITS.name, { error: "too_long" }),
   email: z.email({ error: "not_an_email" }).max(LIMITS.email, { error: "too_long" }),
-  password: z
-    .string({ error: "required" })
-    .min(LIMITS.passwordMin, { error: "too_short" })
-    .max(LIMITS.passwordMax, { error: "too_long" }),
+  password: newPassword,
   investigationName: z
     .string({ error: "required" })
     .trim()

@@ -1,6 +1,7 @@
 import { type ReactNode, useEffect, useState } from "react";
 import { useLocation } from "react-router-dom";
 import type { Investigation } from "../../shared/contracts/investigations.ts";
+import { hasDuty } from "../../shared/roles.ts";
 import { AppFrame } from "../components/layouts/app-frame.tsx";
 import { Notice } from "../components/ui/notice.tsx";
 import { AccountMenu } from "../features/session/components/account-menu.tsx";
@@ -49,6 +50,12 @@ export function Frame({ investigation, readAt, children }: FrameProps) {
           <AccountMenu
             session={session}
             investigationsTo={paths.investigations}
+            passwordTo={paths.password}
+            membersTo={
+              session.investigationId && hasDuty(session.actingRole, "manageMembers")
+                ? paths.members(session.investigationId)
+                : undefined
+            }
             roomKeys={roomKeys}
             onRoomKeysChange={setRoomKeys}
           />

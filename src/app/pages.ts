@@ -12,7 +12,8 @@ export const pages = {
   follow: () => import("../features/follow-up/routes/follow-route.tsx"),
   review: () => import("../features/review/routes/review-route.tsx"),
   compare: () => import("../features/compare/routes/compare-route.tsx"),
-  safeguard: () => import("../features/safeguard/routes/safeguard-route.tsx"),
+  safeguard: () => import("./routes/safeguard-route.tsx"),
+  members: () => import("./routes/members-route.tsx"),
 } as const;
 
 /** What work away from a desk needs: these are also opened where there is no signal. */

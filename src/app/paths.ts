@@ -5,6 +5,8 @@ export const paths = {
   signIn: "/sign-in",
   firstOfficer: "/first-officer",
   investigations: "/investigations",
+  password: "/password",
+  members: (investigationId: string) => `/i/${investigationId}/members`,
   trace: (investigationId: string) => `/i/${investigationId}/trace`,
   newPerson: (investigationId: string) => `/i/${investigationId}/trace/people/new`,
   person: (investigationId: string, personId: string) =>

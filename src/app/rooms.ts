@@ -36,6 +36,7 @@ const duties: readonly (readonly [(investigationId: string) => string, Duty])[] 
   [paths.newPerson, "register"],
   [paths.imports, "importFiles"],
   [paths.matches, "reviewMatches"],
+  [paths.members, "manageMembers"],
 ];
 
 /** Whether the acting role ever has a page; an address that is no room's is left to the router. */

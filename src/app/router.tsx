@@ -21,6 +21,7 @@ const rooms: RouteObject[] = [
   { path: "review", lazy: pages.review },
   { path: "compare", lazy: pages.compare },
   { path: "safeguard", lazy: pages.safeguard },
+  { path: "members", lazy: pages.members },
 ];
 
 const routes: RouteObject[] = [
@@ -38,10 +39,24 @@ const routes: RouteObject[] = [
         lazy: () => import("../features/session/routes/first-officer-route.tsx"),
       },
       {
+        path: "/invitation",
+        lazy: () => import("../features/session/routes/invitation-route.tsx"),
+      },
+      {
+        path: "/forgotten-password",
+        lazy: () => import("../features/session/routes/forgotten-password-route.tsx"),
+      },
+      {
+        path: "/new-password",
+        lazy: () => import("../features/session/routes/new-password-route.tsx"),
+      },
+      { path: "/inbox", lazy: () => import("../features/session/routes/inbox-route.tsx") },
+      {
         lazy: () => import("./routes/signed-in-layout.tsx"),
         children: [
           { index: true, lazy: () => import("./routes/home-route.tsx") },
           { path: "acting", lazy: () => import("./routes/acting-route.tsx") },
+          { path: "password", lazy: () => import("./routes/password-route.tsx") },
           { path: "investigations", lazy: () => import("./routes/investigations-route.tsx") },
           {
             path: "i/:investigationId",

@@ -2,6 +2,7 @@
 export type QueryWord =
   | "investigation"
   | "members"
+  | "invitations"
   | "people"
   | "tests"
   | "places"

@@ -3,9 +3,9 @@ import { cleanup, screen, waitFor, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { afterEach, describe, expect, it } from "vitest";
 import type { FieldPolicy } from "../../shared/contracts/safeguard.ts";
+import { Component } from "../../src/app/routes/safeguard-route.tsx";
 import { ToastProvider } from "../../src/components/ui/toast-provider.tsx";
 import { disagreementWords } from "../../src/features/safeguard/policy-disagreements.ts";
-import { Component } from "../../src/features/safeguard/routes/safeguard-route.tsx";
 import { ids } from "./support/network-answers.ts";
 import { type Answers, renderRoom } from "./support/room.tsx";
 
@@ -85,6 +85,7 @@ function open(options: { items?: Item[]; at?: string; role?: "officer" | "superv
     }
     if (path === "access-events") return listOf([event]);
     if (path.startsWith("members/")) return new Response(null, { status: 204 });
+    if (path === "invitations") return listOf([]);
     return listOf([member]);
   };
   const room = () => (

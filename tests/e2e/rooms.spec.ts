@@ -48,6 +48,7 @@ const pagesOf: Record<Role, readonly Place[]> = {
     ["follow", "Follow"],
     ["review", "Review"],
     ["compare", "Compare"],
+    ["members", "Members"],
   ],
   epidemiologist: [
     ["trace", "Trace"],
@@ -64,14 +65,15 @@ const pagesOf: Record<Role, readonly Place[]> = {
     ["safeguard", "Safeguard"],
     ["safeguard?tab=events", "Safeguard"],
     ["safeguard?tab=members", "Safeguard"],
+    ["members", "Members"],
   ],
 };
 
 /** Pages that are never a role's, though they lie in a room that is. */
 const refusedPages: Record<Role, readonly string[]> = {
-  tracer: ["trace/import", "trace/matches"],
+  tracer: ["trace/import", "trace/matches", "members"],
   supervisor: [],
-  epidemiologist: ["trace/people/new", "trace/import", "trace/matches"],
+  epidemiologist: ["trace/people/new", "trace/import", "trace/matches", "members"],
   officer: ["trace/people/new", "trace/matches"],
 };
 

@@ -218,6 +218,7 @@ test("views belong to one role each and keep a barrier against leaking functions
   const readers = Object.fromEntries(found.rows.map((row) => [row.name, row.readers]));
   expect(readers).toEqual({
     field_right: ["strandline_officer"],
+    invitation: ["strandline_officer", "strandline_supervisor"],
     member: ["strandline_officer", "strandline_supervisor"],
     person_officer: ["strandline_officer"],
     person_supervisor: ["strandline_supervisor"],

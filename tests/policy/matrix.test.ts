@@ -32,6 +32,10 @@ beforeAll(async () => {
       own: world.everyone.epidemiologist.memberId,
       other: world.others.epidemiologist.memberId,
     },
+    invitationId: {
+      own: await openInvitation(world.here),
+      other: await openInvitation(world.elsewhere),
+    },
     importId: {
       own: await stageImport(world.everyone.supervisor),
       other: await stageImport(world.others.supervisor),
@@ -59,6 +63,17 @@ async function checkOf(personId: string): Promise<string> {
   return made.rows[0].id;
 }
 
+/** An invitation that nobody took up, past the routes. */
+async function openInvitation(investigationId: string): Promise<string> {
+  const id = randomUUID();
+  await world.admin.query(
+    `insert into auth.invitation (id, token_hash, kind, email, investigation_id, role, expires_at)
+     values ($1, $2, 'invitation', 'open@body.example', $3, 'tracer', now() + interval '1 hour')`,
+    [id, randomUUID(), investigationId],
+  );
+  return id;
+}
+
 type Where = "own" | "other" | "random" | "malformed";
 const WHERE: readonly Where[] = ["own", "other", "random", "malformed"];
 const paramsOf = (path: string) => [...path.matchAll(/:(\w+)/g)].map((match) => match[1] as string);
@@ -83,6 +98,9 @@ async function addressOf(route: AnyRoute, where: Where, object: Where): Promise<
     }
     if (route.method === "delete" && object === "own" && name === "checkId") {
       own = await checkOf(world.people.held);
+    }
+    if (route.method === "delete" && object === "own" && name === "invitationId") {
+      own = await openInvitation(world.here);
     }
     path = path.replace(`:${name}`, pick(object, own, known.other));
   }

@@ -11,6 +11,7 @@ import { createPools, endPools, loginUrl, type Pools } from "../../server/db/poo
 import { startDispatcher } from "../../server/events/dispatcher.ts";
 import { createLiveHub } from "../../server/events/live-hub.ts";
 import { createKeyRing, type KeyRing } from "../../server/identity/keys.ts";
+import { startMail } from "../../server/mail/mail.ts";
 import type { Services } from "../../server/services.ts";
 import { createTestDatabase, TEST_PASSWORDS } from "./database.ts";
 
@@ -44,6 +45,9 @@ export async function startTestApp(): Promise<TestApp> {
   await analysis.start();
   const systemUrl = loginUrl(database.adminUrl, "system", TEST_PASSWORDS.system);
   const dispatcher = await startDispatcher({ pools, systemUrl, analysis, hub, log });
+  let origin = "";
+  const env = { loopback: true, publicUrl: undefined, smtpUrl: undefined, mailFrom: undefined };
+  const mail = await startMail({ env, pools, keys, log, base: () => origin });
   const services: Services = {
     env: {
       demo: true,
@@ -58,12 +62,13 @@ export async function startTestApp(): Promise<TestApp> {
     keys,
     analysis,
     hub,
+    mail,
     log,
   };
   const app = createApp(services);
   const server: Server = createServer(app);
   await new Promise<void>((resolve) => server.listen(0, "127.0.0.1", resolve));
-  const origin = `http://127.0.0.1:${(server.address() as AddressInfo).port}`;
+  origin = `http://127.0.0.1:${(server.address() as AddressInfo).port}`;
   return {
     app,
     services,
@@ -77,6 +82,7 @@ export async function startTestApp(): Promise<TestApp> {
       hub.close();
       server.closeAllConnections();
       await new Promise<void>((resolve) => server.close(() => resolve()));
+      await mail.stop();
       await dispatcher.stop();
       await analysis.stop();
       await endPools(pools);

@@ -39,6 +39,8 @@ const FUNCTIONS: Record<string, readonly (Role | "system")[]> = {
   "core.announce(text, uuid, bigint)": ["tracer", "supervisor", "officer"],
   "core.fill_occupations(uuid, jsonb)": ["supervisor", "officer"],
   "core.sweep_import_stages()": ["system"],
+  "auth.invite(uuid, text, text, uuid, text, uuid, bytea)": ["supervisor", "officer"],
+  "auth.withdraw_invitation(uuid)": ["supervisor", "officer"],
   "auth.claim_key(uuid, text, text)": ["tracer", "supervisor", "officer"],
   "auth.keep_receipt(uuid, smallint, jsonb)": ["tracer", "supervisor", "officer"],
   "identity.open_people(uuid[], text[], text)": ["tracer", "supervisor", "officer"],
@@ -95,6 +97,14 @@ export function views(): string[] {
      from core.member m join auth.account a on a.id = m.account_id
      left join core.team t on t.id = m.team_id
      where m.investigation_id = (select core.ctx_investigation())`,
+    `create view views.invitation with (security_barrier) as
+     select i.id, i.email, i.role, t.name as team, a.display_name as invited_by, i.recorded_at,
+       i.expires_at
+     from auth.invitation i left join core.team t on t.id = i.team_id
+     left join auth.account a on a.id = i.recorded_by
+     where i.kind = 'invitation' and i.used_at is null and i.expires_at > now()
+       and i.investigation_id = (select core.ctx_investigation())
+       and (select core.ctx_role()) in ('supervisor', 'officer')`,
     `create view views.field_right with (security_barrier) as
      select role, field from auth.field_right where (select core.ctx_role()) = 'officer'`,
   );
@@ -144,7 +154,7 @@ export function grants(): string[] {
     );
   }
   for (const role of ["supervisor", "officer"] as const) {
-    out.push(`grant select on views.member to ${loginOf(role)}`);
+    out.push(`grant select on views.member, views.invitation to ${loginOf(role)}`);
   }
   out.push(`grant select on audit.event, views.field_right to ${loginOf("officer")}`);
   for (const table of CORE_TABLES) out.push(`grant select on ${table} to ${loginOf("system")}`);
@@ -153,7 +163,8 @@ export function grants(): string[] {
   const auth = loginOf("auth");
   out.push(
     `grant select, insert, update, delete on auth.account, auth.session, auth.ctx_live,
-       auth.idempotency, auth.first_officer_link, auth.meta to ${auth}`,
+       auth.idempotency, auth.first_officer_link, auth.invitation, auth.mail, auth.attempt,
+       auth.meta to ${auth}`,
     `grant select, insert on core.investigation, core.case_definition, identity.data_key to ${auth}`,
     `grant select, insert, update (ended_at) on core.member to ${auth}`,
     `grant usage on schema identity to ${auth}`,

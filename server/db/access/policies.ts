@@ -188,6 +188,9 @@ const AUTH_TABLES = [
   "auth.ctx_live",
   "auth.idempotency",
   "auth.first_officer_link",
+  "auth.invitation",
+  "auth.mail",
+  "auth.attempt",
   "auth.meta",
   "auth.field_right",
 ] as const;

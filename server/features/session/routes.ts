@@ -7,83 +7,26 @@ import {
   switchInput,
   welcomeAnswer,
 } from "../../../shared/contracts/session.ts";
-import { ABSOLUTE_HOURS, IDLE_MINUTES, ROOMS_OF } from "../../../shared/roles.ts";
 import { recordEvent } from "../../audit/record-event.ts";
 import { now } from "../../clock.ts";
 import { withTx } from "../../db/with-tx.ts";
 import { checkStreamsOf } from "../../events/open-streams.ts";
 import { HttpProblem } from "../../http/problem.ts";
 import { definePlainRoute, type PlainRoute } from "../../http/route.ts";
-import {
-  beginSession,
-  endSession,
-  loadAccount,
-  type Membership,
-  type SignedIn,
-  signedInOf,
-} from "../../http/sign-in.ts";
+import { endSession, loadAccount, signedInOf } from "../../http/sign-in.ts";
 import type { Services } from "../../services.ts";
+import { accountRoutes } from "./account-routes.ts";
+import { knownDevice, rememberDevice } from "./device-cookie.ts";
 import { makeFirstOfficer } from "./first-officer.ts";
-import { createSignInLimiter } from "./limiter.ts";
+import { createLimiter } from "./limiter.ts";
 import { createPassport, type Verified } from "./passport.ts";
-
-function presentSession(who: SignedIn, startedAt: string): z.input<typeof sessionAnswer> {
-  const role = who.actingRole;
-  const rooms = role ? [...ROOMS_OF[role]] : [];
-  return {
-    accountId: who.accountId,
-    displayName: who.displayName,
-    email: who.email,
-    demo: who.demo,
-    actingRole: role,
-    investigationId: who.investigationId,
-    rooms,
-    memberships: who.memberships,
-    idleMinutes: role ? IDLE_MINUTES[role] : Math.min(...Object.values(IDLE_MINUTES)),
-    endsAt: new Date(new Date(startedAt).getTime() + ABSOLUTE_HOURS * 3_600_000).toISOString(),
-  };
-}
-
-/** Begins a session and writes its event; answers with the session. */
-async function start(
-  request: Request,
-  services: Services,
-  account: Verified,
-  acting: Membership | null,
-  action: "session.started" | "session.role_changed",
-  startedAt: string,
-) {
-  const { pools } = services;
-  await beginSession(request, pools.auth, account, acting, startedAt);
-  await withTx({ pool: pools.auth, nonce: null }, (tx) =>
-    recordEvent(tx, {
-      action,
-      accountId: account.id,
-      role: acting?.role ?? null,
-      investigationId: acting?.investigationId ?? null,
-    }),
-  );
-  const loaded = await loadAccount(pools.auth, account.id);
-  if (!loaded) throw new HttpProblem("sign_in_failed");
-  return presentSession(
-    {
-      accountId: loaded.id,
-      email: loaded.email,
-      displayName: loaded.display_name,
-      demo: loaded.demo,
-      memberships: loaded.memberships,
-      actingRole: acting?.role ?? null,
-      investigationId: acting?.investigationId ?? null,
-      nonce: request.session.nonce ?? null,
-    },
-    startedAt,
-  );
-}
+import { passwordRoutes } from "./password-routes.ts";
+import { presentSession, startSession } from "./start-session.ts";
 
 /** Routes of the session: sign in, who am I, act as, sign out. */
 export function sessionRoutes(services: Services): PlainRoute[] {
   const passport = createPassport(services);
-  const limiter = createSignInLimiter();
+  const limiter = createLimiter(services.pools.auth);
   const verify = (request: Request, response: Response): Promise<Verified> =>
     new Promise((resolve, reject) => {
       passport.authenticate(
@@ -110,6 +53,7 @@ export function sessionRoutes(services: Services): PlainRoute[] {
           signedIn: response.locals.who !== null,
           demo: services.env.demo,
           setUpNeeded: found.rowCount === 0,
+          mail: services.mail.mode,
         };
       },
     }),
@@ -122,20 +66,17 @@ export function sessionRoutes(services: Services): PlainRoute[] {
       output: sessionAnswer,
       async handle(request, response) {
         const input = response.locals.body as z.output<typeof signInInput>;
-        const address = request.ip ?? "";
-        await limiter.check(address, input.email);
-        let account: Verified;
-        try {
-          account = await verify(request, response);
-        } catch (error) {
-          if (error instanceof HttpProblem) await limiter.failed(address, input.email);
-          throw error;
-        }
+        const device = knownDevice(request, services, input.email);
+        const attempt = await limiter.begin(request.ip ?? "", input.email, device);
+        const account = await verify(request, response);
+        await attempt.succeeded();
         const loaded = await loadAccount(services.pools.auth, account.id);
         if (!loaded) throw new HttpProblem("sign_in_failed");
         // The oldest membership is where a sign-in starts.
         const acting = loaded.memberships[0] ?? null;
-        return start(request, services, account, acting, "session.started", now().toISOString());
+        rememberDevice(request, response, services, loaded.email);
+        const startedAt = now().toISOString();
+        return startSession(request, services, account, acting, "session.started", startedAt);
       },
     }),
     definePlainRoute({
@@ -167,7 +108,7 @@ export function sessionRoutes(services: Services): PlainRoute[] {
         if (!acting) throw new HttpProblem("not_found");
         const account = { id: who.accountId, epoch: request.session.epoch ?? 0 };
         const startedAt = request.session.startedAt ?? now().toISOString();
-        const changed = await start(
+        const changed = await startSession(
           request,
           services,
           account,
@@ -219,16 +160,13 @@ export function sessionRoutes(services: Services): PlainRoute[] {
       status: 201,
       async handle(request, response) {
         const input = response.locals.body as z.output<typeof firstOfficerInput>;
-        const address = request.ip ?? "";
-        await limiter.check(address, "first-officer");
-        try {
-          await makeFirstOfficer(services, input);
-        } catch (error) {
-          await limiter.failed(address, "first-officer");
-          throw error;
-        }
+        const attempt = await limiter.begin(request.ip ?? "", "first-officer");
+        await makeFirstOfficer(services, input);
+        await attempt.succeeded();
         return { made: true };
       },
     }),
+    ...accountRoutes(services, limiter),
+    ...passwordRoutes(services, limiter),
   ];
 }

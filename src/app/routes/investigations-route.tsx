@@ -6,6 +6,7 @@ import { Section } from "../../components/layouts/section.tsx";
 import { Button } from "../../components/ui/button.tsx";
 import { EmptyState } from "../../components/ui/empty-state.tsx";
 import { ErrorState } from "../../components/ui/error-state.tsx";
+import { LinkButton } from "../../components/ui/link-button.tsx";
 import { LoadingState } from "../../components/ui/loading-state.tsx";
 import { Tag } from "../../components/ui/tag.tsx";
 import { useToast } from "../../components/ui/use-toast.ts";
@@ -18,6 +19,7 @@ import { useSwitchActing } from "../../features/session/components/acting-switch
 import { errorKind } from "../../lib/api-error.ts";
 import { useSession } from "../../lib/session-context.ts";
 import { Frame } from "../frame.tsx";
+import { paths } from "../paths.ts";
 
 /** The investigations one works in; their settings; opening a new one. */
 export function Component() {
@@ -46,7 +48,10 @@ export function Component() {
               onCancel={() => setCreating(false)}
               onCreated={() => {
                 setCreating(false);
-                toast({ tone: "done", text: "Opened. You hold your acting role in it." });
+                toast({
+                  tone: "done",
+                  text: "Opened. You hold your acting role in it; act in it to invite the others.",
+                });
               }}
             />
           </Section>
@@ -58,7 +63,8 @@ export function Component() {
           ) : null}
           {list.data && list.data.items.length === 0 ? (
             <EmptyState title="You hold no role in any investigation">
-              A data officer of an investigation can add you by the e-mail you sign in with.
+              A supervisor or data officer of an investigation can invite you by the e-mail you sign
+              in with.
             </EmptyState>
           ) : null}
           {list.data && list.data.items.length > 0 ? (
@@ -88,7 +94,15 @@ function Settings({ investigationId }: { investigationId: string }) {
   const investigation = useQuery(investigationQuery(investigationId));
   if (!investigation.data) return null;
   return (
-    <Section title="Settings" subLine={investigation.data.name}>
+    <Section
+      title="Settings"
+      subLine={investigation.data.name}
+      actions={
+        <LinkButton size="small" to={paths.members(investigationId)}>
+          Members and invitations
+        </LinkButton>
+      }
+    >
       <SettingsForm
         investigation={investigation.data}
         onReload={() => void investigation.refetch()}

@@ -20,6 +20,7 @@ export async function stageImport(member: Member): Promise<string> {
 const BODIES: Record<string, (world: World) => unknown> = {
   "patch /api/investigations/:id": () => ({ version: 1, infectiousBefore: 2 }),
   "post /api/investigations/:id/members": () => ({ email: "no@body.example", role: "tracer" }),
+  "post /api/investigations/:id/invitations": () => ({ email: "no@body.example", role: "tracer" }),
   "delete /api/investigations/:id/members": () => ({ email: "no@body.example", role: "tracer" }),
   "post /api/investigations/:id/people/search": () => ({ q: "Zqbody" }),
   "post /api/investigations/:id/people": () => ({ area: "South" }),

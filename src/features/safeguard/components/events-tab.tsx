@@ -9,8 +9,8 @@ import { EmptyState } from "../../../components/ui/empty-state.tsx";
 import { MenuSelect } from "../../../components/ui/menu-select.tsx";
 import { errorKind } from "../../../lib/api-error.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
+import { membersQuery } from "../../../lib/members-query.ts";
 import { accessEventsQuery, type EventsAsk } from "../api/access-events.ts";
-import { membersQuery } from "../api/members.ts";
 import { eventColumns } from "../event-columns.tsx";
 import { actionWords } from "../safeguard-words.ts";
 

@@ -1,33 +1,25 @@
-import { lazy, Suspense } from "react";
+import type { ReactNode } from "react";
 import { useSearchParams } from "react-router-dom";
 import { RoomPage } from "../../../components/layouts/room-page.tsx";
 import { Caution } from "../../../components/ui/caution.tsx";
 import { ErrorState } from "../../../components/ui/error-state.tsx";
-import { LoadingState } from "../../../components/ui/loading-state.tsx";
 import { Tabs } from "../../../components/ui/tabs.tsx";
 import { useSession } from "../../../lib/session-context.ts";
 import { EventsTab } from "../components/events-tab.tsx";
 import { PolicyTab } from "../components/policy-tab.tsx";
 
-// Its form and its question are fetched when the tab is opened.
-const MembersTab = lazy(() =>
-  import("../components/members-tab.tsx").then((file) => ({ default: file.MembersTab })),
-);
-
-const members = (
-  <Suspense fallback={<LoadingState label="Opening the members" />}>
-    <MembersTab />
-  </Suspense>
-);
-
-const tabs = [
-  { id: "policy", label: "Field policy", content: <PolicyTab /> },
-  { id: "events", label: "Access events", content: <EventsTab /> },
-  { id: "members", label: "Members", content: members },
-];
+export type SafeguardRouteProps = {
+  /** Who works here: a part that other pages show as well, handed in by the page that joins both. */
+  members: ReactNode;
+};
 
 /** Safeguard: who may see which field, who looked, and who works here. */
-export function Component() {
+export function SafeguardRoute({ members }: SafeguardRouteProps) {
+  const tabs = [
+    { id: "policy", label: "Field policy", content: <PolicyTab /> },
+    { id: "events", label: "Access events", content: <EventsTab /> },
+    { id: "members", label: "Members", content: members },
+  ];
   const { actingRole } = useSession();
   const [params, setParams] = useSearchParams();
   const asked = params.get("tab");

@@ -11,6 +11,9 @@ import { signOut } from "../api/sign-out.ts";
 export type AccountMenuProps = {
   session: Session;
   investigationsTo: string;
+  passwordTo: string;
+  /** Where members are added; undefined for a role that may not. */
+  membersTo: string | undefined;
   roomKeys: boolean;
   onRoomKeysChange: (on: boolean) => void;
 };
@@ -19,11 +22,18 @@ export type AccountMenuProps = {
 export function AccountMenu({
   session,
   investigationsTo,
+  passwordTo,
+  membersTo,
   roomKeys,
   onRoomKeysChange,
 }: AccountMenuProps) {
   const [leaving, setLeaving] = useState(false);
   const toast = useToast();
+  const links = [
+    ...(membersTo ? ([[membersTo, "Members and invitations"]] as const) : []),
+    [investigationsTo, "Investigations and settings"] as const,
+    [passwordTo, "Change password"] as const,
+  ];
 
   async function leave() {
     setLeaving(true);
@@ -54,15 +64,15 @@ export function AccountMenu({
             />
             Alt with a digit opens a room
           </label>
-          <p className="mt-2 border-t border-rule pt-2">
-            <Link
-              to={investigationsTo}
-              onClick={close}
-              className="text-kelp underline underline-offset-4"
-            >
-              Investigations and settings
-            </Link>
-          </p>
+          <ul className="mt-2 space-y-1 border-t border-rule pt-2">
+            {links.map(([to, words]) => (
+              <li key={to}>
+                <Link to={to} onClick={close} className="text-kelp underline underline-offset-4">
+                  {words}
+                </Link>
+              </li>
+            ))}
+          </ul>
           <div className="mt-3 mb-1">
             <Button size="small" pending={leaving} onClick={() => void leave()}>
               Sign out

@@ -11,17 +11,9 @@ import { errorWords } from "../../../lib/api-error.ts";
 import { contractResolver, fieldWords, showFieldErrors } from "../../../lib/form-errors.ts";
 import { useMakeFirstOfficer } from "../api/make-first-officer.ts";
 import { GeneralCaution } from "../components/general-caution.tsx";
+import { takeToken } from "../take-token.ts";
 
 type Values = z.output<typeof firstOfficerInput>;
-
-/** Takes the token out of the address bar at once, so that it stays in no history. */
-function takeToken(): string {
-  const token = window.location.hash.replace(/^#(token=)?/, "");
-  if (token !== "") {
-    window.history.replaceState(window.history.state, "", window.location.pathname);
-  }
-  return token;
-}
 
 // Once per page load: a second look would find the address already cleaned.
 const tokenOfAddress = takeToken();
@@ -50,7 +42,7 @@ export function Component() {
     return (
       <AuthLayout title="The first data officer is made" footer={<GeneralCaution />}>
         <p className="mb-4">
-          The link is used up. Sign in, then add the members of the team in Safeguard.
+          The link is used up. Sign in, then invite the members of the team in Safeguard.
         </p>
         <LinkButton to="/sign-in" variant="primary" reloadDocument>
           Sign in

@@ -1,6 +1,6 @@
 import { useQuery } from "@tanstack/react-query";
 import { useEffect } from "react";
-import { Navigate, useLocation, useNavigate } from "react-router-dom";
+import { Link, Navigate, useLocation, useNavigate } from "react-router-dom";
 import { AuthLayout } from "../../../components/layouts/auth-layout.tsx";
 import { ErrorState } from "../../../components/ui/error-state.tsx";
 import { Notice } from "../../../components/ui/notice.tsx";
@@ -39,7 +39,23 @@ export function Component() {
         </Notice>
       ) : null}
       <SignInForm onSignedIn={() => void navigate(from, { replace: true })} />
+      {welcome.data && welcome.data.mail !== "off" ? (
+        <p className="mt-4">
+          <Link to="/forgotten-password" className="text-kelp underline underline-offset-4">
+            Forgotten password
+          </Link>
+        </p>
+      ) : null}
       {welcome.data?.demo ? <DemoNote /> : null}
+      {welcome.data?.mail === "inbox" ? (
+        <p className="mt-3 text-sm text-ink-2">
+          No mail server is set: what would be sent is kept in the{" "}
+          <Link to="/inbox" className="text-kelp underline underline-offset-4">
+            inbox of this installation
+          </Link>
+          .
+        </p>
+      ) : null}
     </AuthLayout>
   );
 }

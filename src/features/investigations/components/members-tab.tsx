@@ -1,6 +1,7 @@
 import { useQuery } from "@tanstack/react-query";
 import { useMemo, useState } from "react";
 import type { Member } from "../../../../shared/contracts/investigations.ts";
+import { ROLE_NAMES } from "../../../../shared/roles.ts";
 import type { DataColumn } from "../../../components/data-table/data-column.ts";
 import { DataTable } from "../../../components/data-table/data-table.tsx";
 import { Section } from "../../../components/layouts/section.tsx";
@@ -9,11 +10,11 @@ import { useToast } from "../../../components/ui/use-toast.ts";
 import { errorKind } from "../../../lib/api-error.ts";
 import { formatInstant, noValue } from "../../../lib/formatters.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
+import { membersQuery } from "../../../lib/members-query.ts";
 import { useSession } from "../../../lib/session-context.ts";
-import { membersQuery } from "../api/members.ts";
-import { roleWord } from "../safeguard-words.ts";
-import { AddMemberForm } from "./add-member-form.tsx";
+import { AddMemberForm, type NewMemberBy } from "./add-member-form.tsx";
 import { EndMemberDialog } from "./end-member-dialog.tsx";
+import { PendingInvitations } from "./pending-invitations.tsx";
 
 function memberColumns(
   timeZone: string,
@@ -29,7 +30,7 @@ function memberColumns(
         member.accountId === accountId ? `${member.displayName} (you)` : member.displayName,
     },
     { id: "email", header: "E-mail", cell: (member) => member.email },
-    { id: "role", header: "Role", cell: (member) => roleWord(member.role) },
+    { id: "role", header: "Role", cell: (member) => ROLE_NAMES[member.role] },
     { id: "team", header: "Team", cell: (member) => member.team ?? noValue },
     { id: "since", header: "Since", cell: (member) => formatInstant(member.since, timeZone) },
     {
@@ -38,7 +39,7 @@ function memberColumns(
       cell: (member) => (
         <Button
           size="small"
-          aria-label={`End the role of ${member.displayName} as ${roleWord(member.role).toLowerCase()}`}
+          aria-label={`End the role of ${member.displayName} as ${ROLE_NAMES[member.role].toLowerCase()}`}
           onClick={() => end(member)}
         >
           End …
@@ -48,14 +49,17 @@ function memberColumns(
   ];
 }
 
-/** Who holds which role here; a person with several roles stands here once for each. */
+/**
+ * Who holds which role here, and who is invited; a person with several roles stands here once for
+ * each.
+ */
 export function MembersTab() {
   const { id, timeZone } = useInvestigation();
   const { accountId } = useSession();
   const toast = useToast();
   const [page, setPage] = useState(1);
   const [pageSize, setPageSize] = useState(50);
-  const [adding, setAdding] = useState(false);
+  const [adding, setAdding] = useState<NewMemberBy | null>(null);
   const [ending, setEnding] = useState<Member | null>(null);
   const members = useQuery(membersQuery(id, page, pageSize));
   const columns = useMemo(
@@ -65,12 +69,14 @@ export function MembersTab() {
   return (
     <>
       {adding ? (
-        <Section title="New member">
+        <Section title={adding === "invitation" ? "Invite by e-mail" : "New member"}>
           <AddMemberForm
+            key={adding}
+            by={adding}
             investigationId={id}
             onDone={(done) => {
               if (done) toast({ text: done, tone: "done" });
-              setAdding(false);
+              setAdding(null);
             }}
           />
         </Section>
@@ -97,12 +103,16 @@ export function MembersTab() {
         onRetry={() => void members.refetch()}
         tools={
           adding ? undefined : (
-            <Button variant="primary" onClick={() => setAdding(true)}>
-              Add a member
-            </Button>
+            <>
+              <Button variant="primary" onClick={() => setAdding("invitation")}>
+                Invite by e-mail
+              </Button>
+              <Button onClick={() => setAdding("account")}>Add a member</Button>
+            </>
           )
         }
       />
+      <PendingInvitations />
       {ending ? (
         <EndMemberDialog
           investigationId={id}

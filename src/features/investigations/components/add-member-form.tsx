@@ -1,5 +1,6 @@
 import { useState } from "react";
 import { useForm } from "react-hook-form";
+import { invitationInput } from "../../../../shared/contracts/accounts.ts";
 import { memberInput } from "../../../../shared/contracts/investigations.ts";
 import { ROLE_NAMES, ROLES } from "../../../../shared/roles.ts";
 import { SelectField } from "../../../components/fields/select-field.tsx";
@@ -9,22 +10,30 @@ import { Notice } from "../../../components/ui/notice.tsx";
 import { UnsavedGuard } from "../../../components/ui/unsaved-guard.tsx";
 import { errorWords } from "../../../lib/api-error.ts";
 import { contractResolver, fieldWords, showFieldErrors } from "../../../lib/form-errors.ts";
+import { useInvite } from "../api/invitations.ts";
 import { type MemberInput, useAddMember } from "../api/members.ts";
 
 type Values = Record<"email" | "role" | "team", string>;
 
+/** Who has an account is added at once; anybody else gets a letter first. */
+export type NewMemberBy = "account" | "invitation";
+
 export type AddMemberFormProps = {
+  by: NewMemberBy;
   investigationId: string;
   /** Called with the words of what was done; without them nothing was. */
   onDone: (done?: string) => void;
 };
 
-/** Gives an account a role in this investigation, found by its e-mail. */
-export function AddMemberForm({ investigationId, onDone }: AddMemberFormProps) {
+/** Gives an account a role in this investigation, or invites somebody by e-mail to take one. */
+export function AddMemberForm({ by, investigationId, onDone }: AddMemberFormProps) {
   const [idempotencyKey, renewKey] = useState(() => crypto.randomUUID());
-  const add = useAddMember(investigationId, idempotencyKey);
+  const inviting = by === "invitation";
+  const byAccount = useAddMember(investigationId, idempotencyKey);
+  const byLetter = useInvite(investigationId, idempotencyKey);
+  const add = inviting ? byLetter : byAccount;
   const form = useForm<Values, unknown, MemberInput>({
-    resolver: contractResolver<Values, MemberInput>(memberInput),
+    resolver: contractResolver<Values, MemberInput>(inviting ? invitationInput : memberInput),
     defaultValues: { email: "", role: "", team: "" },
   });
   const { errors, isDirty } = form.formState;
@@ -34,7 +43,7 @@ export function AddMemberForm({ investigationId, onDone }: AddMemberFormProps) {
       className="max-w-4xl"
       onSubmit={form.handleSubmit((body) => {
         add.mutate(body, {
-          onSuccess: () => onDone(`${ROLE_NAMES[body.role]} added`),
+          onSuccess: () => onDone(`${ROLE_NAMES[body.role]} ${inviting ? "invited" : "added"}`),
           onError: (error) => {
             showFieldErrors(error, form.setError, (path) => path in body);
             // What is sent next is another request.
@@ -45,15 +54,19 @@ export function AddMemberForm({ investigationId, onDone }: AddMemberFormProps) {
     >
       <UnsavedGuard unsaved={isDirty && !add.isSuccess} />
       {add.isError ? (
-        <Notice tone="error" title="Not added." className="mb-3">
+        <Notice tone="error" title={inviting ? "Not invited." : "Not added."} className="mb-3">
           {errorWords(add.error)}.
         </Notice>
       ) : null}
       <div className="grid gap-4 sm:grid-cols-3">
         <TextField
-          label="E-mail of the account"
+          label={inviting ? "E-mail" : "E-mail of the account"}
           type="email"
-          hint="The account must exist already."
+          hint={
+            inviting
+              ? "They get a link that works once, for 72 hours."
+              : "The account must exist already."
+          }
           error={fieldWords(errors.email?.message)}
           {...form.register("email")}
         />
@@ -73,7 +86,7 @@ export function AddMemberForm({ investigationId, onDone }: AddMemberFormProps) {
       </div>
       <p className="mt-3 flex flex-wrap gap-2">
         <Button variant="primary" type="submit" pending={add.isPending} disabled={!isDirty}>
-          Add the member
+          {inviting ? "Send the invitation" : "Add the member"}
         </Button>
         <Button onClick={() => onDone()}>Cancel</Button>
       </p>

@@ -1,25 +1,11 @@
-import { keepPreviousData, queryOptions, useMutation, useQueryClient } from "@tanstack/react-query";
+import { useMutation, useQueryClient } from "@tanstack/react-query";
 import type { z } from "zod";
 import { receipt } from "../../../../shared/contracts/common.ts";
-import { type memberInput, memberList } from "../../../../shared/contracts/investigations.ts";
+import type { memberInput } from "../../../../shared/contracts/investigations.ts";
 import { api, inInvestigation } from "../../../lib/api-client.ts";
 import { investigationKey } from "../../../lib/query-keys.ts";
 
 export type MemberInput = z.output<typeof memberInput>;
-
-/** Who works here, by name. */
-export function membersQuery(investigationId: string, page: number, pageSize: number) {
-  return queryOptions({
-    queryKey: investigationKey(investigationId, "members", { page, pageSize }),
-    queryFn: ({ signal }) =>
-      api.get(inInvestigation(investigationId, "members"), {
-        query: { page, pageSize },
-        schema: memberList,
-        signal,
-      }),
-    placeholderData: keepPreviousData,
-  });
-}
 
 /** Gives an account a role. */
 export function useAddMember(investigationId: string, idempotencyKey: string) {
