@@ -1,6 +1,7 @@
 import { expect, type Page, test } from "@playwright/test";
 import { signIn } from "./support/accounts.ts";
 import { callApi, readApi } from "./support/api.ts";
+import { expectAccessible } from "./support/axe.ts";
 import { watch } from "./support/watch.ts";
 
 async function checkFile(page: Page, kind: string, lines: readonly string[]): Promise<void> {
@@ -57,6 +58,7 @@ test("a file with errors is listed line by line, and nothing of it is stored", a
   await expect(page.getByRole("button", { name: "Put 1 row on record" })).toBeVisible();
   // The list says where and what, never the value that stood there.
   await expect(page.getByRole("main")).not.toContainText("Wendeline");
+  await expectAccessible(page, "an import with problems");
 
   await page.goto(`/i/${id}/trace/import`);
   await checkFile(page, "People", ["ref,surname", "X-1,Marsh"]);
@@ -118,6 +120,7 @@ test("a bad date is named beside its field, and everything typed stays", async (
   await onset.fill("2031-01-01");
   await register.click();
   await expectKept("2031-01-01", /Check: In the future/);
+  await expectAccessible(page, "a form with an error");
   expect((await readApi<{ total: number }>(page, people)).total).toBe(total);
 });
 
@@ -149,6 +152,7 @@ test("a save over somebody else's is noticed, and both values are shown", async 
   await expect(row.getByRole("rowheader")).toHaveText("Occupation");
   await expect(row.getByRole("cell")).toHaveText(["lock keeper", "rope maker", "ferry hand"]);
   await expect(page.getByLabel("Occupation")).toHaveValue("ferry hand");
+  await expectAccessible(page, "a conflict");
 
   await page.getByRole("button", { name: "Save mine over it" }).click();
   await expect(page.getByText("Saved.")).toBeVisible();

@@ -15,6 +15,15 @@ export async function expectAccessible(
   what: string,
   options: AxeOptions = {},
 ): Promise<void> {
+  // A colour on its way from one theme to the other is neither.
+  await page.evaluate(() =>
+    Promise.all(
+      document
+        .getAnimations()
+        .filter((animation) => animation instanceof CSSTransition)
+        .map((transition) => transition.finished.catch(() => null)),
+    ).then(() => null),
+  );
   // Legacy mode: our pages hold no frames, and the other mode opens a page of its own each time.
   const axe = new AxeBuilder({ page }).setLegacyMode(true).exclude(furtherRows);
   if (options.contrastOnly) axe.withRules(["color-contrast"]);
