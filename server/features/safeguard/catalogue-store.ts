@@ -11,9 +11,10 @@ export interface Catalogue {
   direct: Record<Role, ReadonlySet<string>>;
   /** Columns of a role's generated view that its login may select. */
   viewed: Record<Role, ReadonlySet<string>>;
-  /** May the login call the function that opens people, or the one that opens household names? */
+  /** May the login call the function that opens people, household names, or notes of checks? */
   opensPeople: Record<Role, boolean>;
   opensPlaces: Record<Role, boolean>;
+  opensChecks: Record<Role, boolean>;
   /** Fields the opening function gives a role. */
   rights: Record<Role, ReadonlySet<string>>;
 }
@@ -49,13 +50,20 @@ export async function readCatalogue(tx: Tx): Promise<Catalogue> {
       where has_schema_privilege(l.login, n.oid, 'usage')
         and has_column_privilege(l.login, c.oid, a.attnum, 'select')`,
   );
-  const functions = await tx.execute<{ role: Role; people: boolean; places: boolean }>(
+  const functions = await tx.execute<{
+    role: Role;
+    people: boolean;
+    places: boolean;
+    checks: boolean;
+  }>(
     sql`with logins (role, login) as (values ${LOGINS})
       select l.role,
         coalesce(has_schema_privilege(l.login, 'identity', 'usage') and has_function_privilege(l.login,
           to_regprocedure('identity.open_people(uuid[],text[],text)')::oid, 'execute'), false) as people,
         coalesce(has_schema_privilege(l.login, 'identity', 'usage') and has_function_privilege(l.login,
-          to_regprocedure('identity.open_places(uuid[])')::oid, 'execute'), false) as places
+          to_regprocedure('identity.open_places(uuid[])')::oid, 'execute'), false) as places,
+        coalesce(has_schema_privilege(l.login, 'identity', 'usage') and has_function_privilege(l.login,
+          to_regprocedure('identity.open_check_notes(uuid)')::oid, 'execute'), false) as checks
       from logins l`,
   );
   const rights = await tx.execute<{ role: Role; field: string }>(
@@ -73,6 +81,7 @@ export async function readCatalogue(tx: Tx): Promise<Catalogue> {
     viewed: perRole((role) => names(viewed.rows, role)),
     opensPeople: perRole((role) => functions.rows.some((row) => row.role === role && row.people)),
     opensPlaces: perRole((role) => functions.rows.some((row) => row.role === role && row.places)),
+    opensChecks: perRole((role) => functions.rows.some((row) => row.role === role && row.checks)),
     rights: perRole((role) => names(rightRows, role)),
   };
 }

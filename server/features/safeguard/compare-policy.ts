@@ -20,6 +20,9 @@ function catalogueSays(field: Field, role: Role, catalogue: Catalogue): string {
     return field.table === "identity.person" && viewed.has(field.column) ? "full" : "none";
   }
   if (field.table === "identity.place") return catalogue.opensPlaces[role] ? "full" : "none";
+  if (field.table === "identity.follow_check") {
+    return catalogue.opensChecks[role] ? "full" : "none";
+  }
   if (field.key && catalogue.opensPeople[role] && catalogue.rights[role].has(field.key)) {
     return "full";
   }
