@@ -86,6 +86,10 @@ export async function changePerson(
     sets.push(sql`case_definition_version = ${settings.caseDefinitionVersion}`);
     if (person.classification === "contact" && isCase(patch.classification ?? null)) {
       sets.push(sql`became_case = true`);
+      // Whoever finds the case goes on with it: an unassigned one would leave their sight by name.
+      if (actor.role === "tracer" && !person.assignedTo && patch.assignedTo === undefined) {
+        sets.push(sql`assigned_account_id = ${actor.accountId}`);
+      }
     }
   }
   const done = await tx.execute(
