@@ -1,0 +1,50 @@
+import type { Tx } from "../../db/with-tx.ts";
+import { type DatedCase, groupCases, type ProposedCluster } from "./group-cases.ts";
+import type { ClusterSettings } from "./settings.ts";
+import { clusterState, loadClusterInput } from "./store.ts";
+
+/** Proposed clusters of an investigation, in their order, with the cases they are made of. */
+export interface ProposedClusters {
+  cases: readonly DatedCase[];
+  clusters: readonly ProposedCluster[];
+  withoutReferenceDay: number;
+}
+
+interface Kept {
+  state: string;
+  proposed: ProposedClusters;
+}
+
+const kept = new Map<string, Kept>();
+const mostKept = 8;
+
+/**
+ * Proposed clusters as the transaction sees them. The last answer of an investigation is kept and
+ * given again for as long as nothing that it was made of has changed. It holds study numbers and
+ * days only, and the roles that may ask all see every case of the investigation.
+ *
+ * @param tx one snapshot: what is compared and what is read must be of the same moment
+ */
+export async function proposedClusters(
+  tx: Tx,
+  investigationId: string,
+  settings: ClusterSettings,
+): Promise<ProposedClusters> {
+  const { windowDays, minimumCases } = settings;
+  const state = `${await clusterState(tx, investigationId)}/${windowDays}/${minimumCases}`;
+  const known = kept.get(investigationId);
+  if (known?.state === state) return known.proposed;
+  const { input, withoutReferenceDay } = await loadClusterInput(tx, investigationId);
+  const proposed = {
+    cases: input.cases,
+    clusters: groupCases(input, settings),
+    withoutReferenceDay,
+  };
+  kept.delete(investigationId);
+  kept.set(investigationId, { state, proposed });
+  for (const oldest of kept.keys()) {
+    if (kept.size <= mostKept) break;
+    kept.delete(oldest);
+  }
+  return proposed;
+}
