@@ -7,10 +7,10 @@ import { investigationKey, type QueryWord } from "../lib/query-keys.ts";
 
 /** What a live message makes stale. A message holds ids only; the pages ask again by themselves. */
 export const STALE_BY_TOPIC: Readonly<Record<Topic, readonly QueryWord[]>> = {
-  graph: ["groups", "network", "investigation"],
-  people: ["people", "tests", "follow-up", "match-reviews", "places"],
+  graph: ["groups", "network", "clusters", "investigation"],
+  people: ["people", "tests", "follow-up", "match-reviews", "places", "clusters"],
   interviews: ["interviews", "people", "follow-up", "match-reviews"],
-  imports: ["imports", "people", "groups", "network"],
+  imports: ["imports", "people", "groups", "network", "clusters"],
   members: ["members", "invitations", "people"],
 };
 

@@ -12,6 +12,7 @@ export type QueryWord =
   | "imports"
   | "groups"
   | "network"
+  | "clusters"
   | "field-policy"
   | "access-events";
 

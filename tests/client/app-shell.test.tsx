@@ -75,18 +75,27 @@ describe("live messages", () => {
     expect(queryClient.getQueryState(other)?.isInvalidated).toBe(false);
     return stale;
   };
-  const words: QueryWord[] = ["groups", "network", "people", "imports", "members", "field-policy"];
+  const words: QueryWord[] = [
+    "groups",
+    "network",
+    "clusters",
+    "people",
+    "imports",
+    "members",
+    "field-policy",
+  ];
 
   it("have an entry for every topic of the server", () => {
     expect(Object.keys(STALE_BY_TOPIC).sort()).toEqual([...TOPICS].sort());
   });
 
   it("make stale what they touch, in their investigation only", () => {
-    expect(staleAfter(["graph"], words)).toEqual(["groups", "network"]);
-    expect(staleAfter(["people"], words)).toEqual(["people"]);
+    expect(staleAfter(["graph"], words)).toEqual(["groups", "network", "clusters"]);
+    expect(staleAfter(["people"], words)).toEqual(["clusters", "people"]);
     expect(staleAfter(["members", "graph"], words)).toEqual([
       "groups",
       "network",
+      "clusters",
       "people",
       "members",
     ]);

@@ -10,6 +10,7 @@ import { useCutOff } from "../../../lib/cut-off-context.ts";
 import { formatDay } from "../../../lib/formatters.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
 import { type NetworkQuestion, networkSummaryQuery } from "../../../lib/network-summary-query.ts";
+import { ClustersSection } from "../components/clusters-section.tsx";
 import { GroupsSection } from "../components/groups-section.tsx";
 
 /** The population of which most may be said: the figure is read through the interviews. */
@@ -46,6 +47,7 @@ export function Component() {
         )}
       </Section>
       <GroupsSection />
+      <ClustersSection />
     </RoomPage>
   );
 }
