@@ -1,9 +1,9 @@
 import { existsSync } from "node:fs";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
-import compression from "compression";
 import express, { type Express, type NextFunction, type Request, type Response } from "express";
 import session from "express-session";
+import expressStaticGzip from "express-static-gzip";
 import { IDLE_MINUTES } from "../shared/roles.ts";
 import {
   cookieWithoutEnd,
@@ -131,17 +131,21 @@ export function createApp(services: Services, dev?: express.Handler): Express {
 }
 
 function serveClient(app: Express): void {
-  // Files only: an answer that mixes secrets with what somebody typed is better left uncompressed.
-  app.use(compression());
   app.use(
-    express.static(CLIENT, {
+    // The files were compressed when they were built; answers of the API never are, since an answer
+    // that mixes secrets with what somebody typed is better left as it is.
+    expressStaticGzip(CLIENT, {
       index: false,
-      setHeaders(response, path) {
-        const hashed = path.includes(`${join("client", "assets")}`);
-        response.setHeader(
-          "Cache-Control",
-          hashed ? "public, max-age=31536000, immutable" : "no-cache",
-        );
+      enableBrotli: true,
+      orderPreference: ["br", "gz"],
+      serveStatic: {
+        setHeaders(response, path) {
+          const hashed = path.includes(`${join("client", "assets")}`);
+          response.setHeader(
+            "Cache-Control",
+            hashed ? "public, max-age=31536000, immutable" : "no-cache",
+          );
+        },
       },
     }),
   );

@@ -2,12 +2,22 @@
 import { createHash } from "node:crypto";
 import { existsSync, readdirSync, readFileSync, rmSync, statSync, writeFileSync } from "node:fs";
 import { join, relative } from "node:path";
+import { brotliCompressSync, constants, gzipSync } from "node:zlib";
 import { takeLock } from "./locks.mjs";
 import { PlainError, say } from "./plain.mjs";
 import { firstLines, runCaptured } from "./processes.mjs";
 import { makeDataFolder } from "./project.mjs";
 
-const SOURCES = ["src", "shared", "public", "index.html", "package-lock.json", "tsconfig.json"];
+// This file too: what it writes beside the build belongs to it.
+const SOURCES = [
+  "scripts/lib/client-build.mjs",
+  "src",
+  "shared",
+  "public",
+  "index.html",
+  "package-lock.json",
+  "tsconfig.json",
+];
 
 function* filesUnder(path) {
   if (!existsSync(path)) return;
@@ -35,6 +45,17 @@ function isFresh(stamp, wanted) {
   return existsSync(stamp) && readFileSync(stamp, "utf8") === wanted;
 }
 
+/** Writes each text file's Brotli and gzip forms beside it, once, at the highest settings. */
+function compressFiles(folder) {
+  const quality = { params: { [constants.BROTLI_PARAM_QUALITY]: constants.BROTLI_MAX_QUALITY } };
+  for (const file of [...filesUnder(folder)]) {
+    if (!/\.(js|css|svg|html|webmanifest)$/.test(file)) continue;
+    const content = readFileSync(file);
+    writeFileSync(`${file}.br`, brotliCompressSync(content, quality));
+    writeFileSync(`${file}.gz`, gzipSync(content, { level: 9 }));
+  }
+}
+
 /** Builds the client with Vite when dist/ does not come from the present sources. */
 export async function ensureClientBuild(root) {
   const stamp = join(root, "dist", ".stamp");
@@ -54,6 +75,7 @@ export async function ensureClientBuild(root) {
       mayStop: true,
     });
     if (code !== 0) throw new PlainError(`the client build failed:\n${firstLines(output)}`);
+    compressFiles(join(root, "dist", "client"));
     writeFileSync(stamp, wanted);
   } finally {
     lock.release();

@@ -23,7 +23,7 @@ async function openInvestigation(page: Page, title: string): Promise<string> {
   await page.getByLabel("Time zone").fill("Europe/Lisbon");
   await expect(page.getByLabel(/^Invented data, for practice/)).toBeChecked();
   await page.getByRole("button", { name: "Open the investigation" }).click();
-  await expect(page.getByText("Opened. You hold your acting role in it.")).toBeVisible();
+  await expect(page.getByText("Opened. You hold your acting role in it")).toBeVisible();
   await page.getByRole("button", { name: `Act here in ${name}` }).click();
   await expect(page.getByRole("heading", { level: 1, name: "Review" })).toBeVisible();
   const id = await investigationOf(page);
