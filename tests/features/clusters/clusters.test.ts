@@ -52,7 +52,9 @@ async function studyNumbers(...names: string[]): Promise<string[]> {
 async function change(name: string, fields: Record<string, unknown>) {
   const path = `${supervisor.base}/people/${cases[name]}`;
   const { version } = (await supervisor.client.get(path)).body;
-  const answer = await supervisor.client.patch(path, { version, ...fields });
+  const answer = await supervisor.client.call("patch", path, {
+    body: { version, ...fields },
+  });
   expect(answer.status).toBe(200);
 }
 
