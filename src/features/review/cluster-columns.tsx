@@ -74,5 +74,5 @@ export const clusterColumns: readonly DataColumn<Cluster>[] = [
     numeric: true,
     cell: (cluster) => formatNumber(bySpecimen(cluster)),
   },
-  { id: "members", header: "study numbers", wrap: true, cell: membersText },
+  { id: "members", header: "study numbers", cell: membersText },
 ];
