@@ -10,14 +10,9 @@ import {
   uniqueIndex,
   uuid,
 } from "drizzle-orm/pg-core";
-import { investigation } from "./investigations.ts";
+import { investigationId } from "./investigations.ts";
 import { person, place } from "./people.ts";
 import { at, bytea, core, identity, recordedAt } from "./shared.ts";
-
-const investigationId = () =>
-  uuid("investigation_id")
-    .notNull()
-    .references(() => investigation.id);
 
 export const interview = core.table(
   "interview",

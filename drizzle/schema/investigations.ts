@@ -33,13 +33,17 @@ export const investigation = core.table("investigation", {
   recordedBy: uuid("recorded_by"),
 });
 
+/** The column by which a row belongs to an investigation. */
+export const investigationId = () =>
+  uuid("investigation_id")
+    .notNull()
+    .references(() => investigation.id);
+
 export const caseDefinition = core.table(
   "case_definition",
   {
     id: uuid("id").primaryKey(),
-    investigationId: uuid("investigation_id")
-      .notNull()
-      .references(() => investigation.id),
+    investigationId: investigationId(),
     number: integer("number").notNull(),
     wording: text("wording").notNull(),
     recordedAt: recordedAt(),
@@ -50,9 +54,7 @@ export const caseDefinition = core.table(
 
 export const team = core.table("team", {
   id: uuid("id").primaryKey(),
-  investigationId: uuid("investigation_id")
-    .notNull()
-    .references(() => investigation.id),
+  investigationId: investigationId(),
   name: text("name").notNull(),
   recordedAt: recordedAt(),
 });
@@ -61,9 +63,7 @@ export const member = core.table(
   "member",
   {
     id: uuid("id").primaryKey(),
-    investigationId: uuid("investigation_id")
-      .notNull()
-      .references(() => investigation.id),
+    investigationId: investigationId(),
     accountId: uuid("account_id").notNull(),
     role: text("role").notNull(),
     teamId: uuid("team_id").references(() => team.id),
@@ -85,9 +85,7 @@ export const graphChange = core.table(
   "graph_change",
   {
     id: bigint("id", { mode: "number" }).primaryKey().generatedAlwaysAsIdentity(),
-    investigationId: uuid("investigation_id")
-      .notNull()
-      .references(() => investigation.id),
+    investigationId: investigationId(),
     graphVersion: bigint("graph_version", { mode: "number" }).notNull(),
     // person | pair | exposure | interview | classification | withdrawn | bulk
     kind: text("kind").notNull(),

@@ -10,13 +10,8 @@ import {
   uniqueIndex,
   uuid,
 } from "drizzle-orm/pg-core";
-import { investigation, team } from "./investigations.ts";
+import { investigation, investigationId, team } from "./investigations.ts";
 import { at, bytea, core, identity, recordedAt } from "./shared.ts";
-
-const investigationId = () =>
-  uuid("investigation_id")
-    .notNull()
-    .references(() => investigation.id);
 
 export const place = core.table(
   "place",
