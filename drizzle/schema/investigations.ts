@@ -5,6 +5,7 @@ import {
   check,
   index,
   integer,
+  jsonb,
   text,
   uniqueIndex,
   uuid,
@@ -25,6 +26,17 @@ export const investigation = core.table("investigation", {
   monitoringDays: integer("monitoring_days").notNull(),
   // Due days in a row without being reached after which a contact counts as lost.
   lostAfterDays: integer("lost_after_days").notNull().default(3),
+  clusterWindowDays: integer("cluster_window_days").notNull().default(14),
+  clusterMinimumCases: integer("cluster_minimum_cases").notNull().default(2),
+  // Null: twice the longest incubation.
+  closureDays: integer("closure_days"),
+  smallCellThreshold: integer("small_cell_threshold").notNull().default(5),
+  // Shapes: shared/contracts/settings.ts. Empty: the defaults there.
+  exposureGrading: jsonb("exposure_grading"),
+  symptoms: jsonb("symptoms"),
+  texts: jsonb("texts").notNull().default([]),
+  // For learning: may be emptied, sends nothing, counts nowhere.
+  practice: boolean("practice").notNull().default(false),
   caseDefinitionVersion: integer("case_definition_version").notNull().default(1),
   graphVersion: bigint("graph_version", { mode: "number" }).notNull().default(0),
   nextNumber: integer("next_number").notNull().default(1),
@@ -46,10 +58,27 @@ export const caseDefinition = core.table(
     investigationId: investigationId(),
     number: integer("number").notNull(),
     wording: text("wording").notNull(),
+    // What each class asks for (shared/contracts/settings.ts); empty: the defaults there.
+    rules: jsonb("rules"),
     recordedAt: recordedAt(),
     recordedBy: uuid("recorded_by"),
   },
   (t) => [uniqueIndex("case_definition_number").on(t.investigationId, t.number)],
+);
+
+/** Every change of the settings, in order: which ones, from what and to what. */
+export const settingChange = core.table(
+  "setting_change",
+  {
+    id: uuid("id").primaryKey(),
+    investigationId: investigationId(),
+    // The version of the investigation that the change made.
+    version: integer("version").notNull(),
+    changes: jsonb("changes").notNull(),
+    recordedAt: recordedAt(),
+    recordedBy: uuid("recorded_by"),
+  },
+  (t) => [uniqueIndex("setting_change_version").on(t.investigationId, t.version)],
 );
 
 export const team = core.table("team", {

@@ -1,6 +1,7 @@
 import { z } from "zod";
 import { ROLES } from "../roles.ts";
 import { LIMITS, listOf, rowVersion, text, uuid } from "./common.ts";
+import { isTimeZone } from "./settings.ts";
 
 const whole = (min: number, max: number) =>
   z
@@ -13,16 +14,6 @@ const timeZone = z
   .string({ error: "required" })
   .max(64, { error: "too_long" })
   .refine(isTimeZone, { error: "not_a_zone" });
-
-/** True when this runtime knows the IANA zone. */
-export function isTimeZone(zone: string): boolean {
-  try {
-    new Intl.DateTimeFormat("en", { timeZone: zone });
-    return true;
-  } catch {
-    return false;
-  }
-}
 
 const settings = {
   populationAtRisk: whole(1, 100_000_000).nullable(),

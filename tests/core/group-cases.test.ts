@@ -5,7 +5,6 @@ import {
   groupCases,
   type Stay,
 } from "../../server/features/clusters/group-cases.ts";
-import { CLUSTER_SETTINGS } from "../../server/features/clusters/settings.ts";
 import type { ClusterKind } from "../../shared/contracts/clusters.ts";
 import { randomLinks, seeded } from "./support/graphs.ts";
 
@@ -17,7 +16,10 @@ const stay = (person: number, place: number, first: number, last = first): Stay 
   first,
   last,
 });
-const group = (input: Partial<ClusterInput>, settings = CLUSTER_SETTINGS) =>
+// Methods A.6, working definition: at least 2 cases within 14 days.
+const WORKING_DEFINITION = { windowDays: 14, minimumCases: 2 };
+
+const group = (input: Partial<ClusterInput>, settings = WORKING_DEFINITION) =>
   groupCases({ cases: [], links: [], stays: [], settingOf: new Map(), ...input }, settings);
 
 describe("what joins two cases", () => {

@@ -110,15 +110,30 @@ export const WRITES: Record<string, Writes> = {
       roles: LEADERS,
       columns: [
         "name",
+        "invented",
+        "time_zone",
+        "country_code",
         "population_at_risk",
         "infectious_before",
         "infectious_after",
+        "incubation_min",
+        "incubation_max",
         "monitoring_days",
         "lost_after_days",
+        "cluster_window_days",
+        "cluster_minimum_cases",
+        "closure_days",
+        "small_cell_threshold",
+        "exposure_grading",
+        "symptoms",
+        "texts",
+        "case_definition_version",
         "version",
       ],
     },
   },
+  "core.case_definition": { insert: LEADERS },
+  "core.setting_change": { insert: LEADERS },
 };
 
 const SCOPE = "any ((select core.ctx_people())::uuid[])";
@@ -155,6 +170,7 @@ const TRACER_ADDS: Record<string, string> = {
 export const CORE_TABLES = [
   "core.investigation",
   "core.case_definition",
+  "core.setting_change",
   "core.team",
   "core.member",
   "core.place",

@@ -6,7 +6,7 @@ import { type AnyRoute, defineRoute } from "../../http/route.ts";
 import { loadInvestigation } from "../investigations/store.ts";
 import { proposedClusters } from "./proposed-clusters.ts";
 import { pageOfClusters } from "./queries.ts";
-import { CLUSTER_SETTINGS } from "./settings.ts";
+import { clusterSettings } from "./settings.ts";
 
 /** Proposed clusters of cases: suggestions, read only. */
 export const clusterRoutes: AnyRoute[] = [
@@ -20,12 +20,14 @@ export const clusterRoutes: AnyRoute[] = [
     output: clusterList,
     isolation: "repeatable",
     async run({ tx, actor, query }) {
-      const { timeZone, graphVersion } = await loadInvestigation(tx, actor.investigationId);
-      const proposed = await proposedClusters(tx, actor.investigationId, CLUSTER_SETTINGS);
+      const investigation = await loadInvestigation(tx, actor.investigationId);
+      const { timeZone, graphVersion } = investigation;
+      const settings = clusterSettings(investigation);
+      const proposed = await proposedClusters(tx, actor.investigationId, settings);
       return {
         ...pageOfClusters(proposed, query, dayIn(timeZone, now())),
         graphVersion,
-        ...CLUSTER_SETTINGS,
+        ...settings,
       };
     },
   }),

@@ -1,3 +1,5 @@
+import type { InvestigationRow } from "../investigations/store.ts";
+
 /** What proposed clusters are computed with. */
 export interface ClusterSettings {
   /** Days that the reference days of two joined cases differ by at most. */
@@ -6,8 +8,12 @@ export interface ClusterSettings {
   minimumCases: number;
 }
 
-/**
- * Defaults for every investigation until they are settings of one.
- * Source: methods A.6, working definition: at least 2 cases, reference days within 14 days.
- */
-export const CLUSTER_SETTINGS: ClusterSettings = { windowDays: 14, minimumCases: 2 };
+/** What an investigation's settings say of clusters (working definition: methods A.6). */
+export function clusterSettings(
+  settings: Pick<InvestigationRow, "clusterWindowDays" | "clusterMinimumCases">,
+): ClusterSettings {
+  return {
+    windowDays: settings.clusterWindowDays,
+    minimumCases: settings.clusterMinimumCases,
+  };
+}

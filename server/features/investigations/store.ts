@@ -1,6 +1,13 @@
 import { randomUUID } from "node:crypto";
 import { sql } from "drizzle-orm";
 import type { InvestigationInput } from "../../../shared/contracts/investigations.ts";
+import {
+  DEFAULT_EXPOSURE_GRADING,
+  DEFAULT_SYMPTOMS,
+  type ExposureGrading,
+  type SettingTexts,
+  type SymptomList,
+} from "../../../shared/contracts/settings.ts";
 import type { Role } from "../../../shared/roles.ts";
 import type { Tx } from "../../db/with-tx.ts";
 import type { KeyRing } from "../../identity/keys.ts";
@@ -20,16 +27,31 @@ export interface InvestigationRow {
   monitoringDays: number;
   /** Due days in a row without being reached after which a contact counts as lost. */
   lostAfterDays: number;
+  clusterWindowDays: number;
+  clusterMinimumCases: number;
+  /** Null: twice the longest incubation. */
+  closureDays: number | null;
+  smallCellThreshold: number;
+  exposureGrading: ExposureGrading;
+  symptoms: SymptomList;
+  texts: SettingTexts;
+  practice: boolean;
   caseDefinitionVersion: number;
   graphVersion: number;
   version: number;
 }
 
+const quoted = (value: unknown) => `'${JSON.stringify(value).replaceAll("'", "''")}'::jsonb`;
+
 const COLUMNS = sql.raw(`id, name, invented, time_zone as "timeZone", country_code as "countryCode",
   population_at_risk as "populationAtRisk", infectious_before as "infectiousBefore",
   infectious_after as "infectiousAfter", incubation_min as "incubationMin",
   incubation_max as "incubationMax", monitoring_days as "monitoringDays",
-  lost_after_days as "lostAfterDays",
+  lost_after_days as "lostAfterDays", cluster_window_days as "clusterWindowDays",
+  cluster_minimum_cases as "clusterMinimumCases", closure_days as "closureDays",
+  small_cell_threshold as "smallCellThreshold",
+  coalesce(exposure_grading, ${quoted(DEFAULT_EXPOSURE_GRADING)}) as "exposureGrading",
+  coalesce(symptoms, ${quoted(DEFAULT_SYMPTOMS)}) as "symptoms", texts, practice,
   case_definition_version as "caseDefinitionVersion", graph_version::float8 as "graphVersion", version`);
 
 /** The acting investigation with its settings. Row security lets no other one through. */
