@@ -93,7 +93,7 @@ function checkOptions(options: OutbreakOptions & { people: number; days: number 
   if (!Number.isInteger(people) || people < 300 || people > 200_000) {
     throw new RangeError("people must be 300 to 200000");
   }
-  if (!Number.isInteger(days) || days < 28 || days > 120) throw new RangeError("days: 28 to 120");
+  if (!Number.isInteger(days) || days < 28 || days > 800) throw new RangeError("days: 28 to 800");
   if (incubationMin < 0 || incubationMax <= incubationMin || incubationMax > days) {
     throw new RangeError("incubation limits must be ordered and shorter than the story");
   }
