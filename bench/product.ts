@@ -40,6 +40,7 @@ async function measure(prepared: Prepared) {
   const answered: number[] = [];
   const visible: number[] = [];
   const current: number[] = [];
+  const clusters: number[] = [];
   for (let round = 0; round < INTERVIEWS; round++) {
     const person = cases[round % cases.length];
     if (!person) throw new Error("the tracer holds no case");
@@ -63,6 +64,8 @@ async function measure(prepared: Prepared) {
     if (round >= 10) visible.push(performance.now() - sent);
     const summary = await supervisor.call("GET", `${base}/network/summary`);
     if (round >= 10) current.push(summary.ms);
+    const proposed = await supervisor.call("GET", `${base}/clusters?pageSize=10`);
+    if (round >= 10) clusters.push(proposed.ms);
   }
   const asOf: number[] = [];
   for (let back = 0; back < 20; back++) {
@@ -75,6 +78,10 @@ async function measure(prepared: Prepared) {
         )
       ).ms,
     );
+  }
+  const groups: number[] = [];
+  for (let page = 1; page <= 20; page++) {
+    groups.push((await supervisor.call("GET", `${base}/groups?page=${page}`)).ms);
   }
   const lists: number[] = [];
   for (let page = 1; page <= 20; page++) {
@@ -91,6 +98,8 @@ async function measure(prepared: Prepared) {
     interviewMs: spread(answered),
     groupsFollowMs: spread(visible),
     summaryCurrentMs: spread(current),
+    groupsPageMs: spread(groups),
+    clustersAfterInterviewMs: spread(clusters),
     summaryRangeMs: spread(asOf),
     summaryColdMs: [Math.round(cold), Math.round(coldAgain)],
     lineListPageMs: spread(lists),

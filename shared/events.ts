@@ -39,5 +39,5 @@ export const EVENTS = [
 export type EventName = (typeof EVENTS)[number];
 
 /** Topics of the live stream; a message carries ids and versions only. */
-export const TOPICS = ["graph", "people", "interviews", "imports", "members"] as const;
+export const TOPICS = ["graph", "people", "interviews", "imports", "members", "clusters"] as const;
 export type Topic = (typeof TOPICS)[number];

@@ -32,6 +32,8 @@ export type Cluster = z.output<typeof clusterAnswer>;
 
 export const clusterList = listOf(clusterAnswer).extend({
   graphVersion: z.int(),
+  /** True when the record went on since; the live stream says when the next answer is there. */
+  updating: z.boolean(),
   /** The investigation's day that `newInLast7Days` looks back from. */
   today: day,
   /** Days that the reference days of two joined cases differ by at most. */

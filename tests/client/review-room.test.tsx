@@ -60,6 +60,7 @@ const clusters = {
   windowDays: 14,
   minimumCases: 2,
   withoutReferenceDay: 5,
+  updating: false,
 };
 const answers: Answers = (path) => answerOf(path);
 const answerOf = (path: string, version = 1482): unknown => {

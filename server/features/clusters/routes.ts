@@ -18,16 +18,19 @@ export const clusterRoutes: AnyRoute[] = [
     params: z.object({ id: z.uuid() }),
     query: listQuery,
     output: clusterList,
-    isolation: "repeatable",
-    async run({ tx, actor, query }) {
+    async run({ tx, actor, query, services }) {
       const investigation = await loadInvestigation(tx, actor.investigationId);
-      const { timeZone, graphVersion } = investigation;
-      const settings = clusterSettings(investigation);
-      const proposed = await proposedClusters(tx, actor.investigationId, settings);
+      const { proposed, updating } = await proposedClusters(services, actor.investigationId, {
+        ...clusterSettings(investigation),
+        graphVersion: investigation.graphVersion,
+      });
+      const { graphVersion, windowDays, minimumCases } = proposed;
       return {
-        ...pageOfClusters(proposed, query, dayIn(timeZone, now())),
+        ...pageOfClusters(proposed, query, dayIn(investigation.timeZone, now())),
         graphVersion,
-        ...settings,
+        updating,
+        windowDays,
+        minimumCases,
       };
     },
   }),

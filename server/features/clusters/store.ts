@@ -7,21 +7,6 @@ import type { ClusterInput, DatedCase, Stay } from "./group-cases.ts";
 const CASES = sql`core.person p where p.investigation_id = `;
 const COUNTED = sql` and p.classification in ('confirmed', 'probable') and p.withdrawn_at is null`;
 
-/**
- * A word that changes with every change of what clusters are made of: the graph's version covers
- * pairs, tellings and group exposures; the dates and classes of cases are hashed as they stand.
- */
-export async function clusterState(tx: Tx, investigationId: string): Promise<string> {
-  const found = await tx.execute<{ state: string }>(
-    sql`select i.graph_version || '/' || (
-          select count(*) || '/' || coalesce(sum(hashtextextended(
-            concat_ws('|', p.id::text, coalesce(p.onset_date, ''), coalesce(p.specimen_date, '')), 0)), 0)
-          from ${CASES}${investigationId}${COUNTED}) as state
-        from core.investigation i where i.id = ${investigationId}`,
-  );
-  return found.rows[0]?.state ?? "";
-}
-
 type Columns = {
   numbers: string[] | null;
   onsets: (string | null)[] | null;

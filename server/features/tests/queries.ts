@@ -3,11 +3,16 @@ import type { Tx } from "../../db/with-tx.ts";
 import { HttpProblem } from "../../http/problem.ts";
 
 /** @throws HttpProblem not_found when the person is out of scope or not there */
-export async function requirePerson(tx: Tx, personId: string): Promise<void> {
-  const found = await tx.execute(
-    sql`select 1 from core.person where id = ${personId} and withdrawn_at is null`,
+export async function requirePerson(
+  tx: Tx,
+  personId: string,
+): Promise<{ classification: string | null }> {
+  const found = await tx.execute<{ classification: string | null }>(
+    sql`select classification from core.person where id = ${personId} and withdrawn_at is null`,
   );
-  if (found.rows.length === 0) throw new HttpProblem("not_found");
+  const row = found.rows[0];
+  if (!row) throw new HttpProblem("not_found");
+  return row;
 }
 
 /** One page of a person's tests, the latest specimen first. */

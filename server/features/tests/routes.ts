@@ -2,9 +2,10 @@ import { z } from "zod";
 import { listQuery, receipt } from "../../../shared/contracts/common.ts";
 import { testInput, testList } from "../../../shared/contracts/tests.ts";
 import { ROLES } from "../../../shared/roles.ts";
+import { isCase } from "../../../shared/vocabulary.ts";
 import { recordEvent } from "../../audit/record-event.ts";
 import { dayIn, now } from "../../clock.ts";
-import { announce } from "../../events/record-graph-change.ts";
+import { announce, recordGraphChange } from "../../events/record-graph-change.ts";
 import { invalid } from "../../http/problem.ts";
 import { type AnyRoute, defineRoute } from "../../http/route.ts";
 import { loadInvestigation } from "../investigations/store.ts";
@@ -44,7 +45,7 @@ export const testRoutes: AnyRoute[] = [
     output: receipt,
     creates: true,
     async run({ tx, actor, params: { personId }, body }) {
-      await requirePerson(tx, personId);
+      const { classification } = await requirePerson(tx, personId);
       const settings = await loadInvestigation(tx, actor.investigationId);
       const today = dayIn(settings.timeZone, now());
       for (const key of ["specimenDate", "resultDate"] as const) {
@@ -54,6 +55,11 @@ export const testRoutes: AnyRoute[] = [
         }
       }
       const [id] = await insertTests(tx, actor, [{ personId, ...body }]);
+      // The specimen day of a case without an onset is what its clusters stand on.
+      if (isCase(classification)) {
+        const change = { kind: "classification", personA: personId } as const;
+        await recordGraphChange(tx, actor, [change], personId);
+      }
       await announce(tx, "people", personId);
       await recordEvent(tx, {
         action: "test.recorded",

@@ -113,9 +113,12 @@ export async function changePerson(
   if (Object.keys(identity).length > 0) {
     await putPeople(tx, keys, [{ personId: person.id, identity }], settings.countryCode);
   }
-  if (reclassified) {
+  // Clusters stand on the onsets of cases, so such a change makes a new version of the record.
+  const redated = patch.onsetDate !== undefined && isCase(person.classification);
+  if (reclassified || redated) {
     await recordGraphChange(tx, actor, [{ kind: "classification", personA: person.id }], person.id);
-  } else await announce(tx, "people", person.id);
+  }
+  await announce(tx, "people", person.id);
   await recordEvent(tx, {
     action: "person.changed",
     accountId: actor.accountId,

@@ -25,7 +25,7 @@ export function ClustersSection() {
   const [sort, setSort] = useState<SortState>(null);
   const clusters = useQuery(clustersQuery(id, { page, pageSize, sort: sortParameter(sort) }));
   const list = clusters.data;
-  const updating = clusters.isFetching && list !== undefined;
+  const updating = list !== undefined && (list.updating || clusters.isFetching);
   const rows = useMemo(() => clusterRows(list?.items ?? []), [list]);
 
   return (
