@@ -46,6 +46,17 @@ const BODIES: Record<string, (world: World) => unknown> = {
   "post /api/investigations/:id/imports/:importId/commit": () => ({ createMissing: false }),
 };
 
+/**
+ * A body that a route accepts, by `method path`.
+ *
+ * @throws Error for a route without one
+ */
+export function acceptedBody(name: string, world: World): unknown {
+  const make = BODIES[name];
+  if (!make) throw new Error(`there is no body for ${name}; add one`);
+  return make(world);
+}
+
 /** What is sent to a route in the matrix. */
 export function bodyFor(route: AnyRoute, world: World): { body?: unknown; form?: FormData } {
   if (route.upload) {
@@ -54,9 +65,6 @@ export function bodyFor(route: AnyRoute, world: World): { body?: unknown; form?:
     form.set("file", new Blob([PEOPLE_FILE], { type: "text/csv" }), "people.csv");
     return { form };
   }
-  const name = `${route.method} ${route.path}`;
   if (!route.body) return {};
-  const make = BODIES[name];
-  if (!make) throw new Error(`the matrix has no body for ${name}; add one`);
-  return { body: make(world) };
+  return { body: acceptedBody(`${route.method} ${route.path}`, world) };
 }
