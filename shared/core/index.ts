@@ -1,6 +1,6 @@
 /**
  * The numeric core: typed arrays in, numbers and typed arrays out. It imports nothing outside its
- * folder, reads no clock and draws no random numbers.
+ * folder and reads no clock; what is random comes from a seed and the number of a replicate.
  */
 export { buildGraph, type Graph, type PairEnds } from "./graph/build-graph.ts";
 export { type Components, components } from "./graph/components.ts";
@@ -33,6 +33,7 @@ export { transitivity } from "./measures/transitivity.ts";
 export { triangles } from "./measures/triangles.ts";
 export { twoPaths } from "./measures/two-paths.ts";
 export { type Region, regionsMet, type Verdict, verdictOf } from "./measures/verdict.ts";
+export { createStream, type RandomStream, Xoshiro } from "./random/random-stream.ts";
 export { lambertGiantShare } from "./stats/lambert-giant-share.ts";
 export { type Interval, wilsonInterval, Z_95 } from "./stats/wilson-interval.ts";
 export { dayNumber, dayString, MISSING_DAY } from "./time/day-number.ts";
