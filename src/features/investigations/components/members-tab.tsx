@@ -49,7 +49,7 @@ function memberColumns(
       id: "change",
       header: "Change",
       cell: (member) => (
-        <span className="flex flex-wrap gap-2">
+        <span className="flex gap-2">
           <Button
             size="small"
             aria-label={`Change the role of ${nameRole(member)}`}

@@ -28,7 +28,7 @@ function columnsWith(
       id: "change",
       header: "Change",
       cell: (team) => (
-        <span className="flex flex-wrap gap-2">
+        <span className="flex gap-2">
           <Button size="small" aria-label={`Rename ${team.name}`} onClick={() => rename(team)}>
             Rename …
           </Button>
