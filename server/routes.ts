@@ -7,6 +7,7 @@ import { interviewRoutes } from "./features/interviews/routes.ts";
 import { invitationRoutes } from "./features/investigations/invitations.ts";
 import { memberRoutes } from "./features/investigations/members.ts";
 import { investigationPlainRoutes, investigationRoutes } from "./features/investigations/routes.ts";
+import { teamRoutes } from "./features/investigations/teams.ts";
 import { networkRoutes } from "./features/network/routes.ts";
 import { peopleRoutes } from "./features/people/routes.ts";
 import { placeRoutes } from "./features/places/routes.ts";
@@ -20,6 +21,7 @@ import type { Services } from "./services.ts";
 export const ROUTES: readonly AnyRoute[] = [
   ...investigationRoutes,
   ...memberRoutes,
+  ...teamRoutes,
   ...invitationRoutes,
   ...peopleRoutes,
   ...testRoutes,

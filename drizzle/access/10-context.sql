@@ -5,6 +5,15 @@
 -- searched first, and a login could put types of its own under the owner's feet.
 -- They are written in PL/pgSQL, whose plans last as long as the connection: a function in SQL would
 -- be planned again for each statement that row security touches.
+
+-- Is a role's last day (null: it has none) not over yet in its investigation's zone? Days are text
+-- that sorts as it should. It reads no table; the owner's right is for the rule that all have it.
+create or replace function core.day_lasts(p_day text, p_zone text) returns boolean
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+begin
+  return p_day is null or p_day >= to_char(now() at time zone p_zone, 'YYYY-MM-DD');
+end $$;
+
 create or replace function core.ctx(out account_id uuid, out investigation_id uuid, out role text)
 language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
 #variable_conflict use_column
@@ -13,6 +22,8 @@ begin
   from auth.ctx_live c
   join core.member m on m.account_id = c.account_id and m.investigation_id = c.investigation_id
     and m.role = c.role and m.ended_at is null
+  join core.investigation v on v.id = c.investigation_id
+    and (m.ends_on is null or core.day_lasts(m.ends_on, v.time_zone))
   join auth.account a on a.id = c.account_id and a.disabled_at is null
   where c.nonce = nullif(current_setting('app.ctx', true), '')::uuid
     and c.expires_at > now()

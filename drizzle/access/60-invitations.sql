@@ -1,8 +1,10 @@
 -- Keeps an invitation into the acting investigation and the sealed letter that carries its token. An
 -- earlier one for the same address and role ends with it: one live link each. False when too many
 -- were sent in the last hour, so that a stolen session cannot flood other people's mailboxes.
+drop function if exists auth.invite(uuid, text, text, uuid, text, uuid, bytea);
 create or replace function auth.invite(
-  p_id uuid, p_email text, p_role text, p_team uuid, p_token_hash text, p_mail uuid, p_sealed bytea)
+  p_id uuid, p_email text, p_role text, p_team uuid, p_ends_on text, p_token_hash text,
+  p_mail uuid, p_sealed bytea)
 returns boolean
 language plpgsql security definer set search_path = pg_catalog, pg_temp as $$
 declare c record;
@@ -11,7 +13,8 @@ begin
   if c.role is null or c.role not in ('supervisor', 'officer')
      or p_role not in ('tracer', 'supervisor', 'epidemiologist', 'officer')
      or (p_team is not null and not exists (
-       select 1 from core.team t where t.id = p_team and t.investigation_id = c.investigation_id)) then
+       select 1 from core.team t where t.id = p_team and t.investigation_id = c.investigation_id
+         and t.removed_at is null)) then
     raise insufficient_privilege;
   end if;
   if (select count(*) from auth.invitation i
@@ -22,8 +25,8 @@ begin
   where i.kind = 'invitation' and i.investigation_id = c.investigation_id and i.role = p_role
     and lower(i.email) = lower(p_email) and i.used_at is null;
   insert into auth.invitation
-    (id, token_hash, kind, email, investigation_id, role, team_id, expires_at, recorded_by)
-  values (p_id, p_token_hash, 'invitation', p_email, c.investigation_id, p_role, p_team,
+    (id, token_hash, kind, email, investigation_id, role, team_id, ends_on, expires_at, recorded_by)
+  values (p_id, p_token_hash, 'invitation', p_email, c.investigation_id, p_role, p_team, p_ends_on,
     now() + interval '72 hours', c.account_id);
   insert into auth.mail (id, sealed, expires_at) values (p_mail, p_sealed, now() + interval '72 hours');
   return true;

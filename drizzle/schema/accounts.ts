@@ -88,6 +88,8 @@ export const invitation = auth.table(
     investigationId: uuid("investigation_id"),
     role: text("role"),
     teamId: uuid("team_id"),
+    // Last day of the role it offers.
+    endsOn: text("ends_on"),
     expiresAt: at("expires_at").notNull(),
     usedAt: at("used_at"),
     recordedBy: uuid("recorded_by"),

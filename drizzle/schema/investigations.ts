@@ -85,7 +85,10 @@ export const team = core.table("team", {
   id: uuid("id").primaryKey(),
   investigationId: investigationId(),
   name: text("name").notNull(),
+  version: integer("version").notNull().default(1),
   recordedAt: recordedAt(),
+  // Taken off the list; kept for the memberships of the past that name it.
+  removedAt: at("removed_at"),
 });
 
 export const member = core.table(
@@ -97,7 +100,10 @@ export const member = core.table(
     role: text("role").notNull(),
     teamId: uuid("team_id").references(() => team.id),
     since: at("since").notNull().defaultNow(),
+    // Last day of the role, in the investigation's zone; it ends by itself when that day does.
+    endsOn: text("ends_on"),
     endedAt: at("ended_at"),
+    version: integer("version").notNull().default(1),
     recordedBy: uuid("recorded_by"),
   },
   (t) => [

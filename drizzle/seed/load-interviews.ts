@@ -46,6 +46,7 @@ export async function loadInterviews(
       recorded_by: accounts.get(one.tracer) ?? null,
     })),
   );
+  target.progress?.("interviews", outbreak.interviews.length);
   interface Pair {
     id: string;
     a: string;
@@ -89,6 +90,7 @@ export async function loadInterviews(
       withdrawn_at: pair.withdrawnAt,
     })),
   );
+  target.progress?.("contact pairs", pairs.size);
   await insertRows(
     client,
     "core.exposure",
@@ -149,7 +151,7 @@ export async function loadInterviews(
       ...inv,
       id: randomUUID(),
       interview_id: interviewId.get(one.interviewId),
-      person_id: idOf(outbreak.interviews.find((i) => i.id === one.interviewId)?.personId ?? 0),
+      person_id: idOf(outbreak.interviews[one.interviewId]?.personId ?? 0),
       setting: one.setting,
       place_id: placeOf(one.placeId),
       first_exposure: one.firstDay,
@@ -159,6 +161,7 @@ export async function loadInterviews(
       recorded_at: one.recordedAt,
     })),
   );
+  target.progress?.("exposures", exposures.length);
   await bringCopiesUpToDate(client, investigationId, outbreak.interviews.length);
 }
 

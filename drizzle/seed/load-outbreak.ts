@@ -16,6 +16,7 @@ import type { LoadTarget } from "./load-target.ts";
 export async function loadOutbreak(target: LoadTarget, outbreak: Outbreak): Promise<void> {
   const { client, keys, investigationId, accounts } = target;
   const account = (tracer: string | null) => (tracer ? (accounts.get(tracer) ?? null) : null);
+  const team = (tracer: string | null) => (tracer && target.teams?.get(tracer)) || null;
   const inv = { investigation_id: investigationId };
   const personId = outbreak.people.map(() => randomUUID());
   const placeId = outbreak.places.map(() => randomUUID());
@@ -95,6 +96,7 @@ export async function loadOutbreak(target: LoadTarget, outbreak: Outbreak): Prom
       outcome_date: "text",
       became_case: "boolean",
       assigned_account_id: "uuid",
+      assigned_team_id: "uuid",
       source: "text",
       recorded_at: "timestamptz",
       recorded_by: "uuid",
@@ -120,7 +122,8 @@ export async function loadOutbreak(target: LoadTarget, outbreak: Outbreak): Prom
         outcome: person.outcome,
         outcome_date: person.outcomeDate,
         became_case: isCase(now?.classification ?? null) && now?.wasContact === true,
-        assigned_account_id: account(person.assignedTracer),
+        assigned_account_id: team(person.assignedTracer) ? null : account(person.assignedTracer),
+        assigned_team_id: team(person.assignedTracer),
         source: person.source,
         recorded_at: person.recordedAt,
         recorded_by: account(person.enteredBy),
@@ -130,7 +133,9 @@ export async function loadOutbreak(target: LoadTarget, outbreak: Outbreak): Prom
       };
     }),
   );
+  target.progress?.("people", outbreak.people.length);
   await loadIdentity(target, outbreak, idOf);
+  target.progress?.("sealed identities", outbreak.people.length);
   await insertRows(
     client,
     "core.classification",
@@ -177,6 +182,8 @@ export async function loadOutbreak(target: LoadTarget, outbreak: Outbreak): Prom
       recorded_at: test.recordedAt,
     })),
   );
+  target.progress?.("tests", outbreak.tests.length);
   await loadInterviews(target, outbreak, idOf, placeOf);
   await loadChecks(target, outbreak, idOf);
+  target.progress?.("checks of contacts", outbreak.checks.length);
 }

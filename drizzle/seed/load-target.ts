@@ -9,4 +9,8 @@ export interface LoadTarget {
   /** Account of each tracer id the outbreak was generated with. */
   accounts: ReadonlyMap<string, string>;
   country: string;
+  /** Team that holds a tracer's people in their place, where people are assigned to teams. */
+  teams?: ReadonlyMap<string, string>;
+  /** Called when a part is in, for who waits. */
+  progress?: (part: string, rows: number) => void;
 }

@@ -9,16 +9,9 @@ import type { KeyRing } from "../../server/identity/keys.ts";
 import type { Role } from "../../shared/roles.ts";
 import { generateOutbreak } from "./generator/generate-outbreak.ts";
 import { loadOutbreak } from "./load-outbreak.ts";
+import { openInvented, STORY_COUNTRY, STORY_SETTINGS, STORY_ZONE } from "./open-invented.ts";
 
 const SEED = 18;
-const ZONE = "UTC";
-const SETTINGS = {
-  monitoringDays: 14,
-  infectiousBefore: 2,
-  infectiousAfter: 10,
-  incubationMin: 2,
-  incubationMax: 10,
-};
 const ROLE_ACCOUNTS: Record<Role, string> = {
   tracer: "Demo tracer",
   supervisor: "Demo supervisor",
@@ -64,7 +57,7 @@ export function demoNotice(dataDir: string, given: string | undefined): string {
 function storyEnd(): { lastDay: string; lastMinute: number } {
   const instant = now();
   const minute = instant.getUTCHours() * 60 + instant.getUTCMinutes();
-  const today = dayIn(ZONE, instant);
+  const today = dayIn(STORY_ZONE, instant);
   return minute < 9 * 60
     ? { lastDay: shiftDay(today, -1), lastMinute: 18 * 60 }
     : { lastDay: today, lastMinute: Math.min(minute, 18 * 60) };
@@ -127,58 +120,27 @@ export async function makeDemo(options: DemoOptions): Promise<void> {
       lastDay,
       lastMinute,
       tracers: [...tracers.keys()],
-      ...SETTINGS,
+      ...STORY_SETTINGS,
     });
-    const id = randomUUID();
-    await client.query(
-      `insert into core.investigation (id, name, invented, time_zone, country_code, population_at_risk,
-         infectious_before, infectious_after, incubation_min, incubation_max, monitoring_days, recorded_by)
-       values ($1, $2, true, $3, 'GB', $4, $5, $6, $7, $8, $9, $10)`,
-      [
-        id,
-        `${outbreak.story.place}: ${outbreak.story.illness}`,
-        ZONE,
-        outbreak.story.populationAtRisk,
-        SETTINGS.infectiousBefore,
-        SETTINGS.infectiousAfter,
-        SETTINGS.incubationMin,
-        SETTINGS.incubationMax,
-        SETTINGS.monitoringDays,
-        accounts.get("supervisor"),
-      ],
-    );
-    await client.query(
-      "insert into core.case_definition (id, investigation_id, number, wording) values ($1, $2, 1, $3)",
-      [
-        randomUUID(),
-        id,
-        "Invented. Suspected: fever with shore rash. Probable: and a link to a confirmed case. Confirmed: and a positive test.",
-      ],
-    );
-    const wrapped = keys.wrapFresh(id);
-    await client.query(
-      "insert into identity.data_key (investigation_id, wrapped_key) values ($1, $2)",
-      [id, wrapped],
-    );
-    const members: [string, Role][] = [...accounts].map(([role, account]) => [account, role]);
-    for (const name of COLLEAGUES) members.push([tracers.get(name) as string, "tracer"]);
-    for (const [account, role] of members) {
-      await client.query(
-        "insert into core.member (id, investigation_id, account_id, role) values ($1, $2, $3, $4)",
-        [randomUUID(), id, account, role],
-      );
-    }
+    const roles: [string, Role][] = [...accounts].map(([role, account]) => [account, role]);
+    for (const name of COLLEAGUES) roles.push([tracers.get(name) as string, "tracer"]);
+    const opened = await openInvented(client, keys, {
+      name: `${outbreak.story.place}: ${outbreak.story.illness}`,
+      populationAtRisk: outbreak.story.populationAtRisk,
+      openedBy: accounts.get("supervisor") ?? null,
+      members: roles.map(([accountId, role]) => ({ accountId, role })),
+    });
     await loadOutbreak(
       {
         client,
-        keys: keys.unwrap(id, wrapped),
-        investigationId: id,
+        keys: opened.keys,
+        investigationId: opened.id,
         accounts: tracers,
-        country: "GB",
+        country: STORY_COUNTRY,
       },
       outbreak,
     );
-    await client.query("insert into auth.meta (key, value) values ('demo', $1)", [id]);
+    await client.query("insert into auth.meta (key, value) values ('demo', $1)", [opened.id]);
     await client.query("commit");
     await client.query("analyze");
   } catch (error) {

@@ -40,7 +40,8 @@ const ACCOUNT = `select a.id, a.email, a.display_name, a.demo, a.epoch, a.disabl
       'investigationName', i.name, 'invented', i.invented, 'role', m.role)
       order by i.recorded_at, m.since, m.role)
     from core.member m join core.investigation i on i.id = m.investigation_id
-    where m.account_id = a.id and m.ended_at is null), '[]') as memberships
+    where m.account_id = a.id and m.ended_at is null
+      and core.day_lasts(m.ends_on, i.time_zone)), '[]') as memberships
   from auth.account a where a.id = $1`;
 
 /** Reads an account with its live memberships; null when it is gone or disabled. */

@@ -2,6 +2,7 @@ import { z } from "zod";
 import { isGuessable } from "../passwords.ts";
 import { ROLES } from "../roles.ts";
 import { LIMITS, listOf, text, uuid } from "./common.ts";
+import { roleEnd } from "./investigations.ts";
 
 const address = z
   .email({ error: "not_an_email" })
@@ -26,6 +27,7 @@ export const invitationInput = z.strictObject({
   email: address,
   role: z.enum(ROLES, { error: "not_in_list" }),
   team: text(LIMITS.shortText).optional(),
+  endsOn: roleEnd,
 });
 
 /** An invitation nobody took up yet. */
@@ -36,6 +38,7 @@ export const invitationAnswer = z.strictObject({
   team: z.string().nullable(),
   invitedBy: z.string().nullable(),
   invitedAt: z.string(),
+  endsOn: z.string().nullable(),
   expiresAt: z.string(),
 });
 export type Invitation = z.output<typeof invitationAnswer>;
@@ -48,6 +51,8 @@ export const invitationSeen = z.strictObject({
   email: z.string(),
   role: z.enum(ROLES),
   investigationName: z.string(),
+  /** Last day of the role, when one is set. */
+  endsOn: z.string().nullable(),
   invented: z.boolean(),
   /** There is an account with this e-mail; taking it up only adds the role. */
   hasAccount: z.boolean(),

@@ -1,6 +1,6 @@
 import { z } from "zod";
 import { ROLES } from "../roles.ts";
-import { LIMITS, listOf, rowVersion, text, uuid } from "./common.ts";
+import { day, LIMITS, listOf, listQuery, rowVersion, text, uuid } from "./common.ts";
 import { isTimeZone } from "./settings.ts";
 
 const whole = (min: number, max: number) =>
@@ -74,10 +74,23 @@ export const investigationAnswer = z.strictObject({
 export type Investigation = z.output<typeof investigationAnswer>;
 export const investigationList = listOf(investigationAnswer);
 
+/** Last day of a role, in the investigation's zone; null: no end. A blank box is no end. */
+export const roleEnd = z.preprocess(
+  (value) => (value === "" ? null : value),
+  day.nullable().default(null),
+);
+
 export const memberInput = z.strictObject({
   email: z.email({ error: "not_an_email" }).max(LIMITS.email, { error: "too_long" }),
   role: z.enum(ROLES, { error: "not_in_list" }),
   team: text(LIMITS.shortText).optional(),
+  endsOn: roleEnd,
+});
+/** Change of a membership: only the keys present. `team` is a name; null: in no team. */
+export const memberPatch = z.strictObject({
+  version: rowVersion,
+  team: text(LIMITS.shortText).nullable().optional(),
+  endsOn: z.preprocess((value) => (value === "" ? null : value), day.nullable()).optional(),
 });
 /** Which membership ends: by its id, or the account's e-mail and the role it holds here. */
 export const memberEndInput = z.union(
@@ -92,6 +105,29 @@ export const memberAnswer = z.strictObject({
   role: z.enum(ROLES),
   team: z.string().nullable(),
   since: z.string(),
+  /** Last day of the role, when one is set. */
+  endsOn: z.string().nullable(),
+  /** Instant at which the role was ended, or its last day was over; null while it lasts. */
+  endedAt: z.string().nullable(),
+  version: z.int(),
 });
 export type Member = z.output<typeof memberAnswer>;
 export const memberList = listOf(memberAnswer);
+/** `past` are memberships that are over; they stay for the record. */
+export const memberQuery = listQuery.extend({
+  show: z.enum(["current", "past"], { error: "not_in_list" }).default("current"),
+});
+
+export const teamInput = z.strictObject({ name: text(LIMITS.shortText, 1) });
+export const teamPatch = teamInput.extend({ version: rowVersion });
+/** A team and what hangs on it; one on which nothing hangs can be removed. */
+export const teamAnswer = z.strictObject({
+  id: uuid,
+  name: z.string(),
+  members: z.int(),
+  invitations: z.int(),
+  people: z.int(),
+  version: z.int(),
+});
+export type Team = z.output<typeof teamAnswer>;
+export const teamList = listOf(teamAnswer);

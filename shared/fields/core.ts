@@ -51,7 +51,9 @@ export const CORE_FIELDS = [
     ["id", "operational", "FFNF"],
     ["investigation_id", "operational", "FFNF"],
     ["name", "operational", "FFNF"],
+    ["version", "operational", "FFNF"],
     ["recorded_at", "operational", "FFNF"],
+    ["removed_at", "operational", "FFNF"],
   ]),
   ...table("core.member", [
     ["id", "operational", "NFNF"],
@@ -60,7 +62,9 @@ export const CORE_FIELDS = [
     ["role", "operational", "NFNF"],
     ["team_id", "operational", "NFNF"],
     ["since", "operational", "NFNF"],
+    ["ends_on", "operational", "NFNF"],
     ["ended_at", "operational", "NFNF"],
+    ["version", "operational", "NFNF"],
     ["recorded_by", "operational", "NFNF"],
   ]),
   ...table("core.place", [

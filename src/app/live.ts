@@ -11,7 +11,7 @@ export const STALE_BY_TOPIC: Readonly<Record<Topic, readonly QueryWord[]>> = {
   people: ["people", "tests", "follow-up", "match-reviews", "places", "clusters"],
   interviews: ["interviews", "people", "follow-up", "match-reviews"],
   imports: ["imports", "people", "groups", "network", "clusters"],
-  members: ["members", "invitations", "people"],
+  members: ["members", "invitations", "teams", "people"],
   clusters: ["clusters"],
 };
 

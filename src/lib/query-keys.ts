@@ -3,6 +3,7 @@ export type QueryWord =
   | "investigation"
   | "members"
   | "invitations"
+  | "teams"
   | "people"
   | "tests"
   | "places"

@@ -59,6 +59,7 @@ const seen = {
   role: "tracer",
   investigationName: "Sallow Bay",
   invented: true,
+  endsOn: null,
   hasAccount: false,
 };
 
@@ -194,6 +195,7 @@ it("the members page invites by e-mail and lists who has not come yet", async ()
     role: "tracer",
     team: "North",
     invitedBy: "Ada Field",
+    endsOn: null,
     invitedAt: "2026-05-27T08:00:00.000Z",
     expiresAt: "2026-05-30T08:00:00.000Z",
   };
@@ -229,4 +231,127 @@ it("the members page invites by e-mail and lists who has not come yet", async ()
   await user.click(screen.getByRole("button", { name: /^Withdraw the invitation of rowan@/ }));
   await screen.findByText("Invitation withdrawn");
   expect(asked).toContain(`DELETE invitations/${ids.small}`);
+});
+
+const member = {
+  id: ids.small,
+  accountId: ids.investigation,
+  displayName: "Ada Field",
+  email: "ada@test.example",
+  role: "tracer",
+  team: "North",
+  since: "2026-05-01T08:00:00.000Z",
+  endsOn: null as string | null,
+  endedAt: null as string | null,
+  version: 3,
+};
+
+/** The members page on answers of one's own; gives the bodies that were sent. */
+function membersPage(answers: (path: string, query: URLSearchParams, method: string) => unknown) {
+  const bodies: unknown[] = [];
+  let method = "GET";
+  const { asked } = renderRoom({
+    room: () => (
+      <ToastProvider>
+        <MembersRoute />
+      </ToastProvider>
+    ),
+    at: "/room",
+    rooms: ["trace"],
+    session: { actingRole: "supervisor", accountId: ids.large },
+    answers: (path, query) => answers(path, query, method),
+  });
+  const fetched = globalThis.fetch;
+  vi.stubGlobal("fetch", (address: string, init: RequestInit = {}) => {
+    method = init.method ?? "GET";
+    if (typeof init.body === "string") bodies.push(JSON.parse(init.body));
+    return fetched(address, init);
+  });
+  return { asked, bodies };
+}
+const pageOf = (items: unknown[]) => ({ items, total: items.length, page: 1, pageSize: 50 });
+const problem = (status: number, code: string, path: string, fieldCode: string) =>
+  new Response(JSON.stringify({ code, status, errors: [{ path, code: fieldCode }] }), { status });
+
+it("a member gets a last day and another team; a refusal stands beside its field", async () => {
+  const user = userEvent.setup();
+  let stored = member;
+  let refuse = true;
+  const { asked, bodies } = membersPage((path, query) => {
+    if (path === `members/${ids.small}`) {
+      if (refuse) return problem(409, "conflict", "endsOn", "last_leader");
+      stored = { ...member, endsOn: "2026-06-30", team: "South", version: 4 };
+      return { id: ids.small, version: 4 };
+    }
+    if (path !== "members") return pageOf([]);
+    return pageOf(query.get("show") === "past" ? [] : [stored]);
+  });
+  await screen.findByText("no end");
+  await user.click(screen.getByRole("button", { name: /^Change the role of Ada Field/ }));
+  await user.type(screen.getByLabelText("Last day"), "2026-06-30");
+  await user.click(screen.getByRole("button", { name: "Save the change" }));
+  await screen.findByText(/keeps at least one supervisor or data officer with no end date/);
+  refuse = false;
+  await user.clear(screen.getByLabelText("Team"));
+  await user.type(screen.getByLabelText("Team"), "South");
+  await user.click(screen.getByRole("button", { name: "Save the change" }));
+  await screen.findByText("Membership of Ada Field changed");
+  expect(asked).toContain(`PATCH members/${ids.small}`);
+  // Only what was touched is sent.
+  expect(bodies).toEqual([
+    { version: 3, endsOn: "2026-06-30" },
+    { version: 3, endsOn: "2026-06-30", team: "South" },
+  ]);
+  const table = screen.getByRole("table", { name: "Members of this investigation, by name" });
+  await waitFor(() => expect(table.textContent).toMatch(/South.*(30 June|June 30|30 Jun|Jun 30)/));
+});
+
+it("roles that are over stand apart, with when they ended", async () => {
+  const over = { ...member, endsOn: "2026-05-20", endedAt: "2026-05-21T00:00:00.000Z" };
+  membersPage((path, query) =>
+    pageOf(path === "members" && query.get("show") === "past" ? [over] : []),
+  );
+  const table = await screen.findByRole("table", {
+    name: "Memberships that are over, the latest first",
+  });
+  expect(table.textContent).toContain("Ada Field");
+  const current = screen.queryByRole("table", { name: "Members of this investigation, by name" });
+  expect(current?.textContent ?? "").not.toContain("Ada Field");
+});
+
+it("teams are made, renamed and, when nothing hangs on them, removed", async () => {
+  const user = userEvent.setup();
+  const full = { id: ids.large, name: "Full", members: 2, invitations: 0, people: 7, version: 1 };
+  const empty = { ...full, id: ids.small, name: "Empty", members: 0, people: 0, version: 2 };
+  let made = 0;
+  const { asked, bodies } = membersPage((path, _query, method) => {
+    if (path === "teams" && method === "POST") {
+      made += 1;
+      if (made === 1) return problem(422, "invalid", "name", "team_taken");
+      return { id: ids.small, version: 1 };
+    }
+    if (path === `teams/${ids.small}`) {
+      return method === "DELETE"
+        ? new Response(null, { status: 204 })
+        : { id: ids.small, version: 3 };
+    }
+    return pageOf(path === "teams" ? [empty, full] : []);
+  });
+  await screen.findByRole("table", { name: "Teams of this investigation, by name" });
+  expect(screen.queryByRole("button", { name: "Remove Full" })).toBeNull();
+  await user.click(screen.getByRole("button", { name: "Make a team" }));
+  await user.type(screen.getByLabelText("Name of the new team"), "Full");
+  await user.click(screen.getByRole("button", { name: "Make the team" }));
+  await screen.findByText("There is a team of this name");
+  await user.type(screen.getByLabelText("Name of the new team"), "er");
+  await user.click(screen.getByRole("button", { name: "Make the team" }));
+  await screen.findByText("Team made");
+  await user.click(screen.getByRole("button", { name: "Rename Empty" }));
+  await user.type(screen.getByLabelText("New name of Empty"), "ish");
+  await user.click(screen.getByRole("button", { name: "Rename the team" }));
+  await screen.findByText("Team renamed");
+  await user.click(screen.getByRole("button", { name: "Remove Empty" }));
+  await screen.findByText("Team Empty removed");
+  expect(bodies).toEqual([{ name: "Full" }, { name: "Fuller" }, { name: "Emptyish", version: 2 }]);
+  expect(asked).toContain(`DELETE teams/${ids.small}`);
 });

@@ -71,6 +71,9 @@ const member = {
   role: "tracer",
   team: null,
   since: "2026-05-01T08:00:00.000Z",
+  endsOn: null,
+  endedAt: null,
+  version: 1,
 };
 
 function listOf(items: unknown[]) {
@@ -79,13 +82,13 @@ function listOf(items: unknown[]) {
 
 function open(options: { items?: Item[]; at?: string; role?: "officer" | "supervisor" } = {}) {
   const { items = [phone, item({}), version], at = "/room", role = "officer" } = options;
-  const answers: Answers = (path) => {
+  const answers: Answers = (path, query) => {
     if (path === "field-policy") {
       return { items, disagreements: items.filter((one) => !one.agrees).length };
     }
     if (path === "access-events") return listOf([event]);
     if (path.startsWith("members/")) return new Response(null, { status: 204 });
-    if (path === "invitations") return listOf([]);
+    if (path !== "members" || query.get("show") === "past") return listOf([]);
     return listOf([member]);
   };
   const room = () => (

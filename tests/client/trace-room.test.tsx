@@ -125,6 +125,9 @@ describe("Trace", () => {
       role: "tracer",
       team: null,
       since: "2026-05-01T00:00:00Z",
+      endsOn: null,
+      endedAt: null,
+      version: 1,
     };
     const answer: Answer = ({ path }) =>
       path.startsWith("members")

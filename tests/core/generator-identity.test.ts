@@ -50,6 +50,20 @@ describe("identity is invented", () => {
     }
   });
 
+  it("has phones that end in all kinds of digits", () => {
+    for (const { people } of outbreaks) {
+      const phones = people.filter((one) => one.phone?.startsWith("+") && one.duplicateOf === null);
+      const ends = new Map<string, number>();
+      for (const { phone } of phones) {
+        const end = phone?.slice(-2) ?? "";
+        ends.set(end, (ends.get(end) ?? 0) + 1);
+      }
+      // A hundred ends there are; none of them tells more than a handful of people apart.
+      expect(ends.size).toBeGreaterThanOrEqual(95);
+      expect(Math.max(...ends.values())).toBeLessThan(phones.length * 0.03);
+    }
+  });
+
   it("never runs through the same number twice before the pool is used up", () => {
     const all = new Set(Array.from({ length: PHONE_POOL }, (_, index) => inventedPhone(index)));
     expect(all.size).toBe(PHONE_POOL);

@@ -36,6 +36,7 @@ beforeAll(async () => {
       own: await openInvitation(world.here),
       other: await openInvitation(world.elsewhere),
     },
+    teamId: { own: await teamIn(world.here), other: await teamIn(world.elsewhere) },
     importId: {
       own: await stageImport(world.everyone.supervisor),
       other: await stageImport(world.others.supervisor),
@@ -61,6 +62,16 @@ async function checkOf(personId: string): Promise<string> {
     [personId],
   );
   return made.rows[0].id;
+}
+
+/** A team without members, past the routes. */
+async function teamIn(investigationId: string): Promise<string> {
+  const id = randomUUID();
+  await world.admin.query(
+    "insert into core.team (id, investigation_id, name) values ($1, $2, $3)",
+    [id, investigationId, `Team ${id.slice(0, 8)}`],
+  );
+  return id;
 }
 
 /** An invitation that nobody took up, past the routes. */
@@ -98,6 +109,9 @@ async function addressOf(route: AnyRoute, where: Where, object: Where): Promise<
     }
     if (route.method === "delete" && object === "own" && name === "checkId") {
       own = await checkOf(world.people.held);
+    }
+    if (route.method === "delete" && object === "own" && name === "teamId") {
+      own = await teamIn(world.here);
     }
     if (route.method === "delete" && object === "own" && name === "invitationId") {
       own = await openInvitation(world.here);

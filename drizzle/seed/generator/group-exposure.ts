@@ -3,7 +3,7 @@ import { itemAt } from "./item-at.ts";
 import type { RecordBook } from "./records.ts";
 import type { Rng } from "./rng.ts";
 import type { Town } from "./town.ts";
-import type { GroupExposure } from "./types.ts";
+import type { GroupExposure, Setting } from "./types.ts";
 
 const SETTINGS = ["transport", "social", "other"] as const;
 
@@ -21,14 +21,19 @@ export function tellGroupExposure(
 ): GroupExposure {
   const { role } = itemAt(town.zones, itemAt(town.zone, teller.person));
   const onFerry = (role === "main" || role === "far") && rng.chance(0.45);
-  const site = onFerry ? town.ferry : role === "main" && rng.chance(0.6) ? town.market : -1;
+  const atMarket = !onFerry && role === "main" && rng.chance(0.6);
   const day = calendar.day(rng.between(window.from, window.until));
   const count = rng.between(4, 40);
   const roll = rng.next();
+  // Which crossing it was nobody remembers, so the boat is no place of theirs: it would tie the cases
+  // of both shores to each other.
+  let setting: Setting = "transport";
+  if (atMarket) setting = itemAt(town.sites, town.market).setting;
+  else if (!onFerry) setting = rng.pick(SETTINGS);
   return {
     interviewId: teller.interviewId,
-    setting: site < 0 ? rng.pick(SETTINGS) : itemAt(town.sites, site).setting,
-    placeId: site < 0 ? null : book.sitePlace(site, teller.minute),
+    setting,
+    placeId: atMarket ? book.sitePlace(town.market, teller.minute) : null,
     firstDay: day,
     lastDay: day,
     countMin: roll < 0.2 ? null : count,

@@ -44,14 +44,17 @@ export function isInventedPhone(phone: string): boolean {
 export function inventedPhone(index: number): string | null {
   const short = SHORT_BLOCKS.length * SHORT_SIZE;
   if (index < short) {
-    const block = SHORT_BLOCKS[index % SHORT_BLOCKS.length];
-    // 617 has no factor in common with 1000, so this visits every line once, in no visible order.
-    const line = (Math.floor(index / SHORT_BLOCKS.length) * 617 + 142) % SHORT_SIZE;
+    const at = index % SHORT_BLOCKS.length;
+    const block = SHORT_BLOCKS[at];
+    // 617 has no factor in common with 1000, so this visits every line of a block once, in no
+    // visible order; each block starts elsewhere, so that last digits differ between blocks too.
+    const line = (Math.floor(index / SHORT_BLOCKS.length) * 617 + at * 379 + 142) % SHORT_SIZE;
     return `${block}${String(line).padStart(3, "0")}`;
   }
   const rest = index - short;
   if (rest >= LONG_BLOCKS.length * LONG_SIZE) return null;
-  const block = LONG_BLOCKS[rest % LONG_BLOCKS.length];
-  const line = (Math.floor(rest / LONG_BLOCKS.length) * 6173 + 1409) % LONG_SIZE;
+  const at = rest % LONG_BLOCKS.length;
+  const block = LONG_BLOCKS[at];
+  const line = (Math.floor(rest / LONG_BLOCKS.length) * 6173 + at * 1237 + 1409) % LONG_SIZE;
   return `${block}${String(line).padStart(4, "0")}`;
 }

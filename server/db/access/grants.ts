@@ -16,7 +16,7 @@ function listed(table: string): string[] {
 }
 
 /** Functions a role's login may call; everything else is revoked from everyone. */
-const FUNCTIONS: Record<string, readonly (Role | "system")[]> = {
+const FUNCTIONS: Record<string, readonly (Role | "system" | "auth")[]> = {
   "core.ctx()": ROLES,
   "core.ctx_user()": ROLES,
   "core.ctx_investigation()": ROLES,
@@ -33,13 +33,15 @@ const FUNCTIONS: Record<string, readonly (Role | "system")[]> = {
   "identity.shared_phones(uuid[])": ["tracer", "supervisor"],
   "identity.put_check_note(uuid, bytea)": ["tracer", "supervisor"],
   "identity.open_check_notes(uuid)": ["tracer", "supervisor"],
+  "core.day_lasts(text, text)": [...ROLES, "auth"],
   "core.account_of_email(text)": ["supervisor", "officer"],
+  "core.team_use()": ["supervisor", "officer"],
   "core.bump_graph()": ["tracer", "supervisor", "officer"],
   "core.next_numbers(integer)": ["tracer", "supervisor", "officer"],
   "core.announce(text, uuid, bigint)": ["tracer", "supervisor", "officer"],
   "core.fill_occupations(uuid, jsonb)": ["supervisor", "officer"],
   "core.sweep_import_stages()": ["system"],
-  "auth.invite(uuid, text, text, uuid, text, uuid, bytea)": ["supervisor", "officer"],
+  "auth.invite(uuid, text, text, uuid, text, text, uuid, bytea)": ["supervisor", "officer"],
   "auth.withdraw_invitation(uuid)": ["supervisor", "officer"],
   "auth.claim_key(uuid, text, text)": ["tracer", "supervisor", "officer"],
   "auth.keep_receipt(uuid, smallint, jsonb)": ["tracer", "supervisor", "officer"],
@@ -93,16 +95,21 @@ export function views(): string[] {
   }
   out.push(
     `create view views.member with (security_barrier) as
-     select m.id, m.account_id, a.display_name, a.email, m.role, t.name as team, m.since, m.ended_at
+     select m.id, m.account_id, a.display_name, a.email, m.role, m.team_id, t.name as team, m.since,
+       m.ends_on, m.ended_at, m.version,
+       m.ended_at is null and core.day_lasts(m.ends_on, v.time_zone) as live
      from core.member m join auth.account a on a.id = m.account_id
+     join core.investigation v on v.id = m.investigation_id
      left join core.team t on t.id = m.team_id
      where m.investigation_id = (select core.ctx_investigation())`,
     `create view views.invitation with (security_barrier) as
      select i.id, i.email, i.role, t.name as team, a.display_name as invited_by, i.recorded_at,
-       i.expires_at
-     from auth.invitation i left join core.team t on t.id = i.team_id
+       i.ends_on, i.expires_at
+     from auth.invitation i join core.investigation v on v.id = i.investigation_id
+     left join core.team t on t.id = i.team_id
      left join auth.account a on a.id = i.recorded_by
      where i.kind = 'invitation' and i.used_at is null and i.expires_at > now()
+       and core.day_lasts(i.ends_on, v.time_zone)
        and i.investigation_id = (select core.ctx_investigation())
        and (select core.ctx_role()) in ('supervisor', 'officer')`,
     `create view views.field_right with (security_barrier) as

@@ -85,8 +85,14 @@ export const WRITES: Record<string, Writes> = {
     insert: RECORDERS,
     update: { roles: RECORDERS, columns: ["name", "setting", "area", "version"] },
   },
-  "core.team": { insert: LEADERS },
-  "core.member": { insert: LEADERS, update: { roles: LEADERS, columns: ["ended_at", "team_id"] } },
+  "core.team": {
+    insert: LEADERS,
+    update: { roles: LEADERS, columns: ["name", "version", "removed_at"] },
+  },
+  "core.member": {
+    insert: LEADERS,
+    update: { roles: LEADERS, columns: ["ends_on", "ended_at", "team_id", "version"] },
+  },
   "core.graph_change": { insert: RECORDERS },
   "core.import": {
     insert: LEADERS,

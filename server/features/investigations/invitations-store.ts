@@ -19,7 +19,7 @@ export async function listInvitations(
   );
   const rows = await tx.execute<Invitation & Record<string, unknown>>(
     sql`select i.id, i.email, i.role, i.team, i.invited_by as "invitedBy",
-        i.recorded_at as "invitedAt", i.expires_at as "expiresAt"
+        i.recorded_at as "invitedAt", i.ends_on as "endsOn", i.expires_at as "expiresAt"
       from views.invitation i where ${where} order by i.recorded_at desc, i.id
       limit ${query.pageSize} offset ${(query.page - 1) * query.pageSize}`,
   );
@@ -34,14 +34,14 @@ export async function listInvitations(
 export async function insertInvitation(
   tx: Tx,
   keys: KeyRing,
-  invitation: { email: string; role: Role; teamId: string | null },
+  invitation: { email: string; role: Role; teamId: string | null; endsOn: string | null },
 ): Promise<string | null> {
   const id = randomUUID();
   const token = freshToken();
   const letter = sealOrder(keys, { kind: "invitation", to: invitation.email, token });
   const done = await tx.execute<{ kept: boolean }>(
     sql`select auth.invite(${id}::uuid, ${invitation.email}, ${invitation.role},
-      ${invitation.teamId}::uuid, ${tokenHash(token)}, ${letter.id}::uuid, ${letter.sealed}::bytea)
+      ${invitation.teamId}::uuid, ${invitation.endsOn}, ${tokenHash(token)}, ${letter.id}::uuid, ${letter.sealed}::bytea)
       as kept`,
   );
   return done.rows[0]?.kept ? id : null;

@@ -6,8 +6,10 @@ import { recordEvent } from "../../audit/record-event.ts";
 import { HttpProblem, invalid } from "../../http/problem.ts";
 import { type AnyRoute, defineRoute } from "../../http/route.ts";
 import { insertInvitation, listInvitations, withdrawInvitation } from "./invitations-store.ts";
-import { accountOfEmail, lockMembers, membershipOf, teamOfName } from "./members-store.ts";
+import { accountOfEmail, lockMembers, membershipOf } from "./members-store.ts";
+import { checkEnd } from "./role-end.ts";
 import { loadInvestigation } from "./store.ts";
+import { teamOfName } from "./teams-store.ts";
 
 const LEADERS = ["supervisor", "officer"] as const;
 const params = z.object({ id: z.uuid() });
@@ -44,12 +46,14 @@ export const invitationRoutes: AnyRoute[] = [
       if (account?.demo && !investigation.invented) {
         throw invalid({ path: "email", code: "demo_only" });
       }
+      checkEnd(investigation.timeZone, body.endsOn);
       await lockMembers(tx, actor.investigationId);
       if (account && (await membershipOf(tx, account.id, body.role))) {
         throw invalid({ path: "role", code: "already_member" });
       }
-      const teamId = body.team ? await teamOfName(tx, actor.investigationId, body.team) : null;
-      const invitation = { email: body.email, role: body.role, teamId };
+      const teamId = await teamOfName(tx, actor.investigationId, body.team);
+      const { email, role, endsOn } = body;
+      const invitation = { email, role, teamId, endsOn };
       const id = await insertInvitation(tx, services.keys, invitation);
       if (!id) throw new HttpProblem("too_many_attempts", { retryAfter: 3600 });
       await recordEvent(tx, {

@@ -1,10 +1,12 @@
 import { sql } from "drizzle-orm";
 import { z } from "zod";
-import { listQuery, receipt } from "../../../shared/contracts/common.ts";
+import { receipt } from "../../../shared/contracts/common.ts";
 import {
   memberEndInput,
   memberInput,
   memberList,
+  memberPatch,
+  memberQuery,
 } from "../../../shared/contracts/investigations.ts";
 import { recordEvent } from "../../audit/record-event.ts";
 import type { Tx } from "../../db/with-tx.ts";
@@ -12,15 +14,18 @@ import { HttpProblem, invalid } from "../../http/problem.ts";
 import { type Actor, type AnyRoute, defineRoute } from "../../http/route.ts";
 import {
   accountOfEmail,
+  changeMember,
   endMember,
   insertMember,
+  type LiveMember,
   listMembers,
   liveMember,
   lockMembers,
   membershipOf,
-  teamOfName,
 } from "./members-store.ts";
+import { checkEnd } from "./role-end.ts";
 import { loadInvestigation } from "./store.ts";
+import { teamOfName } from "./teams-store.ts";
 
 const LEADERS = ["supervisor", "officer"] as const;
 const params = z.object({ id: z.uuid() });
@@ -29,26 +34,35 @@ const memberParams = params.extend({ memberId: z.uuid() });
 async function recordMember(
   tx: Tx,
   actor: Actor,
-  action: "member.added" | "member.ended",
+  action: "member.added" | "member.changed" | "member.ended",
   role: string,
+  changed: readonly string[] = [],
 ) {
   await recordEvent(tx, {
     action,
     accountId: actor.accountId,
     role: actor.role,
     investigationId: actor.investigationId,
-    fields: [`role:${role}`],
+    fields: [`role:${role}`, ...changed],
   });
+}
+
+/**
+ * Somebody must be left who can let others in, also after every end date has passed: one supervisor
+ * or officer without an end date.
+ */
+function checkLeaders(member: LiveMember, path: string): void {
+  const lasting = (LEADERS as readonly string[]).includes(member.role) && member.endsOn === null;
+  if (lasting && member.otherLeaders === 0) {
+    throw new HttpProblem("conflict", { errors: [{ path, code: "last_leader" }] });
+  }
 }
 
 /** Ends a membership; the caller holds the lock on members. */
 async function endMembership(tx: Tx, actor: Actor, memberId: string): Promise<null> {
   const member = await liveMember(tx, memberId);
   if (!member) throw new HttpProblem("not_found");
-  // Somebody must be left who can let others in.
-  if (member.otherLeaders === 0 && (LEADERS as readonly string[]).includes(member.role)) {
-    throw new HttpProblem("conflict", { errors: [{ path: "memberId", code: "last_leader" }] });
-  }
+  checkLeaders(member, "memberId");
   // Before the change: whoever ends their own membership has no context after it.
   await recordMember(tx, actor, "member.ended", member.role);
   await tx.execute(sql`select core.announce('members', ${memberId}::uuid, null)`);
@@ -64,7 +78,7 @@ export const memberRoutes: AnyRoute[] = [
     summary: "Members of the investigation",
     policy: LEADERS,
     params,
-    query: listQuery,
+    query: memberQuery,
     output: memberList,
     async run({ tx, query }) {
       if (query.sort) throw invalid({ path: "sort", code: "not_sortable" });
@@ -88,15 +102,43 @@ export const memberRoutes: AnyRoute[] = [
       if (account.demo && !investigation.invented) {
         throw invalid({ path: "email", code: "demo_only" });
       }
+      checkEnd(investigation.timeZone, body.endsOn);
       await lockMembers(tx, actor.investigationId);
       if (await membershipOf(tx, account.id, body.role)) {
         throw invalid({ path: "role", code: "already_member" });
       }
-      const teamId = body.team ? await teamOfName(tx, actor.investigationId, body.team) : null;
-      const id = await insertMember(tx, actor, { accountId: account.id, role: body.role, teamId });
+      const teamId = await teamOfName(tx, actor.investigationId, body.team);
+      const { role, endsOn } = body;
+      const id = await insertMember(tx, actor, { accountId: account.id, role, teamId, endsOn });
       await recordMember(tx, actor, "member.added", body.role);
       await tx.execute(sql`select core.announce('members', ${id}::uuid, null)`);
       return { id };
+    },
+  }),
+  defineRoute({
+    method: "patch",
+    path: "/api/investigations/:id/members/:memberId",
+    summary: "Change the team or the last day of a membership",
+    policy: LEADERS,
+    params: memberParams,
+    body: memberPatch,
+    output: receipt,
+    async run({ tx, actor, params: { memberId }, body }) {
+      const { timeZone } = await loadInvestigation(tx, actor.investigationId);
+      await lockMembers(tx, actor.investigationId);
+      const member = await liveMember(tx, memberId);
+      if (!member) throw new HttpProblem("not_found");
+      if (member.version !== body.version) throw new HttpProblem("stale_version");
+      const { team, endsOn } = body;
+      if (endsOn !== undefined) checkEnd(timeZone, endsOn);
+      if (endsOn) checkLeaders(member, "endsOn");
+      const teamId =
+        team === undefined ? undefined : await teamOfName(tx, actor.investigationId, team);
+      await changeMember(tx, memberId, { teamId, endsOn });
+      const changed = Object.keys(body).filter((key) => key !== "version");
+      await recordMember(tx, actor, "member.changed", member.role, changed);
+      await tx.execute(sql`select core.announce('members', ${memberId}::uuid, null)`);
+      return { id: memberId, version: member.version + 1 };
     },
   }),
   defineRoute({

@@ -60,8 +60,8 @@ export function accountRoutes(services: Services, limiter: Limiter): PlainRoute[
         if (!found) throw new HttpProblem("not_found");
         checkFit(found);
         await attempt.succeeded();
-        const { email, role, investigationName, invented, account } = found;
-        return { email, role, investigationName, invented, hasAccount: account !== null };
+        const { email, role, investigationName, invented, endsOn, account } = found;
+        return { email, role, investigationName, invented, endsOn, hasAccount: account !== null };
       },
     }),
     definePlainRoute({

@@ -14,6 +14,7 @@ export interface OpenInvitation extends Omit<InvitationSeen, "hasAccount"> {
 
 const FOUND = sql.raw(`select i.email, i.role, i.investigation_id as "investigationId",
     i.team_id as "teamId", v.name as "investigationName", v.invented,
+    i.ends_on as "endsOn",
     case when a.id is null then null else json_build_object('id', a.id, 'demo', a.demo,
       'disabled', a.disabled_at is not null) end as account
   from auth.invitation i join core.investigation v on v.id = i.investigation_id
@@ -23,7 +24,7 @@ const FOUND = sql.raw(`select i.email, i.role, i.investigation_id as "investigat
 export async function findInvitation(tx: Tx, token: string): Promise<OpenInvitation | null> {
   const found = await tx.execute<OpenInvitation & Record<string, unknown>>(
     sql`${FOUND} where i.token_hash = ${tokenHash(token)} and i.kind = 'invitation'
-      and i.used_at is null and i.expires_at > now()`,
+      and i.used_at is null and i.expires_at > now() and core.day_lasts(i.ends_on, v.time_zone)`,
   );
   return found.rows[0] ?? null;
 }
@@ -55,13 +56,23 @@ export async function insertAccount(
 export async function joinInvestigation(
   tx: Tx,
   accountId: string,
-  to: { investigationId: string; role: Role; teamId: string | null },
+  to: { investigationId: string; role: Role; teamId: string | null; endsOn: string | null },
 ): Promise<void> {
   // The lock of everything that changes members of one investigation.
   await tx.execute(sql`select pg_advisory_xact_lock(72031, hashtext(${to.investigationId}))`);
+  // A role of theirs that ended by its date makes room.
   await tx.execute(
-    sql`insert into core.member (id, investigation_id, account_id, role, team_id, recorded_by)
-        select ${randomUUID()}, ${to.investigationId}, ${accountId}, ${to.role}, ${to.teamId}, ${accountId}
+    sql`update core.member m
+        set ended_at = (m.ends_on::date + 1)::timestamp at time zone v.time_zone
+        from core.investigation v
+        where v.id = m.investigation_id and m.investigation_id = ${to.investigationId}
+          and m.account_id = ${accountId} and m.role = ${to.role} and m.ended_at is null
+          and not core.day_lasts(m.ends_on, v.time_zone)`,
+  );
+  await tx.execute(
+    sql`insert into core.member (id, investigation_id, account_id, role, team_id, ends_on, recorded_by)
+        select ${randomUUID()}, ${to.investigationId}, ${accountId}, ${to.role}, ${to.teamId},
+          ${to.endsOn}, ${accountId}
         where not exists (select 1 from core.member where investigation_id = ${to.investigationId}
           and account_id = ${accountId} and role = ${to.role} and ended_at is null)`,
   );

@@ -1,4 +1,5 @@
 import { afterAll, beforeAll, expect, test, vi } from "vitest";
+import { dayIn, now, shiftDay } from "../../../server/clock.ts";
 import type { Letter } from "../../../shared/contracts/accounts.ts";
 import { startTestApp, type TestApp, TestClient } from "../../support/app.ts";
 import {
@@ -8,6 +9,7 @@ import {
   PASSWORD,
   signInAs,
 } from "../../support/factories.ts";
+import { asAdmin } from "../../support/field-work.ts";
 
 let app: TestApp;
 
@@ -73,6 +75,7 @@ test("an invitation makes an account and a membership, once, from a letter with 
     role: "tracer",
     investigationName: "Heronsgate fever",
     invented: true,
+    endsOn: null,
     hasAccount: false,
   });
   const bare = await publicPost("/api/invitations/accept", { token });
@@ -146,6 +149,55 @@ test("a second invitation ends the link of the first, and a late one opens nothi
     };
     expect((await publicPost(`/api/invitations/${path}`, body)).status).toBe(404);
   }
+});
+
+test("an invitation carries the last day of the role, and opens nothing once that day is over", async () => {
+  const id = await buildInvestigation(app);
+  const officer = await signInAs(app, "officer", id);
+  const today = dayIn("UTC", now());
+  const email = "short.stay@test.example";
+  const invitation = { email, role: "tracer", endsOn: today };
+  const past = await officer.client.post(`${officer.base}/invitations`, {
+    ...invitation,
+    endsOn: shiftDay(today, -1),
+  });
+  expect(past.body.errors).toEqual([{ path: "endsOn", code: "in_past" }]);
+  const made = await officer.client.post(`${officer.base}/invitations`, invitation);
+  const open = () => officer.client.get(`${officer.base}/invitations`);
+  expect((await open()).body.items).toMatchObject([{ email, endsOn: today }]);
+  const token = tokenIn((await lettersTo(email))[0]);
+  const seen = await publicPost("/api/invitations/look", { token });
+  expect(seen.body).toMatchObject({ email, endsOn: today });
+  const setEnd = (day: string) =>
+    app.pools.auth.query("update auth.invitation set ends_on = $2 where id = $1", [
+      made.body.id,
+      day,
+    ]);
+  await setEnd(shiftDay(today, -1));
+  const body = { token, displayName: "Short Stay", password: NEXT };
+  expect((await publicPost("/api/invitations/look", { token })).status).toBe(404);
+  expect((await publicPost("/api/invitations/accept", body)).status).toBe(404);
+  expect((await open()).body.total).toBe(0);
+  await setEnd(today);
+  expect((await publicPost("/api/invitations/accept", body)).status).toBe(201);
+  const members = await officer.client.get(`${officer.base}/members`, { q: email });
+  expect(members.body.items).toMatchObject([{ displayName: "Short Stay", endsOn: today }]);
+});
+
+test("who held a role that ran out may take up an invitation to it", async () => {
+  const id = await buildInvestigation(app);
+  const officer = await signInAs(app, "officer", id);
+  const account = await buildAccount(app);
+  const first = await buildMember(app, id, account.id, "tracer");
+  await asAdmin(app, "update core.member set ends_on = '2020-01-31' where id = $1", [first]);
+  const invitation = { email: account.email, role: "tracer" };
+  const made = await officer.client.post(`${officer.base}/invitations`, invitation);
+  expect(made.status).toBe(201);
+  const token = tokenIn((await lettersTo(account.email))[0]);
+  expect((await publicPost("/api/invitations/accept", { token })).status).toBe(201);
+  const members = await officer.client.get(`${officer.base}/members`, { q: account.email });
+  expect(members.body.items).toMatchObject([{ endsOn: null }]);
+  expect(members.body.items[0].id).not.toBe(first);
 });
 
 test("a withdrawn invitation opens nothing, and only its own investigation can withdraw it", async () => {

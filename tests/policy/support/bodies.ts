@@ -20,6 +20,9 @@ export async function stageImport(member: Member): Promise<string> {
 const BODIES: Record<string, (world: World) => unknown> = {
   "patch /api/investigations/:id": () => ({ version: 1, infectiousBefore: 2 }),
   "post /api/investigations/:id/members": () => ({ email: "no@body.example", role: "tracer" }),
+  "patch /api/investigations/:id/members/:memberId": () => ({ version: 1, endsOn: "2099-12-31" }),
+  "post /api/investigations/:id/teams": () => ({ name: "Body team" }),
+  "patch /api/investigations/:id/teams/:teamId": () => ({ version: 1, name: "Body team two" }),
   "post /api/investigations/:id/invitations": () => ({ email: "no@body.example", role: "tracer" }),
   "delete /api/investigations/:id/members": () => ({ email: "no@body.example", role: "tracer" }),
   "post /api/investigations/:id/people/search": () => ({ q: "Zqbody" }),

@@ -37,7 +37,7 @@ async function checkAssignee(tx: Tx, actor: Actor, accountId: string | null): Pr
   }
   if (accountId === null) return;
   const found = await tx.execute(
-    sql`select 1 from views.member where account_id = ${accountId} and role = 'tracer' and ended_at is null`,
+    sql`select 1 from views.member where account_id = ${accountId} and role = 'tracer' and live`,
   );
   if (found.rows.length === 0) throw invalid({ path: "assignedTo", code: "not_known" });
 }

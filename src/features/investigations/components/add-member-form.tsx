@@ -12,8 +12,9 @@ import { errorWords } from "../../../lib/api-error.ts";
 import { contractResolver, fieldWords, showFieldErrors } from "../../../lib/form-errors.ts";
 import { useInvite } from "../api/invitations.ts";
 import { type MemberInput, useAddMember } from "../api/members.ts";
+import { RoleEndField, TeamField } from "./role-fields.tsx";
 
-type Values = Record<"email" | "role" | "team", string>;
+type Values = Record<"email" | "role" | "team" | "endsOn", string>;
 
 /** Who has an account is added at once; anybody else gets a letter first. */
 export type NewMemberBy = "account" | "invitation";
@@ -34,7 +35,7 @@ export function AddMemberForm({ by, investigationId, onDone }: AddMemberFormProp
   const add = inviting ? byLetter : byAccount;
   const form = useForm<Values, unknown, MemberInput>({
     resolver: contractResolver<Values, MemberInput>(inviting ? invitationInput : memberInput),
-    defaultValues: { email: "", role: "", team: "" },
+    defaultValues: { email: "", role: "", team: "", endsOn: "" },
   });
   const { errors, isDirty } = form.formState;
   return (
@@ -58,7 +59,7 @@ export function AddMemberForm({ by, investigationId, onDone }: AddMemberFormProp
           {errorWords(add.error)}.
         </Notice>
       ) : null}
-      <div className="grid gap-4 sm:grid-cols-3">
+      <div className="grid gap-4 sm:grid-cols-2">
         <TextField
           label={inviting ? "E-mail" : "E-mail of the account"}
           type="email"
@@ -77,12 +78,12 @@ export function AddMemberForm({ by, investigationId, onDone }: AddMemberFormProp
           error={fieldWords(errors.role?.message)}
           {...form.register("role")}
         />
-        <TextField
-          label="Team"
+        <TeamField
           hint="If they work in one; a new name makes a new team."
           error={fieldWords(errors.team?.message)}
           {...form.register("team")}
         />
+        <RoleEndField error={fieldWords(errors.endsOn?.message)} {...form.register("endsOn")} />
       </div>
       <p className="mt-3 flex flex-wrap gap-2">
         <Button variant="primary" type="submit" pending={add.isPending} disabled={!isDirty}>

@@ -8,17 +8,24 @@ import { Section } from "../../../components/layouts/section.tsx";
 import { Button } from "../../../components/ui/button.tsx";
 import { useToast } from "../../../components/ui/use-toast.ts";
 import { errorKind } from "../../../lib/api-error.ts";
-import { formatInstant, noValue } from "../../../lib/formatters.ts";
+import { formatDay, formatInstant, noValue } from "../../../lib/formatters.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
 import { membersQuery } from "../../../lib/members-query.ts";
 import { useSession } from "../../../lib/session-context.ts";
 import { AddMemberForm, type NewMemberBy } from "./add-member-form.tsx";
+import { ChangeMemberDialog } from "./change-member-dialog.tsx";
 import { EndMemberDialog } from "./end-member-dialog.tsx";
+import { PastMembers } from "./past-members.tsx";
 import { PendingInvitations } from "./pending-invitations.tsx";
+import { TeamsSection } from "./teams-section.tsx";
+
+const nameRole = (member: Member) =>
+  `${member.displayName} as ${ROLE_NAMES[member.role].toLowerCase()}`;
 
 function memberColumns(
   timeZone: string,
   accountId: string,
+  change: (member: Member) => void,
   end: (member: Member) => void,
 ): DataColumn<Member>[] {
   return [
@@ -34,23 +41,37 @@ function memberColumns(
     { id: "team", header: "Team", cell: (member) => member.team ?? noValue },
     { id: "since", header: "Since", cell: (member) => formatInstant(member.since, timeZone) },
     {
-      id: "end",
+      id: "ends",
+      header: "Last day",
+      cell: (member) => (member.endsOn ? formatDay(member.endsOn) : "no end"),
+    },
+    {
+      id: "change",
       header: "Change",
       cell: (member) => (
-        <Button
-          size="small"
-          aria-label={`End the role of ${member.displayName} as ${ROLE_NAMES[member.role].toLowerCase()}`}
-          onClick={() => end(member)}
-        >
-          End …
-        </Button>
+        <span className="flex gap-2">
+          <Button
+            size="small"
+            aria-label={`Change the role of ${nameRole(member)}`}
+            onClick={() => change(member)}
+          >
+            Change …
+          </Button>
+          <Button
+            size="small"
+            aria-label={`End the role of ${nameRole(member)}`}
+            onClick={() => end(member)}
+          >
+            End …
+          </Button>
+        </span>
       ),
     },
   ];
 }
 
 /**
- * Who holds which role here, and who is invited; a person with several roles stands here once for
+ * Who holds which role here, who is invited, the teams, and whose role is over; a person with several roles stands here once for
  * each.
  */
 export function MembersTab() {
@@ -61,9 +82,10 @@ export function MembersTab() {
   const [pageSize, setPageSize] = useState(50);
   const [adding, setAdding] = useState<NewMemberBy | null>(null);
   const [ending, setEnding] = useState<Member | null>(null);
+  const [changing, setChanging] = useState<Member | null>(null);
   const members = useQuery(membersQuery(id, page, pageSize));
   const columns = useMemo(
-    () => memberColumns(timeZone, accountId, setEnding),
+    () => memberColumns(timeZone, accountId, setChanging, setEnding),
     [timeZone, accountId],
   );
   return (
@@ -113,6 +135,15 @@ export function MembersTab() {
         }
       />
       <PendingInvitations />
+      <TeamsSection />
+      <PastMembers />
+      {changing ? (
+        <ChangeMemberDialog
+          investigationId={id}
+          member={changing}
+          onClose={() => setChanging(null)}
+        />
+      ) : null}
       {ending ? (
         <EndMemberDialog
           investigationId={id}

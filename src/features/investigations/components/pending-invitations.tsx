@@ -8,7 +8,7 @@ import { Section } from "../../../components/layouts/section.tsx";
 import { Button } from "../../../components/ui/button.tsx";
 import { useToast } from "../../../components/ui/use-toast.ts";
 import { errorKind, errorWords } from "../../../lib/api-error.ts";
-import { formatInstant, noValue } from "../../../lib/formatters.ts";
+import { formatDay, formatInstant, noValue } from "../../../lib/formatters.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
 import { invitationsQuery, useWithdrawInvitation } from "../api/invitations.ts";
 
@@ -21,7 +21,16 @@ function columnsIn(
     { id: "role", header: "Role", cell: (one) => ROLE_NAMES[one.role] },
     { id: "team", header: "Team", cell: (one) => one.team ?? noValue },
     { id: "by", header: "Invited by", cell: (one) => one.invitedBy ?? noValue },
-    { id: "until", header: "Works until", cell: (one) => formatInstant(one.expiresAt, timeZone) },
+    {
+      id: "ends",
+      header: "Last day",
+      cell: (one) => (one.endsOn ? formatDay(one.endsOn) : "no end"),
+    },
+    {
+      id: "until",
+      header: "Link works until",
+      cell: (one) => formatInstant(one.expiresAt, timeZone),
+    },
     {
       id: "withdraw",
       header: "Change",

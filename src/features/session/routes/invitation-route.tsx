@@ -8,6 +8,7 @@ import { LoadingState } from "../../../components/ui/loading-state.tsx";
 import { Notice } from "../../../components/ui/notice.tsx";
 import { Tag } from "../../../components/ui/tag.tsx";
 import { ApiError, errorKind } from "../../../lib/api-error.ts";
+import { formatDay } from "../../../lib/formatters.ts";
 import { invitationQuery } from "../api/invitation.ts";
 import { AcceptForm } from "../components/accept-form.tsx";
 import { GeneralCaution } from "../components/general-caution.tsx";
@@ -53,7 +54,8 @@ export function Component() {
           <p className="mb-4">
             You are invited to work on <strong>{data.investigationName}</strong>{" "}
             {data.invented ? <Tag tone="ochre">invented</Tag> : null} as{" "}
-            {ROLE_NAMES[data.role].toLowerCase()}.
+            {ROLE_NAMES[data.role].toLowerCase()}
+            {data.endsOn ? `, up to and with ${formatDay(data.endsOn)}` : null}.
           </p>
           <AcceptForm token={token} invitation={data} onJoined={() => setJoined(true)} />
         </>
