@@ -8,6 +8,7 @@ import { invitationRoutes } from "./features/investigations/invitations.ts";
 import { memberRoutes } from "./features/investigations/members.ts";
 import { investigationPlainRoutes, investigationRoutes } from "./features/investigations/routes.ts";
 import { networkRoutes } from "./features/network/routes.ts";
+import { peopleListRoutes } from "./features/people/list-routes.ts";
 import { peopleRoutes } from "./features/people/routes.ts";
 import { placeRoutes } from "./features/places/routes.ts";
 import { safeguardRoutes } from "./features/safeguard/routes.ts";
@@ -22,6 +23,7 @@ export const ROUTES: readonly AnyRoute[] = [
   ...memberRoutes,
   ...invitationRoutes,
   ...peopleRoutes,
+  ...peopleListRoutes,
   ...testRoutes,
   ...placeRoutes,
   ...interviewRoutes,

@@ -19,6 +19,7 @@ export const EVENTS = [
   "people.listed",
   "people.searched",
   "people.matched",
+  "people.assigned",
   "place.registered",
   "places.opened",
   "test.recorded",
