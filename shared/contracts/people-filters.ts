@@ -17,7 +17,11 @@ export const peopleFilters = {
   interviewed: oneOf(["yes", "no"]).optional(),
   interviewState: oneOf([...INTERVIEW_OUTCOMES, "none"]).optional(),
   assigned: z
-    .union([z.enum(["me", "team", "none"]), z.uuid()], { error: "not_in_list" })
+    .string({ error: "not_in_list" })
+    .refine(
+      (value) => ["me", "team", "none"].includes(value) || z.uuid().safeParse(value).success,
+      "not_in_list",
+    )
     .optional(),
   followUp: oneOf(["yes", "no"]).optional(),
   needs: oneOf(["interview"]).optional(),

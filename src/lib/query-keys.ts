@@ -4,6 +4,7 @@ export type QueryWord =
   | "members"
   | "invitations"
   | "people"
+  | "saved-filters"
   | "tests"
   | "places"
   | "match-reviews"
