@@ -257,7 +257,9 @@ describe("facts and columns", () => {
 
   it("leave out what the answer does not hold", () => {
     const keys = new Set(Object.keys(person()));
-    const ids = peopleColumns({ keys, accountId: "me", timeZone: "UTC", names: new Map() }).map(({ id }) => id);
+    const ids = peopleColumns({ keys, accountId: "me", timeZone: "UTC", names: new Map() }).map(
+      ({ id }) => id,
+    );
     expect(ids).not.toContain("name");
     expect(ids).not.toContain("assignedTo");
     expect(ids).toContain("onsetDate");

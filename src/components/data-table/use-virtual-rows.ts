@@ -25,19 +25,24 @@ export interface VirtualRowsOptions {
   active: number;
   /** Row at the top when the table opens. */
   firstRow: number;
+  /** Height of a head that stays over the rows. */
+  headHeight: number;
   /** Told which rows are in view, when that changes. */
   onRange: (first: number, last: number) => void;
 }
 
 /** The rows to draw out of a list of any length; all are equally high. */
 export function useVirtualRows(options: VirtualRowsOptions) {
-  const { count, rowHeight, scroller, active, firstRow, onRange } = options;
+  const { count, rowHeight, scroller, active, firstRow, headHeight, onRange } = options;
   const rows = useVirtualizer<HTMLElement, Element>({
     count,
     getScrollElement: () => scroller.current,
     estimateSize: () => rowHeight,
     overscan: 8,
+    useFlushSync: false,
     initialRect: firstRect,
+    // The head takes its height from the part that is seen, at the foot as the rows are counted.
+    scrollPaddingEnd: headHeight,
     initialOffset: firstRow * rowHeight,
     observeElementRect: observeRect,
     rangeExtractor: (range: Range) => {

@@ -61,9 +61,9 @@ function Card<Row extends object>({
         data-row={index}
         className="flex h-full min-w-0 flex-1 flex-col justify-center"
         onKeyDown={(event) => {
-          if (event.key !== "Enter") drawn.onKeyDown(event, index);
+          if (event.key !== "Enter") drawn.actions.onKeyDown(event, index);
         }}
-        onFocus={() => drawn.onFocus(index)}
+        onFocus={() => drawn.actions.onFocus(index)}
       >
         <span className="truncate">{title}</span>
         <span className="truncate text-sm text-ink-2">{more}</span>

@@ -1,9 +1,11 @@
+import { memo, type ReactNode } from "react";
 import { formatNumber } from "../../lib/formatters.ts";
 import { Table } from "../ui/table.tsx";
 import { ColumnHead } from "./column-head.tsx";
+import type { DataColumn } from "./data-column.ts";
 import { RowCell } from "./row-cell.tsx";
 import { withGaps } from "./use-virtual-rows.ts";
-import type { DrawnRows, VirtualTableProps } from "./virtual-table.tsx";
+import type { DrawnRows, RowActions, VirtualTableProps } from "./virtual-table.tsx";
 
 const normalWidth = 128;
 const boxWidth = 34;
@@ -63,7 +65,7 @@ export function VirtualRows<Row extends object>(props: VirtualRowsProps<Row>) {
       </thead>
       <tbody>
         {parts.map(({ index, before }) => (
-          <VirtualRow key={index} {...props} {...{ index, before, headId, span }} />
+          <Placed key={index} {...props} {...{ index, before, headId, span }} />
         ))}
         <Gap height={after} span={span} />
       </tbody>
@@ -71,69 +73,96 @@ export function VirtualRows<Row extends object>(props: VirtualRowsProps<Row>) {
   );
 }
 
-type RowProps<Row extends object> = VirtualRowsProps<Row> & {
+type PlacedProps<Row extends object> = VirtualRowsProps<Row> & {
   index: number;
   before: number;
   headId: string | undefined;
   span: number;
 };
 
-function VirtualRow<Row extends object>(props: RowProps<Row>) {
-  const { index, before, span, drawn, selection, columns, headId, rowTo, rowHeight } = props;
+function Placed<Row extends object>(props: PlacedProps<Row>) {
+  const { index, before, span, drawn, selection, columns, headId, rowHeight } = props;
   const row = props.rowAt(index);
-  const selected = row !== undefined && (selection?.isSelected(row) ?? false);
   return (
     <>
       <Gap height={before} span={span} />
-      <tr
-        data-row={index}
-        aria-rowindex={index + 2}
-        aria-busy={row === undefined || undefined}
-        style={{ height: rowHeight }}
-        tabIndex={index === drawn.active ? 0 : -1}
-        className={`cursor-pointer hover:bg-paper-2 focus-visible:outline-offset-0 ${selected ? "bg-paper-2" : ""}`}
-        onKeyDown={(event) => drawn.onKeyDown(event, index)}
-        onFocus={() => drawn.onFocus(index)}
-        onClick={(event) => {
-          // A link, button or marked text inside the row keeps its own meaning.
-          const inner = (event.target as Element).closest("a,button,input,select,label");
-          if (inner || window.getSelection()?.toString() || row === undefined) return;
-          drawn.open(row);
-        }}
-      >
-        {row === undefined ? (
-          <td colSpan={span} className="border-b border-rule px-2">
-            <span className="sr-only">Row {formatNumber(index + 1)} is on its way</span>
-            <span aria-hidden="true" className="block h-3 w-2/5 bg-paper-2" />
-          </td>
-        ) : (
-          <>
-            {selection ? (
-              <td className="border-b border-rule">
-                <input
-                  type="checkbox"
-                  // Not in the tab order: the row is, and Space on it does the same.
-                  tabIndex={-1}
-                  className="block"
-                  aria-label={selection.label(row)}
-                  checked={selected}
-                  onChange={() => selection.toggle(row)}
-                />
-              </td>
-            ) : null}
-            {columns.map((column) => (
-              <RowCell
-                key={column.id}
-                column={column}
-                row={row}
-                clip
-                to={column.id === headId ? rowTo(row) : undefined}
-                head={column.id === headId}
-              />
-            ))}
-          </>
-        )}
-      </tr>
+      <VirtualRow<Row>
+        {...{ index, span, columns, headId, row }}
+        height={rowHeight}
+        active={index === drawn.active}
+        selected={row === undefined ? false : selection?.isSelected(row)}
+        selectLabel={row === undefined ? undefined : selection?.label(row)}
+        actions={drawn.actions}
+      />
     </>
   );
 }
+
+type VirtualRowProps<Row extends object> = {
+  index: number;
+  span: number;
+  columns: readonly DataColumn<Row>[];
+  headId: string | undefined;
+  row: Row | undefined;
+  height: number;
+  active: boolean;
+  /** Undefined where rows cannot be selected. */
+  selected: boolean | undefined;
+  selectLabel: string | undefined;
+  actions: RowActions<Row>;
+};
+
+const VirtualRow = memo(function VirtualRow<Row extends object>(props: VirtualRowProps<Row>) {
+  const { index, span, columns, headId, row, active, selected, selectLabel, actions } = props;
+  return (
+    <tr
+      data-row={index}
+      aria-rowindex={index + 2}
+      aria-busy={row === undefined || undefined}
+      style={{ height: props.height }}
+      tabIndex={active ? 0 : -1}
+      className={`cursor-pointer hover:bg-paper-2 focus-visible:outline-offset-0 ${selected ? "bg-paper-2" : ""}`}
+      onKeyDown={(event) => actions.onKeyDown(event, index)}
+      onFocus={() => actions.onFocus(index)}
+      onClick={(event) => {
+        // A link, button or marked text inside the row keeps its own meaning.
+        const inner = (event.target as Element).closest("a,button,input,select,label");
+        if (inner || window.getSelection()?.toString() || row === undefined) return;
+        actions.open(row);
+      }}
+    >
+      {row === undefined ? (
+        <td colSpan={span} className="border-b border-rule px-2">
+          <span className="sr-only">Row {formatNumber(index + 1)} is on its way</span>
+          <span aria-hidden="true" className="block h-3 w-2/5 bg-paper-2" />
+        </td>
+      ) : (
+        <>
+          {selectLabel !== undefined ? (
+            <td className="border-b border-rule">
+              <input
+                type="checkbox"
+                // Not in the tab order: the row is, and Space on it does the same.
+                tabIndex={-1}
+                className="block"
+                aria-label={selectLabel}
+                checked={selected ?? false}
+                onChange={() => actions.toggle(row)}
+              />
+            </td>
+          ) : null}
+          {columns.map((column) => (
+            <RowCell
+              key={column.id}
+              column={column}
+              row={row}
+              clip
+              to={column.id === headId ? actions.rowTo(row) : undefined}
+              head={column.id === headId}
+            />
+          ))}
+        </>
+      )}
+    </tr>
+  );
+}) as <Row extends object>(props: VirtualRowProps<Row>) => ReactNode;

@@ -1,4 +1,4 @@
-import { type ReactNode, useEffect, useRef } from "react";
+import { type KeyboardEvent, type ReactNode, useEffect, useMemo, useRef } from "react";
 import { useNavigate } from "react-router-dom";
 import { formatNumber } from "../../lib/formatters.ts";
 import { useNarrow } from "../../lib/use-narrow.ts";
@@ -14,6 +14,7 @@ import { VirtualRows } from "./virtual-rows.tsx";
 
 const rowHeight = 36;
 const cardHeight = 68;
+const headHeight = 40;
 
 export type VirtualTableProps<Row extends object> = {
   /** What the rows are: "People on record". */
@@ -61,11 +62,18 @@ function Scrolled<Row extends object>(props: VirtualTableProps<Row>) {
   const narrow = useNarrow();
   const navigate = useNavigate();
   const scroller = useRef<HTMLDivElement>(null);
-  const open = (row: Row) => void navigate(rowTo(row));
-  const keys = useVirtualKeys({ total, rowAt, open, selection, scroller, firstRow });
+  const keys = useVirtualKeys({
+    total,
+    rowAt,
+    open: (row) => void navigate(rowTo(row)),
+    selection,
+    scroller,
+    firstRow,
+  });
   const rows = useVirtualRows({
     count: total,
     rowHeight: narrow ? cardHeight : rowHeight,
+    headHeight: narrow ? 0 : headHeight,
     scroller,
     active: keys.active,
     firstRow,
@@ -80,14 +88,31 @@ function Scrolled<Row extends object>(props: VirtualTableProps<Row>) {
     rows.scrollToOffset(0);
   }, [props.question, rows, setActive]);
   const scrollTo = (index: number) => rows.scrollToIndex(index, { align: "auto" });
-  const drawn = {
+  // What rows call stays the same from one drawing to the next, so that a row is drawn again only
+  // when something in it changes.
+  const latest = useRef<RowActions<Row>>(null as unknown as RowActions<Row>);
+  latest.current = {
+    onFocus: keys.setActive,
+    onKeyDown: (event, index) => keys.onKeyDown(event, index, scrollTo),
+    open: (row) => void navigate(rowTo(row)),
+    rowTo,
+    toggle: (row) => selection?.toggle(row),
+  };
+  const actions = useMemo(
+    (): RowActions<Row> => ({
+      onFocus: (index) => latest.current.onFocus(index),
+      onKeyDown: (event, index) => latest.current.onKeyDown(event, index),
+      open: (row) => latest.current.open(row),
+      rowTo: (row) => latest.current.rowTo(row),
+      toggle: (row) => latest.current.toggle(row),
+    }),
+    [],
+  );
+  const drawn: DrawnRows<Row> = {
     items: rows.getVirtualItems(),
     height: rows.getTotalSize(),
     active: keys.active,
-    onFocus: keys.setActive,
-    onKeyDown: (event: React.KeyboardEvent<HTMLElement>, index: number) =>
-      keys.onKeyDown(event, index, scrollTo),
-    open,
+    actions,
   };
   return (
     <>
@@ -111,13 +136,20 @@ function Scrolled<Row extends object>(props: VirtualTableProps<Row>) {
   );
 }
 
+/** What a row can call. */
+export interface RowActions<Row> {
+  onFocus: (index: number) => void;
+  onKeyDown: (event: KeyboardEvent<HTMLElement>, index: number) => void;
+  open: (row: Row) => void;
+  rowTo: (row: Row) => string;
+  toggle: (row: Row) => void;
+}
+
 /** What the two ways of drawing rows share. */
 export interface DrawnRows<Row> {
   items: readonly { index: number; start: number; end: number }[];
   /** Height of all rows together. */
   height: number;
   active: number;
-  onFocus: (index: number) => void;
-  onKeyDown: (event: React.KeyboardEvent<HTMLElement>, index: number) => void;
-  open: (row: Row) => void;
+  actions: RowActions<Row>;
 }

@@ -49,10 +49,14 @@ export function useColumnLayout(accountId: string, columns: readonly DataColumn<
       });
   }, [columns, layout]);
 
+  const shown = useMemo(
+    () => ordered.filter((column) => !layout.hidden.includes(column.id)),
+    [ordered, layout],
+  );
   return {
     /** Every column in the chosen order. */
     ordered,
-    shown: ordered.filter((column) => !layout.hidden.includes(column.id)),
+    shown,
     isShown: (id: string) => !layout.hidden.includes(id),
     widthOf: (id: string): ColumnWidth => layout.widths[id] ?? "normal",
     show(id: string, visible: boolean) {

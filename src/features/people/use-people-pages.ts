@@ -1,6 +1,7 @@
-import { useQueries, useQuery, useQueryClient } from "@tanstack/react-query";
+import { type UseQueryResult, useQueries, useQuery, useQueryClient } from "@tanstack/react-query";
 import { useCallback, useMemo, useState } from "react";
 import type { Person } from "../../../shared/contracts/people.ts";
+import { investigationKey } from "../../lib/query-keys.ts";
 import { useSettled } from "../../lib/use-settled.ts";
 import {
   type PeopleList,
@@ -27,6 +28,14 @@ export function pagesIn({ first, last }: Range, total: number): number[] {
   return pages.filter((page) => page > 1).slice(0, 6);
 }
 
+/** What there is of several pages; the same object as long as the same is there. */
+function together(results: readonly UseQueryResult<PeopleList>[]) {
+  return {
+    pages: results.flatMap((one) => one.data ?? []),
+    error: results.find((one) => one.isError)?.error ?? null,
+  };
+}
+
 /**
  * The answers to one question to the line list: its total, and its rows as far as their pages have
  * come into view. While the answer to a new question comes, the first rows of the last one stay.
@@ -40,6 +49,7 @@ export function usePeoplePages(investigationId: string, question: PeopleQuestion
   const asked = head.isPlaceholderData ? [] : pagesIn(settled, total);
   const others = useQueries({
     queries: asked.map((page) => peoplePageQuery(investigationId, { page, pageSize, ...question })),
+    combine: together,
   });
 
   const onRange = useCallback((first: number, last: number) => setRange({ first, last }), []);
@@ -52,10 +62,10 @@ export function usePeoplePages(investigationId: string, question: PeopleQuestion
   const rowAt = (index: number): Person | undefined =>
     pageOf(Math.floor(index / pageSize) + 1)?.items[index % pageSize];
 
-  const loaded = [head.data, ...others.map((one) => one.data)];
-  const failed = others.find((one) => one.isError);
-  // biome-ignore lint/correctness/useExhaustiveDependencies: the pages are what the rows are made of
-  const rows = useMemo(() => loaded.flatMap((page) => page?.items ?? []), loaded);
+  const rows = useMemo(
+    () => [head1, ...others.pages].flatMap((page) => page?.items ?? []),
+    [head1, others.pages],
+  );
   return {
     total,
     rowAt,
@@ -69,10 +79,13 @@ export function usePeoplePages(investigationId: string, question: PeopleQuestion
     updating: head.isPlaceholderData,
     error: head.error,
     /** A page further down that could not be read. */
-    pageError: failed?.error ?? null,
+    pageError: others.error,
     retry() {
       void head.refetch();
-      for (const one of others) if (one.isError) void one.refetch();
+      void queryClient.refetchQueries({
+        queryKey: investigationKey(investigationId, "people", "list"),
+        predicate: (query) => query.state.status === "error",
+      });
     },
   };
 }
