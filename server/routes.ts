@@ -9,6 +9,7 @@ import { memberRoutes } from "./features/investigations/members.ts";
 import { investigationPlainRoutes, investigationRoutes } from "./features/investigations/routes.ts";
 import { teamRoutes } from "./features/investigations/teams.ts";
 import { networkRoutes } from "./features/network/routes.ts";
+import { peopleListRoutes } from "./features/people/list-routes.ts";
 import { peopleRoutes } from "./features/people/routes.ts";
 import { placeRoutes } from "./features/places/routes.ts";
 import { safeguardRoutes } from "./features/safeguard/routes.ts";
@@ -24,6 +25,7 @@ export const ROUTES: readonly AnyRoute[] = [
   ...teamRoutes,
   ...invitationRoutes,
   ...peopleRoutes,
+  ...peopleListRoutes,
   ...testRoutes,
   ...placeRoutes,
   ...interviewRoutes,

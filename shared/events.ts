@@ -23,6 +23,7 @@ export const EVENTS = [
   "people.listed",
   "people.searched",
   "people.matched",
+  "people.assigned",
   "place.registered",
   "places.opened",
   "test.recorded",

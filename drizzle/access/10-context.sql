@@ -42,6 +42,18 @@ create or replace function core.ctx_role() returns text
 language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
 begin return (select c.role from core.ctx() c); end $$;
 
+-- Teams the acting person belongs to in the acting role.
+create or replace function core.ctx_teams() returns uuid[]
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+declare c record;
+begin
+  select * into c from core.ctx();
+  return array(
+    select m.team_id from core.member m
+    where m.account_id = c.account_id and m.investigation_id = c.investigation_id
+      and m.role = c.role and m.ended_at is null and m.team_id is not null);
+end $$;
+
 -- People assigned to the acting tracer or one of their teams.
 create or replace function core.ctx_held() returns uuid[]
 language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
@@ -100,6 +112,41 @@ begin
     join core.contact_pair cp on cp.person_b = h.id and cp.withdrawn_at is null
     join core.person p on p.id = cp.person_a
       and (p.classification is null or p.classification in ('contact', 'not_a_case')));
+end $$;
+
+-- Those of some people whose identity the acting person may open: the same people as
+-- core.ctx_named_people(), asked for a page at a time, so that the cost is that of the page and not
+-- of everything held. Supervisors and data officers: everybody of the investigation.
+create or replace function core.ctx_named_of(p_people uuid[]) returns uuid[]
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+declare
+  c record;
+  v_teams uuid[] := core.ctx_teams();
+begin
+  select * into c from core.ctx();
+  if c.role in ('supervisor', 'officer') then
+    return array(
+      select p.id from core.person p
+      where p.id = any (p_people) and p.investigation_id = c.investigation_id);
+  end if;
+  if c.role is distinct from 'tracer' then return '{}'; end if;
+  return array(
+    select p.id from core.person p
+    where p.id = any (p_people) and p.investigation_id = c.investigation_id and (
+      (p.withdrawn_at is null
+        and (p.assigned_account_id = c.account_id or p.assigned_team_id = any (v_teams)))
+      or ((p.classification is null or p.classification in ('contact', 'not_a_case'))
+        and exists (
+          select 1 from (
+            select cp.person_b as id from core.contact_pair cp
+            where cp.person_a = p.id and cp.withdrawn_at is null
+            union all
+            select cp.person_a from core.contact_pair cp
+            where cp.person_b = p.id and cp.withdrawn_at is null) n
+          join core.person h on h.id = n.id and h.investigation_id = c.investigation_id
+            and h.withdrawn_at is null
+          where h.classification in ('confirmed', 'probable', 'suspected')
+            and (h.assigned_account_id = c.account_id or h.assigned_team_id = any (v_teams))))));
 end $$;
 
 -- Is a person held, or does one of their neighbours (only cases, if asked) make them so? Looks at

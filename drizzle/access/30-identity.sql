@@ -15,10 +15,7 @@ begin
   if cardinality(v_fields) < (select count(distinct f) from unnest(p_fields) f) then
     raise insufficient_privilege using message = 'field not readable by this role';
   end if;
-  select coalesce(array_agg(p.id), '{}') into v_people
-  from core.person p
-  where p.id = any (p_people) and p.investigation_id = c.investigation_id
-    and (c.role <> 'tracer' or p.id = any ((select core.ctx_named_people())::uuid[]));
+  v_people := core.ctx_named_of(p_people);
   if cardinality(v_people) = 0 then return; end if;
   -- One reading is one event: what a request opens in parts (a person, then the names of those met)
   -- is added to the event that the first part wrote in this transaction.
@@ -49,6 +46,7 @@ returns table (place_id uuid, cipher bytea)
 language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 declare
   c record;
+  v_named uuid[];
   v_places uuid[];
 begin
   select * into c from core.ctx();
@@ -56,12 +54,17 @@ begin
   if c.role not in ('tracer', 'supervisor') then
     raise insufficient_privilege using message = 'field not readable by this role';
   end if;
+  v_places := p_places;
+  if c.role = 'tracer' then
+    v_named := core.ctx_named_of(
+      array(select p.id from core.person p where p.household_id = any (p_places)));
+    v_places := array(
+      select distinct p.household_id from core.person p
+      where p.id = any (v_named) and p.household_id = any (p_places));
+  end if;
   select coalesce(array_agg(i.place_id), '{}') into v_places
   from identity.place i
-  where i.place_id = any (p_places) and i.investigation_id = c.investigation_id
-    and (c.role = 'supervisor' or exists (
-      select 1 from core.person p
-      where p.household_id = i.place_id and p.id = any ((select core.ctx_named_people())::uuid[])));
+  where i.place_id = any (v_places) and i.investigation_id = c.investigation_id;
   if cardinality(v_places) = 0 then return; end if;
   -- Opened along with people, households belong to the event of that opening, which says whose they
   -- are; it is still this transaction's own (an event's time is its transaction's).
@@ -83,13 +86,17 @@ end $$;
 create or replace function identity.find_people(p_all bytea[], p_any bytea[], p_limit integer)
 returns table (person_id uuid, kinds smallint[])
 language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
-declare c record;
+declare
+  c record;
+  v_named uuid[];
 begin
   select * into c from core.ctx();
   if c.account_id is null then raise insufficient_privilege using message = 'no context'; end if;
   if not exists (select 1 from auth.field_right r where r.role = c.role and r.field = 'name') then
     raise insufficient_privilege using message = 'search not open to this role';
   end if;
+  -- A tracer's people are fewer than those who share a name: they are looked up among their own.
+  if c.role = 'tracer' then v_named := core.ctx_named_people(); end if;
   return query
     with hits as (
       select t.person_id, array_agg(distinct t.kind) as kinds,
@@ -97,11 +104,11 @@ begin
         bool_or(t.token = any (p_any)) as direct
       from identity.search_token t
       where t.investigation_id = c.investigation_id and t.token = any (p_all || p_any)
+        and (v_named is null or t.person_id = any (v_named))
       group by t.person_id)
     select h.person_id, h.kinds from hits h
     join core.person p on p.id = h.person_id and p.withdrawn_at is null
     where (h.direct or (cardinality(p_all) > 0 and h.met = cardinality(p_all)))
-      and (c.role <> 'tracer' or h.person_id = any ((select core.ctx_named_people())::uuid[]))
     order by h.direct desc, h.person_id
     limit p_limit;
 end $$;

@@ -1,5 +1,6 @@
 import { sql } from "drizzle-orm";
 import {
+  type AnyPgColumn,
   boolean,
   check,
   index,
@@ -32,6 +33,18 @@ export const place = core.table(
     index("place_name").on(t.investigationId, sql`lower(${t.name})`),
   ],
 );
+
+/** An index of the people of an investigation in the order of one column. */
+function listOrder(
+  name: string,
+  investigation: AnyPgColumn,
+  column: AnyPgColumn,
+  { id, withdrawnAt }: { id: AnyPgColumn; withdrawnAt: AnyPgColumn },
+) {
+  return index(`person_list_${name}`)
+    .on(investigation, column, id)
+    .where(sql`${withdrawnAt} is null`);
+}
 
 export const person = core.table(
   "person",
@@ -71,10 +84,19 @@ export const person = core.table(
   },
   (t) => [
     uniqueIndex("person_study_number").on(t.investigationId, t.studyNumber),
-    index("person_recorded").on(t.investigationId, t.recordedAt, t.id),
-    index("person_classification").on(t.investigationId, t.classification, t.id),
-    index("person_onset").on(t.investigationId, t.onsetDate, t.id),
-    index("person_report").on(t.investigationId, t.reportDate, t.id),
+    // One for each order that the line list offers at first sight: any page of it, and its total, are
+    // then read from the index alone. Other orders are sorted for each question.
+    listOrder("recorded", t.investigationId, t.recordedAt, t),
+    listOrder("study", t.investigationId, t.studyNumber, t),
+    listOrder("class", t.investigationId, t.classification, t),
+    listOrder("onset", t.investigationId, t.onsetDate, t),
+    listOrder("report", t.investigationId, t.reportDate, t),
+    listOrder("age", t.investigationId, t.ageBand, t),
+    listOrder("sex", t.investigationId, t.sex, t),
+    listOrder("area", t.investigationId, t.area, t),
+    listOrder("result", t.investigationId, t.result, t),
+    listOrder("interview", t.investigationId, t.interviewState, t),
+    index("person_household").on(t.householdId),
     index("person_assigned").on(t.assignedAccountId),
     index("person_team").on(t.assignedTeamId),
     check(

@@ -24,6 +24,7 @@ import {
   text,
   uuid,
 } from "./common.ts";
+import { peopleFilters } from "./people-filters.ts";
 
 /** Fields of a person that a form or file may set. Null means "not asked". */
 export const personFields = {
@@ -128,6 +129,7 @@ const PERSON_SHAPE: Record<string, z.ZodType> = {
   version: z.int(),
   recordedAt: z.string(),
   assignedTo: uuid.nullable(),
+  assignedTeam: uuid.nullable(),
   can: z.strictObject({
     edit: z.boolean().optional(),
     interview: z.boolean().optional(),
@@ -189,18 +191,11 @@ export interface Person {
   diedDate: string | null;
   note?: string | null;
   assignedTo?: string | null;
+  assignedTeam?: string | null;
   can: { edit?: boolean; interview?: boolean; addTest?: boolean };
 }
 
-/** Filters of the line list, by coded values only. */
-const filters = {
-  classification: z.enum([...CLASSIFICATIONS, "case"], { error: "not_in_list" }).optional(),
-  interviewed: z.enum(["yes", "no"], { error: "not_in_list" }).optional(),
-  assigned: z.enum(["me", "none"], { error: "not_in_list" }).optional(),
-  needs: z.enum(["interview"], { error: "not_in_list" }).optional(),
-  area: text(LIMITS.shortText).optional(),
-};
-export const peopleQuery = listQuery.extend(filters);
+export const peopleQuery = listQuery.extend(peopleFilters);
 export type PeopleQuery = z.output<typeof peopleQuery>;
 
 /** The same list asked with a body, so that a typed name never stands in an address. */
@@ -209,7 +204,7 @@ export const peopleSearch = z.strictObject({
   pageSize: z.int().min(1).max(LIMITS.pageSize).default(50),
   sort: z.string().max(60).optional(),
   q: text(LIMITS.name).optional(),
-  ...filters,
+  ...peopleFilters,
 });
 
 /** A neighbour on a person's page: the case by study number only, unless identity is held. */

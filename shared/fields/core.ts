@@ -47,6 +47,16 @@ export const CORE_FIELDS = [
     ["recorded_at", "operational", "FFFF"],
     ["recorded_by", "operational", "NFNF"],
   ]),
+  ...table("core.saved_filter", [
+    ["id", "operational", "FFFF"],
+    ["investigation_id", "operational", "FFFF"],
+    ["account_id", "operational", "FFFF"],
+    ["name", "operational", "FFFF"],
+    ["filter", "operational", "FFFF"],
+    ["version", "operational", "FFFF"],
+    ["recorded_at", "operational", "FFFF"],
+    ["updated_at", "operational", "FFFF"],
+  ]),
   ...table("core.team", [
     ["id", "operational", "FFNF"],
     ["investigation_id", "operational", "FFNF"],

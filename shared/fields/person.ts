@@ -25,7 +25,7 @@ export const PERSON_FIELDS = table("core.person", [
   ["outcome_date", "health", "FFFF", { key: "outcomeDate", sortable: true }],
   ["became_case", "health", "FFFF", { key: "becameCase" }],
   ["assigned_account_id", "operational", "FFNF", { key: "assignedTo" }],
-  ["assigned_team_id", "operational", "FFNF"],
+  ["assigned_team_id", "operational", "FFNF", { key: "assignedTeam" }],
   ["source", "operational", "FFFF"],
   ["version", "operational", "FFFF", { key: "version" }],
   ["recorded_at", "operational", "FFFF", { key: "recordedAt", sortable: true }],

@@ -5,6 +5,7 @@ export type QueryWord =
   | "invitations"
   | "teams"
   | "people"
+  | "saved-filters"
   | "tests"
   | "places"
   | "match-reviews"

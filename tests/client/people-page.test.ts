@@ -245,7 +245,7 @@ describe("facts and columns", () => {
       ...Object.keys(person({ name: "A", phone: "1", ref: "R" })),
       "assignedTo",
     ]);
-    const columns = peopleColumns({ keys, accountId: "me", timeZone: "UTC" });
+    const columns = peopleColumns({ keys, accountId: "me", timeZone: "UTC", names: new Map() });
     const sortable = columns.flatMap((column) => column.sortKey ?? []);
     for (const identity of ["name", "phone", "ref", "email", "birthDate"]) {
       expect(sortable).not.toContain(identity);
@@ -257,7 +257,9 @@ describe("facts and columns", () => {
 
   it("leave out what the answer does not hold", () => {
     const keys = new Set(Object.keys(person()));
-    const ids = peopleColumns({ keys, accountId: "me", timeZone: "UTC" }).map(({ id }) => id);
+    const ids = peopleColumns({ keys, accountId: "me", timeZone: "UTC", names: new Map() }).map(
+      ({ id }) => id,
+    );
     expect(ids).not.toContain("name");
     expect(ids).not.toContain("assignedTo");
     expect(ids).toContain("onsetDate");

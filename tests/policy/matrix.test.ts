@@ -37,6 +37,11 @@ beforeAll(async () => {
       other: await openInvitation(world.elsewhere),
     },
     teamId: { own: await teamIn(world.here), other: await teamIn(world.elsewhere) },
+    // Saved filters are each account's own: addressOf makes one for whoever knocks.
+    filterId: {
+      own: randomUUID(),
+      other: await savedFilterOf(world.elsewhere, world.others.supervisor.accountId),
+    },
     importId: {
       own: await stageImport(world.everyone.supervisor),
       other: await stageImport(world.others.supervisor),
@@ -85,12 +90,28 @@ async function openInvitation(investigationId: string): Promise<string> {
   return id;
 }
 
+/** A saved filter of an account, past the routes. */
+async function savedFilterOf(investigationId: string, accountId: string): Promise<string> {
+  const id = randomUUID();
+  await world.admin.query(
+    `insert into core.saved_filter (id, investigation_id, account_id, name, filter)
+     values ($1, $2, $3, $4, '{}')`,
+    [id, investigationId, accountId, randomUUID()],
+  );
+  return id;
+}
+
 type Where = "own" | "other" | "random" | "malformed";
 const WHERE: readonly Where[] = ["own", "other", "random", "malformed"];
 const paramsOf = (path: string) => [...path.matchAll(/:(\w+)/g)].map((match) => match[1] as string);
 
 /** An address of a route: in which investigation, and which object there. */
-async function addressOf(route: AnyRoute, where: Where, object: Where): Promise<string> {
+async function addressOf(
+  route: AnyRoute,
+  where: Where,
+  object: Where,
+  visitor?: VisitorName,
+): Promise<string> {
   const pick = (at: Where, own: string, other: string) =>
     ({ own, other, random: randomUUID(), malformed: "not-an-id" })[at];
   let path = route.path;
@@ -115,6 +136,10 @@ async function addressOf(route: AnyRoute, where: Where, object: Where): Promise<
     }
     if (route.method === "delete" && object === "own" && name === "invitationId") {
       own = await openInvitation(world.here);
+    }
+    if (object === "own" && name === "filterId") {
+      const role = ROLES.find((one) => one === visitor) ?? "tracer";
+      own = await savedFilterOf(world.here, world.everyone[role].accountId);
     }
     path = path.replace(`:${name}`, pick(object, own, known.other));
   }
@@ -166,7 +191,7 @@ describe.each(ROUTES.map((route) => [title(route), route] as const))("%s", (_tit
       ),
     );
     await inBatches(cases, async ({ visitor, where, object }) => {
-      const path = await addressOf(route, where, object);
+      const path = await addressOf(route, where, object, visitor);
       const answer = await send(route, path, visitor);
       const say = `${visitor}, investigation ${where}, object ${object}: ${answer.text.slice(0, 200)}`;
       const wanted = expected(route, visitor, where, object);

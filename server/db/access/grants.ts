@@ -21,9 +21,11 @@ const FUNCTIONS: Record<string, readonly (Role | "system" | "auth")[]> = {
   "core.ctx_user()": ROLES,
   "core.ctx_investigation()": ROLES,
   "core.ctx_role()": ROLES,
+  "core.ctx_teams()": ROLES,
   "core.ctx_held()": ["tracer"],
   "core.ctx_people()": ["tracer"],
   "core.ctx_named_people()": ["tracer"],
+  "core.ctx_named_of(uuid[])": ["tracer", "supervisor", "officer"],
   "core.ctx_can_link(uuid)": ["tracer", "supervisor", "officer"],
   "core.ctx_can_tell(uuid)": ["tracer", "supervisor", "officer"],
   "core.ctx_may_name(uuid)": ["tracer", "supervisor", "officer"],
@@ -150,6 +152,7 @@ export function grants(): string[] {
         );
         out.push(`grant insert (${columns(insertable)}) on ${table} to ${login}`);
       }
+      if (writes?.remove?.includes(role)) out.push(`grant delete on ${table} to ${login}`);
       if (writes?.update?.roles.includes(role)) {
         out.push(`grant update (${columns(writes.update.columns)}) on ${table} to ${login}`);
       }

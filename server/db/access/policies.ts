@@ -10,6 +10,8 @@ export function loginOf(role: Role | "auth" | "system"): string {
 interface Writes {
   insert: readonly Role[];
   update?: { roles: readonly Role[]; columns: readonly string[] };
+  /** Only for what is no record of the investigation; everything else is withdrawn, not deleted. */
+  remove?: readonly Role[];
 }
 
 const RECORDERS = ["tracer", "supervisor", "officer"] as const;
@@ -140,6 +142,11 @@ export const WRITES: Record<string, Writes> = {
   },
   "core.case_definition": { insert: LEADERS },
   "core.setting_change": { insert: LEADERS },
+  "core.saved_filter": {
+    insert: ROLES,
+    update: { roles: ROLES, columns: ["name", "filter", "version", "updated_at"] },
+    remove: ROLES,
+  },
 };
 
 const SCOPE = "any ((select core.ctx_people())::uuid[])";
@@ -160,6 +167,11 @@ const TRACER_ROWS: Record<string, string> = {
   "core.import": "false",
 };
 
+/** Rows that belong to an account, whatever its role: nobody else sees or changes them. */
+const OWN_ROWS: Record<string, string> = {
+  "core.saved_filter": `${HERE} and account_id = (select core.ctx_user())`,
+};
+
 /** Rows a tracer may add, where that needs more than the investigation. */
 const TRACER_ADDS: Record<string, string> = {
   "core.person": `${HERE} and recorded_by = (select core.ctx_user())`,
@@ -177,6 +189,7 @@ export const CORE_TABLES = [
   "core.investigation",
   "core.case_definition",
   "core.setting_change",
+  "core.saved_filter",
   "core.team",
   "core.member",
   "core.place",
@@ -220,7 +233,8 @@ const AUTH_TABLES = [
 export const ALL_TABLES = [...CORE_TABLES, ...IDENTITY_TABLES, ...AUTH_TABLES, "audit.event"];
 
 function here(table: string): string {
-  return table === "core.investigation" ? "id = (select core.ctx_investigation())" : HERE;
+  if (table === "core.investigation") return "id = (select core.ctx_investigation())";
+  return OWN_ROWS[table] ?? HERE;
 }
 
 function policy(
@@ -259,6 +273,9 @@ export function rowPolicies(): string[] {
       if (writes?.insert.includes(role)) {
         const adds = (tracer && TRACER_ADDS[table]) || here(table);
         out.push(policy(table, `add_${role}`, "insert", login, `with check (${adds})`));
+      }
+      if (writes?.remove?.includes(role)) {
+        out.push(policy(table, `remove_${role}`, "delete", login, `using (${rows})`));
       }
       if (writes?.update?.roles.includes(role)) {
         // Asked per row: as a second list beside the one of the read policy, the index would be

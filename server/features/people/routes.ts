@@ -21,11 +21,12 @@ import { type AnyRoute, defineRoute, type RunContext } from "../../http/route.ts
 import { loadInvestigation } from "../investigations/store.ts";
 import { changePerson } from "./commands/change-person.ts";
 import { registerPerson } from "./commands/register-person.ts";
+import { listPeople } from "./list.ts";
 import { matchPeople } from "./match.ts";
 import { listMatchReviews } from "./match-reviews.ts";
 import { personPageParts } from "./page.ts";
 import { LIST_FIELDS, PAGE_FIELDS, presentPeople } from "./present.ts";
-import { listPeople, peopleById } from "./queries.ts";
+import { peopleById } from "./queries.ts";
 
 const params = z.object({ id: z.uuid() });
 const personParams = z.object({ id: z.uuid(), personId: z.uuid() });

@@ -16,6 +16,8 @@ export type DataColumn<Row> = {
   rowHeader?: boolean;
   /** Long words may break over lines; other cells stay on one and the table scrolls sideways. */
   wrap?: boolean;
+  /** Width in CSS pixels where columns have set widths. */
+  width?: number;
   /** Whether this row's value is not final yet. */
   pending?: (row: Row) => boolean;
 };

@@ -8,25 +8,27 @@ export type RowCellProps<Row> = {
   /** Whether this cell names the row. */
   head: boolean;
   /** Where the naming cell leads. */
-  to?: string;
+  to?: string | undefined;
+  /** Columns have set widths: what does not fit ends in dots. */
+  clip?: boolean;
 };
 
 /** One cell of a row; the naming one is a row head and holds the link. */
-export function RowCell<Row>({ column, row, head, to }: RowCellProps<Row>) {
+export function RowCell<Row>({ column, row, head, to, clip = false }: RowCellProps<Row>) {
   const content = column.cell(row);
   if (!head) {
     return (
       <Cell
         numeric={column.numeric}
         pending={column.pending?.(row)}
-        className={column.wrap ? "min-w-40" : "whitespace-nowrap"}
+        className={clip ? "truncate" : column.wrap ? "min-w-40" : "whitespace-nowrap"}
       >
         {content}
       </Cell>
     );
   }
   return (
-    <HeadCell scope="row" className="whitespace-nowrap align-baseline">
+    <HeadCell scope="row" className={`align-baseline ${clip ? "truncate" : "whitespace-nowrap"}`}>
       {to ? (
         // Not in the tab order: the row is, and Enter on it goes to the same place.
         <Link

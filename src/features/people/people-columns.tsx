@@ -14,6 +14,7 @@ interface Spec {
   cell: (person: Person) => ReactNode;
   sortKey?: string;
   numeric?: boolean;
+  width?: number;
   pending?: (person: Person) => boolean;
 }
 
@@ -27,7 +28,7 @@ const coded = (key: Key, words: Record<string, string>) => (person: Person) => (
 
 /** Every column there can be, in order. Which of them are shown is up to the keys of the answer. */
 const SPECS: readonly Spec[] = [
-  { key: "name", header: "Name", cell: plain("name") },
+  { key: "name", header: "Name", cell: plain("name"), width: 184 },
   { key: "nameMasked", header: "Name, masked", cell: plain("nameMasked") },
   { key: "phone", header: "Telephone", cell: plain("phone") },
   {
@@ -133,13 +134,13 @@ export type PeopleColumnsContext = {
   keys: ReadonlySet<string>;
   accountId: string;
   timeZone: string;
-  /** Names of members by account, where the role may read them. */
-  memberNames?: ReadonlyMap<string, string> | undefined;
+  /** Names of members by account and of teams by id, where the role may read them. */
+  names: ReadonlyMap<string, string>;
 };
 
 /** Columns of the line list, made from what the answers carry. */
 export function peopleColumns(context: PeopleColumnsContext): DataColumn<Person>[] {
-  const { keys, accountId, timeZone, memberNames } = context;
+  const { keys, accountId, timeZone, names } = context;
   const columns: DataColumn<Person>[] = [
     {
       id: "studyNumber",
@@ -147,6 +148,7 @@ export function peopleColumns(context: PeopleColumnsContext): DataColumn<Person>
       sortKey: "studyNumber",
       hideable: false,
       rowHeader: true,
+      width: 152,
       cell: (person) => <PersonLabel person={person} />,
     },
   ];
@@ -157,10 +159,12 @@ export function peopleColumns(context: PeopleColumnsContext): DataColumn<Person>
     columns.push({
       id: "assignedTo",
       header: "Assigned to",
-      cell: ({ assignedTo }) => {
-        if (!assignedTo) return <span className="text-ink-2">nobody</span>;
+      width: 160,
+      cell: ({ assignedTo, assignedTeam }) => {
         if (assignedTo === accountId) return "you";
-        return memberNames?.get(assignedTo) ?? "a member";
+        if (assignedTo) return names.get(assignedTo) ?? "a member";
+        if (assignedTeam) return names.get(assignedTeam) ?? "a team";
+        return <span className="text-ink-2">nobody</span>;
       },
     });
   }
@@ -168,6 +172,7 @@ export function peopleColumns(context: PeopleColumnsContext): DataColumn<Person>
     id: "recordedAt",
     header: "Recorded",
     sortKey: "recordedAt",
+    width: 168,
     cell: (person) => formatInstant(person.recordedAt, timeZone),
   });
   return columns;

@@ -26,6 +26,7 @@ export const actionWords: Readonly<Record<EventName, string>> = {
   "people.listed": "read the line list",
   "people.searched": "searched people",
   "people.matched": "was offered matches",
+  "people.assigned": "several people assigned",
   "place.registered": "recorded a place",
   "places.opened": "read household names",
   "test.recorded": "recorded a test",

@@ -26,6 +26,15 @@ const BODIES: Record<string, (world: World) => unknown> = {
   "post /api/investigations/:id/invitations": () => ({ email: "no@body.example", role: "tracer" }),
   "delete /api/investigations/:id/members": () => ({ email: "no@body.example", role: "tracer" }),
   "post /api/investigations/:id/people/search": () => ({ q: "Zqbody" }),
+  "post /api/investigations/:id/people/assign": (world) => ({
+    to: { kind: "member", accountId: world.everyone.tracer.accountId },
+    people: [{ id: world.people.held, version: 1 }],
+  }),
+  "post /api/investigations/:id/people/filters": () => ({
+    name: "Cases",
+    filter: { classification: "case" },
+  }),
+  "patch /api/investigations/:id/people/filters/:filterId": () => ({ version: 1, name: "Other" }),
   "post /api/investigations/:id/people": () => ({ area: "South" }),
   "post /api/investigations/:id/people/matches": () => ({ name: "Some Body" }),
   "patch /api/investigations/:id/people/:personId": () => ({ version: 1, area: "South" }),

@@ -1,22 +1,17 @@
 import { keepPreviousData, queryOptions } from "@tanstack/react-query";
 import { z } from "zod";
 import type { Person } from "../../../../shared/contracts/people.ts";
+import type { PeopleFilters } from "../../../../shared/contracts/people-filters.ts";
 import { api, inInvestigation } from "../../../lib/api-client.ts";
 import { investigationKey } from "../../../lib/query-keys.ts";
 
-/** What the line list can be asked for. */
-export interface PeopleAsk {
-  page: number;
-  pageSize: number;
+/** What the line list can be asked for, apart from the page. */
+export type PeopleQuestion = { [K in keyof PeopleFilters]?: string | undefined } & {
   sort?: string | undefined;
   /** Name part, telephone, e-mail, reference or study number; always sent in a body. */
   q?: string | undefined;
-  area?: string | undefined;
-  classification?: string | undefined;
-  interviewed?: string | undefined;
-  assigned?: string | undefined;
-  needs?: "interview" | undefined;
-}
+};
+export type PeopleAsk = PeopleQuestion & { page: number; pageSize: number };
 
 /** The keys depend on the role; the server's contract has checked them on the way out. */
 const list = z.object({
@@ -28,7 +23,7 @@ const list = z.object({
 export type PeopleList = z.output<typeof list>;
 
 /** One page of the line list. Typed words travel in a body, coded filters in the address. */
-export function peopleQuery(investigationId: string, ask: PeopleAsk) {
+export function peoplePageQuery(investigationId: string, ask: PeopleAsk) {
   const { q, area, ...coded } = ask;
   const words = Boolean(q || area);
   return queryOptions({
@@ -45,12 +40,20 @@ export function peopleQuery(investigationId: string, ask: PeopleAsk) {
             schema: list,
             signal,
           }),
+  });
+}
+
+/** The same, showing the page of the question before while the answer to a new one comes. */
+export function peopleQuery(investigationId: string, ask: PeopleAsk) {
+  return queryOptions({
+    ...peoplePageQuery(investigationId, ask),
     placeholderData: keepPreviousData,
   });
 }
 
-function withoutBlanks(ask: PeopleAsk): Partial<PeopleAsk> {
+/** What is asked, without what is not. */
+export function withoutBlanks<T extends object>(ask: T): Partial<T> {
   return Object.fromEntries(
     Object.entries(ask).filter(([, value]) => value !== undefined && value !== ""),
-  );
+  ) as Partial<T>;
 }

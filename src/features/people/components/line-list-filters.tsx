@@ -1,9 +1,11 @@
 import { useId } from "react";
+import type { Assignees } from "../../../../shared/contracts/people-filters.ts";
 import { CLASSIFICATIONS } from "../../../../shared/vocabulary.ts";
 import { Button } from "../../../components/ui/button.tsx";
 import { MenuSelect } from "../../../components/ui/menu-select.tsx";
 import { classificationWords } from "../../../lib/words.ts";
-import type { useListState } from "../use-list-state.ts";
+import type { ListState } from "../use-list-state.ts";
+import { MoreFilters } from "./more-filters.tsx";
 
 const classifications = [
   { value: "", label: "all" },
@@ -18,19 +20,30 @@ const interviewed = [
 const assigned = [
   { value: "", label: "all" },
   { value: "me", label: "me" },
+  { value: "team", label: "my team" },
   { value: "none", label: "nobody" },
 ];
 
 export type LineListFiltersProps = {
-  state: ReturnType<typeof useListState>;
+  state: ListState;
   /** Keys of the answers: what cannot be read cannot be filtered by. */
   keys: ReadonlySet<string>;
   areas: readonly string[];
+  /** Members by name, where the reader may know them. */
+  members: Assignees["members"];
 };
 
 /** Search and filters above the line list. */
-export function LineListFilters({ state, keys, areas }: LineListFiltersProps) {
+export function LineListFilters({ state, keys, areas, members }: LineListFiltersProps) {
   const id = useId();
+  const holders = [
+    ...assigned,
+    ...members.map(({ accountId, displayName }) => ({ value: accountId, label: displayName })),
+  ];
+  const holder = state.filters.assigned ?? "";
+  if (!holders.some(({ value }) => value === holder)) {
+    holders.push({ value: holder, label: "a member" });
+  }
   return (
     <>
       <label htmlFor={`${id}-q`} className="text-sm">
@@ -63,13 +76,13 @@ export function LineListFilters({ state, keys, areas }: LineListFiltersProps) {
           onValueChange={(value) => state.setFilter("interviewed", value)}
         />
       </Labelled>
-      {keys.has("assignedTo") || state.filters.assigned ? (
+      {keys.has("assignedTo") || holder ? (
         <Labelled words="assigned to">
           <MenuSelect
             label="Assigned to"
             hideLabel
-            options={assigned}
-            value={state.filters.assigned ?? ""}
+            options={holders}
+            value={holder}
             onValueChange={(value) => state.setFilter("assigned", value)}
           />
         </Labelled>
@@ -90,6 +103,7 @@ export function LineListFilters({ state, keys, areas }: LineListFiltersProps) {
           ))}
         </datalist>
       </label>
+      <MoreFilters state={state} />
       {state.anyFilter ? <Button onClick={state.clear}>Show all</Button> : null}
     </>
   );

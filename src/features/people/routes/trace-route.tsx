@@ -1,5 +1,3 @@
-import { useQuery } from "@tanstack/react-query";
-import { useMemo } from "react";
 import { hasDuty } from "../../../../shared/roles.ts";
 import { paths } from "../../../app/paths.ts";
 import { RoomPage } from "../../../components/layouts/room-page.tsx";
@@ -7,7 +5,6 @@ import { Section } from "../../../components/layouts/section.tsx";
 import { LinkButton } from "../../../components/ui/link-button.tsx";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
 import { useSession } from "../../../lib/session-context.ts";
-import { assignableQuery } from "../api/list-assignable.ts";
 import { InterviewQueue } from "../components/interview-queue.tsx";
 import { LineList } from "../components/line-list.tsx";
 
@@ -15,12 +12,6 @@ import { LineList } from "../components/line-list.tsx";
 export function Component() {
   const { actingRole } = useSession();
   const { id } = useInvestigation();
-  const assigns = hasDuty(actingRole, "assign");
-  const members = useQuery({ ...assignableQuery(id), enabled: assigns });
-  const memberNames = useMemo(
-    () => members.data && new Map(members.data.map((one) => [one.accountId, one.displayName])),
-    [members.data],
-  );
   return (
     <RoomPage
       title="Trace"
@@ -44,7 +35,7 @@ export function Component() {
     >
       <InterviewQueue />
       <Section title="Line list">
-        <LineList memberNames={memberNames} />
+        <LineList />
       </Section>
     </RoomPage>
   );
