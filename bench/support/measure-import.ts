@@ -1,5 +1,6 @@
 import { loadavg } from "node:os";
 import { setTimeout as sleep } from "node:timers/promises";
+import pg from "pg";
 import {
   benchOutbreak,
   makeAccounts,
@@ -11,6 +12,7 @@ import { type BenchServer, startServer, stopServer } from "./bench-server.ts";
 import { type BenchClient, spread } from "./http-client.ts";
 import { importFiles } from "./import-files.ts";
 import { heldCases, submitInterview } from "./interviews.ts";
+import { processorTime } from "./processor-time.ts";
 import { residentMemory } from "./resident-memory.ts";
 
 const SEED = 7;
@@ -29,13 +31,18 @@ interface Imported {
   counts: Record<string, number>;
 }
 
+/** Processor time so far, s. */
+type Processors = () => { server: number; database: number };
+
 /** One file from upload to its end; where the time went, in seconds. */
 async function bringIn(
   supervisor: BenchClient,
   base: string,
   kind: "people" | "pairs",
   csv: string,
+  processors: Processors,
 ) {
+  const before = processors();
   const started = performance.now();
   const staged = await supervisor.upload<Imported>(`${base}/imports`, { kind }, csv);
   const stagedAt = performance.now();
@@ -44,12 +51,18 @@ async function bringIn(
     const { body } = await supervisor.call<Imported>("GET", `${base}/imports/${staged.body.id}`);
     if (body.state === "committed") {
       const done = performance.now();
+      const after = processors();
       return {
         rows: body.counts.rows,
         problems: body.problemCount,
         stagingS: seconds(stagedAt - started),
         commitS: seconds(done - stagedAt),
         totalS: seconds(done - started),
+        // A loaded machine stretches the times above, not these.
+        processorS: {
+          server: Math.round(10 * (after.server - before.server)) / 10,
+          database: Math.round(10 * (after.database - before.database)) / 10,
+        },
       };
     }
     if (body.state !== "committing") throw new Error(`the import of ${kind} is ${body.state}`);
@@ -64,7 +77,11 @@ function interviewing(tracer: BenchClient, base: string, cases: readonly string[
   let running = true;
   let mark = 0;
   const ended = (async () => {
-    for (let round = 0; running && round < MOST_MS / INTERVIEW_EVERY_MS; round++) {
+    for (
+      let round = 0;
+      running && cases.length > 0 && round < MOST_MS / INTERVIEW_EVERY_MS;
+      round++
+    ) {
       const { ms } = await submitInterview(tracer, base, cases, round);
       taken.push(ms);
       await sleep(Math.max(0, INTERVIEW_EVERY_MS - ms));
@@ -82,6 +99,17 @@ function interviewing(tracer: BenchClient, base: string, cases: readonly string[
       await ended;
     },
   };
+}
+
+/** Process id of a cluster's postmaster. */
+async function databasePid(clusterUrl: string): Promise<number> {
+  const client = new pg.Client({ connectionString: clusterUrl });
+  await client.connect();
+  const found = await client.query(
+    "select split_part(pg_read_file('postmaster.pid'), E'\\n', 1)::int as pid",
+  );
+  await client.end();
+  return found.rows[0].pid;
 }
 
 /** Waits until the groups show the graph's version; the graph in memory is then the record's. */
@@ -115,7 +143,7 @@ async function openInvestigation(server: BenchServer, name: string, base: string
 export async function measureImport(
   clusterUrl: string,
   folder: string,
-  size: { people: number; pairs: number },
+  size: { people: number; pairs: number; interviews: boolean },
   nodeOptions: readonly string[] = [],
 ) {
   const database = await makeDatabase(clusterUrl, "bench_import", folder);
@@ -147,13 +175,16 @@ export async function measureImport(
     const memoryIdle = residentMemory(pid).now;
     const mine = await openInvestigation(server, "here", base);
     const theirs = await openInvestigation(server, "there", away);
-    const same = interviewing(mine.tracer, mine.base, mine.cases);
-    const apart = interviewing(theirs.tracer, theirs.base, theirs.cases);
+    const postmaster = await databasePid(clusterUrl);
+    const processors = () => ({ server: processorTime(pid), database: processorTime(postmaster) });
+    const begin = size.interviews ? interviewing : () => interviewing(mine.tracer, mine.base, []);
+    const same = begin(mine.tracer, mine.base, mine.cases);
+    const apart = begin(theirs.tracer, theirs.base, theirs.cases);
     await sleep(5_000);
     const before = { same: same.take(), other: apart.take() };
-    const people = await bringIn(supervisor, base, "people", files.people);
+    const people = await bringIn(supervisor, base, "people", files.people, processors);
     const duringPeople = { same: same.take(), other: apart.take() };
-    const pairs = await bringIn(supervisor, base, "pairs", files.pairs);
+    const pairs = await bringIn(supervisor, base, "pairs", files.pairs, processors);
     const duringPairs = { same: same.take(), other: apart.take() };
     const groupsFollowS = seconds(await graphFollows(supervisor, base));
     await supervisor.call("GET", `${base}/network/summary`);

@@ -53,7 +53,7 @@ function createTold(): (telling: Telling) => boolean {
     const hash = createHash("sha256")
       .update(JSON.stringify(Object.values(telling)))
       .digest();
-    const key = hash.latin1Slice(0, 16);
+    const key = hash.toString("latin1", 0, 16);
     if (told.has(key)) return false;
     told.add(key);
     return true;
