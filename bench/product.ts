@@ -2,54 +2,73 @@ import { existsSync, mkdirSync, readdirSync, readFileSync, rmSync } from "node:f
 import { join, resolve } from "node:path";
 import { gzipSync } from "node:zlib";
 import { startCluster, stopCluster } from "../scripts/lib/postgres.mjs";
+import {
+  benchOutbreak,
+  HELD_CASES,
+  makeAccounts,
+  makeDatabase,
+  signIn,
+  storeOutbreak,
+} from "./support/bench-database.ts";
+import { startServer, stopServer } from "./support/bench-server.ts";
 import { spread } from "./support/http-client.ts";
-import { FOLDER, INTERVIEWS, type Prepared, prepare } from "./support/prepare.ts";
-import { signIn, startServer, stopServer } from "./support/server.ts";
+import { heldCases, submitInterview } from "./support/interviews.ts";
+import { benchLists } from "./support/lists.ts";
 
+// Fixed, so that two runs measure the same data.
+const SEED = 7;
 const ROOT = resolve(import.meta.dirname, "..");
+const FOLDER = join(ROOT, ".test-data/bench");
+const INTERVIEWS = HELD_CASES;
+const ROLES = ["tracer", "supervisor", "epidemiologist", "officer"] as const;
 
-/** Days of an outbreak: the largest runs for more than a year. */
-const daysOf = (people: number) => (people >= 100_000 ? 400 : 35);
+interface Prepared {
+  databaseUrl: string;
+  investigationId: string;
+  people: number;
+  pairs: number;
+}
 
-function contacts(round: number): Record<string, unknown>[] {
-  return Array.from({ length: 12 }, (_, index) => ({
-    name: `Benchcontact ${round} ${index}`,
-    phone: `+44 20 7946 ${String(round * 12 + index).padStart(4, "0")}`,
-    setting: ["household", "workplace", "social"][index % 3],
-    place: index % 3 === 1 ? "Bench Works" : null,
-    firstExposure: "2026-05-16",
-    lastExposure: "2026-05-18",
-    minutes: 30 + index,
-    physical: index % 2 === 0,
-    indoors: true,
-    relation: "colleague",
-  }));
+async function prepare(clusterUrl: string, size: number): Promise<Prepared> {
+  const database = await makeDatabase(clusterUrl, `bench_${size}`, FOLDER);
+  const { client } = database;
+  const [tracer = "", supervisor = "", epidemiologist = "", officer = ""] = await makeAccounts(
+    database,
+    ROLES,
+  );
+  const outbreak = benchOutbreak(SEED, size);
+  const investigationId = await storeOutbreak(database, "Bench", outbreak, {
+    tracer,
+    supervisor,
+    epidemiologist,
+    officer,
+  });
+  await client.query("analyze");
+  const counts = await client.query(
+    `select (select count(*) from core.person) as people, (select count(*) from core.contact_pair) as pairs`,
+  );
+  await client.end();
+  return {
+    databaseUrl: database.url,
+    investigationId,
+    people: Number(counts.rows[0].people),
+    pairs: Number(counts.rows[0].pairs),
+  };
 }
 
 async function measure(prepared: Prepared) {
   const base = `/api/investigations/${prepared.investigationId}`;
-  let server = await startServer(prepared.databaseUrl);
+  let server = await startServer(prepared.databaseUrl, FOLDER);
   const tracer = await signIn(server.origin, "tracer");
   const supervisor = await signIn(server.origin, "supervisor");
   const cold = (await supervisor.call("GET", `${base}/network/summary`)).ms;
-  const queue = await tracer.call<{ items: { id: string; can: { interview?: boolean } }[] }>(
-    "GET",
-    `${base}/people?pageSize=200&classification=case&assigned=me`,
-  );
-  const cases = queue.body.items.filter((person) => person.can.interview);
+  const cases = await heldCases(tracer, base);
   const answered: number[] = [];
   const visible: number[] = [];
   const current: number[] = [];
   const clusters: number[] = [];
   for (let round = 0; round < INTERVIEWS; round++) {
-    const person = cases[round % cases.length];
-    if (!person) throw new Error("the tracer holds no case");
-    const made = await tracer.call<{ graphVersion: number }>("POST", `${base}/interviews`, {
-      personId: person.id,
-      outcome: "complete",
-      channel: "telephone",
-      contacts: contacts(round),
-    });
+    const made = await submitInterview(tracer, base, cases, round);
     if (round >= 10) answered.push(made.ms);
     const sent = performance.now();
     for (;;) {
@@ -57,7 +76,7 @@ async function measure(prepared: Prepared) {
         "GET",
         `${base}/groups?pageSize=10`,
       );
-      if (groups.body.graphVersion >= made.body.graphVersion) break;
+      if (groups.body.graphVersion >= made.graphVersion) break;
       if (performance.now() - sent > 10_000)
         throw new Error("the groups did not follow within 10 s");
     }
@@ -83,15 +102,18 @@ async function measure(prepared: Prepared) {
   for (let page = 1; page <= 20; page++) {
     groups.push((await supervisor.call("GET", `${base}/groups?page=${page}`)).ms);
   }
-  const lists: number[] = [];
-  for (let page = 1; page <= 20; page++) {
-    lists.push((await supervisor.call("GET", `${base}/people?page=${page}&sort=-onsetDate`)).ms);
-  }
-  await stopServer(server.child);
-  server = await startServer(prepared.databaseUrl);
+  const clients = {
+    tracer,
+    supervisor,
+    epidemiologist: await signIn(server.origin, "epidemiologist"),
+    officer: await signIn(server.origin, "officer"),
+  };
+  const lineList = await benchLists(clients, base);
+  await stopServer(server);
+  server = await startServer(prepared.databaseUrl, FOLDER);
   const again = await signIn(server.origin, "supervisor");
   const coldAgain = (await again.call("GET", `${base}/network/summary`)).ms;
-  await stopServer(server.child);
+  await stopServer(server);
   return {
     people: prepared.people,
     pairs: prepared.pairs,
@@ -102,7 +124,7 @@ async function measure(prepared: Prepared) {
     clustersAfterInterviewMs: spread(clusters),
     summaryRangeMs: spread(asOf),
     summaryColdMs: [Math.round(cold), Math.round(coldAgain)],
-    lineListPageMs: spread(lists),
+    lineList,
     serverReadyMs: server.readyMs,
   };
 }
@@ -133,8 +155,7 @@ export async function benchProduct(sizes: readonly number[]) {
   const cluster = await startCluster(FOLDER);
   try {
     const results = [];
-    for (const size of sizes)
-      results.push(await measure(await prepare(cluster.url, size, daysOf(size))));
+    for (const size of sizes) results.push(await measure(await prepare(cluster.url, size)));
     const first = results[0];
     const last = results.at(-1);
     return {

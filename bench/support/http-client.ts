@@ -9,17 +9,39 @@ export class BenchClient {
     this.#origin = origin;
   }
 
-  async call<T>(method: string, path: string, body?: unknown): Promise<{ ms: number; body: T }> {
+  call<T>(method: string, path: string, body?: unknown): Promise<{ ms: number; body: T }> {
+    const type = { "Content-Type": "application/json" };
+    return this.#send<T>(method, path, type, body === undefined ? null : JSON.stringify(body));
+  }
+
+  /** Uploads a text as a file, with the form's other fields. */
+  upload<T>(
+    path: string,
+    fields: Readonly<Record<string, string>>,
+    text: string,
+  ): Promise<{ ms: number; body: T }> {
+    const form = new FormData();
+    for (const [name, value] of Object.entries(fields)) form.set(name, value);
+    form.set("file", new Blob([text], { type: "text/csv" }), "file.csv");
+    return this.#send<T>("POST", path, {}, form);
+  }
+
+  async #send<T>(
+    method: string,
+    path: string,
+    type: Record<string, string>,
+    body: FormData | string | null,
+  ): Promise<{ ms: number; body: T }> {
     const started = performance.now();
     const answer = await fetch(`${this.#origin}${path}`, {
       method,
       headers: {
         Origin: this.#origin,
         Cookie: this.#cookie,
-        "Content-Type": "application/json",
         "Idempotency-Key": randomUUID(),
+        ...type,
       },
-      body: body === undefined ? null : JSON.stringify(body),
+      body,
     });
     const text = await answer.text();
     const ms = performance.now() - started;

@@ -270,13 +270,16 @@ begin
   values (p_import, c.investigation_id, p_chunk, p_body);
 end $$;
 
-create or replace function identity.read_stage(p_import uuid)
+-- The next chunks after one, in order: a commit holds a few at a time.
+drop function if exists identity.read_stage(uuid);
+create or replace function identity.read_stage(p_import uuid, p_after integer, p_count integer)
 returns table (chunk integer, body_cipher bytea)
 language sql stable security definer set search_path = pg_catalog, pg_temp as $$
   select s.chunk, s.body_cipher from identity.import_stage s
-  where s.import_id = p_import and s.investigation_id = core.ctx_investigation()
-    and core.ctx_role() in ('supervisor', 'officer')
-  order by s.chunk
+  where s.import_id = p_import and s.chunk > p_after
+    and s.investigation_id = (select core.ctx_investigation())
+    and (select core.ctx_role()) in ('supervisor', 'officer')
+  order by s.chunk limit p_count
 $$;
 
 create or replace function identity.drop_stage(p_import uuid) returns void

@@ -1,4 +1,4 @@
-import { parentPort } from "node:worker_threads";
+import { serveJobs } from "../worker-lane.ts";
 import { answerPicture, type PictureAnswer, type PictureQuestion } from "./answer-picture.ts";
 import { answerReport, type ReportAnswer } from "./answer-report.ts";
 import type { GraphSnapshot } from "./graph-store.ts";
@@ -16,23 +16,8 @@ export type Job =
 /** Answer to each kind of job. */
 export type JobAnswer = { report: ReportAnswer; picture: PictureAnswer };
 
-export type JobMessage = { readonly id: number; readonly job: Job };
-export type JobReply =
-  | { readonly id: number; readonly answer: ReportAnswer | PictureAnswer }
-  | { readonly id: number; readonly failure: string };
-
-function run(job: Job): ReportAnswer | PictureAnswer {
-  return job.kind === "report"
+serveJobs<Job>((job) =>
+  job.kind === "report"
     ? answerReport(job.snapshot, job.question)
-    : answerPicture(job.snapshot, job.question);
-}
-
-parentPort?.on("message", ({ id, job }: JobMessage) => {
-  let reply: JobReply;
-  try {
-    reply = { id, answer: run(job) };
-  } catch (error) {
-    reply = { id, failure: error instanceof Error ? error.message : String(error) };
-  }
-  parentPort?.postMessage(reply);
-});
+    : answerPicture(job.snapshot, job.question),
+);

@@ -9,6 +9,8 @@ import type {
 import { now } from "../clock.ts";
 import type { Pools } from "../db/pools.ts";
 import { safeError } from "../http/translate-error.ts";
+import { WorkerLane } from "../worker-lane.ts";
+import type { Job, JobAnswer } from "./analysis-jobs.ts";
 import type { PictureQuestion } from "./answer-picture.ts";
 import { Answers } from "./answers.ts";
 import type { LiveGroup } from "./group-book.ts";
@@ -17,11 +19,11 @@ import { LiveGraph, type LoadedGraph } from "./live-graph.ts";
 import { presentPicture, presentSummary } from "./present-answers.ts";
 import { type AnalysisSettings, type AskedReport, reportQuestion } from "./report-question.ts";
 import { TrailMemory } from "./trail-memory.ts";
-import { WorkerLane } from "./worker-lane.ts";
 
 /** Graphs kept in memory; the one asked for longest ago is dropped and read again when wanted. */
 const MOST_LOADED = 12;
 const LOADED_AHEAD = 4;
+const WORKER = new URL("./analysis-worker.mjs", import.meta.url);
 
 /** Current groups of an investigation; do not change them. */
 export type GroupsNow = {
@@ -82,8 +84,9 @@ export function createAnalysis(options: {
 }): Analysis {
   const pool = options.pools.system;
   const kept = new Map<string, Kept>();
-  const reports = new WorkerLane();
-  const pictures = new WorkerLane();
+  const lane = () => new WorkerLane<Job, JobAnswer>(WORKER, "analysis");
+  const reports = lane();
+  const pictures = lane();
   let stopped = false;
   let loadingAhead: Promise<void> = Promise.resolve();
 

@@ -1,60 +1,25 @@
 import { sql } from "drizzle-orm";
 import type { EventName } from "../../shared/events.ts";
-import { MISSING } from "../../shared/vocabulary.ts";
 import type { Tx } from "../db/with-tx.ts";
 import { open, seal } from "./cipher.ts";
 import type { InvestigationKeys } from "./keys.ts";
-import { lastTwo, maskEmail, maskName } from "./mask.ts";
 import {
-  nameParts,
-  nameSounds,
-  normalPhone,
-  soundsToFind,
-  TOKEN_KINDS,
-  tokenOf,
-} from "./tokens.ts";
+  CIPHER_COLUMNS,
+  type Identity,
+  type IdentityKey,
+  identityPlace,
+  known,
+  sealPerson,
+  searchTokensOf,
+} from "./sealed-identity.ts";
+import { nameParts, normalPhone, soundsToFind, TOKEN_KINDS, tokenOf } from "./tokens.ts";
 
-/** Identity of a person as typed. A key left out stays as it is; null means "not asked". */
-export interface Identity {
-  ref?: string | null;
-  name?: string | null;
-  phone?: string | null;
-  email?: string | null;
-  birthDate?: string | null;
-  address?: string | null;
-  note?: string | null;
-}
-export type IdentityKey = keyof Identity;
-export const IDENTITY_KEYS = [
-  "ref",
-  "name",
-  "phone",
-  "email",
-  "birthDate",
-  "address",
-  "note",
-] as const;
-
-const COLUMNS: Record<IdentityKey, string> = {
-  ref: "ref_cipher",
-  name: "name_cipher",
-  phone: "phone_cipher",
-  email: "email_cipher",
-  birthDate: "birth_date_cipher",
-  address: "address_cipher",
-  note: "note_cipher",
-};
-
-const known = (value: string | null | undefined): value is string =>
-  typeof value === "string" && !(MISSING as readonly string[]).includes(value);
-
-/** Where a value is bound to: moved anywhere else it does not open. */
-const place = (key: IdentityKey, personId: string) => `identity.person|${COLUMNS[key]}|${personId}`;
-
-/** Token under which a reference is unique in its investigation. */
-export function refToken(keys: InvestigationKeys, ref: string): Buffer {
-  return tokenOf(keys.token, "ref", ref.trim());
-}
+export {
+  IDENTITY_KEYS,
+  type Identity,
+  type IdentityKey,
+  refToken,
+} from "./sealed-identity.ts";
 
 /** Token under which a household's name is found again (case and spacing aside). */
 export function householdToken(keys: InvestigationKeys, name: string): Buffer {
@@ -82,23 +47,12 @@ export function identityTokens(
   identity: Identity,
   country: string,
 ): Token[] {
-  const out: Token[] = [];
-  const add = (kind: number, value: string) =>
-    out.push({
-      person_id: personId,
-      kind,
-      token: tokenOf(keys.token, kind, value).toString("base64"),
-    });
-  if (known(identity.phone)) {
-    const phone = normalPhone(identity.phone, country);
-    if (phone) add(TOKEN_KINDS.phone, phone);
-  }
-  if (known(identity.email)) add(TOKEN_KINDS.email, identity.email.toLowerCase());
-  if (known(identity.name)) {
-    for (const part of nameParts(identity.name)) add(TOKEN_KINDS.namePart, part);
-    for (const sound of nameSounds(identity.name)) add(TOKEN_KINDS.nameSound, sound);
-  }
-  return out;
+  const tokenFor = (kind: number, value: string) => tokenOf(keys.token, kind, value);
+  return searchTokensOf(tokenFor, identity, country).map(({ kind, token }) => ({
+    person_id: personId,
+    kind,
+    token: token.toString("base64"),
+  }));
 }
 
 /** The stored row of a person's identity (ciphertext, masked and coarse forms), binary in base64. */
@@ -107,19 +61,16 @@ export function sealIdentity(
   personId: string,
   identity: Identity,
 ): Record<string, unknown> {
-  const row: Record<string, unknown> = { person_id: personId, has: [] as string[] };
-  for (const key of IDENTITY_KEYS) {
-    const value = identity[key];
-    if (value === undefined) continue;
-    (row.has as string[]).push(key);
-    row[COLUMNS[key]] =
-      value === null ? null : seal(keys.seal, place(key, personId), value).toString("base64");
+  const sealed = sealPerson(keys, personId, identity);
+  const row: Record<string, unknown> = { person_id: personId, has: Object.keys(sealed.ciphers) };
+  for (const [key, cipher] of Object.entries(sealed.ciphers)) {
+    row[CIPHER_COLUMNS[key as IdentityKey]] = cipher?.toString("base64") ?? null;
   }
-  if (identity.ref) row.ref_token = refToken(keys, identity.ref).toString("base64");
-  if (known(identity.name)) row.name_masked = maskName(identity.name);
-  if (known(identity.phone)) row.phone_last2 = lastTwo(identity.phone);
-  if (known(identity.email)) row.email_masked = maskEmail(identity.email);
-  if (known(identity.birthDate)) row.birth_year = Number(identity.birthDate.slice(0, 4));
+  if (sealed.refToken) row.ref_token = sealed.refToken.toString("base64");
+  if (known(identity.name)) row.name_masked = sealed.nameMasked;
+  if (known(identity.phone)) row.phone_last2 = sealed.phoneLast2;
+  if (known(identity.email)) row.email_masked = sealed.emailMasked;
+  if (known(identity.birthDate)) row.birth_year = sealed.birthYear;
   return row;
 }
 
@@ -180,7 +131,11 @@ export async function openPeople(
   );
   for (const row of found.rows) {
     const identity = opened.get(row.person_id) ?? {};
-    identity[row.field] = open(keys.seal, place(row.field, row.person_id), row.cipher).toString();
+    identity[row.field] = open(
+      keys.seal,
+      identityPlace(row.field, row.person_id),
+      row.cipher,
+    ).toString();
     opened.set(row.person_id, identity);
   }
   return opened;
@@ -193,7 +148,7 @@ export function openCipher(
   field: IdentityKey,
   cipher: Buffer,
 ): string {
-  return open(keys.seal, place(field, personId), cipher).toString();
+  return open(keys.seal, identityPlace(field, personId), cipher).toString();
 }
 
 /** Opens household names; recorded by the database's function. */

@@ -61,9 +61,15 @@ const FUNCTIONS: Record<string, readonly (Role | "system" | "auth")[]> = {
   "identity.keep_draft(uuid, bytea, integer)": ["tracer", "supervisor"],
   "identity.drop_draft(uuid)": ["tracer", "supervisor"],
   "identity.keep_stage(uuid, integer, bytea)": ["supervisor", "officer"],
-  "identity.read_stage(uuid)": ["supervisor", "officer"],
+  "identity.read_stage(uuid, integer, integer)": ["supervisor", "officer"],
   "identity.drop_stage(uuid)": ["supervisor", "officer"],
   "identity.put_people(jsonb, jsonb, smallint[])": ["tracer", "supervisor", "officer"],
+  [`identity.add_people(uuid[], bytea[], bytea[], bytea[], text[], bytea[], text[], bytea[], text[],
+    bytea[], integer[], bytea[], bytea[], integer[], smallint[], bytea[])`]: [
+    "supervisor",
+    "officer",
+  ],
+  "identity.put_places(uuid[], bytea[], bytea[])": ["supervisor", "officer"],
 };
 
 /** Masked and coarse columns a role gets from `identity.person`, without any ciphertext. */

@@ -1,10 +1,12 @@
-import { randomUUID } from "node:crypto";
 import { sql } from "drizzle-orm";
+import { byteas, integers, texts, uuids } from "../../db/binary-arrays.ts";
+import { nearIds } from "../../db/near-ids.ts";
 import type { Tx } from "../../db/with-tx.ts";
 import type { Actor } from "../../http/route.ts";
 import type { InvestigationKeys } from "../../identity/keys.ts";
 import { householdToken, placeName } from "../../identity/records.ts";
 import { isMissingWord } from "./check-cell.ts";
+import type { Pause } from "./pause.ts";
 
 /** A place as a file tells of it; the setting is the telling's. */
 export interface PlaceTold {
@@ -23,20 +25,19 @@ export interface PlaceBook {
   made: number;
 }
 
-const byteList = (hex: readonly string[]) =>
-  sql`${sql.param(`{${hex.map((one) => `"\\\\x${one}"`).join(",")}}`)}::bytea[]`;
-
 /**
  * Makes the place book of one import.
  *
  * @param reserve reserves place numbers and gives the first; in a transaction of its own, so that
  * the investigation's row is not held locked while a long import runs
+ * @param pause lets others be served within long lists
  */
 export function createPlaceBook(
   tx: Tx,
   actor: Actor,
   keys: InvestigationKeys,
   reserve: (count: number) => Promise<number>,
+  pause?: Pause,
 ): PlaceBook {
   const households = new Map<string, string>();
   const facilities = new Map<string, string>();
@@ -56,11 +57,15 @@ export function createPlaceBook(
   const named = (name: string) => name !== "" && !isMissingWord(name);
 
   async function findHouseholds(names: readonly string[]): Promise<void> {
-    const wanted = new Set(names.filter(named).map(token));
-    for (const hex of wanted) if (households.has(hex)) wanted.delete(hex);
+    const wanted = new Set<string>();
+    for (const name of names) {
+      if (named(name) && !households.has(token(name))) wanted.add(token(name));
+      await pause?.();
+    }
     if (wanted.size === 0) return;
+    const tokens = byteas([...wanted].map((hex) => Buffer.from(hex, "hex")));
     const found = await tx.execute<{ token: Buffer; place_id: string }>(
-      sql`select token, place_id from identity.households_by_token(${byteList([...wanted])})`,
+      sql`select token, place_id from identity.households_by_token(${tokens}::bytea[])`,
     );
     for (const row of found.rows) households.set(row.token.toString("hex"), row.place_id);
   }
@@ -73,8 +78,8 @@ export function createPlaceBook(
     const names = [...new Set(wanted.map((place) => place.name.toLowerCase()))];
     const found = await tx.execute<{ id: string; name: string; setting: string | null }>(
       sql`select p.id, p.name, p.setting from core.place p
-          where p.investigation_id = ${actor.investigationId} and lower(p.name) in (
-            select jsonb_array_elements_text(${JSON.stringify(names)}::jsonb))
+          where p.investigation_id = ${actor.investigationId}
+            and lower(p.name) in (select unnest(${texts(names)}::text[]))
           order by p.number desc`,
     );
     // The lowest number comes last and stands.
@@ -95,7 +100,12 @@ export function createPlaceBook(
     async ensure(told) {
       await findHouseholds(told.filter((p) => p.setting === "household").map((p) => p.name));
       await findFacilities(told.filter((p) => p.setting !== "household"));
-      const fresh: { id: string; name: string; household: boolean; setting: string | null }[] = [];
+      const fresh: {
+        map: Map<string, string>;
+        key: string;
+        name: string;
+        setting: string | null;
+      }[] = [];
       for (const { name, setting } of told) {
         if (!named(name)) continue;
         const household = setting === "household";
@@ -103,36 +113,38 @@ export function createPlaceBook(
           ? [households, token(name)]
           : [facilities, facility(name, setting)];
         if (map.has(key)) continue;
-        const id = randomUUID();
-        map.set(key, id);
-        fresh.push({ id, name, household, setting: plain(setting) });
+        // The id follows; a place that is told of again is the same one.
+        map.set(key, "");
+        fresh.push({ map, key, name, setting: plain(setting) });
       }
       if (fresh.length === 0) return;
       const first = await reserve(fresh.length);
       book.made += fresh.length;
-      const rows = fresh.map((place, at) => ({
-        id: place.id,
-        number: first + at,
-        name: place.household ? null : place.name,
-        setting: place.setting,
-      }));
+      // Numbers tell the order of places anyway, so the ids may.
+      const ids = nearIds(fresh.length).sort();
+      const places = fresh.map((place, at) => ({ ...place, id: ids[at] as string }));
+      for (const { map, key, id } of places) map.set(key, id);
+      const isHome = ({ map }: { map: unknown }) => map === households;
       await tx.execute(
         sql`insert into core.place (id, investigation_id, number, name, setting, recorded_by)
             select id, ${actor.investigationId}, number, name, setting, ${actor.accountId}
-            from jsonb_to_recordset(${JSON.stringify(rows)}::jsonb)
-              as r (id uuid, number integer, name text, setting text)`,
+            from unnest(${uuids(ids)}::uuid[],
+              ${integers(places.map((_, at) => first + at))}::integer[],
+              ${texts(places.map((place) => (isHome(place) ? null : place.name)))}::text[],
+              ${texts(places.map((place) => place.setting))}::text[])
+              as r (id, number, name, setting)`,
       );
-      const sealed = fresh
-        .filter((place) => place.household)
-        .map((place) => ({
-          id: place.id,
-          cipher: placeName.seal(keys, place.id, place.name).toString("base64"),
-          token: token(place.name),
-        }));
+      const homes = places.filter(isHome);
+      if (homes.length === 0) return;
+      const ciphers: Buffer[] = [];
+      for (const { id, name } of homes) {
+        ciphers.push(placeName.seal(keys, id, name));
+        await pause?.();
+      }
       await tx.execute(
-        sql`select identity.put_place(id, decode(cipher, 'base64'), decode(token, 'hex'))
-            from jsonb_to_recordset(${JSON.stringify(sealed)}::jsonb)
-              as r (id uuid, cipher text, token text)`,
+        sql`select identity.put_places(${uuids(homes.map((place) => place.id))}::uuid[],
+              ${byteas(ciphers)}::bytea[],
+              ${byteas(homes.map(({ key }) => Buffer.from(key, "hex")))}::bytea[])`,
       );
     },
     idOf(name, setting) {

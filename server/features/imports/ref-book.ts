@@ -1,5 +1,6 @@
 import type { Tx } from "../../db/with-tx.ts";
 import type { InvestigationKeys } from "../../identity/keys.ts";
+import type { Pause } from "./pause.ts";
 import type { ImportProblem, StagedPair } from "./staged-row.ts";
 import { peopleByRef } from "./store.ts";
 
@@ -16,7 +17,7 @@ export interface RefBook {
 }
 
 /** Makes the reference book of one file. */
-export function createRefBook(tx: Tx, keys: InvestigationKeys): RefBook {
+export function createRefBook(tx: Tx, keys: InvestigationKeys, pause?: Pause): RefBook {
   const people = new Map<string, string | null>();
   return {
     async find(rows) {
@@ -24,7 +25,7 @@ export function createRefBook(tx: Tx, keys: InvestigationKeys): RefBook {
       for (const { cells } of rows) {
         for (const ref of [cells.ref_a, cells.ref_b]) if (!people.has(ref)) wanted.add(ref);
       }
-      const found = await peopleByRef(tx, keys, [...wanted]);
+      const found = await peopleByRef(tx, keys, [...wanted], pause);
       for (const ref of wanted) people.set(ref, found.get(ref) ?? null);
     },
     idOf: (ref) => people.get(ref) ?? null,

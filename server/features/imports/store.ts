@@ -1,11 +1,13 @@
 import { randomUUID } from "node:crypto";
 import { sql } from "drizzle-orm";
 import type { Import } from "../../../shared/contracts/imports.ts";
+import { byteas } from "../../db/binary-arrays.ts";
 import type { Tx } from "../../db/with-tx.ts";
 import type { Actor } from "../../http/route.ts";
-import { open, seal } from "../../identity/cipher.ts";
 import type { InvestigationKeys } from "../../identity/keys.ts";
 import { refToken } from "../../identity/records.ts";
+import type { Pause } from "./pause.ts";
+import { type SealedChunk, sealChunk } from "./staged-chunk.ts";
 import type { ImportKind, ImportProblem } from "./staged-row.ts";
 
 /** An import as stored. `counts.stagedAt` (s since the epoch) stands while checked rows are kept. */
@@ -114,9 +116,6 @@ export async function claimCommit(tx: Tx, id: string, createMissing: boolean): P
   return done.rowCount === 1;
 }
 
-const stagePlace = (id: string, chunk: number) =>
-  `identity.import_stage|body_cipher|${id}|${chunk}`;
-
 /** Keeps a chunk of checked rows, encrypted. */
 export async function keepStage(
   tx: Tx,
@@ -125,24 +124,26 @@ export async function keepStage(
   chunk: number,
   rows: readonly unknown[],
 ): Promise<void> {
-  const sealed = seal(keys.seal, stagePlace(id, chunk), JSON.stringify(rows));
+  const sealed = sealChunk(keys, id, chunk, rows);
   await tx.execute(sql`select identity.keep_stage(${id}::uuid, ${chunk}, ${sealed}::bytea)`);
 }
 
-/** The kept chunks in order, each opened when it is asked for. */
-export async function readStage<T>(
+/**
+ * The next kept chunks in order, sealed.
+ *
+ * @param after number of the last chunk that was read; -1 at first
+ * @param count how many, at most
+ */
+export async function readStage(
   tx: Tx,
-  keys: InvestigationKeys,
   id: string,
-): Promise<(() => T[])[]> {
+  after: number,
+  count: number,
+): Promise<SealedChunk[]> {
   const found = await tx.execute<{ chunk: number; body_cipher: Buffer }>(
-    sql`select chunk, body_cipher from identity.read_stage(${id}::uuid)`,
+    sql`select chunk, body_cipher from identity.read_stage(${id}::uuid, ${after}, ${count})`,
   );
-  return found.rows.map(
-    ({ chunk, body_cipher }) =>
-      () =>
-        JSON.parse(open(keys.seal, stagePlace(id, chunk), body_cipher).toString()) as T[],
-  );
+  return found.rows.map(({ chunk, body_cipher: body }) => ({ importId: id, chunk, body }));
 }
 
 /** Deletes the kept rows of an import. */
@@ -150,21 +151,31 @@ export async function dropStage(tx: Tx, id: string): Promise<void> {
   await tx.execute(sql`select identity.drop_stage(${id}::uuid)`);
 }
 
+/** References whose tokens are made at a stretch: some 3 ms of work. */
+const REF_SLICE = 500;
+
 /** References to ids of people on record; those not on record are absent. */
 export async function peopleByRef(
   tx: Tx,
   keys: InvestigationKeys,
   refs: readonly string[],
+  pause?: Pause,
 ): Promise<Map<string, string>> {
   if (refs.length === 0) return new Map();
-  const refOf = new Map(refs.map((ref) => [refToken(keys, ref).toString("hex"), ref]));
-  const tokens = `{${[...refOf.keys()].map((hex) => `"\\\\x${hex}"`).join(",")}}`;
+  const refOf = new Map<string, string>();
+  const tokens: Buffer[] = [];
+  for (const [at, ref] of refs.entries()) {
+    const token = refToken(keys, ref);
+    tokens.push(token);
+    refOf.set(token.toString("latin1"), ref);
+    if (at % REF_SLICE === REF_SLICE - 1) await pause?.();
+  }
   const found = await tx.execute<{ token: Buffer; person_id: string }>(
-    sql`select token, person_id from identity.people_by_ref(${sql.param(tokens)}::bytea[])`,
+    sql`select token, person_id from identity.people_by_ref(${byteas(tokens)}::bytea[])`,
   );
   const out = new Map<string, string>();
   for (const row of found.rows) {
-    const ref = refOf.get(row.token.toString("hex"));
+    const ref = refOf.get(row.token.toString("latin1"));
     if (ref !== undefined) out.set(ref, row.person_id);
   }
   return out;

@@ -1,8 +1,10 @@
 import { randomUUID } from "node:crypto";
 import { sql } from "drizzle-orm";
+import { texts, uuids } from "../../db/binary-arrays.ts";
+import { nearIds } from "../../db/near-ids.ts";
 import type { Tx } from "../../db/with-tx.ts";
 import type { Actor } from "../../http/route.ts";
-import { newStudyNumber } from "./study-number.ts";
+import { newStudyNumbers } from "./study-number.ts";
 
 /** Core columns of a new person; what is left out is "not asked". */
 export interface NewPerson {
@@ -14,6 +16,10 @@ export interface NewPerson {
   householdId?: string | null;
   classification?: string | null;
   onsetDate?: string | null;
+  /** Of the one test that is recorded with them, see `insertTests`. */
+  specimenDate?: string | null;
+  resultDate?: string | null;
+  result?: string | null;
   reportDate?: string | null;
   interviewDate?: string | null;
   interviewed?: string | null;
@@ -45,50 +51,47 @@ export async function insertPeople(
   definitionVersion: number,
 ): Promise<InsertedPerson[]> {
   if (people.length === 0) return [];
-  const rows = people.map((person) => ({
-    id: person.id ?? randomUUID(),
-    study_number: newStudyNumber(),
-    sex: person.sex ?? null,
-    age_band: person.ageBand ?? null,
-    area: person.area ?? null,
-    occupation: person.occupation ?? null,
-    household_id: person.householdId ?? null,
-    classification: person.classification ?? null,
-    onset_date: person.onsetDate ?? null,
-    report_date: person.reportDate ?? null,
-    interview_date: person.interviewDate ?? null,
-    interviewed: person.interviewed ?? null,
-    interview_state: person.interviewState ?? null,
-    isolation_date: person.isolationDate ?? null,
-    outcome: person.outcome ?? null,
-    outcome_date: person.outcomeDate ?? null,
-    assigned_account_id: person.assignedAccountId ?? null,
-    source: person.source,
-  }));
-  const json = JSON.stringify(rows);
+  const ids = people.map((person) => person.id ?? randomUUID());
+  const studyNumbers = newStudyNumbers(people.length);
+  const column = (key: Exclude<keyof NewPerson, "id">) => texts(people.map((one) => one[key]));
   await tx.execute(
     sql`insert into core.person (id, investigation_id, study_number, sex, age_band, area, occupation,
-        household_id, classification, case_definition_version, onset_date, report_date, interview_date,
-        interviewed, interview_state, isolation_date, outcome, outcome_date, assigned_account_id,
-        source, recorded_by)
+        household_id, classification, case_definition_version, onset_date, specimen_date, result_date,
+        result, report_date, interview_date, interviewed, interview_state, isolation_date, outcome,
+        outcome_date, assigned_account_id, source, recorded_by)
       select id, ${actor.investigationId}, study_number, sex, age_band, area, occupation, household_id,
-        classification, ${definitionVersion}, onset_date, report_date, interview_date, interviewed,
-        interview_state, isolation_date, outcome, outcome_date, assigned_account_id, source,
-        ${actor.accountId}
-      from jsonb_to_recordset(${json}::jsonb) as r (id uuid, study_number text, sex text, age_band text,
-        area text, occupation text, household_id uuid, classification text, onset_date text,
-        report_date text, interview_date text, interviewed text, interview_state text,
-        isolation_date text, outcome text, outcome_date text, assigned_account_id uuid, source text)`,
+        classification, ${definitionVersion}, onset_date, specimen_date, result_date, result,
+        report_date, interview_date, interviewed, interview_state, isolation_date, outcome,
+        outcome_date, assigned_account_id, source, ${actor.accountId}
+      from unnest(${uuids(ids)}::uuid[], ${texts(studyNumbers)}::text[], ${column("sex")}::text[],
+        ${column("ageBand")}::text[], ${column("area")}::text[], ${column("occupation")}::text[],
+        ${uuids(people.map((one) => one.householdId))}::uuid[], ${column("classification")}::text[],
+        ${column("onsetDate")}::text[], ${column("specimenDate")}::text[],
+        ${column("resultDate")}::text[], ${column("result")}::text[], ${column("reportDate")}::text[],
+        ${column("interviewDate")}::text[], ${column("interviewed")}::text[],
+        ${column("interviewState")}::text[], ${column("isolationDate")}::text[],
+        ${column("outcome")}::text[], ${column("outcomeDate")}::text[],
+        ${uuids(people.map((one) => one.assignedAccountId))}::uuid[], ${column("source")}::text[])
+        as r (id, study_number, sex, age_band, area, occupation, household_id, classification,
+          onset_date, specimen_date, result_date, result, report_date, interview_date, interviewed,
+          interview_state, isolation_date, outcome, outcome_date, assigned_account_id, source)`,
   );
-  await tx.execute(
-    sql`insert into core.classification (id, investigation_id, person_id, classification,
-        case_definition_version, recorded_by)
-      select gen_random_uuid(), ${actor.investigationId}, id, classification, ${definitionVersion},
-        ${actor.accountId}
-      from jsonb_to_recordset(${json}::jsonb) as r (id uuid, classification text)
-      where classification is not null`,
+  const classified = people.flatMap(({ classification }, at) =>
+    classification ? [{ personId: ids[at], classification }] : [],
   );
-  return rows.map((row) => ({ id: row.id, studyNumber: row.study_number }));
+  if (classified.length > 0) {
+    await tx.execute(
+      sql`insert into core.classification (id, investigation_id, person_id, classification,
+          case_definition_version, recorded_by)
+        select id, ${actor.investigationId}, person_id, classification, ${definitionVersion},
+          ${actor.accountId}
+        from unnest(${uuids(nearIds(classified.length).sort())}::uuid[],
+          ${uuids(classified.map(({ personId }) => personId))}::uuid[],
+          ${texts(classified.map(({ classification }) => classification))}::text[])
+          as r (id, person_id, classification)`,
+    );
+  }
+  return ids.map((id, at) => ({ id, studyNumber: studyNumbers[at] as string }));
 }
 
 /** One test as stored. */
@@ -101,32 +104,32 @@ export interface NewTest {
   resultAt?: string | null;
 }
 
-/** Records tests and brings each person's copies (reference test) up to date. */
+/**
+ * Records tests and brings each person's copies (reference test) up to date.
+ *
+ * @param copied true when these are the only tests of people who were recorded with their copies
+ */
 export async function insertTests(
   tx: Tx,
   actor: Actor,
   tests: readonly NewTest[],
+  copied = false,
 ): Promise<string[]> {
   if (tests.length === 0) return [];
-  const rows = tests.map((test) => ({
-    id: randomUUID(),
-    person_id: test.personId,
-    specimen_date: test.specimenDate,
-    kind: test.kind,
-    result: test.result,
-    result_date: test.resultDate,
-    result_at: test.resultAt ?? null,
-  }));
+  const ids = nearIds(tests.length).sort();
+  const column = (key: keyof NewTest) => texts(tests.map((test) => test[key]));
   await tx.execute(
     sql`insert into core.test_result (id, investigation_id, person_id, specimen_date, kind, result,
         result_date, result_at, recorded_by)
       select id, ${actor.investigationId}, person_id, specimen_date, kind, result, result_date,
-        result_at, ${actor.accountId}
-      from jsonb_to_recordset(${JSON.stringify(rows)}::jsonb) as r (id uuid, person_id uuid,
-        specimen_date text, kind text, result text, result_date text, result_at timestamptz)`,
+        result_at::timestamptz, ${actor.accountId}
+      from unnest(${uuids(ids)}::uuid[], ${uuids(tests.map((test) => test.personId))}::uuid[],
+        ${column("specimenDate")}::text[], ${column("kind")}::text[], ${column("result")}::text[],
+        ${column("resultDate")}::text[], ${column("resultAt")}::text[])
+        as r (id, person_id, specimen_date, kind, result, result_date, result_at)`,
   );
-  await refreshTestCopies(tx, [...new Set(tests.map((test) => test.personId))]);
-  return rows.map((row) => row.id);
+  if (!copied) await refreshTestCopies(tx, [...new Set(tests.map((test) => test.personId))]);
+  return ids;
 }
 
 /** Copies of the reference test: the first positive by specimen day, else the latest recorded. */
@@ -159,19 +162,18 @@ export async function insertHeldInterviews(
   interviews: readonly { personId: string; day: string | null }[],
 ): Promise<void> {
   if (interviews.length === 0) return;
-  const rows = interviews.map(({ personId, day }) => ({
-    id: randomUUID(),
-    person_id: personId,
-    day: day ?? "unknown",
-    noon: day !== null && /^\d{4}-\d{2}-\d{2}$/.test(day) ? `${day} 12:00` : null,
-  }));
+  const ids = nearIds(interviews.length).sort();
+  const noons = interviews.map(({ day }) =>
+    day !== null && /^\d{4}-\d{2}-\d{2}$/.test(day) ? `${day} 12:00` : null,
+  );
   // Noon of today may be still to come; nothing on record is held later than it was recorded.
   await tx.execute(
     sql`insert into core.interview (id, investigation_id, person_id, outcome, held_at, day, source, recorded_by)
         select id, ${actor.investigationId}, person_id, 'complete',
           least(coalesce(noon::timestamp at time zone ${timeZone}, now()), now()), day, ${source},
           ${actor.accountId}
-        from jsonb_to_recordset(${JSON.stringify(rows)}::jsonb)
-          as r (id uuid, person_id uuid, day text, noon text)`,
+        from unnest(${uuids(ids)}::uuid[], ${uuids(interviews.map((one) => one.personId))}::uuid[],
+          ${texts(interviews.map((one) => one.day ?? "unknown"))}::text[], ${texts(noons)}::text[])
+          as r (id, person_id, day, noon)`,
   );
 }

@@ -1,12 +1,27 @@
-import { randomInt } from "node:crypto";
+import { randomBytes } from "node:crypto";
 
 // No I, L, O, U: they are misread or misheard on the telephone.
 const ALPHABET = "0123456789ABCDEFGHJKMNPQRSTVWXYZ";
 
-/** A random study number such as "K4T-29X7": 35 bits, derived from nothing about the person. */
+const LENGTH = 7;
+
+/** Random study numbers such as "K4T-29X7": 35 bits, derived from nothing about the person. */
+export function newStudyNumbers(count: number): string[] {
+  const random = randomBytes(count * LENGTH);
+  return Array.from({ length: count }, (_, at) => {
+    let text = "";
+    for (let k = 0; k < LENGTH; k++) {
+      if (k === 3) text += "-";
+      // 32 characters: five bits of a byte choose evenly.
+      text += ALPHABET[(random[at * LENGTH + k] as number) & 31];
+    }
+    return text;
+  });
+}
+
+/** One random study number. */
 export function newStudyNumber(): string {
-  const pick = () => ALPHABET[randomInt(ALPHABET.length)];
-  return `${pick()}${pick()}${pick()}-${pick()}${pick()}${pick()}${pick()}`;
+  return newStudyNumbers(1)[0] as string;
 }
 
 /** What was typed as a study number, or null when it cannot be (part of) one. */

@@ -41,8 +41,8 @@ export interface CommitContext {
   counts: CommitCounts;
   problems: ProblemList;
   pause: Pause;
-  /** Told after each chunk, from 0 to 1. */
-  progress(share: number): Promise<void>;
+  /** Told after each batch of the file how many rows it had. */
+  progress(rows: number): Promise<void>;
 }
 
 /** A count of nothing. */

@@ -1,8 +1,9 @@
-import { randomUUID } from "node:crypto";
 import { ageBandOf } from "../../../../shared/vocabulary.ts";
+import { nearIds } from "../../../db/near-ids.ts";
 import { savepoint } from "../../../db/with-tx.ts";
 import { sqlState } from "../../../http/translate-error.ts";
-import { type Identity, putPeople } from "../../../identity/records.ts";
+import { addPeople } from "../../../identity/add-people.ts";
+import { type PackedPeople, packNewPeople } from "../../../identity/pack-new-people.ts";
 import {
   insertHeldInterviews,
   insertPeople,
@@ -10,11 +11,12 @@ import {
   type NewPerson,
 } from "../../people/store.ts";
 import { isMissingWord } from "../check-cell.ts";
+import { newIdentityOf } from "../row-identity.ts";
 import type { StagedPerson } from "../staged-row.ts";
 import type { CommitContext } from "./commit-context.ts";
 
-/** People whose identity is encrypted at a stretch: some 30 ms of work. */
-const IDENTITY_SLICE = 200;
+/** People whose identity is encrypted at a stretch: some 15 ms of work. */
+const IDENTITY_SLICE = 100;
 const STUDY_NUMBER_TRIES = 3;
 
 type Cells = StagedPerson["cells"];
@@ -28,19 +30,42 @@ export function outcomeOf(died: string | undefined): {
   return { outcome: isMissingWord(died) ? "unknown" : "died", day: died };
 }
 
-/** Identity cells of a row; the keys that the row leaves out are left out, or null when `whole`. */
-export function identityOf(cells: Cells, whole: boolean): Identity {
-  const identity: Identity = {};
-  const put = (key: keyof Identity, value: string | undefined) => {
-    if (value !== undefined) identity[key] = value;
-    else if (whole) identity[key] = null;
-  };
-  put("name", cells.name);
-  put("phone", cells.phone);
-  put("email", cells.email);
-  put("birthDate", cells.birth_date);
-  put("address", cells.address);
-  return identity;
+/** Somebody new with their row; `at` is the row's place among those it came with. */
+export interface NewRow {
+  id: string;
+  at: number;
+  row: StagedPerson;
+}
+
+/**
+ * Gives the rows of new people their ids. The order is that of the ids, so that the database stores
+ * them side by side, and says nothing of the file's.
+ */
+export function newRows(
+  rows: readonly StagedPerson[],
+  isNew: (row: StagedPerson) => boolean = () => true,
+): NewRow[] {
+  const ids = nearIds(rows.length);
+  return rows
+    .map((row, at) => ({ id: ids[at] as string, at, row }))
+    .filter(({ row }) => isNew(row))
+    .sort((a, b) => (a.id < b.id ? -1 : 1));
+}
+
+/** Seals the identity of new people here, with turns of the event loop between. */
+export async function* packHere(
+  { keys, settings, pause }: CommitContext,
+  people: readonly NewRow[],
+): AsyncGenerator<PackedPeople> {
+  for (let from = 0; from < people.length; from += IDENTITY_SLICE) {
+    const slice = people.slice(from, from + IDENTITY_SLICE);
+    const identities = slice.map(({ id, row }) => ({
+      personId: id,
+      identity: newIdentityOf(row.cells),
+    }));
+    yield packNewPeople(keys, identities, settings.countryCode);
+    await pause();
+  }
 }
 
 /** A random study number may be taken; the part is then repeated with others. */
@@ -55,21 +80,69 @@ async function insertWithRetries(context: CommitContext, people: NewPerson[]): P
   }
 }
 
-/** Encrypts and stores identity in slices, with turns of the event loop between. */
-export async function putIdentity(
-  context: CommitContext,
-  people: readonly { personId: string; identity: Identity }[],
-): Promise<void> {
-  for (let from = 0; from < people.length; from += IDENTITY_SLICE) {
-    const slice = people.slice(from, from + IDENTITY_SLICE);
-    await putPeople(context.tx, context.keys, slice, context.settings.countryCode);
-    await context.pause();
-  }
+const hasTest = (cells: Cells) => Boolean(cells.specimen_date || cells.result_date || cells.result);
+
+/** A new person's row of core; their one test and interview are copied into it. */
+function corePerson({ today, places }: CommitContext, { id, row: { cells } }: NewRow): NewPerson {
+  const { outcome, day } = outcomeOf(cells.died_date);
+  return {
+    id,
+    sex: cells.sex ?? null,
+    ageBand: ageBandOf(cells.birth_date ?? null, today),
+    area: cells.area ?? null,
+    occupation: cells.occupation ?? null,
+    householdId: places.idOf(cells.household, "household"),
+    classification: cells.classification ?? null,
+    onsetDate: cells.onset_date ?? null,
+    specimenDate: cells.specimen_date ?? null,
+    resultDate: cells.result_date ?? null,
+    result: cells.result ?? null,
+    reportDate: cells.report_date ?? null,
+    interviewDate: cells.interview_date ?? null,
+    interviewed: cells.interviewed ?? null,
+    interviewState: cells.interviewed === "yes" ? "complete" : null,
+    isolationDate: cells.isolation_date ?? null,
+    outcome,
+    outcomeDate: day,
+    source: "import",
+  };
 }
 
 /**
  * Records new people from rows: core, identity, classification history, the row's test and its
- * interview.
+ * interview. Their households are on record.
+ *
+ * @param packed their identity as `addPeople` takes it, in parts
+ */
+export async function storeNewPeople(
+  context: CommitContext,
+  people: readonly NewRow[],
+  packed: AsyncIterable<PackedPeople> | Iterable<Promise<PackedPeople>>,
+): Promise<void> {
+  const { tx, actor, counts, settings } = context;
+  if (people.length === 0) return;
+  await insertWithRetries(
+    context,
+    people.map((one) => corePerson(context, one)),
+  );
+  await context.pause();
+  for await (const part of packed) await addPeople(tx, part);
+  const tests = people.flatMap(({ id, row: { cells } }) =>
+    hasTest(cells) ? [testOf(id, cells)] : [],
+  );
+  await insertTests(tx, actor, tests, true);
+  await context.pause();
+  const interviews = people.flatMap(({ id, row: { cells } }) =>
+    cells.interviewed === "yes" ? [{ personId: id, day: cells.interview_date ?? null }] : [],
+  );
+  await insertHeldInterviews(tx, actor, "import", settings.timeZone, interviews);
+  counts.addedPeople += people.length;
+  counts.addedTests += tests.length;
+  counts.addedInterviews += interviews.length;
+}
+
+/**
+ * Records new people, sealing their identity in this thread: for some hundreds.
  *
  * @returns ids of the new people by reference
  */
@@ -77,58 +150,9 @@ export async function putNewPeople(
   context: CommitContext,
   rows: readonly StagedPerson[],
 ): Promise<Map<string, string>> {
-  const { today, places, counts } = context;
-  const ids = new Map(rows.map((row) => [row.cells.ref, randomUUID()]));
-  const idOf = (cells: Cells) => ids.get(cells.ref) as string;
-  const people = rows.map(({ cells }): NewPerson => {
-    const { outcome, day } = outcomeOf(cells.died_date);
-    return {
-      id: idOf(cells),
-      sex: cells.sex ?? null,
-      ageBand: ageBandOf(cells.birth_date ?? null, today),
-      area: cells.area ?? null,
-      occupation: cells.occupation ?? null,
-      householdId: places.idOf(cells.household, "household"),
-      classification: cells.classification ?? null,
-      onsetDate: cells.onset_date ?? null,
-      reportDate: cells.report_date ?? null,
-      interviewDate: cells.interview_date ?? null,
-      interviewed: cells.interviewed ?? null,
-      interviewState: cells.interviewed === "yes" ? "complete" : null,
-      isolationDate: cells.isolation_date ?? null,
-      outcome,
-      outcomeDate: day,
-      source: "import",
-    };
-  });
-  if (people.length === 0) return ids;
-  await insertWithRetries(context, people);
-  await context.pause();
-  await putIdentity(
-    context,
-    rows.map(({ cells }) => ({
-      personId: idOf(cells),
-      identity: { ref: cells.ref, ...identityOf(cells, true) },
-    })),
-  );
-  const tests = rows
-    .filter(({ cells }) => cells.specimen_date || cells.result_date || cells.result)
-    .map(({ cells }) => testOf(idOf(cells), cells));
-  await insertTests(context.tx, context.actor, tests);
-  const interviews = rows
-    .filter(({ cells }) => cells.interviewed === "yes")
-    .map(({ cells }) => ({ personId: idOf(cells), day: cells.interview_date ?? null }));
-  await insertHeldInterviews(
-    context.tx,
-    context.actor,
-    "import",
-    context.settings.timeZone,
-    interviews,
-  );
-  counts.addedPeople += people.length;
-  counts.addedTests += tests.length;
-  counts.addedInterviews += interviews.length;
-  return ids;
+  const people = newRows(rows);
+  await storeNewPeople(context, people, packHere(context, people));
+  return new Map(people.map(({ id, row }) => [row.cells.ref, id]));
 }
 
 /** The test a row tells of. */

@@ -9,6 +9,7 @@ import { safeError, sqlState } from "../../../http/translate-error.ts";
 import type { Services } from "../../../services.ts";
 import { loadInvestigation } from "../../investigations/store.ts";
 import { COMPARED_FIELDS } from "../known-people.ts";
+import { createPackLane } from "../pack-lane.ts";
 import { createPause } from "../pause.ts";
 import { createPlaceBook } from "../place-book.ts";
 import { ProblemList } from "../problem-list.ts";
@@ -20,6 +21,8 @@ import { commitPeople } from "./commit-people.ts";
 type CommitServices = Pick<Services, "pools" | "keys" | "log">;
 
 const PROGRESS_MS = 400;
+/** From this many rows on, a thread of its own is worth its start. */
+const LANE_ROWS = 2_000;
 
 /** Codes that are not about a row by itself: they are found at each try. */
 const AFTER_ROWS: ReadonlySet<FieldErrorCode> = new Set([
@@ -41,15 +44,17 @@ export async function raiseLimits(tx: Tx): Promise<void> {
 }
 
 /** Writes progress from outside the transaction, where others can see it before it ends. */
-function progressWriter(services: CommitServices, id: string) {
+function progressWriter(services: CommitServices, { id, counts }: ImportRow) {
   let written = performance.now();
-  return async (share: number) => {
+  let done = 0;
+  return async (rows: number) => {
+    done += rows;
     if (performance.now() - written < PROGRESS_MS) return;
     written = performance.now();
     await services.pools.system
       .query("update core.import set progress = $2 where id = $1 and state = 'committing'", [
         id,
-        Math.min(share, 0.99),
+        Math.min(done / Math.max(counts.rows ?? 0, 1), 0.99),
       ])
       .catch(() => undefined);
   };
@@ -74,6 +79,16 @@ function finalCounts(row: ImportRow, added: CommitCounts, problems: number) {
   return { ...added, rows, good: rows - skipped, bad: skipped, skipped, problems };
 }
 
+/** Records people; of a long file, the thread that seals them lives as long as that takes. */
+async function recordPeople(context: CommitContext, rows: number): Promise<void> {
+  const lane = rows >= LANE_ROWS ? createPackLane() : null;
+  try {
+    await commitPeople(context, lane);
+  } finally {
+    await lane?.stop();
+  }
+}
+
 async function commitInTx(services: CommitServices, actor: Actor, id: string, tx: Tx) {
   await raiseLimits(tx);
   // Two claims cannot both stand, but a repeated request could start two runs of one claim.
@@ -92,6 +107,7 @@ async function commitInTx(services: CommitServices, actor: Actor, id: string, tx
   problems.add(own);
   problems.count = (row.counts.problems ?? 0) - (row.counts.recordProblems ?? 0);
   const counts = noCounts();
+  const pause = createPause();
   const context: CommitContext = {
     tx,
     actor,
@@ -100,13 +116,15 @@ async function commitInTx(services: CommitServices, actor: Actor, id: string, tx
     importId: id,
     createMissing: row.createMissing && row.kind === "pairs",
     today: dayIn(settings.timeZone, now()),
-    places: createPlaceBook(tx, actor, keys, reserveNumbers(services, actor)),
+    places: createPlaceBook(tx, actor, keys, reserveNumbers(services, actor), pause),
     counts,
     problems,
-    pause: createPause(),
-    progress: progressWriter(services, id),
+    pause,
+    progress: progressWriter(services, row),
   };
-  await (row.kind === "people" ? commitPeople(context) : commitPairs(context));
+  await (row.kind === "people"
+    ? recordPeople(context, row.counts.rows ?? 0)
+    : commitPairs(context));
   counts.addedPlaces = context.places.made;
   await dropStage(tx, id);
   const final = finalCounts(row, counts, problems.count);

@@ -1,18 +1,31 @@
 import { type ChildProcess, spawn } from "node:child_process";
 import { resolve } from "node:path";
 import { freePort } from "../../scripts/lib/postgres.mjs";
-import { BenchClient } from "./http-client.ts";
-import { type BenchRole, FOLDER, PASSWORD } from "./prepare.ts";
 
 const ROOT = resolve(import.meta.dirname, "../..");
 
-/** Starts the real server on a database; ready when it says so. */
+/** The real server as a process of its own. */
+export interface BenchServer {
+  child: ChildProcess;
+  origin: string;
+  /** From spawn to its ready line, ms. */
+  readyMs: number;
+}
+
+/**
+ * Starts the server on a database, on a free port of loopback.
+ *
+ * @param folder data folder with the secrets of that database
+ * @param nodeOptions options for Node.js, e.g. to profile
+ */
 export async function startServer(
   databaseUrl: string,
-): Promise<{ child: ChildProcess; origin: string; readyMs: number }> {
+  folder: string,
+  nodeOptions: readonly string[] = [],
+): Promise<BenchServer> {
   const port = await freePort();
   const started = performance.now();
-  const child = spawn(process.execPath, ["--import", "tsx", "server/main.ts"], {
+  const child = spawn(process.execPath, ["--import", "tsx", ...nodeOptions, "server/main.ts"], {
     cwd: ROOT,
     stdio: ["ignore", "pipe", "inherit"],
     env: {
@@ -21,7 +34,7 @@ export async function startServer(
       PORT: String(port),
       HOST: "127.0.0.1",
       DATABASE_URL: databaseUrl,
-      STRANDLINE_DATA: FOLDER,
+      STRANDLINE_DATA: folder,
       STRANDLINE_DEMO: "0",
       STRANDLINE_LOG_LEVEL: "warn",
     },
@@ -37,16 +50,10 @@ export async function startServer(
   };
 }
 
-/** Ends it and waits until it has gone. */
-export async function stopServer(child: ChildProcess): Promise<void> {
+/** Ends a server and waits until it is gone. */
+export async function stopServer({ child }: Pick<BenchServer, "child">): Promise<void> {
+  if (child.exitCode !== null) return;
   const ended = new Promise<void>((done) => child.once("exit", () => done()));
   child.kill("SIGTERM");
   await ended;
-}
-
-/** Signs in as the account of a role and acts in it. */
-export async function signIn(origin: string, role: BenchRole): Promise<BenchClient> {
-  const client = new BenchClient(origin);
-  await client.call("POST", "/api/session", { email: `${role}@bench.example`, password: PASSWORD });
-  return client;
 }
