@@ -51,6 +51,75 @@ export const importProblem = z.strictObject({
   code: z.string(),
 });
 
+const encoding = z.enum(["utf-8", "utf-16le", "utf-16be"]);
+const delimiter = z.enum(["comma", "semicolon", "tab"]);
+
+/**
+ * How a file is read. `columns` by position: our column, or null for one that is left out, and how
+ * that came about. The file's own headings are not kept: in a file without any they are data.
+ */
+export const importReading = z.strictObject({
+  encoding,
+  mark: z.boolean(),
+  delimiter,
+  columns: z.array(
+    z.strictObject({
+      column: z.string().nullable(),
+      how: z.enum(["exact", "alike", "chosen", "left_out"]),
+    }),
+  ),
+});
+export type ImportReading = z.output<typeof importReading>;
+
+/**
+ * What the first line of a file says, before anything is checked or kept. Headings go back to the
+ * one who sent them and nowhere else.
+ */
+export const headingsAnswer = z.strictObject({
+  encoding,
+  mark: z.boolean(),
+  delimiter,
+  columns: z.array(
+    z.strictObject({
+      heading: z.string(),
+      column: z.string().nullable(),
+      how: z.enum(["exact", "alike", "unknown"]),
+    }),
+  ),
+});
+export type HeadingsAnswer = z.output<typeof headingsAnswer>;
+
+const kind = z.enum(IMPORT_KINDS, { error: "not_in_list" });
+
+/** Fields beside a file: what it lists, and by position the column each of its columns is. */
+export const headingsInput = z.strictObject({ kind });
+export const importInput = z.strictObject({
+  kind,
+  columns: z
+    .string({ error: "not_text" })
+    .transform((value, context) => {
+      try {
+        return JSON.parse(value) as unknown;
+      } catch {
+        context.issues.push({ code: "custom", message: "not_text", input: "" });
+        return z.NEVER;
+      }
+    })
+    .pipe(
+      z
+        .array(
+          z
+            .enum([...PEOPLE_COLUMNS, ...PAIR_COLUMNS], { error: "not_in_list" })
+            .nullable()
+            .optional(),
+          { error: "wrong_type" },
+        )
+        .max(256, { error: "too_many" })
+        .transform((list) => list.map((column) => column ?? null)),
+    )
+    .optional(),
+});
+
 /** A staged file: what it holds, what is wrong with it, and how far its commit is. */
 export const importAnswer = z.strictObject({
   id: uuid,
@@ -60,6 +129,8 @@ export const importAnswer = z.strictObject({
   counts: z.record(z.string(), z.int()),
   problems: z.array(importProblem),
   problemCount: z.int(),
+  /** Null for files that were brought in before this was kept. */
+  reading: importReading.nullable(),
   progress: z.number().min(0).max(1),
   createMissing: z.boolean(),
   recordedAt: z.string(),

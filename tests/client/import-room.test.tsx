@@ -27,6 +27,12 @@ function importOf(overrides: Partial<Import> = {}): Import {
       { line: 9, column: "area", code: "conflict" },
     ],
     problemCount: 3,
+    reading: {
+      encoding: "utf-8",
+      mark: false,
+      delimiter: "comma",
+      columns: [{ column: "ref", how: "exact" }],
+    },
     progress: 0,
     createMissing: false,
     recordedAt: "2026-05-27T10:00:00Z",

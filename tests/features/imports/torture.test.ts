@@ -46,7 +46,7 @@ describe("uploads that are refused", () => {
     [
       "latin-1",
       Buffer.from("ref,name\nA,Ren\xe9e\n", "latin1"),
-      [{ path: "file", code: "encoding" }],
+      [{ path: "file.line.2.byte.15", code: "encoding" }],
     ],
     ["empty", Buffer.alloc(0), [{ path: "file", code: "empty_file" }]],
     [

@@ -1,4 +1,5 @@
 import { createHash } from "node:crypto";
+import type { ImportReading } from "../../../../shared/contracts/imports.ts";
 import { recordEvent } from "../../../audit/record-event.ts";
 import { dayIn, now } from "../../../clock.ts";
 import type { Tx } from "../../../db/with-tx.ts";
@@ -13,6 +14,7 @@ import { COMPARED_FIELDS } from "../known-people.ts";
 import { createPause, type Pause } from "../pause.ts";
 import { type Preview, previewPairs, previewPeople } from "../preview.ts";
 import { ProblemList } from "../problem-list.ts";
+import { planReading } from "../read-headings.ts";
 import { type FileRow, readRows } from "../read-rows.ts";
 import { type Checked, COLUMNS_OF, type ImportKind, type ImportProblem } from "../staged-row.ts";
 import { dropStage, keepImport, keepStage, openImport } from "../store.ts";
@@ -22,9 +24,20 @@ import { raiseLimits } from "./run-commit.ts";
 const CHUNK_ROWS = 2_000;
 const HASH_BYTES = 1024 * 1024;
 
-/** SHA-256 of a file and what it is taken for, in slices. */
-async function fingerprint(kind: ImportKind, bytes: Buffer, pause: Pause): Promise<string> {
+/**
+ * SHA-256 of a file and what it and its columns are taken for, in slices. Where the headings are ours
+ * as written, they say it themselves.
+ */
+async function fingerprint(
+  kind: ImportKind,
+  bytes: Buffer,
+  { columns }: ImportReading,
+  pause: Pause,
+): Promise<string> {
   const hash = createHash("sha256").update(`${kind}\n`);
+  if (columns.some(({ how }) => how !== "exact")) {
+    hash.update(`${JSON.stringify(columns.map(({ column }) => column))}\n`);
+  }
   for (let from = 0; from < bytes.length; from += HASH_BYTES) {
     hash.update(bytes.subarray(from, from + HASH_BYTES));
     await pause();
@@ -87,9 +100,10 @@ async function checkRows<T>(
 
 /**
  * Checks every row of a file and stages the good ones; nothing reaches the record. The same file
- * for the same kind is the same import: one that is on record whole stays as it is. One that is not, or
+ * read the same way for the same kind is the same import: one that is on record whole stays as it is. One that is not, or
  * of which rows were left out for a reference that was not on record, is checked again.
  *
+ * @param chosen by position the column each column of the file is, or null; see `planReading`
  * @returns id of the import
  * @throws HttpProblem 422 when the file as a whole cannot be read; nothing is kept then
  */
@@ -99,14 +113,17 @@ export async function stageFile(
   actor: Actor,
   kind: ImportKind,
   bytes: Buffer,
+  chosen: readonly (string | null)[] | null,
 ): Promise<string> {
   await raiseLimits(tx);
   const pause = createPause();
+  const reading = await planReading(bytes, kind, chosen);
   const { id, state, unknownRows, fresh } = await openImport(
     tx,
     actor,
     kind,
-    await fingerprint(kind, bytes, pause),
+    await fingerprint(kind, bytes, reading, pause),
+    reading,
   );
   if (state === "committing" || (state === "committed" && unknownRows === 0)) return id;
   if (!fresh) await dropStage(tx, id);
@@ -114,12 +131,22 @@ export async function stageFile(
   const keys = await services.keys.of(tx, actor.investigationId);
   const today = dayIn(settings.timeZone, now());
   const staging: Staging = { tx, keys, importId: id, pause };
-  const rows = readRows(bytes, COLUMNS_OF[kind].all, COLUMNS_OF[kind].required);
+  const rows = readRows(bytes, COLUMNS_OF[kind].all, reading);
   const compare = { tx, keys, importId: id, role: actor.role, country: settings.countryCode };
   const { counts, problems } =
     kind === "people"
-      ? await checkRows(staging, rows, peopleChecker(today), previewPeople(compare, actor))
-      : await checkRows(staging, rows, pairsChecker(today), previewPairs(tx, keys));
+      ? await checkRows(
+          staging,
+          rows,
+          peopleChecker(today, settings.timeZone),
+          previewPeople(compare, actor),
+        )
+      : await checkRows(
+          staging,
+          rows,
+          pairsChecker(today, settings.timeZone),
+          previewPairs(tx, keys),
+        );
   await keepImport(tx, id, { state: "ready", counts, problems: problems.sorted() });
   await recordEvent(tx, {
     action: "import.staged",
