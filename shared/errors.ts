@@ -75,6 +75,7 @@ export const FIELD_ERRORS = {
   ref_taken: "This reference is already on record",
   duplicate_ref: "This reference appears twice in the file",
   unknown_ref: "This reference is not on record",
+  waiting_ref: "This reference stands in a row set aside; decide about it first",
   named_by_other: "Must be one of the two references, or blank",
   encoding: "Not readable text; save the file as UTF-8",
   not_csv: "This is not a CSV file",

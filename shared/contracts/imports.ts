@@ -1,5 +1,5 @@
 import { z } from "zod";
-import { uuid } from "./common.ts";
+import { listQuery, uuid } from "./common.ts";
 
 export const PEOPLE_COLUMNS = [
   "ref",
@@ -140,4 +140,56 @@ export type Import = z.output<typeof importAnswer>;
 
 export const importCommitInput = z.strictObject({
   createMissing: z.boolean({ error: "wrong_type" }).default(false),
+});
+
+/** What makes a row doubtful, the strongest first. */
+export const MATCHED_ON = ["phone_and_name", "name_and_birth_year", "phone", "name"] as const;
+export type MatchedOn = (typeof MATCHED_ON)[number];
+
+/** As far as the acting role may see: whole values, or initials, last digits and the year. */
+const likeness = z.strictObject({
+  name: z.string().nullable(),
+  phone: z.string().nullable(),
+  born: z.string().nullable(),
+});
+
+/**
+ * Rows of a people file that may be somebody on record or an earlier row: they wait for a person to
+ * say so. `other` is null while an earlier row itself waits.
+ */
+export const importMatchList = z.strictObject({
+  items: z.array(
+    z.strictObject({
+      id: uuid,
+      line: z.int(),
+      matchedOn: z.enum(MATCHED_ON),
+      row: likeness,
+      other: likeness.extend({ personId: uuid, studyNumber: z.string() }).nullable(),
+    }),
+  ),
+  total: z.int(),
+  page: z.int(),
+  pageSize: z.int(),
+  kinds: z.array(z.strictObject({ matchedOn: z.enum(MATCHED_ON), waiting: z.int() })),
+});
+export type ImportMatchList = z.output<typeof importMatchList>;
+export const importMatchQuery = listQuery.pick({ page: true, pageSize: true });
+
+/** A decision about some rows by id, or about the next of a kind in the order of the file. */
+export const matchDecisionInput = z
+  .strictObject({
+    decision: z.enum(["same", "other"], { error: "not_in_list" }),
+    ids: z.array(uuid).min(1, { error: "required" }).max(200, { error: "too_many" }).optional(),
+    matchedOn: z.enum(MATCHED_ON, { error: "not_in_list" }).optional(),
+  })
+  .refine((body) => (body.ids === undefined) !== (body.matchedOn === undefined), {
+    path: ["ids"],
+    error: "required",
+  });
+/** `waiting`: rows passed over since the earlier row they look like is not decided yet. */
+export const matchDecisionAnswer = z.strictObject({
+  decided: z.int(),
+  waiting: z.int(),
+  left: z.int(),
+  conflicts: z.int(),
 });

@@ -59,6 +59,14 @@ const FUNCTIONS: Record<string, readonly (Role | "system")[]> = {
   "identity.keep_stage(uuid, integer, bytea)": ["supervisor", "officer"],
   "identity.read_stage(uuid)": ["supervisor", "officer"],
   "identity.drop_stage(uuid)": ["supervisor", "officer"],
+  "identity.resembling(jsonb)": ["supervisor", "officer"],
+  "identity.keep_import_matches(uuid, jsonb)": ["supervisor", "officer"],
+  "identity.drop_import_matches(uuid)": ["supervisor", "officer"],
+  "identity.open_import_matches(uuid, uuid[], text, integer, integer)": ["supervisor", "officer"],
+  "identity.count_import_matches(uuid)": ["supervisor", "officer"],
+  "identity.decide_import_matches(uuid, uuid[], text)": ["supervisor", "officer"],
+  "identity.waiting_refs(bytea[])": ["supervisor", "officer"],
+  "identity.add_ref_aliases(jsonb)": ["supervisor", "officer"],
   "identity.put_people(jsonb, jsonb, smallint[])": ["tracer", "supervisor", "officer"],
 };
 

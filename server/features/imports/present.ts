@@ -3,7 +3,7 @@ import { type Headings, suggestColumns } from "./read-headings.ts";
 import type { ImportKind, ImportProblem } from "./staged-row.ts";
 import type { ImportRow } from "./store.ts";
 
-const HIDDEN = new Set(["stagedAt", "recordProblems", "problems", "rows"]);
+const HIDDEN = new Set(["stagedAt", "recordProblems", "problems", "rows", "compared"]);
 
 /**
  * An import as its readers see it.

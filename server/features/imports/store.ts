@@ -78,6 +78,13 @@ export async function openImport(
   return { ...row, fresh: false };
 }
 
+/** Puts an import that is not on record back to the beginning of its check. */
+export async function restartCheck(tx: Tx, id: string): Promise<void> {
+  await tx.execute(
+    sql`update core.import set state = 'checking' where id = ${id} and state <> 'committing'`,
+  );
+}
+
 /**
  * Stores what an import has come to.
  *

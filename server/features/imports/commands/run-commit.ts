@@ -24,6 +24,7 @@ const PROGRESS_MS = 400;
 /** Codes that are not about a row by itself: they are found at each try. */
 const AFTER_ROWS: ReadonlySet<FieldErrorCode> = new Set([
   "unknown_ref",
+  "waiting_ref",
   "conflict",
   "commit_failed",
   "commit_clash",
@@ -69,9 +70,17 @@ function reserveNumbers(services: CommitServices, actor: Actor) {
 
 /** Counts of the finished import: what the file held, and what became of it. */
 function finalCounts(row: ImportRow, added: CommitCounts, problems: number) {
-  const { rows = 0, bad = 0, unknownRows = 0 } = row.counts;
+  const { rows = 0, bad = 0, unknownRows = 0, setAside = 0 } = row.counts;
   const skipped = bad - unknownRows + added.unknownRows;
-  return { ...added, rows, good: rows - skipped, bad: skipped, skipped, problems };
+  return {
+    ...added,
+    rows,
+    good: rows - skipped - setAside,
+    setAside,
+    bad: skipped,
+    skipped,
+    problems,
+  };
 }
 
 async function commitInTx(services: CommitServices, actor: Actor, id: string, tx: Tx) {
