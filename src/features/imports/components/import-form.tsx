@@ -1,6 +1,7 @@
 import { useState } from "react";
 import { useNavigate } from "react-router-dom";
 import { LIMITS } from "../../../../shared/contracts/common.ts";
+import type { HeadingsAnswer } from "../../../../shared/contracts/imports.ts";
 import { paths } from "../../../app/paths.ts";
 import { RadioRow } from "../../../components/fields/radio-row.tsx";
 import { Button } from "../../../components/ui/button.tsx";
@@ -30,7 +31,9 @@ export function ImportForm({ investigationId }: ImportFormProps) {
   // What the headings suggest until somebody chooses otherwise.
   const [chosen, setChosen] = useState<Mapping | null>(null);
   const [faulty, setFaulty] = useState(false);
-  const mapping = chosen ?? (headings.data ? suggestedMapping(headings.data) : null);
+  // Not the request's own data: it must be gone in the moment in which another file is taken.
+  const [found, setFound] = useState<HeadingsAnswer | null>(null);
+  const mapping = chosen ?? (found ? suggestedMapping(found) : null);
   const errors = mapping ? mappingErrors(kind, mapping) : null;
   const tooLarge = file !== null && file.size > LIMITS.fileBytes;
 
@@ -47,9 +50,10 @@ export function ImportForm({ investigationId }: ImportFormProps) {
     setKind(nextKind);
     setFile(nextFile);
     setChosen(null);
+    setFound(null);
     renew();
     if (nextFile && nextFile.size <= LIMITS.fileBytes) {
-      headings.mutate({ kind: nextKind, file: nextFile });
+      headings.mutate({ kind: nextKind, file: nextFile }, { onSuccess: setFound });
     } else headings.reset();
   }
 
@@ -117,10 +121,10 @@ export function ImportForm({ investigationId }: ImportFormProps) {
         </p>
       ) : null}
       {headings.isError ? <RefusedFile error={headings.error} /> : null}
-      {headings.data && mapping ? (
+      {found && mapping ? (
         <ColumnMapping
           kind={kind}
-          found={headings.data}
+          found={found}
           mapping={mapping}
           onChange={(next) => {
             setChosen(next);
@@ -140,7 +144,7 @@ export function ImportForm({ investigationId }: ImportFormProps) {
         <Button
           type="submit"
           variant="primary"
-          disabled={tooLarge || headings.isPending || headings.isError}
+          disabled={file !== null && !found}
           pending={stage.isPending}
           pendingLabel="Checking every row"
         >
