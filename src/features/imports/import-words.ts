@@ -75,7 +75,7 @@ export function previewSentences(one: Import): string[] {
   const [aside, formulas] = [countOf(one, "setAside"), countOf(one, "formulas")];
   if (aside > 0) {
     out.push(
-      `${rows(aside)} may be somebody on record or an earlier row; set aside for you to decide.`,
+      `${rows(aside)} may be somebody on record or an earlier row; set aside, to be decided once the file is on record.`,
     );
   }
   if (formulas > 0) {
@@ -220,7 +220,7 @@ export function decidedWords(answer: {
   const out = [`${rows(decided)} decided.`];
   if (conflicts > 0) {
     out.push(
-      `${values(conflicts)} ${conflicts === 1 ? "differs" : "differ"} and stayed as on record.`,
+      `${values(conflicts)} ${conflicts === 1 ? "differs" : "differ"} and ${conflicts === 1 ? "was" : "were"} not stored.`,
     );
   }
   if (waiting > 0) {

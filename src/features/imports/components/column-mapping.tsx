@@ -36,7 +36,7 @@ export function ColumnMapping({ kind, found, mapping, onChange }: ColumnMappingP
             <HeadCell numeric className="w-10 max-sm:hidden">
               No.
             </HeadCell>
-            <HeadCell>Heading in the file</HeadCell>
+            <HeadCell className="max-sm:ps-0">Heading in the file</HeadCell>
             <HeadCell className="w-[46%] sm:w-56">Taken for</HeadCell>
           </tr>
         </thead>
@@ -50,7 +50,7 @@ export function ColumnMapping({ kind, found, mapping, onChange }: ColumnMappingP
                 <Cell numeric className="max-sm:hidden">
                   {at + 1}
                 </Cell>
-                <Cell className="break-words">
+                <Cell className="break-words max-sm:ps-0">
                   <bdi>{heading === "" ? "(no heading)" : heading}</bdi>
                   <span className="block text-sm text-ink-2">{words}</span>
                 </Cell>

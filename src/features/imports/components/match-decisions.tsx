@@ -49,8 +49,8 @@ export function MatchDecisions({ investigationId, importId }: MatchDecisionsProp
       {found.total > 0 ? (
         <p className="mb-3 max-w-[70ch] text-ink-2">
           These rows may be somebody who is on record, or an earlier row of the file. As the same
-          person, a row fills blanks and its reference names that person too; what differs stays as
-          it is on record. As another person, it is added. A decision is recorded under your name.
+          person, a row fills blanks and its reference names that person too; what differs is not
+          stored. As another person, it is added. A decision is recorded under your name.
         </p>
       ) : null}
       {decide.isError ? (
