@@ -38,6 +38,8 @@ export const EVENTS = [
   "match_reviews.listed",
   "import.staged",
   "import.committed",
+  "import.matches_listed",
+  "import.matches_decided",
   "access_events.read",
   "field_policy.read",
 ] as const;

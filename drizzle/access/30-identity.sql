@@ -159,7 +159,10 @@ begin
     raise insufficient_privilege using message = 'no context';
   end if;
   return query select i.ref_token, i.person_id from unnest(p_tokens) t (token)
-    join identity.person i on i.investigation_id = c.investigation_id and i.ref_token = t.token;
+    join identity.person i on i.investigation_id = c.investigation_id and i.ref_token = t.token
+    union all
+    select a.ref_token, a.person_id from unnest(p_tokens) t (token)
+    join identity.ref_alias a on a.investigation_id = c.investigation_id and a.ref_token = t.token;
 end $$;
 
 -- True when a reference is taken in the acting investigation (says nothing of whom).
@@ -168,6 +171,9 @@ language sql stable security definer set search_path = pg_catalog, pg_temp as $$
   select exists (select 1 from identity.person i
     where i.investigation_id = core.ctx_investigation() and i.ref_token = p_token
       and i.person_id is distinct from p_except)
+    or exists (select 1 from identity.ref_alias a
+      where a.investigation_id = core.ctx_investigation() and a.ref_token = p_token
+        and a.person_id is distinct from p_except)
 $$;
 
 -- Ciphertext of people a file names, to compare and fill blanks; the import's own event records it.
@@ -179,7 +185,8 @@ begin
   select * into c from core.ctx();
   if c.account_id is null or c.role not in ('supervisor', 'officer') or not exists (
     select 1 from core.import f where f.id = p_import and f.investigation_id = c.investigation_id
-      and f.state in ('checking', 'ready', 'committing')) then
+      and (f.state in ('checking', 'ready', 'committing') or exists (
+        select 1 from identity.import_match m where m.import_id = f.id and m.state = 'open'))) then
     raise insufficient_privilege using message = 'no context';
   end if;
   return query

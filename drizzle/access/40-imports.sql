@@ -7,7 +7,8 @@ begin
   select * into c from core.ctx();
   if c.account_id is null or c.role not in ('supervisor', 'officer') or not exists (
     select 1 from core.import f where f.id = p_import and f.investigation_id = c.investigation_id
-      and f.state = 'committing') then
+      and (f.state = 'committing' or exists (
+        select 1 from identity.import_match m where m.import_id = f.id))) then
     raise insufficient_privilege using message = 'no context';
   end if;
   update core.person p set occupation = r.occupation
@@ -25,6 +26,7 @@ begin
     and to_timestamp((counts ->> 'stagedAt')::double precision) < now() - interval '1 day';
   if v_ids is null then return 0; end if;
   delete from identity.import_stage where import_id = any (v_ids);
+  delete from identity.import_match where import_id = any (v_ids);
   update core.import set state = 'failed', counts = counts - 'stagedAt' where id = any (v_ids);
   return cardinality(v_ids);
 end $$;

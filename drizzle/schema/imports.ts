@@ -1,5 +1,6 @@
 import {
   boolean,
+  index,
   integer,
   jsonb,
   primaryKey,
@@ -9,6 +10,7 @@ import {
   uuid,
 } from "drizzle-orm/pg-core";
 import { investigation } from "./investigations.ts";
+import { person } from "./people.ts";
 import { at, bytea, core, identity, recordedAt } from "./shared.ts";
 
 export const fileImport = core.table(
@@ -25,6 +27,8 @@ export const fileImport = core.table(
     counts: jsonb("counts").notNull().default({}),
     // Line, column and code; never a value.
     problems: jsonb("problems").notNull().default([]),
+    // Encoding, separator, and which of our columns each column is; never a heading.
+    reading: jsonb("reading"),
     progress: real("progress").notNull().default(0),
     createMissing: boolean("create_missing").notNull().default(false),
     recordedAt: recordedAt(),
@@ -46,4 +50,45 @@ export const importStage = identity.table(
     bodyCipher: bytea("body_cipher").notNull(),
   },
   (t) => [primaryKey({ columns: [t.importId, t.chunk] })],
+);
+
+/**
+ * Rows of a people file that look like somebody on record, or like an earlier row of the file: set
+ * aside until a person decides. The row is encrypted, and deleted with the decision.
+ */
+export const importMatch = identity.table(
+  "import_match",
+  {
+    id: uuid("id").primaryKey(),
+    importId: uuid("import_id")
+      .notNull()
+      .references(() => fileImport.id),
+    investigationId: uuid("investigation_id").notNull(),
+    line: integer("line").notNull(),
+    refToken: bytea("ref_token").notNull(),
+    // The person it looks like; null when that is an earlier row, whose reference is in the body.
+    otherId: uuid("other_id").references(() => person.id),
+    matchedOn: text("matched_on").notNull(),
+    bodyCipher: bytea("body_cipher"),
+    state: text("state").notNull().default("open"),
+    decidedBy: uuid("decided_by"),
+    decidedAt: at("decided_at"),
+  },
+  (t) => [
+    uniqueIndex("import_match_line").on(t.importId, t.line),
+    index("import_match_ref").on(t.investigationId, t.refToken),
+  ],
+);
+
+/** Further references of a person: those of rows that were decided to be the same person. */
+export const refAlias = identity.table(
+  "ref_alias",
+  {
+    investigationId: uuid("investigation_id").notNull(),
+    refToken: bytea("ref_token").notNull(),
+    personId: uuid("person_id")
+      .notNull()
+      .references(() => person.id),
+  },
+  (t) => [primaryKey({ columns: [t.investigationId, t.refToken] })],
 );

@@ -21,7 +21,8 @@ const upload = multer({
     parts: 8,
     fileSize: LIMITS.fileBytes,
     fieldNameSize: 64,
-    fieldSize: 1024,
+    // A choice of column for each of 256 columns fits.
+    fieldSize: 8192,
   },
 });
 

@@ -220,6 +220,7 @@ export const CORE_FIELDS = [
     ["row_count", "operational", "NFNF"],
     ["counts", "operational", "NFNF"],
     ["problems", "operational", "NFNF"],
+    ["reading", "operational", "NFNF"],
     ["progress", "operational", "NFNF"],
     ["create_missing", "operational", "NFNF"],
     ["recorded_at", "operational", "NFNF"],

@@ -61,10 +61,14 @@ test("a file with errors is listed line by line, and nothing of it is stored", a
   await expectAccessible(page, "an import with problems");
 
   await page.goto(`/i/${id}/trace/import`);
-  await checkFile(page, "People", ["ref,surname", "X-1,Marsh"]);
+  await checkFile(page, "People", ["list number,surname", "X-1,Marsh"]);
   const refusal = page.getByRole("alert");
+  await expect(refusal).toContainText("No column is taken for ref");
+  await page.getByLabel("Column 1 is taken for").selectOption("ref");
+  await expect(refusal).toHaveCount(0);
+  await checkFile(page, "People", ["ref,name", 'X-1,"Marsh']);
   await expect(refusal).toContainText("The file was not taken.");
-  await expect(refusal).toContainText("Column 2 of the first line: Not a column of this file");
+  await expect(refusal).toContainText("Line 2: A quotation mark is not closed");
 
   await checkFile(page, "Contact pairs", ["ref_a,ref_b,named_by", "NOWHERE-1,NOWHERE-2,NOWHERE-3"]);
   expect(await problems(page)).toContainEqual([

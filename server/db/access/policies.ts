@@ -214,6 +214,8 @@ const IDENTITY_TABLES = [
   "identity.follow_check",
   "identity.interview_draft",
   "identity.import_stage",
+  "identity.import_match",
+  "identity.ref_alias",
   "identity.data_key",
 ] as const;
 

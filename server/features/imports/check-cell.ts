@@ -2,6 +2,7 @@ import type { z } from "zod";
 import { LIMITS, text } from "../../../shared/contracts/common.ts";
 import { FIELD_ERRORS, type FieldErrorCode } from "../../../shared/errors.ts";
 import { MISSING } from "../../../shared/vocabulary.ts";
+import { dayIn } from "../../clock.ts";
 
 /** What a cell holds after its check: a value in its stored form, or the code of its error. */
 export type CellResult = { value: string } | { code: FieldErrorCode };
@@ -13,6 +14,54 @@ const KEPT_RESULTS = 20_000;
 /** True for the words that stand for a value asked for and not got. */
 export function isMissingWord(value: string): boolean {
   return (MISSING as readonly string[]).includes(value);
+}
+
+/** What lists write where nothing is known; read as the word `unknown`. */
+const UNKNOWN_WORDS: ReadonlySet<string> = new Set(["n/a", "null", "-", "--", "–", "—", "unknown"]);
+/** An apostrophe that our own export puts before what a spreadsheet would run as a formula. */
+const ESCAPED = /^'+[=+\-@\t\r＝＋－＠]/;
+// biome-ignore lint/suspicious/noControlCharactersInRegex: control characters are what is refused
+const UNSEEN = /[\u0000-\u0008\u000B\u000C\u000E-\u001F\u007F-\u009F\u202A-\u202E\u2066-\u2069]/;
+const FORMULA = /^[=+\-@\t\r＝＋－＠]/;
+
+/** True for a cell that a spreadsheet could run as a formula; kept as it is, and counted. */
+export function looksLikeFormula(cell: string): boolean {
+  return FORMULA.test(cell);
+}
+
+/**
+ * Reads and checks one cell: trimmed, without the apostrophe of an export, words for "nothing
+ * known" as `unknown` (or blank in a column that does not take that word). A character that cannot
+ * be seen or turns the text round is an error.
+ *
+ * @returns null for blank
+ */
+export function checkCell(check: CellCheck, raw: string | undefined): CellResult | null {
+  const trimmed = (raw ?? "").trim();
+  if (trimmed === "") return null;
+  if (UNSEEN.test(trimmed)) return { code: "bad_character" };
+  const cell = ESCAPED.test(trimmed) ? trimmed.slice(1).trim() : trimmed;
+  if (!UNKNOWN_WORDS.has(cell.toLowerCase())) return check(cell);
+  const result = check("unknown");
+  return "code" in result && cell.toLowerCase() !== "unknown" ? null : result;
+}
+
+const INSTANT =
+  /^(\d{4}-\d{2}-\d{2})[T ]([01]\d|2[0-3]):[0-5]\d(?::[0-5]\d(?:\.\d{1,9})?)?(Z|[+-](?:0\d|1[0-4]):[0-5]\d)?$/;
+
+/**
+ * Takes an ISO date with a time for its day: as written where it names no offset, else the local day
+ * of that instant in the investigation's zone.
+ */
+export function dayOfInstant(check: CellCheck, timeZone: string): CellCheck {
+  return (cell) => {
+    const match = INSTANT.exec(cell);
+    if (!match) return check(cell);
+    const day = match[1] ?? "";
+    const written = check(day);
+    if ("code" in written || !match[3]) return written;
+    return check(dayIn(timeZone, cell.replace(" ", "T")));
+  };
 }
 
 function codeOf(error: z.ZodError): FieldErrorCode {

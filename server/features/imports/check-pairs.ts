@@ -4,6 +4,8 @@ import { contactInput } from "../../../shared/contracts/interviews.ts";
 import {
   byContract,
   type CellCheck,
+  checkCell,
+  dayOfInstant,
   isMissingWord,
   notInFuture,
   numeric,
@@ -13,8 +15,8 @@ import {
 import type { FileRow } from "./read-rows.ts";
 import type { Checked, ImportProblem, PairColumn, StagedPair } from "./staged-row.ts";
 
-function checksFor(today: string): Record<PairColumn, CellCheck> {
-  const day = remembered(notInFuture(byContract(partialDay), today));
+function checksFor(today: string, timeZone: string): Record<PairColumn, CellCheck> {
+  const day = remembered(dayOfInstant(notInFuture(byContract(partialDay), today), timeZone));
   return {
     ref_a: reference,
     ref_b: reference,
@@ -36,22 +38,25 @@ const isDay = (value: string | undefined): value is string =>
  * are on record is found later, for many rows at once.
  *
  * @param today local day of the investigation
+ * @param timeZone zone in which an instant is taken for its local day
  */
-export function pairsChecker(today: string): (row: FileRow) => Checked<StagedPair> {
-  const checks = checksFor(today);
+export function pairsChecker(
+  today: string,
+  timeZone: string,
+): (row: FileRow) => Checked<StagedPair> {
+  const checks = checksFor(today, timeZone);
   return ({ line, cells, ragged }) => {
     if (ragged) return { row: null, problems: [{ line, column: "row", code: "ragged_row" }] };
     const problems: ImportProblem[] = [];
     const kept: Partial<Record<PairColumn, string>> = {};
     PAIR_COLUMNS.forEach((column, at) => {
-      const cell = (cells[at] ?? "").trim();
-      if (cell === "") {
+      const result = checkCell(checks[column], cells[at]);
+      if (result === null) {
         if (column === "ref_a" || column === "ref_b") {
           problems.push({ line, column, code: "required" });
         }
         return;
       }
-      const result = checks[column](cell);
       if ("code" in result) problems.push({ line, column, code: result.code });
       else if (result.value !== "") kept[column] = result.value;
     });

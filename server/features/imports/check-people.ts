@@ -4,6 +4,8 @@ import { looksLikePhone } from "../../identity/tokens.ts";
 import {
   byContract,
   type CellCheck,
+  checkCell,
+  dayOfInstant,
   isMissingWord,
   notInFuture,
   reference,
@@ -21,8 +23,10 @@ const phone: CellCheck = (cell) => {
   return looksLikePhone(result.value) ? result : { code: "not_a_phone" };
 };
 
-function checksFor(today: string): Record<PeopleColumn, CellCheck> {
-  const day = remembered(notInFuture(byContract(personFields.onsetDate), today));
+function checksFor(today: string, timeZone: string): Record<PeopleColumn, CellCheck> {
+  const day = remembered(
+    dayOfInstant(notInFuture(byContract(personFields.onsetDate), today), timeZone),
+  );
   return {
     ref: reference,
     name,
@@ -52,21 +56,24 @@ function checksFor(today: string): Record<PeopleColumn, CellCheck> {
  * file as a whole can tell (a reference that appears twice; the first appearance stands).
  *
  * @param today local day of the investigation
+ * @param timeZone zone in which an instant is taken for its local day
  */
-export function peopleChecker(today: string): (row: FileRow) => Checked<StagedPerson> {
-  const checks = checksFor(today);
+export function peopleChecker(
+  today: string,
+  timeZone: string,
+): (row: FileRow) => Checked<StagedPerson> {
+  const checks = checksFor(today, timeZone);
   const seen = new Set<string>();
   return ({ line, cells, ragged }) => {
     if (ragged) return { row: null, problems: [{ line, column: "row", code: "ragged_row" }] };
     const problems: ImportProblem[] = [];
     const kept: Partial<Record<PeopleColumn, string>> = {};
     PEOPLE_COLUMNS.forEach((column, at) => {
-      const cell = (cells[at] ?? "").trim();
-      if (cell === "") {
+      const result = checkCell(checks[column], cells[at]);
+      if (result === null) {
         if (column === "ref") problems.push({ line, column, code: "required" });
         return;
       }
-      const result = checks[column](cell);
       if ("code" in result) problems.push({ line, column, code: result.code });
       else if (result.value !== "") kept[column] = result.value;
     });

@@ -56,7 +56,8 @@ async function coreOnRecord(tx: Tx, role: Role, ids: readonly string[]) {
   return new Map(found.rows.map((row) => [row.id, row]));
 }
 
-async function identityOnRecord(
+/** Identity of people on record by the columns of a file; the event of the import tells of it. */
+export async function identityOnRecord(
   tx: Tx,
   keys: InvestigationKeys,
   importId: string,

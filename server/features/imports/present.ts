@@ -1,8 +1,9 @@
-import type { Import } from "../../../shared/contracts/imports.ts";
-import type { ImportProblem } from "./staged-row.ts";
+import type { HeadingsAnswer, Import } from "../../../shared/contracts/imports.ts";
+import { type Headings, suggestColumns } from "./read-headings.ts";
+import type { ImportKind, ImportProblem } from "./staged-row.ts";
 import type { ImportRow } from "./store.ts";
 
-const HIDDEN = new Set(["stagedAt", "recordProblems", "problems", "rows"]);
+const HIDDEN = new Set(["stagedAt", "recordProblems", "problems", "rows", "compared"]);
 
 /**
  * An import as its readers see it.
@@ -24,9 +25,28 @@ export function presentImport(row: ImportRow, most = Number.POSITIVE_INFINITY): 
     counts: Object.fromEntries(Object.entries(row.counts).filter(([key]) => !HIDDEN.has(key))),
     problems: problems.slice(0, most),
     problemCount: Math.max(row.counts.problems ?? 0, problems.length),
+    reading: row.reading,
     progress: row.progress,
     createMissing: row.createMissing,
     recordedAt: row.recordedAt,
     committedAt: row.committedAt,
+  };
+}
+
+/** Longest heading that is sent back; enough to know it by. */
+const HEADING_CHARACTERS = 80;
+
+/** The first line of a file as the one who sent it sees it, with what each column is taken for. */
+export function presentHeadings(kind: ImportKind, found: Headings): HeadingsAnswer {
+  const { encoding, mark, delimiter, headings } = found;
+  const suggested = suggestColumns(kind, headings);
+  return {
+    encoding,
+    mark,
+    delimiter,
+    columns: headings.map((heading, at) => ({
+      heading: [...heading.toWellFormed()].slice(0, HEADING_CHARACTERS).join(""),
+      ...(suggested[at] ?? { column: null, how: "unknown" }),
+    })),
   };
 }

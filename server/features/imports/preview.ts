@@ -1,7 +1,9 @@
 import type { Tx } from "../../db/with-tx.ts";
 import type { Actor } from "../../http/route.ts";
 import type { InvestigationKeys } from "../../identity/keys.ts";
+import { createDoubtFinder, type Doubt } from "./find-doubts.ts";
 import { type CompareContext, compareKnown } from "./known-people.ts";
+import type { Pause } from "./pause.ts";
 import { createPlaceBook } from "./place-book.ts";
 import { createRefBook } from "./ref-book.ts";
 import type { ImportProblem, StagedPair, StagedPerson } from "./staged-row.ts";
@@ -10,43 +12,65 @@ import { tellingKey } from "./telling.ts";
 
 /** What staged rows would do to the record, found a chunk at a time; nothing is changed. */
 export interface Preview<T> {
-  /** Looks at the next rows; answers the problems they have with the record. */
-  add(rows: readonly T[]): Promise<ImportProblem[]>;
+  /** Looks at the next rows; answers their problems with the record, and those to set aside. */
+  add(rows: readonly T[]): Promise<{ problems: ImportProblem[]; doubts: Doubt[] }>;
+  /** Rows to look at together: finding doubtful ones costs by the call, not by the row. */
+  rowsAtOnce: number;
   counts(): Record<string, number>;
 }
 
-/** Preview of a people file: who is new, who is known, what would be filled and what differs. */
-export function previewPeople(compare: CompareContext, actor: Actor): Preview<StagedPerson> {
+/** People compared at a stretch: opening what is on record of them is one piece of work. */
+const COMPARED_AT_ONCE = 500;
+
+/**
+ * Preview of a people file: who is new, who is known, who may be somebody else, what would be filled
+ * and what differs.
+ */
+export function previewPeople(
+  compare: CompareContext,
+  actor: Actor,
+  pause: Pause,
+): Preview<StagedPerson> {
   const { tx, keys } = compare;
   const places = createPlaceBook(tx, actor, keys, () => {
     throw new Error("a preview makes no places");
   });
-  const counts = { new: 0, known: 0, filled: 0, conflicts: 0 };
+  const doubtful = createDoubtFinder(compare, pause);
+  const counts = { new: 0, known: 0, filled: 0, conflicts: 0, setAside: 0 };
+
+  async function compareRows(rows: readonly { row: StagedPerson; personId: string }[]) {
+    const households = await places.knownHouseholds(
+      rows.flatMap(({ row }) => row.cells.household ?? []),
+    );
+    const compared = await compareKnown(compare, rows, households);
+    counts.filled += compared.filter(({ fills }) => Object.keys(fills).length > 1).length;
+    return compared.flatMap(({ line, conflicts }) =>
+      conflicts.map((column): ImportProblem => ({ line, column, code: "conflict" })),
+    );
+  }
+
   return {
+    rowsAtOnce: 10_000,
     async add(rows) {
-      const ids = await peopleByRef(
-        tx,
-        keys,
-        rows.map((row) => row.cells.ref),
-      );
+      const refs = rows.map((row) => row.cells.ref);
+      const ids = await peopleByRef(tx, keys, refs);
       const known = rows.flatMap((row) => {
         const personId = ids.get(row.cells.ref);
         return personId ? [{ row, personId }] : [];
       });
-      const households = await places.knownHouseholds(
-        known.flatMap(({ row }) => row.cells.household ?? []),
-      );
-      const compared = await compareKnown(compare, known, households);
+      const problems: ImportProblem[] = [];
+      for (let from = 0; from < known.length; from += COMPARED_AT_ONCE) {
+        problems.push(...(await compareRows(known.slice(from, from + COMPARED_AT_ONCE))));
+        await pause();
+      }
+      const doubts = await doubtful.find(rows, ids);
       counts.known += known.length;
-      counts.new += rows.length - known.length;
-      const problems = compared.flatMap(({ line, conflicts }) =>
-        conflicts.map((column): ImportProblem => ({ line, column, code: "conflict" })),
-      );
+      counts.setAside += doubts.length;
+      counts.new += rows.length - known.length - doubts.length;
       counts.conflicts += problems.length;
-      counts.filled += compared.filter(({ fills }) => Object.keys(fills).length > 1).length;
-      return problems;
+      return { problems, doubts };
     },
-    counts: () => ({ ...counts }),
+    counts: () => ({ ...counts, compared: counts.known + doubtful.opened }),
   };
 }
 
@@ -56,6 +80,7 @@ export function previewPairs(tx: Tx, keys: InvestigationKeys): Preview<StagedPai
   const told = new Set<string>();
   const counts = { unknownRows: 0, repeated: 0 };
   return {
+    rowsAtOnce: 2_000,
     async add(rows) {
       await refs.find(rows);
       const problems: ImportProblem[] = [];
@@ -67,7 +92,7 @@ export function previewPairs(tx: Tx, keys: InvestigationKeys): Preview<StagedPai
         if (told.has(key)) counts.repeated += 1;
         told.add(key);
       }
-      return problems;
+      return { problems, doubts: [] };
     },
     counts: () => ({ ...counts, unknownRefs: refs.missing() }),
   };

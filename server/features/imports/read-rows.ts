@@ -1,13 +1,12 @@
 import { type CsvError, parse } from "csv-parse";
-import type { FieldError, FieldErrorCode } from "../../../shared/errors.ts";
+import type { ImportReading } from "../../../shared/contracts/imports.ts";
+import type { FieldErrorCode } from "../../../shared/errors.ts";
 import { HttpProblem, invalid } from "../../http/problem.ts";
-import { fileText, refuseOtherFormats } from "./file-text.ts";
+import { fileText } from "./file-text.ts";
+import { DELIMITERS, MAX_ROW_CHARACTERS } from "./read-headings.ts";
 
 /** Data rows a file may hold. */
 export const MAX_ROWS = 1_000_000;
-/** Longest row in characters; a quotation mark that is never closed ends here at the latest. */
-const MAX_ROW_CHARACTERS = 256 * 1024;
-const LISTED_ERRORS = 50;
 
 /** A data row: the physical line on which it begins (the header is line 1) and its cells. */
 export interface FileRow {
@@ -41,36 +40,6 @@ const PARSER_CODES: Record<string, FieldErrorCode> = {
   CSV_INVALID_CLOSING_QUOTE: "stray_quote",
 };
 
-/**
- * Where each expected column stands in the file. A heading that is not ours is named by its place
- * only: in a file without headings it is somebody's data.
- */
-function placeColumns(
-  header: readonly string[],
-  expected: readonly string[],
-  required: readonly string[],
-): number[] {
-  const names = header.map((name) => name.trim());
-  if (names.some((name) => name.includes("\0"))) throw invalid({ path: "file", code: "encoding" });
-  const errors: FieldError[] = [];
-  const seen = new Set<string>();
-  names.forEach((name, at) => {
-    const path = `file.columns.${at + 1}`;
-    if (!expected.includes(name)) errors.push({ path, code: "unknown_column" });
-    else if (seen.has(name))
-      errors.push({ path: `file.columns.${name}`, code: "duplicate_column" });
-    seen.add(name);
-  });
-  if (names.length === 1 && errors.length === 1 && /[;\t|]/.test(names[0] ?? "")) {
-    throw invalid({ path: "file", code: "wrong_delimiter" });
-  }
-  for (const name of required) {
-    if (!seen.has(name)) errors.push({ path: `file.columns.${name}`, code: "required_column" });
-  }
-  if (errors.length > 0) throw invalid(...errors.slice(0, LISTED_ERRORS));
-  return expected.map((name) => names.indexOf(name));
-}
-
 function readFault(error: unknown, line: number): Error {
   if (error instanceof HttpProblem) return error;
   const code = PARSER_CODES[(error as Partial<CsvError>).code ?? ""];
@@ -79,24 +48,23 @@ function readFault(error: unknown, line: number): Error {
 }
 
 /**
- * Reads a comma-separated file: UTF-8 with or without byte-order mark, any line ends, quoted cells.
- * Blank lines are skipped. A row of the wrong length is given as ragged; blank surplus cells are
- * nothing. Work is cut into slices, so other requests go on meanwhile.
+ * Reads the rows of a file as planned: any line ends, quoted cells. Blank lines are skipped. A row of
+ * the wrong length is given as ragged; blank surplus cells are nothing. Work is cut into slices, so
+ * other requests go on meanwhile.
  *
  * @param bytes content of the file
- * @param expected the only columns the file may have, in any order
- * @param required those it must have
- * @throws HttpProblem 422 when the file as a whole cannot be read; paths are `file`,
- * `file.line.N` and `file.columns.N`, never a value
+ * @param expected our columns, in the order in which cells are wanted
+ * @param reading how the file is read, from `planReading`
+ * @throws HttpProblem 422 when the file as a whole cannot be read; paths are `file` and
+ * `file.line.N`, never a value
  */
 export async function* readRows(
   bytes: Buffer,
   expected: readonly string[],
-  required: readonly string[],
+  reading: ImportReading,
 ): AsyncGenerator<FileRow> {
-  refuseOtherFormats(bytes);
   const parser = parse({
-    delimiter: ",",
+    delimiter: DELIMITERS[reading.delimiter],
     quote: '"',
     record_delimiter: "\n",
     bom: true,
@@ -105,11 +73,12 @@ export async function* readRows(
     skip_empty_lines: true,
     max_record_size: MAX_ROW_CHARACTERS,
   });
-  let places: number[] | undefined;
-  let width = 0;
+  const places = expected.map((name) => reading.columns.findIndex(({ column }) => column === name));
+  const width = reading.columns.length;
+  let heading = true;
   let rows = 0;
   let lastLine = 0;
-  const source = fileText(bytes);
+  const source = fileText(bytes, reading);
   let fault: unknown;
   const feeding = feed(source, parser).catch((error: unknown) => {
     fault = error;
@@ -119,9 +88,8 @@ export async function* readRows(
     for await (const { record, info } of parser as AsyncIterable<Parsed>) {
       lastLine = info.lines;
       if (record.every(blank)) continue;
-      if (!places) {
-        places = placeColumns(record, expected, required);
-        width = record.length;
+      if (heading) {
+        heading = false;
         continue;
       }
       rows += 1;

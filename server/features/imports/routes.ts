@@ -1,15 +1,24 @@
 import { z } from "zod";
 import { listOf, listQuery } from "../../../shared/contracts/common.ts";
 import {
-  IMPORT_KINDS,
+  headingsAnswer,
+  headingsInput,
   importAnswer,
   importCommitInput,
+  importInput,
+  importMatchList,
+  importMatchQuery,
+  matchDecisionAnswer,
+  matchDecisionInput,
 } from "../../../shared/contracts/imports.ts";
 import { HttpProblem, invalid } from "../../http/problem.ts";
 import { type AnyRoute, defineRoute } from "../../http/route.ts";
+import { decideMatches } from "./commands/decide-matches.ts";
 import { runCommit } from "./commands/run-commit.ts";
 import { stageFile } from "./commands/stage-file.ts";
-import { presentImport } from "./present.ts";
+import { listMatches } from "./list-matches.ts";
+import { presentHeadings, presentImport } from "./present.ts";
+import { readHeadings } from "./read-headings.ts";
 import { claimCommit, type ImportRow, listImports, loadImport } from "./store.ts";
 
 const params = z.object({ id: z.uuid() });
@@ -48,13 +57,27 @@ export const importRoutes: AnyRoute[] = [
     policy: LEADERS,
     params,
     upload: true,
-    body: z.strictObject({ kind: z.enum(IMPORT_KINDS, { error: "not_in_list" }) }),
+    body: importInput,
     output: importAnswer,
     creates: true,
     async run({ tx, actor, body, file, services }) {
       if (!file) throw invalid({ path: "file", code: "required" });
-      const id = await stageFile(tx, services, actor, body.kind, file.buffer);
+      const id = await stageFile(tx, services, actor, body.kind, file.buffer, body.columns ?? null);
       return presentImport(found(await loadImport(tx, id)), RECEIPT_PROBLEMS);
+    },
+  }),
+  defineRoute({
+    method: "post",
+    path: "/api/investigations/:id/imports/headings",
+    summary: "What the first line of a file says: encoding, separator, columns; keeps nothing",
+    policy: LEADERS,
+    params,
+    upload: true,
+    body: headingsInput,
+    output: headingsAnswer,
+    async run({ body, file }) {
+      if (!file) throw invalid({ path: "file", code: "required" });
+      return presentHeadings(body.kind, await readHeadings(file.buffer));
     },
   }),
   defineRoute({
@@ -86,6 +109,32 @@ export const importRoutes: AnyRoute[] = [
         throw new HttpProblem("conflict");
       }
       return presentImport(row, RECEIPT_PROBLEMS);
+    },
+  }),
+  defineRoute({
+    method: "get",
+    path: "/api/investigations/:id/imports/:importId/matches",
+    summary: "Rows set aside because they may be somebody else; the reading is recorded",
+    policy: LEADERS,
+    params: importParams,
+    query: importMatchQuery,
+    output: importMatchList,
+    async run({ tx, actor, params: { importId }, query, services }) {
+      found(await loadImport(tx, importId));
+      const keys = await services.keys.of(tx, actor.investigationId);
+      return listMatches(tx, actor, keys, importId, query);
+    },
+  }),
+  defineRoute({
+    method: "post",
+    path: "/api/investigations/:id/imports/:importId/matches",
+    summary: "Decide about rows set aside: some, or the next two hundred of a kind",
+    policy: LEADERS,
+    params: importParams,
+    body: matchDecisionInput,
+    output: matchDecisionAnswer,
+    async run({ tx, actor, params: { importId }, body, services }) {
+      return decideMatches(tx, services, actor, importId, body);
     },
   }),
 ];

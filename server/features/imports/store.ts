@@ -1,6 +1,6 @@
 import { randomUUID } from "node:crypto";
 import { sql } from "drizzle-orm";
-import type { Import } from "../../../shared/contracts/imports.ts";
+import type { Import, ImportReading } from "../../../shared/contracts/imports.ts";
 import { byteas } from "../../db/binary-arrays.ts";
 import type { Tx } from "../../db/with-tx.ts";
 import type { Actor } from "../../http/route.ts";
@@ -18,13 +18,14 @@ export interface ImportRow {
   rowCount: number;
   counts: Record<string, number>;
   problems: ImportProblem[];
+  reading: ImportReading | null;
   progress: number;
   createMissing: boolean;
   recordedAt: string;
   committedAt: string | null;
 }
 
-const BARE = `id, kind, state, row_count as "rowCount", counts, progress,
+const BARE = `id, kind, state, row_count as "rowCount", counts, reading, progress,
   create_missing as "createMissing", recorded_at as "recordedAt", committed_at as "committedAt"`;
 
 /** An import with its problems, or undefined when there is none in this investigation. */
@@ -52,7 +53,7 @@ export async function listImports(
 }
 
 /**
- * Opens an import for a file, or finds the one the same file (bytes and kind) made before and
+ * Opens an import for a file, or finds the one the same file (bytes, kind and columns) made before and
  * locks it.
  */
 export async function openImport(
@@ -60,11 +61,13 @@ export async function openImport(
   actor: Actor,
   kind: ImportKind,
   sha256: string,
+  reading: ImportReading,
 ): Promise<{ id: string; state: ImportRow["state"]; unknownRows: number; fresh: boolean }> {
   const id = randomUUID();
   const made = await tx.execute(
-    sql`insert into core.import (id, investigation_id, kind, sha256, state, recorded_by)
-        values (${id}, ${actor.investigationId}, ${kind}, ${sha256}, 'checking', ${actor.accountId})
+    sql`insert into core.import (id, investigation_id, kind, sha256, reading, state, recorded_by)
+        values (${id}, ${actor.investigationId}, ${kind}, ${sha256},
+          ${JSON.stringify(reading)}::jsonb, 'checking', ${actor.accountId})
         on conflict do nothing`,
   );
   if (made.rowCount === 1) return { id, state: "checking", unknownRows: 0, fresh: true };
@@ -75,6 +78,13 @@ export async function openImport(
   const row = found.rows[0];
   if (!row) throw new Error("an import of this file is there and is not");
   return { ...row, fresh: false };
+}
+
+/** Puts an import that is not on record back to the beginning of its check. */
+export async function restartCheck(tx: Tx, id: string): Promise<void> {
+  await tx.execute(
+    sql`update core.import set state = 'checking' where id = ${id} and state <> 'committing'`,
+  );
 }
 
 /**

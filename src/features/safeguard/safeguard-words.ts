@@ -41,6 +41,8 @@ export const actionWords: Readonly<Record<EventName, string>> = {
   "match_reviews.listed": "read possible matches",
   "import.staged": "checked a file",
   "import.committed": "took a file in",
+  "import.matches_listed": "read doubtful rows of a file",
+  "import.matches_decided": "decided doubtful rows of a file",
   "access_events.read": "read this record",
   "field_policy.read": "read the field policy",
 };

@@ -1,17 +1,19 @@
 import { describe, expect, it } from "vitest";
 import { pairsChecker } from "../../../server/features/imports/check-pairs.ts";
 import { peopleChecker } from "../../../server/features/imports/check-people.ts";
+import { planReading } from "../../../server/features/imports/read-headings.ts";
 import { type FileRow, readRows } from "../../../server/features/imports/read-rows.ts";
 import { COLUMNS_OF, type ImportKind } from "../../../server/features/imports/staged-row.ts";
 import type { HttpProblem } from "../../../server/http/problem.ts";
 
 const TODAY = "2026-03-10";
+const ZONE = "Europe/London";
 
 async function rowsOf(bytes: Buffer | string, kind: ImportKind = "people"): Promise<FileRow[]> {
-  const { all, required } = COLUMNS_OF[kind];
   const out: FileRow[] = [];
   const file = Buffer.isBuffer(bytes) ? bytes : Buffer.from(bytes);
-  for await (const row of readRows(file, all, required)) out.push(row);
+  const reading = await planReading(file, kind);
+  for await (const row of readRows(file, COLUMNS_OF[kind].all, reading)) out.push(row);
   return out;
 }
 
@@ -24,7 +26,7 @@ async function refusal(bytes: Buffer | string, kind: ImportKind = "people") {
 }
 
 async function people(text: string | Buffer) {
-  const check = peopleChecker(TODAY);
+  const check = peopleChecker(TODAY, ZONE);
   const checked = (await rowsOf(text)).map(check);
   return {
     rows: checked.flatMap(({ row }) => row ?? []),
@@ -35,7 +37,7 @@ async function people(text: string | Buffer) {
 }
 
 async function pairs(text: string) {
-  const check = pairsChecker(TODAY);
+  const check = pairsChecker(TODAY, ZONE);
   const checked = (await rowsOf(text, "pairs")).map(check);
   return {
     rows: checked.flatMap(({ row }) => row ?? []),
@@ -106,8 +108,12 @@ describe("files that are accepted whole", () => {
 
 describe("files that are refused whole", () => {
   it.each([
-    ["latin-1", Buffer.from("ref,name\nA,Ren\xe9\n", "latin1"), ["file encoding"]],
-    ["UTF-16", Buffer.from("\uFEFFref,name\nA,B\n", "utf16le"), ["file encoding"]],
+    ["latin-1", Buffer.from("ref,name\nA,Ren\xe9\n", "latin1"), ["file.line.2.byte.15 encoding"]],
+    [
+      "half a UTF-16 character",
+      Buffer.from("\uFEFFref,name\nA,B\n", "utf16le").subarray(0, -1),
+      ["file.line.2.byte.27 encoding"],
+    ],
     ["UTF-16 without mark", Buffer.from("ref,name\nA,B\n", "utf16le"), ["file encoding"]],
     ["zip", Buffer.from("504b0304aabb", "hex"), ["file not_csv"]],
     ["gzip", Buffer.from("1f8b0800aabb", "hex"), ["file not_csv"]],
@@ -116,7 +122,7 @@ describe("files that are refused whole", () => {
     ["nothing", Buffer.alloc(0), ["file empty_file"]],
     ["blank lines only", Buffer.from("\n\n\n"), ["file empty_file"]],
     ["a heading only", Buffer.from("ref,name\n"), ["file empty_file"]],
-    ["semicolons", Buffer.from("ref;name\nA;B\n"), ["file wrong_delimiter"]],
+    ["bars", Buffer.from("ref|name\nA|B\n"), ["file wrong_delimiter"]],
     [
       "unclosed quote",
       Buffer.from('ref,name\nA,Ann\nB,"Bo\nC,Cy\n'),
@@ -289,10 +295,11 @@ describe("a large file", () => {
       if (running) setImmediate(turn);
     };
     setImmediate(turn);
-    const { all, required } = COLUMNS_OF.people;
-    const check = peopleChecker(TODAY);
+    const reading = await planReading(file, "people");
+    const check = peopleChecker(TODAY, ZONE);
     let good = 0;
-    for await (const row of readRows(file, all, required)) if (check(row).row) good += 1;
+    for await (const row of readRows(file, COLUMNS_OF.people.all, reading))
+      if (check(row).row) good += 1;
     running = false;
     expect(good).toBe(40_000);
     // Not a timing: the file is 40 slices long, and others had their turn after each.

@@ -55,6 +55,10 @@ const BODIES: Record<string, (world: World) => unknown> = {
     channel: "telephone",
   }),
   "put /api/investigations/:id/people/:personId/interview-draft": () => ({ version: 0, body: {} }),
+  "post /api/investigations/:id/imports/:importId/matches": () => ({
+    decision: "other",
+    matchedOn: "name",
+  }),
   "post /api/investigations/:id/imports/:importId/commit": () => ({ createMissing: false }),
 };
 

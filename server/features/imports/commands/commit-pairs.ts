@@ -16,7 +16,7 @@ async function createMissingPeople(
   const missing = new Map<string, number>();
   for (const { line, cells } of rows) {
     for (const ref of [cells.ref_a, cells.ref_b]) {
-      if (!refs.idOf(ref) && !missing.has(ref)) missing.set(ref, line);
+      if (!refs.idOf(ref) && !refs.waits(ref) && !missing.has(ref)) missing.set(ref, line);
     }
   }
   const made = await putNewPeople(

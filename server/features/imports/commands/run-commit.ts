@@ -27,6 +27,7 @@ const LANE_ROWS = 2_000;
 /** Codes that are not about a row by itself: they are found at each try. */
 const AFTER_ROWS: ReadonlySet<FieldErrorCode> = new Set([
   "unknown_ref",
+  "waiting_ref",
   "conflict",
   "commit_failed",
   "commit_clash",
@@ -74,9 +75,17 @@ function reserveNumbers(services: CommitServices, actor: Actor) {
 
 /** Counts of the finished import: what the file held, and what became of it. */
 function finalCounts(row: ImportRow, added: CommitCounts, problems: number) {
-  const { rows = 0, bad = 0, unknownRows = 0 } = row.counts;
+  const { rows = 0, bad = 0, unknownRows = 0, setAside = 0 } = row.counts;
   const skipped = bad - unknownRows + added.unknownRows;
-  return { ...added, rows, good: rows - skipped, bad: skipped, skipped, problems };
+  return {
+    ...added,
+    rows,
+    good: rows - skipped - setAside,
+    setAside,
+    bad: skipped,
+    skipped,
+    problems,
+  };
 }
 
 /** Records people; of a long file, the thread that seals them lives as long as that takes. */

@@ -21,7 +21,7 @@ export function ColumnHelp({ kind }: ColumnHelpProps) {
   return (
     <div className="max-w-[70ch] text-sm text-ink-2">
       <p>
-        Columns, in any order and no others:{" "}
+        Columns, in any order; what your file calls them can be said after choosing it:{" "}
         {columns.map((column, at) => (
           <span key={column}>
             {at > 0 ? ", " : ""}
@@ -32,9 +32,9 @@ export function ColumnHelp({ kind }: ColumnHelpProps) {
         .
       </p>
       <p className="mt-2">
-        UTF-8 text with commas. Days are written 2026-05-18, or 2026-05 when only the month is
-        known. Leave a cell blank when nobody asked; write{" "}
-        <code className="font-sans font-bold text-ink">unknown</code> or{" "}
+        Text in UTF-8, or in UTF-16 with a byte-order mark; commas, semicolons or tabs. Days are
+        written 2026-05-18, or 2026-05 when only the month is known. Leave a cell blank when nobody
+        asked; write <code className="font-sans font-bold text-ink">unknown</code> or{" "}
         <code className="font-sans font-bold text-ink">refused</code> when they did.
       </p>
       {codes[kind].map(([column, words]) => (

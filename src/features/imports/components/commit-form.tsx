@@ -16,6 +16,7 @@ export function CommitForm({ investigationId, staged }: CommitFormProps) {
   const commit = useCommitImport(investigationId, staged.id);
   const missing = countOf(staged, "unknownRefs");
   const count = rowsToCommit(staged, createMissing);
+  const aside = countOf(staged, "setAside");
   return (
     <div className="mb-8">
       {staged.kind === "pairs" && missing > 0 ? (
@@ -32,13 +33,15 @@ export function CommitForm({ investigationId, staged }: CommitFormProps) {
           {errorWords(commit.error)}.
         </Notice>
       ) : null}
-      {count > 0 ? (
+      {count + aside > 0 ? (
         <Button
           variant="primary"
           pending={commit.isPending}
           onClick={() => commit.mutate(createMissing)}
         >
-          Put {formatCount(count, "row", "rows")} on record
+          {count > 0
+            ? `Put ${formatCount(count, "row", "rows")} on record`
+            : `Go on to ${formatCount(aside, "row", "rows")} to decide`}
         </Button>
       ) : (
         <p>No row of this file can be put on record as it is.</p>

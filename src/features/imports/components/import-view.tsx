@@ -3,9 +3,11 @@ import { Notice } from "../../../components/ui/notice.tsx";
 import { Progress } from "../../../components/ui/progress.tsx";
 import { fieldWords } from "../../../lib/field-words.ts";
 import { formatCount, formatInstant, formatShare } from "../../../lib/formatters.ts";
-import { doneSentences, previewSentences } from "../import-words.ts";
+import { countOf, doneSentences, previewSentences } from "../import-words.ts";
 import { CommitForm } from "./commit-form.tsx";
+import { MatchDecisions } from "./match-decisions.tsx";
 import { ProblemTable } from "./problem-table.tsx";
+import { ReadingNote } from "./reading-note.tsx";
 
 export type ImportViewProps = {
   investigationId: string;
@@ -68,8 +70,12 @@ export function ImportView({ investigationId, timeZone, one, again }: ImportView
       ) : dropped ? null : (
         <Sentences lines={previewSentences(one)} />
       )}
+      {one.reading ? <ReadingNote reading={one.reading} /> : null}
       {(one.state === "ready" || one.state === "failed") && !dropped ? (
         <CommitForm investigationId={investigationId} staged={one} />
+      ) : null}
+      {one.state === "committed" && countOf(one, "setAside") > 0 ? (
+        <MatchDecisions investigationId={investigationId} importId={one.id} />
       ) : null}
       {problems.length > 0 ? <ProblemTable problems={problems} problemCount={listed} /> : null}
     </>
