@@ -33,11 +33,16 @@ export const EVENTS = [
   "match_reviews.listed",
   "import.staged",
   "import.committed",
+  "export.requested",
+  "export.opened",
+  "export.made",
+  "export.downloaded",
+  "export.deleted",
   "access_events.read",
   "field_policy.read",
 ] as const;
 export type EventName = (typeof EVENTS)[number];
 
 /** Topics of the live stream; a message carries ids and versions only. */
-export const TOPICS = ["graph", "people", "interviews", "imports", "members"] as const;
+export const TOPICS = ["graph", "people", "interviews", "imports", "exports", "members"] as const;
 export type Topic = (typeof TOPICS)[number];

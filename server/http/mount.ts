@@ -7,6 +7,7 @@ import { LIMITS } from "../../shared/contracts/common.ts";
 import type { Role } from "../../shared/roles.ts";
 import { type Tx, withTx } from "../db/with-tx.ts";
 import type { Services } from "../services.ts";
+import { fileAnswer, sendFile } from "./file-answer.ts";
 import { HttpProblem } from "./problem.ts";
 import type { Actor, AnyRoute, PlainRoute } from "./route.ts";
 import { type SignedIn, signedInOf } from "./sign-in.ts";
@@ -109,10 +110,12 @@ async function runRoute(route: AnyRoute, request: Request, response: Response, s
   const body = parse(route.body, request.body);
   const context = { pool: services.pools[role], nonce: actor.nonce };
   const hash = key ? requestHash(request) : "";
+  let afterwards: (() => void)[] = [];
   const value = await retried(() =>
     withTx(
       context,
       async (tx) => {
+        afterwards = [];
         const earlier = key ? await claimKey(tx, key, `${route.method} ${route.path}`, hash) : null;
         if (earlier) return earlier;
         const file = request.file && {
@@ -128,6 +131,7 @@ async function runRoute(route: AnyRoute, request: Request, response: Response, s
           body,
           file,
           requestId: response.locals.requestId,
+          afterCommit: (work: () => void) => afterwards.push(work),
         };
         const made = await route.run(input as never);
         if (key) {
@@ -140,7 +144,12 @@ async function runRoute(route: AnyRoute, request: Request, response: Response, s
       route.isolation,
     ),
   );
+  for (const work of afterwards) work();
   const schema = typeof route.output === "function" ? route.output(role) : route.output;
+  if (route.sendsFile) {
+    await sendFile(request, response, fileAnswer.parse(value), services.log);
+    return;
+  }
   respond(response, route.status ?? (route.creates ? 201 : 200), schema, value);
 }
 

@@ -11,6 +11,7 @@ export const STALE_BY_TOPIC: Readonly<Record<Topic, readonly QueryWord[]>> = {
   people: ["people", "tests", "follow-up", "match-reviews", "places", "clusters"],
   interviews: ["interviews", "people", "follow-up", "match-reviews"],
   imports: ["imports", "people", "groups", "network", "clusters"],
+  exports: ["exports"],
   members: ["members", "invitations", "people"],
 };
 

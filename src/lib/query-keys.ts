@@ -10,6 +10,7 @@ export type QueryWord =
   | "interviews"
   | "follow-up"
   | "imports"
+  | "exports"
   | "groups"
   | "network"
   | "clusters"

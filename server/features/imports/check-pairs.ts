@@ -1,6 +1,7 @@
 import { LIMITS, optionalText, partialDay } from "../../../shared/contracts/common.ts";
 import { PAIR_COLUMNS } from "../../../shared/contracts/imports.ts";
 import { contactInput } from "../../../shared/contracts/interviews.ts";
+import { unguardCell } from "../../../shared/csv-cells.ts";
 import {
   byContract,
   type CellCheck,
@@ -44,7 +45,7 @@ export function pairsChecker(today: string): (row: FileRow) => Checked<StagedPai
     const problems: ImportProblem[] = [];
     const kept: Partial<Record<PairColumn, string>> = {};
     PAIR_COLUMNS.forEach((column, at) => {
-      const cell = (cells[at] ?? "").trim();
+      const cell = unguardCell(cells[at] ?? "").trim();
       if (cell === "") {
         if (column === "ref_a" || column === "ref_b") {
           problems.push({ line, column, code: "required" });

@@ -1,5 +1,6 @@
 import { PEOPLE_COLUMNS } from "../../../shared/contracts/imports.ts";
 import { personFields } from "../../../shared/contracts/people.ts";
+import { unguardCell } from "../../../shared/csv-cells.ts";
 import { looksLikePhone } from "../../identity/tokens.ts";
 import {
   byContract,
@@ -61,7 +62,7 @@ export function peopleChecker(today: string): (row: FileRow) => Checked<StagedPe
     const problems: ImportProblem[] = [];
     const kept: Partial<Record<PeopleColumn, string>> = {};
     PEOPLE_COLUMNS.forEach((column, at) => {
-      const cell = (cells[at] ?? "").trim();
+      const cell = unguardCell(cells[at] ?? "").trim();
       if (cell === "") {
         if (column === "ref") problems.push({ line, column, code: "required" });
         return;

@@ -36,6 +36,11 @@ export const actionWords: Readonly<Record<EventName, string>> = {
   "match_reviews.listed": "read possible matches",
   "import.staged": "checked a file",
   "import.committed": "took a file in",
+  "export.requested": "asked for an export",
+  "export.opened": "opened people for an export",
+  "export.made": "made an export",
+  "export.downloaded": "downloaded an export",
+  "export.deleted": "deleted an export",
   "access_events.read": "read this record",
   "field_policy.read": "read the field policy",
 };
