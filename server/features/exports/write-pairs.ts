@@ -56,7 +56,7 @@ async function openNames(context: BuildContext) {
 
 /** Small numbers may come with an exponent, which no file has. */
 const plainNumber = (text: string | null) =>
-  text !== null && /e/i.test(text)
+  text !== null && /^[\d.]+e/i.test(text)
     ? Number(text)
         .toFixed(15)
         .replace(/\.?0+$/, "")

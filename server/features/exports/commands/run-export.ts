@@ -74,6 +74,8 @@ type Built = Awaited<ReturnType<typeof build>>;
 async function finish(actor: Actor, id: string, built: Built, tx: Tx): Promise<boolean> {
   const made: MadeFile = built;
   if (!(await finishExport(tx, id, made))) {
+    // Out of sight altogether: whoever asked has signed out or changed role since.
+    if (!(await loadExport(tx, actor.role, id))) throw new AccessEndedError();
     await dropParts(tx, id);
     return false;
   }
@@ -110,11 +112,13 @@ async function markFailed(services: ExportServices, actor: Actor, id: string, er
     return done;
   }).catch(() => false);
   if (said) return;
+  // Its bytes, if any were kept, go at once rather than with the next sweep.
   await services.pools.system
     .query(
       "update core.export set state = 'failed', failure = $2 where id = $1 and state = 'building'",
       [id, code],
     )
+    .then(() => services.pools.system.query("select core.sweep_exports()"))
     .catch(() => undefined);
 }
 
