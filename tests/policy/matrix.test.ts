@@ -4,7 +4,7 @@ import type { AnyRoute } from "../../server/http/route.ts";
 import { plainRoutes, ROUTES } from "../../server/routes.ts";
 import { ROLES, type Role } from "../../shared/roles.ts";
 import { buildAccount, buildMember } from "../support/factories.ts";
-import { bodyFor, stageImport } from "./support/bodies.ts";
+import { bodyFor, exportOf, stageImport } from "./support/bodies.ts";
 import {
   type Answer,
   cookiesOf,
@@ -35,6 +35,10 @@ beforeAll(async () => {
     invitationId: {
       own: await openInvitation(world.here),
       other: await openInvitation(world.elsewhere),
+    },
+    exportId: {
+      own: await exportOf(world, "officer"),
+      other: await exportOf(world, "officer", world.others.officer),
     },
     importId: {
       own: await stageImport(world.everyone.supervisor),
@@ -79,7 +83,12 @@ const WHERE: readonly Where[] = ["own", "other", "random", "malformed"];
 const paramsOf = (path: string) => [...path.matchAll(/:(\w+)/g)].map((match) => match[1] as string);
 
 /** An address of a route: in which investigation, and which object there. */
-async function addressOf(route: AnyRoute, where: Where, object: Where): Promise<string> {
+async function addressOf(
+  route: AnyRoute,
+  where: Where,
+  object: Where,
+  visitor?: VisitorName,
+): Promise<string> {
   const pick = (at: Where, own: string, other: string) =>
     ({ own, other, random: randomUUID(), malformed: "not-an-id" })[at];
   let path = route.path;
@@ -101,6 +110,10 @@ async function addressOf(route: AnyRoute, where: Where, object: Where): Promise<
     }
     if (route.method === "delete" && object === "own" && name === "invitationId") {
       own = await openInvitation(world.here);
+    }
+    if (name === "exportId" && object === "own" && holds(route, visitor ?? "anonymous")) {
+      // A file is its maker's: each has one of their own.
+      own = await exportOf(world, visitor as Role);
     }
     path = path.replace(`:${name}`, pick(object, own, known.other));
   }
@@ -152,7 +165,7 @@ describe.each(ROUTES.map((route) => [title(route), route] as const))("%s", (_tit
       ),
     );
     await inBatches(cases, async ({ visitor, where, object }) => {
-      const path = await addressOf(route, where, object);
+      const path = await addressOf(route, where, object, visitor);
       const answer = await send(route, path, visitor);
       const say = `${visitor}, investigation ${where}, object ${object}: ${answer.text.slice(0, 200)}`;
       const wanted = expected(route, visitor, where, object);

@@ -1,53 +1,25 @@
-import { randomUUID } from "node:crypto";
 import { parse } from "csv-parse/sync";
 import { sql } from "drizzle-orm";
-import pg from "pg";
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
 import { withTx } from "../../../server/db/with-tx.ts";
-import { endInterrupted, sweepExports } from "../../../server/features/exports/upkeep.ts";
+import { sweepExports } from "../../../server/features/exports/upkeep.ts";
 import { type Export, exportList } from "../../../shared/contracts/exports.ts";
 import { PAIR_COLUMNS, PEOPLE_COLUMNS } from "../../../shared/contracts/imports.ts";
-import type { AccessEvent } from "../../../shared/contracts/safeguard.ts";
-import type { Role } from "../../../shared/roles.ts";
 import { contextOf } from "../../policy/support/world.ts";
-import { startTestApp, type TestApp } from "../../support/app.ts";
-import { fileOf, settled, takeOut } from "../../support/exports.ts";
-import {
-  buildInvestigation,
-  buildMember,
-  type Member,
-  signInEveryone,
-} from "../../support/factories.ts";
-import { asAdmin, contactRow, register, submit } from "../../support/field-work.ts";
+import type { TestApp } from "../../support/app.ts";
+import { type ExportDesk, IDENTITY, makeExportDesk, SECRETS } from "../../support/export-desk.ts";
+import { fileOf, takeOut } from "../../support/exports.ts";
+import { buildMember, type Member } from "../../support/factories.ts";
+import { asAdmin } from "../../support/field-work.ts";
 
-const IDENTITY = {
-  ref: "REF-1",
-  name: "=HYPERLINK(Name)",
-  phone: "+44 7700 900123",
-  email: "jo@export.example",
-  birthDate: "1980-05-06",
-  address: "5 Secret Quay",
-};
+let desk: ExportDesk;
 let app: TestApp;
-let everyone: Record<Role, Member>;
-let caseId: string;
+let everyone: ExportDesk["everyone"];
+const ask: ExportDesk["ask"] = (member, body) => desk.ask(member, body);
 
 beforeAll(async () => {
-  app = await startTestApp();
-  everyone = await signInEveryone(app, await buildInvestigation(app));
-  const { supervisor } = everyone;
-  caseId = await register(supervisor, {
-    ...IDENTITY,
-    occupation: "Rope maker",
-    household: "Hidden House",
-    area: "North",
-    onsetDate: "2026-03-01",
-  });
-  const contacts = [
-    contactRow({ name: "Named Contact", setting: "household", place: "Hidden House" }),
-    contactRow({ name: "Other Contact", setting: "workplace", place: "Rope walk", minutes: 30 }),
-  ];
-  expect((await submit(supervisor, caseId, { contacts })).status).toBe(201);
+  desk = await makeExportDesk();
+  ({ app, everyone } = desk);
 });
 
 afterAll(async () => {
@@ -56,18 +28,8 @@ afterAll(async () => {
 
 type Line = Record<string, string>;
 const linesOf = (text: string) => parse(text, { columns: true, bom: false }) as Line[];
-const ask = (member: Member, body: Record<string, unknown>) =>
-  member.client.post(`${member.base}/exports`, { purpose: "analysis", ...body });
 const filled = (lines: Line[]) =>
   Object.keys(lines[0] ?? {}).filter((column) => lines.some((line) => line[column] !== ""));
-const secrets = [...Object.values(IDENTITY), "Named Contact", "Hidden House"];
-
-async function eventsOf(action: string): Promise<AccessEvent[]> {
-  const { officer } = everyone;
-  const answer = await officer.client.get(`${officer.base}/access-events`, { action });
-  expect(answer.status).toBe(200);
-  return answer.body.items;
-}
 
 describe("what a file holds follows from the registry", () => {
   test("the headings are those of the import, every cell quoted, lines ended by CRLF", async () => {
@@ -108,7 +70,7 @@ describe("what a file holds follows from the registry", () => {
       const member = everyone[role];
       const people = await fileOf(member, await takeOut(member, { kind: "people" }));
       const pairs = await fileOf(member, await takeOut(member, { kind: "pairs" }));
-      for (const secret of secrets) expect(people + pairs).not.toContain(secret);
+      for (const secret of SECRETS) expect(people + pairs).not.toContain(secret);
       const lines = linesOf(people);
       expect(lines).toHaveLength(3);
       for (const { ref } of lines) expect(ref).toMatch(/^[0-9A-Z]{3}-[0-9A-Z]{4}$/);
@@ -136,7 +98,7 @@ describe("what a file holds follows from the registry", () => {
     const one = await takeOut(officer, { kind: "people", identified: true });
     const text = await fileOf(officer, one);
     expect(text).toContain(IDENTITY.ref);
-    for (const secret of secrets.slice(1)) expect(text).not.toContain(secret);
+    for (const secret of SECRETS.slice(1)) expect(text).not.toContain(secret);
     expect(one.columns).not.toContain("name");
     const pairs = await takeOut(officer, { kind: "pairs", identified: true });
     const told = await fileOf(officer, pairs);
@@ -305,7 +267,7 @@ describe("who gets a file", () => {
       { download: false, remove: false },
       old.sha256,
     ]);
-    expect(await partsOf(old.id)).toBe(0);
+    expect(await desk.partsOf(old.id)).toBe(0);
   });
 
   test("nobody after it was deleted, by its maker or by a data officer", async () => {
@@ -315,183 +277,11 @@ describe("who gets a file", () => {
       const path = `${maker.base}/exports/${made.id}`;
       const answer = await by.client.call("delete", path);
       expect([answer.status, answer.body.state]).toEqual([200, "deleted"]);
-      expect(await partsOf(made.id)).toBe(0);
+      expect(await desk.partsOf(made.id)).toBe(0);
       expect((await maker.client.get(`${path}/file`)).status).toBe(404);
       // Again: nothing more to end.
       expect((await by.client.call("delete", path)).body.state).toBe("deleted");
     }
-    expect((await eventsOf("export.deleted")).length).toBe(2);
-  });
-});
-
-async function partsOf(id: string): Promise<number> {
-  const [row] = await asAdmin<{ count: number }>(
-    app,
-    "select count(*)::int as count from identity.export_part where export_id = $1",
-    [id],
-  );
-  return row?.count ?? -1;
-}
-
-/** Holds back whatever reads people until `work` is done. */
-async function withPeopleLocked<T>(work: () => Promise<T>): Promise<T> {
-  const admin = new pg.Client({ connectionString: app.adminUrl });
-  await admin.connect();
-  try {
-    await admin.query("begin");
-    await admin.query("lock table core.person in access exclusive mode");
-    return await work();
-  } finally {
-    await admin.query("rollback");
-    await admin.end();
-  }
-}
-
-describe("while a file is being made", () => {
-  test("it can be cancelled, and nothing of it is kept", async () => {
-    const { epidemiologist } = everyone;
-    const id = await withPeopleLocked(async () => {
-      const asked = await ask(epidemiologist, { kind: "people" });
-      expect(Object.keys(asked.body)).toEqual(["id"]);
-      const path = `${epidemiologist.base}/exports/${asked.body.id}`;
-      const entry = (await epidemiologist.client.get(path)).body;
-      expect([entry.state, entry.can]).toEqual(["building", { download: false, remove: true }]);
-      expect((await epidemiologist.client.get(`${path}/file`)).status).toBe(404);
-      const answer = await epidemiologist.client.call("delete", path);
-      expect(answer.body.state).toBe("cancelled");
-      return asked.body.id as string;
-    });
-    // One asked for later is made after it: by then it has ended.
-    const next = await takeOut(epidemiologist, { kind: "people" });
-    expect(next.state).toBe("ready");
-    expect((await settled(epidemiologist, id)).state).toBe("cancelled");
-    expect(await partsOf(id)).toBe(0);
-  });
-
-  test("five may wait for one person, a sixth is refused", async () => {
-    const { officer } = everyone;
-    await withPeopleLocked(async () => {
-      for (let one = 0; one < 5; one++) {
-        expect((await ask(officer, { kind: "people" })).status).toBe(201);
-      }
-      const sixth = await ask(officer, { kind: "people" });
-      expect([sixth.status, sixth.body.code]).toEqual([409, "conflict"]);
-    });
-    const list = exportList.parse((await officer.client.get(`${officer.base}/exports`)).body);
-    for (const { id, state } of list.items) {
-      if (state === "building") expect((await settled(officer, id)).state).toBe("ready");
-    }
-  });
-
-  test("the same key asks once", async () => {
-    const { epidemiologist } = everyone;
-    const key = randomUUID();
-    const path = `${epidemiologist.base}/exports`;
-    const body = { kind: "people", purpose: "analysis" };
-    const first = await epidemiologist.client.post(path, body, key);
-    const second = await epidemiologist.client.post(path, body, key);
-    expect(second.body).toEqual(first.body);
-    await settled(epidemiologist, first.body.id);
-  });
-
-  test("who signs out meanwhile gets none, and the entry says why", async () => {
-    const { supervisor, officer } = everyone;
-    const leaving = await signInEveryone(app, supervisor.investigationId);
-    const id = await withPeopleLocked(async () => {
-      const asked = await ask(leaving.supervisor, { kind: "people", identified: true });
-      expect((await leaving.supervisor.client.call("delete", "/api/session")).status).toBe(204);
-      return asked.body.id as string;
-    });
-    const ended = await settled(officer, id);
-    expect([ended.state, ended.failure]).toEqual(["failed", "export_no_access"]);
-    expect(ended.can).toEqual({ download: false, remove: false });
-    await expect.poll(() => partsOf(id)).toBe(0);
-  });
-
-  test("a process that ends leaves an entry that says so", async () => {
-    const { epidemiologist } = everyone;
-    const one = await takeOut(epidemiologist, { kind: "people" });
-    await asAdmin(app, "update core.export set state = 'building' where id = $1", [one.id]);
-    expect(await endInterrupted(app.pools)).toBe(1);
-    const entry = await settled(epidemiologist, one.id);
-    expect([entry.state, entry.failure]).toEqual(["failed", "export_failed"]);
-    await sweepExports(app.pools);
-    expect(await partsOf(one.id)).toBe(0);
-  });
-});
-
-describe("the access record", () => {
-  test("tells of whom what was opened, what was made, and who took it", async () => {
-    const { supervisor } = everyone;
-    const one = await takeOut(supervisor, {
-      kind: "people",
-      identified: true,
-      purpose: "handover",
-      reason: "Harbour authority",
-    });
-    await fileOf(supervisor, one);
-    const [opened] = (await eventsOf("export.opened")).filter((e) => e.counts.export === one.id);
-    expect(opened?.personIds).toContain(caseId);
-    expect(opened?.personIds).toHaveLength(3);
-    expect([...(opened?.fields ?? [])].sort()).toEqual(
-      ["address", "birthDate", "email", "household", "name", "phone", "ref"].sort(),
-    );
-    const [made] = (await eventsOf("export.made")).filter((e) => e.counts.export === one.id);
-    expect(made).toMatchObject({
-      role: "supervisor",
-      accountId: supervisor.accountId,
-      fields: one.columns,
-      counts: {
-        of: "people",
-        identity: "with",
-        purpose: "handover",
-        rows: 3,
-        people: 3,
-        sha256: one.sha256,
-      },
-    });
-    for (const action of ["export.requested", "export.downloaded"]) {
-      expect((await eventsOf(action)).some((e) => e.counts.export === one.id)).toBe(true);
-    }
-    // What was typed stands at the export alone.
-    expect(JSON.stringify(await eventsOf("export.made"))).not.toContain("Harbour");
-  });
-
-  test("a file without identity opens nobody", async () => {
-    const one = await takeOut(everyone.supervisor, { kind: "pairs" });
-    const opened = (await eventsOf("export.opened")).filter((e) => e.counts.export === one.id);
-    expect(opened).toEqual([]);
-  });
-
-  test("an event written by a login itself opens no field its role may not read", async () => {
-    const { officer } = everyone;
-    const nonce = await contextOf(app, officer, "officer");
-    const id = randomUUID();
-    const fields = await withTx({ pool: app.pools.officer, nonce }, async (tx) => {
-      await tx.execute(
-        sql`insert into core.export (id, investigation_id, kind, identified, purpose, role, columns,
-              state, recorded_by)
-            values (${id}, ${officer.investigationId}, 'people', true, 'analysis', 'officer', '{}',
-              'building', ${officer.accountId})`,
-      );
-      await tx.execute(
-        sql`insert into audit.event (investigation_id, account_id, role, action, person_ids, fields, counts)
-            values (${officer.investigationId}, ${officer.accountId}, 'officer', 'export.opened',
-              array[${caseId}::uuid], '{ref,name,address,household}',
-              jsonb_build_object('export', ${id}::text))`,
-      );
-      const found = await tx.execute<{ field: string }>(
-        sql`select field from identity.open_for_export(${id}::uuid, 1, 10, '{ref,name,address,household}')`,
-      );
-      await tx.execute(sql`update core.export set state = 'cancelled' where id = ${id}`);
-      return found.rows.map((row) => row.field);
-    });
-    expect(fields).toEqual(["ref"]);
-    const begin = withTx({ pool: app.pools.officer, nonce }, (tx) =>
-      tx.execute(
-        sql`select identity.begin_export_opening(${id}::uuid, array[${caseId}::uuid], '{name}')`,
-      ),
-    );
-    await expect(begin).rejects.toMatchObject({ cause: { code: "42501" } });
+    expect((await desk.eventsOf("export.deleted")).length).toBe(2);
   });
 });
