@@ -8,6 +8,7 @@ export const ERRORS = {
   session_ended: { status: 401, title: "Your session has ended; sign in again" },
   origin_refused: { status: 403, title: "The request did not come from this site" },
   role_refused: { status: 403, title: "Your acting role cannot do this" },
+  confirm_needed: { status: 403, title: "Give your password again to go on" },
   not_found: { status: 404, title: "Not found, or not yours to see" },
   method_not_allowed: { status: 405, title: "This address does not take that method" },
   idempotency_key_required: { status: 400, title: "The request needs an Idempotency-Key" },

@@ -10,7 +10,7 @@ import type { Services } from "../services.ts";
 import { fileAnswer, sendFile } from "./file-answer.ts";
 import { HttpProblem } from "./problem.ts";
 import type { Actor, AnyRoute, PlainRoute } from "./route.ts";
-import { type SignedIn, signedInOf } from "./sign-in.ts";
+import { isConfirmed, type SignedIn, signedInOf } from "./sign-in.ts";
 import { sqlState } from "./translate-error.ts";
 
 const uuid = z.uuid();
@@ -105,6 +105,7 @@ async function runRoute(route: AnyRoute, request: Request, response: Response, s
   const role = requireRole(who, route.policy);
   const params = parseParams(route.params, request);
   const actor = actorOf(who, role, params.id as string);
+  if (route.confirmed && !isConfirmed(who)) throw new HttpProblem("confirm_needed");
   const key = route.creates ? idempotencyKey(request) : null;
   const query = parse(route.query, request.query);
   const body = parse(route.body, request.body);

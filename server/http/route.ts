@@ -55,6 +55,8 @@ export interface RouteSpec<
   /** Creates need an Idempotency-Key and answer with a receipt of ids and versions. */
   creates?: boolean;
   isolation?: "committed" | "repeatable" | "serializable";
+  /** Asks for a password given within the last minutes (403 `confirm_needed`). */
+  confirmed?: boolean;
   /** Answers with a file: `run` gives a `FileAnswer`, and `output` is `fileAnswer`. */
   sendsFile?: boolean;
   run(context: RunContext<Out<P>, Out<Q>, Out<B>>): Promise<unknown>;

@@ -44,7 +44,9 @@ export const exportInput = z
   .strictObject({
     kind: choice(IMPORT_KINDS),
     identified: z.boolean({ error: "wrong_type" }).default(false),
-    purpose: choice(EXPORT_PURPOSES),
+    purpose: z.enum(EXPORT_PURPOSES, {
+      error: ({ input }) => (input === undefined || input === "" ? "required" : "not_in_list"),
+    }),
     reason: optionalText(LIMITS.shortText),
     filter: exportFilter.optional(),
   })

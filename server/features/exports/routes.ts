@@ -72,6 +72,7 @@ export const exportRoutes: AnyRoute[] = [
     body: exportInput,
     output: receipt,
     creates: true,
+    confirmed: true,
     async run({ tx, actor, body, services, afterCommit }) {
       if (body.identified && !mayIdentify(actor.role)) {
         throw invalid({ path: "identified", code: "not_for_role" });

@@ -9,7 +9,7 @@ import { contextOf } from "../../policy/support/world.ts";
 import type { TestApp } from "../../support/app.ts";
 import { type ExportDesk, makeExportDesk } from "../../support/export-desk.ts";
 import { fileOf, settled, takeOut } from "../../support/exports.ts";
-import { signInEveryone } from "../../support/factories.ts";
+import { type Member, PASSWORD, signInEveryone } from "../../support/factories.ts";
 import { asAdmin } from "../../support/field-work.ts";
 
 let desk: ExportDesk;
@@ -110,6 +110,41 @@ describe("while a file is being made", () => {
     expect([entry.state, entry.failure]).toEqual(["failed", "export_failed"]);
     await sweepExports(app.pools);
     expect(await desk.partsOf(one.id)).toBe(0);
+  });
+});
+
+describe("the password", () => {
+  const later = (member: Member) =>
+    asAdmin(
+      app,
+      `update auth.session set sess = jsonb_set(sess::jsonb, '{startedAt}',
+         to_jsonb((now() - interval '6 minutes')::text))::json where account_id = $1`,
+      [member.accountId],
+    );
+
+  test("has to be given again when it was given five minutes ago", async () => {
+    const { epidemiologist } = everyone;
+    const { client } = epidemiologist;
+    await later(epidemiologist);
+    const refused = await ask(epidemiologist, { kind: "people" });
+    expect([refused.status, refused.body.code]).toEqual([403, "confirm_needed"]);
+    const wrong = await client.call("post", "/api/session/confirm", {
+      body: { password: "some other password" },
+    });
+    expect([wrong.status, wrong.body.errors]).toEqual([
+      422,
+      [{ path: "password", code: "wrong_password" }],
+    ]);
+    expect((await ask(epidemiologist, { kind: "people" })).status).toBe(403);
+    const right = await client.call("post", "/api/session/confirm", {
+      body: { password: PASSWORD },
+    });
+    expect(right.status).toBe(200);
+    const made = await takeOut(epidemiologist, { kind: "people" });
+    expect(made.state).toBe("ready");
+    // Looking and fetching go on without it.
+    await later(epidemiologist);
+    await fileOf(epidemiologist, made);
   });
 });
 
