@@ -6,7 +6,7 @@ import {
   type ExportInput,
   exportInput,
 } from "../../../../shared/contracts/exports.ts";
-import { mayIdentify } from "../../../../shared/export-columns.ts";
+import { exportedIdentity, mayIdentify } from "../../../../shared/export-columns.ts";
 import type { Role } from "../../../../shared/roles.ts";
 import { CheckboxField } from "../../../components/fields/checkbox-field.tsx";
 import { RadioRow } from "../../../components/fields/radio-row.tsx";
@@ -106,7 +106,7 @@ export function ExportForm({ investigationId, role, filter, onEverybody }: Expor
         ) : null}
         {mayIdentify(role) ? (
           <CheckboxField
-            label="With identity"
+            label={exportedIdentity(role).length > 1 ? "With identity" : "With references"}
             error={fieldWords(errors.identified?.message)}
             {...form.register("identified")}
           />
