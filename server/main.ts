@@ -8,6 +8,7 @@ import { migrate } from "./db/migrate.ts";
 import { createPools, endPools, loginUrl } from "./db/pools.ts";
 import { startDispatcher } from "./events/dispatcher.ts";
 import { createLiveHub } from "./events/live-hub.ts";
+import { startExportUpkeep } from "./features/exports/upkeep.ts";
 import { startImportUpkeep } from "./features/imports/upkeep.ts";
 import { firstOfficerToken } from "./features/session/first-officer.ts";
 import { safeError } from "./http/translate-error.ts";
@@ -79,6 +80,7 @@ async function main(): Promise<void> {
   const analysis = createAnalysis({ pools, log });
   await analysis.start();
   const imports = await startImportUpkeep({ pools, log });
+  const exports = await startExportUpkeep({ pools, log });
   const dispatcher = await startDispatcher({ pools, systemUrl, analysis, hub, log });
   const housekeeping = startHousekeeping(pools, log);
   const address =
@@ -125,6 +127,7 @@ async function main(): Promise<void> {
     hub.close();
     server.close(async () => {
       imports.stop();
+      exports.stop();
       housekeeping.stop();
       await mail.stop();
       await dispatcher.stop();

@@ -1,5 +1,6 @@
 import { liveRoutes } from "./events/routes.ts";
 import { clusterRoutes } from "./features/clusters/routes.ts";
+import { exportRoutes } from "./features/exports/routes.ts";
 import { followUpRoutes } from "./features/follow-up/routes.ts";
 import { groupRoutes } from "./features/groups/routes.ts";
 import { importRoutes } from "./features/imports/routes.ts";
@@ -31,6 +32,7 @@ export const ROUTES: readonly AnyRoute[] = [
   ...interviewRoutes,
   ...followUpRoutes,
   ...importRoutes,
+  ...exportRoutes,
   ...groupRoutes,
   ...clusterRoutes,
   ...networkRoutes,

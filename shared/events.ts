@@ -40,11 +40,24 @@ export const EVENTS = [
   "import.committed",
   "import.matches_listed",
   "import.matches_decided",
+  "export.requested",
+  "export.opened",
+  "export.made",
+  "export.downloaded",
+  "export.deleted",
   "access_events.read",
   "field_policy.read",
 ] as const;
 export type EventName = (typeof EVENTS)[number];
 
 /** Topics of the live stream; a message carries ids and versions only. */
-export const TOPICS = ["graph", "people", "interviews", "imports", "members", "clusters"] as const;
+export const TOPICS = [
+  "graph",
+  "people",
+  "interviews",
+  "imports",
+  "exports",
+  "members",
+  "clusters",
+] as const;
 export type Topic = (typeof TOPICS)[number];

@@ -49,6 +49,7 @@ export const DUTIES = {
   assign: ["supervisor"],
   reviewMatches: ["supervisor"],
   importFiles: ["supervisor", "officer"],
+  exportFiles: ["supervisor", "epidemiologist", "officer"],
   changeSettings: ["supervisor", "officer"],
   manageMembers: ["supervisor", "officer"],
 } as const satisfies Record<string, readonly Role[]>;

@@ -10,7 +10,8 @@ export interface AuditEvent {
   investigationId: string | null;
   personIds?: readonly string[];
   fields?: readonly string[];
-  counts?: Record<string, number>;
+  /** Numbers; for exports also ids, coded words and checksums, never anything typed. */
+  counts?: Record<string, number | string>;
 }
 
 /** Writes an event in the transaction of what it tells of; both are stored or neither is. */

@@ -16,6 +16,8 @@ export interface TxContext {
 const ISOLATION = {
   committed: "begin isolation level read committed",
   repeatable: "begin isolation level repeatable read read only",
+  /** One moment of the record for a long reading that also writes. */
+  snapshot: "begin isolation level repeatable read",
   serializable: "begin isolation level serializable",
 } as const;
 

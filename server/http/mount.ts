@@ -7,9 +7,10 @@ import { LIMITS } from "../../shared/contracts/common.ts";
 import type { Role } from "../../shared/roles.ts";
 import { type Tx, withTx } from "../db/with-tx.ts";
 import type { Services } from "../services.ts";
+import { fileAnswer, sendFile } from "./file-answer.ts";
 import { HttpProblem } from "./problem.ts";
 import type { Actor, AnyRoute, PlainRoute } from "./route.ts";
-import { type SignedIn, signedInOf } from "./sign-in.ts";
+import { isConfirmed, type SignedIn, signedInOf } from "./sign-in.ts";
 import { sqlState } from "./translate-error.ts";
 
 const uuid = z.uuid();
@@ -105,15 +106,18 @@ async function runRoute(route: AnyRoute, request: Request, response: Response, s
   const role = requireRole(who, route.policy);
   const params = parseParams(route.params, request);
   const actor = actorOf(who, role, params.id as string);
+  if (route.confirmed && !isConfirmed(who)) throw new HttpProblem("confirm_needed");
   const key = route.creates ? idempotencyKey(request) : null;
   const query = parse(route.query, request.query);
   const body = parse(route.body, request.body);
   const context = { pool: services.pools[role], nonce: actor.nonce };
   const hash = key ? requestHash(request) : "";
+  let afterwards: (() => void)[] = [];
   const value = await retried(() =>
     withTx(
       context,
       async (tx) => {
+        afterwards = [];
         const earlier = key ? await claimKey(tx, key, `${route.method} ${route.path}`, hash) : null;
         if (earlier) return earlier;
         const file = request.file && {
@@ -129,6 +133,7 @@ async function runRoute(route: AnyRoute, request: Request, response: Response, s
           body,
           file,
           requestId: response.locals.requestId,
+          afterCommit: (work: () => void) => afterwards.push(work),
         };
         const made = await route.run(input as never);
         if (key) {
@@ -141,7 +146,12 @@ async function runRoute(route: AnyRoute, request: Request, response: Response, s
       route.isolation,
     ),
   );
+  for (const work of afterwards) work();
   const schema = typeof route.output === "function" ? route.output(role) : route.output;
+  if (route.sendsFile) {
+    await sendFile(request, response, fileAnswer.parse(value), services.log);
+    return;
+  }
   respond(response, route.status ?? (route.creates ? 201 : 200), schema, value);
 }
 

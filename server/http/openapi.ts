@@ -26,6 +26,13 @@ function parameters(path: string, query: z.ZodType | undefined): unknown[] {
   return out;
 }
 
+/** What a route answers with: nothing, a file, or JSON. */
+function contentOf(status: number, sendsFile: boolean, output: z.ZodType): object {
+  if (status === 204) return {};
+  if (sendsFile) return { content: { "text/csv": { schema: { type: "string" } } } };
+  return { content: { "application/json": { schema: schemaOf(output, "output") } } };
+}
+
 const PROBLEM = { $ref: "#/components/responses/Problem" };
 
 /**
@@ -43,6 +50,7 @@ export function openApiDocument(
       roles: Array.isArray(route.access) ? (route.access as readonly string[]) : ROLES,
       open: route.access === "public",
       upload: false,
+      sendsFile: false,
     })),
     ...routes.map((route) => ({
       ...route,
@@ -76,9 +84,7 @@ export function openApiDocument(
       responses: {
         [status]: {
           description: "Done",
-          ...(status === 204
-            ? {}
-            : { content: { "application/json": { schema: schemaOf(output, "output") } } }),
+          ...contentOf(status, route.sendsFile === true, output),
         },
         default: PROBLEM,
       },

@@ -26,6 +26,8 @@ export interface RunContext<P, Q, B> extends Input<P, Q, B> {
   services: Services;
   requestId: string;
   file: { buffer: Buffer; name: string } | undefined;
+  /** Work to start once the transaction is committed; it does not happen when it is not. */
+  afterCommit(work: () => void): void;
 }
 
 type Shape = z.ZodType;
@@ -53,6 +55,10 @@ export interface RouteSpec<
   /** Creates need an Idempotency-Key and answer with a receipt of ids and versions. */
   creates?: boolean;
   isolation?: "committed" | "repeatable" | "serializable";
+  /** Asks for a password given within the last minutes (403 `confirm_needed`). */
+  confirmed?: boolean;
+  /** Answers with a file: `run` gives a `FileAnswer`, and `output` is `fileAnswer`. */
+  sendsFile?: boolean;
   run(context: RunContext<Out<P>, Out<Q>, Out<B>>): Promise<unknown>;
 }
 

@@ -12,6 +12,8 @@ declare module "express-session" {
     actingRole: string | null;
     investigationId: string | null;
     nonce: string | null;
+    /** When the password was given again (ISO instant); sign-in counts as the first time. */
+    confirmedAt?: string;
     /** Set only while a session is being made: no other save may create a row. */
     fresh?: boolean;
     /** Set on a request that nobody's hand caused; it does not move the idle end. */

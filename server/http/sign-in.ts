@@ -23,6 +23,16 @@ export interface SignedIn {
   actingRole: Role | null;
   investigationId: string | null;
   nonce: string | null;
+  /** When the password was last given in this session (ISO instant). */
+  confirmedAt: string;
+}
+
+/** Minutes for which a password that was given is fresh. */
+export const CONFIRMED_MINUTES = 5;
+
+/** Whether the password was given a moment ago, for what a session left open must not do. */
+export function isConfirmed(who: SignedIn): boolean {
+  return now().getTime() - new Date(who.confirmedAt).getTime() < CONFIRMED_MINUTES * 60_000;
 }
 
 interface AccountRow {
@@ -75,6 +85,7 @@ export async function whoIsAsking(request: Request, pool: pg.Pool): Promise<Sign
     actingRole: acting ? acting.role : null,
     investigationId: acting ? acting.investigationId : null,
     nonce: acting ? (session.nonce ?? null) : null,
+    confirmedAt: session.confirmedAt ?? session.startedAt ?? new Date(0).toISOString(),
   };
 }
 

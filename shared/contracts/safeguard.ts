@@ -17,7 +17,8 @@ export const accessEventAnswer = z.strictObject({
   fields: z.array(z.string()),
   personIds: z.array(uuid),
   studyNumbers: z.array(z.string()),
-  counts: z.record(z.string(), z.number()),
+  /** Numbers, and for exports coded words: id, purpose, SHA-256. */
+  counts: z.record(z.string(), z.union([z.number(), z.string()])),
 });
 export type AccessEvent = z.output<typeof accessEventAnswer>;
 export const accessEventList = listOf(accessEventAnswer);

@@ -24,6 +24,10 @@ export const signInInput = z.strictObject({
 });
 export type SignInInput = z.output<typeof signInInput>;
 
+/** The password once more, for what asks for it anew. */
+export const confirmInput = signInInput.pick({ password: true });
+export const confirmAnswer = z.strictObject({ confirmedUntil: z.string() });
+
 export const switchInput = z.strictObject({
   actingRole: z.enum(ROLES, { error: "not_in_list" }),
   investigationId: uuid,

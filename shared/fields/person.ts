@@ -123,6 +123,12 @@ export const IDENTITY_OTHER_FIELDS = [
     ["ref_token", "direct", "NNNN"],
     ["person_id", "operational", "NNNN"],
   ]),
+  ...table("identity.export_part", [
+    ["export_id", "operational", "NNNN"],
+    ["investigation_id", "operational", "NNNN"],
+    ["part", "operational", "NNNN"],
+    ["body_cipher", "direct", "NNNN", { cipher: true, retention: "session" }],
+  ]),
   ...table("identity.data_key", [
     ["investigation_id", "operational", "NNNN"],
     ["wrapped_key", "operational", "NNNN"],

@@ -13,6 +13,7 @@ export const STALE_BY_TOPIC: Readonly<Record<Topic, readonly QueryWord[]>> = {
   imports: ["imports", "people", "groups", "network", "clusters"],
   members: ["members", "invitations", "teams", "people"],
   clusters: ["clusters"],
+  exports: ["exports"],
 };
 
 const allTopics = Object.keys(STALE_BY_TOPIC) as Topic[];

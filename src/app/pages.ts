@@ -8,6 +8,7 @@ export const pages = {
   interview: () => import("../features/interviews/routes/interview-route.tsx"),
   places: () => import("../features/places/routes/places-route.tsx"),
   imports: () => import("../features/imports/routes/import-route.tsx"),
+  exports: () => import("./routes/exports-route.tsx"),
   matches: () => import("../features/people/routes/matches-route.tsx"),
   follow: () => import("../features/follow-up/routes/follow-route.tsx"),
   review: () => import("../features/review/routes/review-route.tsx"),

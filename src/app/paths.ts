@@ -17,6 +17,7 @@ export const paths = {
   imports: (investigationId: string) => `/i/${investigationId}/trace/import`,
   oneImport: (investigationId: string, importId: string) =>
     `/i/${investigationId}/trace/import/${importId}`,
+  exports: (investigationId: string) => `/i/${investigationId}/trace/export`,
   matches: (investigationId: string) => `/i/${investigationId}/trace/matches`,
   follow: (investigationId: string) => `/i/${investigationId}/follow`,
   review: (investigationId: string) => `/i/${investigationId}/review`,

@@ -35,6 +35,7 @@ export function homePath(session: Session): string {
 const duties: readonly (readonly [(investigationId: string) => string, Duty])[] = [
   [paths.newPerson, "register"],
   [paths.imports, "importFiles"],
+  [paths.exports, "exportFiles"],
   [paths.matches, "reviewMatches"],
   [paths.members, "manageMembers"],
 ];

@@ -12,6 +12,7 @@ const trace: RouteObject[] = [
   { path: "trace/places", lazy: pages.places },
   { path: "trace/import", lazy: pages.imports },
   { path: "trace/import/:importId", lazy: pages.imports },
+  { path: "trace/export", lazy: pages.exports },
   { path: "trace/matches", lazy: pages.matches },
 ];
 

@@ -12,6 +12,7 @@ export type QueryWord =
   | "interviews"
   | "follow-up"
   | "imports"
+  | "exports"
   | "groups"
   | "network"
   | "clusters"

@@ -4,7 +4,7 @@ import type { AnyRoute } from "../../server/http/route.ts";
 import { plainRoutes, ROUTES } from "../../server/routes.ts";
 import { ROLES, type Role } from "../../shared/roles.ts";
 import { buildAccount, buildMember } from "../support/factories.ts";
-import { bodyFor, stageImport } from "./support/bodies.ts";
+import { bodyFor, exportOf, stageImport } from "./support/bodies.ts";
 import {
   type Answer,
   cookiesOf,
@@ -41,6 +41,10 @@ beforeAll(async () => {
     filterId: {
       own: randomUUID(),
       other: await savedFilterOf(world.elsewhere, world.others.supervisor.accountId),
+    },
+    exportId: {
+      own: await exportOf(world, "officer"),
+      other: await exportOf(world, "officer", world.others.officer),
     },
     importId: {
       own: await stageImport(world.everyone.supervisor),
@@ -140,6 +144,10 @@ async function addressOf(
     if (object === "own" && name === "filterId") {
       const role = ROLES.find((one) => one === visitor) ?? "tracer";
       own = await savedFilterOf(world.here, world.everyone[role].accountId);
+    }
+    if (name === "exportId" && object === "own" && holds(route, visitor ?? "anonymous")) {
+      // A file is its maker's: each has one of their own.
+      own = await exportOf(world, visitor as Role);
     }
     path = path.replace(`:${name}`, pick(object, own, known.other));
   }

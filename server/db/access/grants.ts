@@ -40,15 +40,22 @@ const FUNCTIONS: Record<string, readonly (Role | "system" | "auth")[]> = {
   "core.team_use()": ["supervisor", "officer"],
   "core.bump_graph()": ["tracer", "supervisor", "officer"],
   "core.next_numbers(integer)": ["tracer", "supervisor", "officer"],
-  "core.announce(text, uuid, bigint)": ["tracer", "supervisor", "officer"],
+  "core.announce(text, uuid, bigint)": ROLES,
   "core.fill_occupations(uuid, jsonb)": ["supervisor", "officer"],
   "core.sweep_import_stages()": ["system"],
   "auth.invite(uuid, text, text, uuid, text, text, uuid, bytea)": ["supervisor", "officer"],
   "auth.withdraw_invitation(uuid)": ["supervisor", "officer"],
-  "auth.claim_key(uuid, text, text)": ["tracer", "supervisor", "officer"],
-  "auth.keep_receipt(uuid, smallint, jsonb)": ["tracer", "supervisor", "officer"],
+  "auth.claim_key(uuid, text, text)": ROLES,
+  "auth.keep_receipt(uuid, smallint, jsonb)": ROLES,
   "identity.open_people(uuid[], text[], text)": ["tracer", "supervisor", "officer"],
   "identity.open_places(uuid[])": ["tracer", "supervisor"],
+  "core.keep_export_part(uuid, integer, bytea)": ["supervisor", "epidemiologist", "officer"],
+  "core.read_export_part(uuid, integer)": ["supervisor", "epidemiologist", "officer"],
+  "core.drop_export_parts(uuid)": ["supervisor", "epidemiologist", "officer"],
+  "core.sweep_exports()": ["system"],
+  "identity.begin_export_opening(uuid, uuid[], text[])": ["supervisor", "officer"],
+  "identity.open_for_export(uuid, integer, integer, text[])": ["supervisor", "officer"],
+  "identity.open_export_places(uuid, uuid[])": ["supervisor"],
   "identity.find_people(bytea[], bytea[], integer)": ["tracer", "supervisor"],
   "identity.flag_hidden_matches(uuid, bytea[], bytea[])": ["tracer", "supervisor"],
   "identity.people_by_ref(bytea[])": ["supervisor", "officer"],
@@ -153,8 +160,9 @@ export function grants(): string[] {
   for (const role of ROLES) {
     const login = loginOf(role);
     out.push(`grant usage on schema views to ${login}`);
-    // Functions of identity only: its tables carry no right for any role login.
-    if (role !== "epidemiologist") out.push(`grant usage on schema identity, auth to ${login}`);
+    // Functions only: tables of these two schemas carry no right for any role login.
+    out.push(`grant usage on schema auth to ${login}`);
+    if (role !== "epidemiologist") out.push(`grant usage on schema identity to ${login}`);
     for (const table of CORE_TABLES) {
       const readable = readableColumns(table, role);
       if (readable.length > 0)
@@ -184,6 +192,7 @@ export function grants(): string[] {
   for (const table of CORE_TABLES) out.push(`grant select on ${table} to ${loginOf("system")}`);
   out.push(`grant update (done_at), delete on core.outbox to ${loginOf("system")}`);
   out.push(`grant update (state, progress) on core.import to ${loginOf("system")}`);
+  out.push(`grant update (state, progress, failure) on core.export to ${loginOf("system")}`);
   const auth = loginOf("auth");
   out.push(
     `grant select, insert, update, delete on auth.account, auth.session, auth.ctx_live,

@@ -16,6 +16,7 @@ interface Writes {
 
 const RECORDERS = ["tracer", "supervisor", "officer"] as const;
 const LEADERS = ["supervisor", "officer"] as const;
+const EXPORTERS = ["supervisor", "epidemiologist", "officer"] as const;
 
 export const WRITES: Record<string, Writes> = {
   "core.person": {
@@ -111,6 +112,24 @@ export const WRITES: Record<string, Writes> = {
       ],
     },
   },
+  "core.export": {
+    insert: EXPORTERS,
+    update: {
+      roles: EXPORTERS,
+      columns: [
+        "state",
+        "progress",
+        "failure",
+        "row_count",
+        "bytes",
+        "parts",
+        "sha256",
+        "downloads",
+        "finished_at",
+        "expires_at",
+      ],
+    },
+  },
   "core.match_review": { insert: [], update: { roles: ["supervisor"], columns: ["state"] } },
   "core.investigation": {
     insert: [],
@@ -165,6 +184,19 @@ const TRACER_ROWS: Record<string, string> = {
   "core.match_review": "false",
   "core.member": "false",
   "core.import": "false",
+  "core.export": "false",
+};
+
+const MINE = `${HERE} and recorded_by = (select core.ctx_user())`;
+
+/** Rows another role sees, where that is less than the whole investigation. */
+const ROLE_ROWS: Record<string, Partial<Record<Role, string>>> = {
+  "core.export": { supervisor: MINE, epidemiologist: MINE },
+};
+
+/** Rows any role may add, where that needs more than the investigation. */
+const ADDS: Record<string, string> = {
+  "core.export": `${MINE} and role = (select core.ctx_role())`,
 };
 
 /** Rows that belong to an account, whatever its role: nobody else sees or changes them. */
@@ -205,6 +237,7 @@ export const CORE_TABLES = [
   "core.graph_change",
   "core.outbox",
   "core.import",
+  "core.export",
 ] as const;
 
 const IDENTITY_TABLES = [
@@ -216,6 +249,7 @@ const IDENTITY_TABLES = [
   "identity.import_stage",
   "identity.import_match",
   "identity.ref_alias",
+  "identity.export_part",
   "identity.data_key",
 ] as const;
 
@@ -269,11 +303,11 @@ export function rowPolicies(): string[] {
     for (const role of ROLES) {
       const login = loginOf(role);
       const tracer = role === "tracer";
-      const rows = (tracer && TRACER_ROWS[table]) || here(table);
+      const rows = (tracer && TRACER_ROWS[table]) || ROLE_ROWS[table]?.[role] || here(table);
       out.push(policy(table, `read_${role}`, "select", login, `using (${rows})`));
       const writes = WRITES[table];
       if (writes?.insert.includes(role)) {
-        const adds = (tracer && TRACER_ADDS[table]) || here(table);
+        const adds = (tracer && TRACER_ADDS[table]) || ADDS[table] || here(table);
         out.push(policy(table, `add_${role}`, "insert", login, `with check (${adds})`));
       }
       if (writes?.remove?.includes(role)) {
@@ -300,6 +334,7 @@ export function rowPolicies(): string[] {
   out.push(policy("core.outbox", "change_system", "update", loginOf("system"), "using (true)"));
   out.push(policy("core.outbox", "end_system", "delete", loginOf("system"), "using (true)"));
   out.push(policy("core.import", "change_system", "update", loginOf("system"), "using (true)"));
+  out.push(policy("core.export", "change_system", "update", loginOf("system"), "using (true)"));
   for (const table of [
     ...AUTH_TABLES.filter((t) => t !== "auth.field_right"),
     "core.investigation",

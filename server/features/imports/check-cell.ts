@@ -1,5 +1,6 @@
 import type { z } from "zod";
 import { LIMITS, text } from "../../../shared/contracts/common.ts";
+import { unguardCell } from "../../../shared/csv-cells.ts";
 import { FIELD_ERRORS, type FieldErrorCode } from "../../../shared/errors.ts";
 import { MISSING } from "../../../shared/vocabulary.ts";
 import { dayIn } from "../../clock.ts";
@@ -18,8 +19,6 @@ export function isMissingWord(value: string): boolean {
 
 /** What lists write where nothing is known; read as the word `unknown`. */
 const UNKNOWN_WORDS: ReadonlySet<string> = new Set(["n/a", "null", "-", "--", "–", "—", "unknown"]);
-/** An apostrophe that our own export puts before what a spreadsheet would run as a formula. */
-const ESCAPED = /^'+[=+\-@\t\r＝＋－＠]/;
 // biome-ignore lint/suspicious/noControlCharactersInRegex: control characters are what is refused
 const UNSEEN = /[\u0000-\u0008\u000B\u000C\u000E-\u001F\u007F-\u009F\u202A-\u202E\u2066-\u2069]/;
 const FORMULA = /^[=+\-@\t\r＝＋－＠]/;
@@ -40,7 +39,7 @@ export function checkCell(check: CellCheck, raw: string | undefined): CellResult
   const trimmed = (raw ?? "").trim();
   if (trimmed === "") return null;
   if (UNSEEN.test(trimmed)) return { code: "bad_character" };
-  const cell = ESCAPED.test(trimmed) ? trimmed.slice(1).trim() : trimmed;
+  const cell = unguardCell(trimmed).trim();
   if (!UNKNOWN_WORDS.has(cell.toLowerCase())) return check(cell);
   const result = check("unknown");
   return "code" in result && cell.toLowerCase() !== "unknown" ? null : result;

@@ -16,6 +16,7 @@ import { definePlainRoute, type PlainRoute } from "../../http/route.ts";
 import { endSession, loadAccount, signedInOf } from "../../http/sign-in.ts";
 import type { Services } from "../../services.ts";
 import { accountRoutes } from "./account-routes.ts";
+import { confirmRoute } from "./confirm-route.ts";
 import { knownDevice, rememberDevice } from "./device-cookie.ts";
 import { makeFirstOfficer } from "./first-officer.ts";
 import { createLimiter } from "./limiter.ts";
@@ -168,5 +169,6 @@ export function sessionRoutes(services: Services): PlainRoute[] {
     }),
     ...accountRoutes(services, limiter),
     ...passwordRoutes(services, limiter),
+    confirmRoute(services, limiter),
   ];
 }

@@ -62,6 +62,7 @@ export async function startSession(
       actingRole: acting?.role ?? null,
       investigationId: acting?.investigationId ?? null,
       nonce: request.session.nonce ?? null,
+      confirmedAt: startedAt,
     },
     startedAt,
   );

@@ -9,13 +9,25 @@ const MembersTab = lazy(() =>
   })),
 );
 
+const ExportsPanel = lazy(() =>
+  import("../../features/exports/components/exports-panel.tsx").then((file) => ({
+    default: file.ExportsPanel,
+  })),
+);
+
+const exports = (
+  <Suspense fallback={<LoadingState label="Opening the exports" />}>
+    <ExportsPanel />
+  </Suspense>
+);
+
 const members = (
   <Suspense fallback={<LoadingState label="Opening the members" />}>
     <MembersTab />
   </Suspense>
 );
 
-/** Safeguard with the members, which the members page shows as well. */
+/** Safeguard with the exports and the members, which pages of their own show as well. */
 export function Component() {
-  return <SafeguardRoute members={members} />;
+  return <SafeguardRoute exports={exports} members={members} />;
 }

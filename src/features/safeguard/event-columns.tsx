@@ -36,7 +36,8 @@ function People({ event, investigationId }: { event: AccessEvent; investigationI
 
 function counts(event: AccessEvent): string {
   const parts = Object.entries(event.counts).map(
-    ([name, count]) => `${name.replaceAll("_", " ")} ${formatNumber(count)}`,
+    ([name, count]) =>
+      `${name.replaceAll("_", " ")} ${typeof count === "number" ? formatNumber(count) : count}`,
   );
   return parts.length === 0 ? noValue : parts.join(", ");
 }

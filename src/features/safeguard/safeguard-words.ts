@@ -43,6 +43,11 @@ export const actionWords: Readonly<Record<EventName, string>> = {
   "import.committed": "took a file in",
   "import.matches_listed": "read doubtful rows of a file",
   "import.matches_decided": "decided doubtful rows of a file",
+  "export.requested": "asked for an export",
+  "export.opened": "opened people for an export",
+  "export.made": "made an export",
+  "export.downloaded": "downloaded an export",
+  "export.deleted": "deleted an export",
   "access_events.read": "read this record",
   "field_policy.read": "read the field policy",
 };

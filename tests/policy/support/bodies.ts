@@ -1,4 +1,5 @@
 import type { AnyRoute } from "../../../server/http/route.ts";
+import type { Role } from "../../../shared/roles.ts";
 import type { Member } from "../../support/factories.ts";
 import type { World } from "./world.ts";
 
@@ -14,6 +15,22 @@ export async function stageImport(member: Member): Promise<string> {
   );
   if (!answer.body.id) throw new Error(`the file was not staged: ${JSON.stringify(answer.body)}`);
   return answer.body.id;
+}
+
+/** A file of a member's that is ready to be fetched, and is empty; past the routes. */
+export async function exportOf(
+  world: World,
+  role: Role,
+  member: Member = world.everyone[role],
+): Promise<string> {
+  const made = await world.admin.query(
+    `insert into core.export (id, investigation_id, kind, identified, purpose, role, columns, state,
+       sha256, recorded_by, finished_at, expires_at)
+     values (gen_random_uuid(), $1, 'people', false, 'analysis', $2, '{ref}', 'ready', $3, $4, now(),
+       now() + interval '1 hour') returning id`,
+    [member.investigationId, role, "0".repeat(64), member.accountId],
+  );
+  return made.rows[0].id;
 }
 
 /** A body each route accepts, so that only access decides. A new route with a body stands here. */
@@ -59,6 +76,7 @@ const BODIES: Record<string, (world: World) => unknown> = {
     decision: "other",
     matchedOn: "name",
   }),
+  "post /api/investigations/:id/exports": () => ({ kind: "people", purpose: "analysis" }),
   "post /api/investigations/:id/imports/:importId/commit": () => ({ createMissing: false }),
 };
 

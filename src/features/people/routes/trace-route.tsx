@@ -1,3 +1,4 @@
+import { useSearchParams } from "react-router-dom";
 import { hasDuty } from "../../../../shared/roles.ts";
 import { paths } from "../../../app/paths.ts";
 import { RoomPage } from "../../../components/layouts/room-page.tsx";
@@ -8,10 +9,22 @@ import { useSession } from "../../../lib/session-context.ts";
 import { InterviewQueue } from "../components/interview-queue.tsx";
 import { LineList } from "../components/line-list.tsx";
 
+/** The line list's coded filters, to be taken along to the export. */
+function codedFilters(params: URLSearchParams): string {
+  const kept = new URLSearchParams();
+  for (const name of ["classification", "interviewed", "assigned"]) {
+    const value = params.get(name);
+    if (value) kept.set(name, value);
+  }
+  const text = kept.toString();
+  return text === "" ? "" : `?${text}`;
+}
+
 /** Trace: who waits for an interview, and everybody on record. */
 export function Component() {
   const { actingRole } = useSession();
   const { id } = useInvestigation();
+  const narrowed = codedFilters(useSearchParams()[0]);
   return (
     <RoomPage
       title="Trace"
@@ -24,6 +37,9 @@ export function Component() {
           <LinkButton to={paths.places(id)}>Places</LinkButton>
           {hasDuty(actingRole, "importFiles") ? (
             <LinkButton to={paths.imports(id)}>Import a list</LinkButton>
+          ) : null}
+          {hasDuty(actingRole, "exportFiles") ? (
+            <LinkButton to={`${paths.exports(id)}${narrowed}`}>Export</LinkButton>
           ) : null}
           {hasDuty(actingRole, "register") ? (
             <LinkButton to={paths.newPerson(id)} variant="primary">

@@ -9,15 +9,18 @@ import { EventsTab } from "../components/events-tab.tsx";
 import { PolicyTab } from "../components/policy-tab.tsx";
 
 export type SafeguardRouteProps = {
-  /** Who works here: a part that other pages show as well, handed in by the page that joins both. */
+  /** Parts that other pages show as well, handed in by the page that joins them: files taken out… */
+  exports: ReactNode;
+  /** … and who works here. */
   members: ReactNode;
 };
 
-/** Safeguard: who may see which field, who looked, and who works here. */
-export function SafeguardRoute({ members }: SafeguardRouteProps) {
+/** Safeguard: who may see which field, who looked, what was taken out, and who works here. */
+export function SafeguardRoute({ exports, members }: SafeguardRouteProps) {
   const tabs = [
     { id: "policy", label: "Field policy", content: <PolicyTab /> },
     { id: "events", label: "Access events", content: <EventsTab /> },
+    { id: "exports", label: "Exports", content: exports },
     { id: "members", label: "Members", content: members },
   ];
   const { actingRole } = useSession();
@@ -25,7 +28,10 @@ export function SafeguardRoute({ members }: SafeguardRouteProps) {
   const asked = params.get("tab");
   const tab = tabs.some((one) => one.id === asked) ? (asked as string) : "policy";
   return (
-    <RoomPage title="Safeguard" subLine="Who may see which field, who looked, who works here.">
+    <RoomPage
+      title="Safeguard"
+      subLine="Who may see which field, who looked, what was taken out, who works here."
+    >
       {actingRole === "officer" ? (
         <>
           <Tabs
