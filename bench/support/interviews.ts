@@ -3,7 +3,7 @@ import type { BenchClient } from "./http-client.ts";
 /** Twelve people named for the first time, different in each round. */
 function contacts(round: number): Record<string, unknown>[] {
   return Array.from({ length: 12 }, (_, index) => ({
-    name: `Benchcontact ${round} ${index}`,
+    name: `Given${round * 12 + index} Family${index}`,
     phone: `+44 20 7946 ${String((round * 12 + index) % 10_000).padStart(4, "0")}`,
     setting: ["household", "workplace", "social"][index % 3],
     place: index % 3 === 1 ? "Bench Works" : null,

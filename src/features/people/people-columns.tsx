@@ -30,7 +30,7 @@ const coded = (key: Key, words: Record<string, string>) => (person: Person) => (
 const SPECS: readonly Spec[] = [
   { key: "name", header: "Name", cell: plain("name"), width: 184 },
   { key: "nameMasked", header: "Name, masked", cell: plain("nameMasked") },
-  { key: "phone", header: "Telephone", cell: plain("phone") },
+  { key: "phone", header: "Telephone", cell: plain("phone"), width: 156 },
   {
     key: "phoneLast2",
     header: "Telephone, last two",
@@ -47,9 +47,9 @@ const SPECS: readonly Spec[] = [
   { key: "onsetDate", header: "Onset", sortKey: "onsetDate", cell: day("onsetDate") },
   { key: "reportDate", header: "Reported", sortKey: "reportDate", cell: day("reportDate") },
   { key: "birthYear", header: "Birth year", cell: plain("birthYear"), numeric: true },
-  { key: "ageBand", header: "Age", sortKey: "ageBand", cell: plain("ageBand") },
-  { key: "sex", header: "Sex", sortKey: "sex", cell: plain("sex") },
-  { key: "area", header: "Area", sortKey: "area", cell: plain("area") },
+  { key: "ageBand", header: "Age", sortKey: "ageBand", cell: plain("ageBand"), width: 96 },
+  { key: "sex", header: "Sex", sortKey: "sex", cell: plain("sex"), width: 88 },
+  { key: "area", header: "Area", sortKey: "area", cell: plain("area"), width: 160 },
   {
     key: "occupation",
     header: "Occupation",

@@ -176,6 +176,22 @@ export function HOSTILE(names: Names): Hostile[] {
       sql: `select identity.put_people('[{"person_id":"${names.foreign}","has":["name"],"name_cipher":"AAAA"}]', '[]', '{}')`,
     },
     {
+      what: "adding identity in another investigation",
+      sql: `select identity.add_people(array['${names.foreign}']::uuid[], '{NULL}', '{NULL}', '{AAAA}',
+              '{X}', '{NULL}', '{NULL}', '{NULL}', '{NULL}', '{NULL}', '{NULL}', '{NULL}', '{NULL}',
+              '{}', '{}', '{}')`,
+    },
+    {
+      what: "a search token for nobody of the batch",
+      sql: `select identity.add_people('{}', '{}', '{}', '{}', '{}', '{}', '{}', '{}', '{}', '{}', '{}',
+              '{}', '{}', '{1}', '{1}', '{AAAA}')`,
+    },
+    {
+      what: "naming a household of another investigation",
+      sql: `select identity.put_places((select array_agg(id) from (
+              values ('${names.foreign}'::uuid)) as v (id)), '{AAAA}', '{AAAA}')`,
+    },
+    {
       what: "the data key of another investigation",
       sql: `select wrapped_key from identity.data_key where investigation_id = '${names.elsewhere}'`,
     },

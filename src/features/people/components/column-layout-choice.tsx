@@ -13,7 +13,12 @@ const widths: { value: ColumnWidth; label: string }[] = [
 export function ColumnLayoutChoice({ layout }: { layout: ColumnLayout }) {
   const columns = layout.ordered.filter((column) => column.hideable !== false);
   return (
-    <DropPanel label="Columns" panelLabel="Columns shown" className="w-max max-w-[92vw]">
+    <DropPanel
+      label="Columns"
+      panelLabel="Columns shown"
+      size="normal"
+      className="w-max max-sm:fixed max-sm:inset-x-3 max-sm:top-14 max-sm:w-auto"
+    >
       {() => (
         <ul>
           {columns.map((column, place) => (

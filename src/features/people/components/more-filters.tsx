@@ -32,7 +32,7 @@ export function MoreFilters({ state }: { state: ListState }) {
       label={set > 0 ? `More filters (${set})` : "More filters"}
       panelLabel="More filters"
       size="normal"
-      className="w-max max-w-[92vw]"
+      className="w-max max-sm:fixed max-sm:inset-x-3 max-sm:top-14 max-sm:w-auto"
     >
       {(close) => (
         <div className="grid gap-3 py-1">

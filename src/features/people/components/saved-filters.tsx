@@ -32,7 +32,7 @@ export function SavedFilters({ investigationId, state }: SavedFiltersProps) {
       label="Saved filters"
       panelLabel="Saved filters"
       size="normal"
-      className="w-80 max-w-[92vw]"
+      className="w-80 max-sm:fixed max-sm:inset-x-3 max-sm:top-14 max-sm:w-auto"
     >
       {(close) => (
         <div className="grid gap-3 py-1">
