@@ -3,7 +3,7 @@
 import { existsSync } from "node:fs";
 import { join } from "node:path";
 import { checkNode, ensurePackages } from "./lib/packages.mjs";
-import { PlainError, runScript, say } from "./lib/plain.mjs";
+import { complain, PlainError, runScript, say } from "./lib/plain.mjs";
 import { startCluster, stopCluster } from "./lib/postgres.mjs";
 import { dataFolder, projectRoot } from "./lib/project.mjs";
 import { checkSettings } from "./lib/settings.mjs";
@@ -30,6 +30,17 @@ await runScript(async () => {
   const { seed } = await tsImport("./seed/seed.ts", import.meta.url);
   const given = process.env.DATABASE_URL;
   const cluster = given ? undefined : await startCluster(data);
+  let broken = false;
+  // Broken off, nothing stays behind: no half-loaded data (one transaction), no database running.
+  for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"]) {
+    process.on(signal, () => {
+      if (broken) return;
+      broken = true;
+      complain("broken off; nothing was loaded");
+      const stopped = cluster ? stopCluster(data) : Promise.resolve();
+      void stopped.finally(() => process.exit(1));
+    });
+  }
   try {
     const trouble = await seed(given ?? cluster.url, data, args, say);
     if (trouble) throw new PlainError(trouble);

@@ -103,6 +103,7 @@ export async function seedInvestigation(
         teamId: teams[index]?.id,
       });
     }
+    const began = performance.now();
     say(`Inventing ${options.people} people …`);
     const outbreak = generateOutbreak({
       seed: options.seed,
@@ -137,7 +138,7 @@ export async function seedInvestigation(
         country: STORY_COUNTRY,
         progress(part, rows) {
           if (part === "contact pairs") pairs = rows;
-          say(`  ${rows} ${part}`);
+          say(`  ${rows} ${part} (${Math.round((performance.now() - began) / 1000)} s)`);
         },
       },
       outbreak,

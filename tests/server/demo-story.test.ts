@@ -23,7 +23,7 @@ beforeAll(async () => {
   client = new TestClient(app);
   const session = await client.signIn("supervisor@strandline.example", PASSWORD);
   base = `/api/investigations/${session.body.investigationId}`;
-}, 60_000);
+}, 180_000);
 
 afterAll(async () => {
   await app?.close();

@@ -101,7 +101,8 @@ async function reportOf(id: string): Promise<NetworkSummary> {
   return answer.body;
 }
 
-describe("the command", () => {
+// Three outbreaks and some processes: much for a busy machine.
+describe("the command", { timeout: 180_000 }, () => {
   test("fills a new invented investigation for the account named, and touches no other", async () => {
     const other = await buildInvestigation(app);
     const supervisor = await signInAs(app, "supervisor", other);
@@ -147,15 +148,11 @@ describe("the command", () => {
   });
 
   test("gives equal reports for an equal seed and others for another", async () => {
-    for (const [name, number] of [
-      ["Same A", "5"],
-      ["Same B", "5"],
-      ["Other", "6"],
-    ] as const) {
-      expect(await load(wanted(name, "--seed", number)), name).toBeNull();
+    for (const name of ["Same A", "Same B"]) {
+      expect(await load(wanted(name, "--seed", "5")), name).toBeNull();
     }
     const [a, b, other] = await Promise.all(
-      ["Same A", "Same B", "Other"].map(async (name) => reportOf(await idOf(name))),
+      ["Same A", "Same B", "Drill one"].map(async (name) => reportOf(await idOf(name))),
     );
     const figures = (report: NetworkSummary | undefined) => {
       const { graphVersion: _version, ...rest } = report as NetworkSummary;
@@ -215,6 +212,12 @@ describe("the command", () => {
     );
     expect(await load(wanted("X"), empty)).toMatch(/master key does not open this database/);
     rmSync(empty, { recursive: true, force: true });
+    await asAdmin(
+      app,
+      "insert into drizzle.__drizzle_migrations (hash, created_at) values ('x', 1)",
+    );
+    expect(await load(wanted("X"))).toMatch(/of another version; start this version once/);
+    await asAdmin(app, "delete from drizzle.__drizzle_migrations where hash = 'x'");
     expect(await idOf("X")).toBe("");
     const help = await run(["--help"]);
     expect([help.code, help.err]).toEqual([0, ""]);
