@@ -53,10 +53,10 @@ set plan_cache_mode = force_custom_plan as $$
 declare c record;
 begin
   select * into c from core.ctx();
-  if c.account_id is null or c.role not in ('tracer', 'supervisor') then
+  if c.account_id is null or c.role not in ('tracer', 'supervisor', 'officer') then
     raise insufficient_privilege using message = 'no context';
   end if;
-  if c.role = 'supervisor' then
+  if c.role <> 'tracer' then
     return query select f.person_id, f.day_zero from core.follow_up f
       where f.investigation_id = c.investigation_id and (p_only is null or f.person_id = p_only);
   else

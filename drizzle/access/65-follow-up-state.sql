@@ -14,31 +14,29 @@ language plpgsql stable set search_path = pg_catalog, pg_temp
 set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off as $$
 begin
   return query
-    with who as materialized (
+    with who as (
       select distinct p.id, p.classification from unnest(p_people) u (id)
       join core.person p on p.id = u.id and p.withdrawn_at is null
       where p.classification = 'contact' or p.classification is null or p.became_case
         or p.classification = 'not_a_case' and exists (select 1 from core.classification k
-          where k.person_id = p.id and k.classification = 'contact')),
-    sides as (
-      select w.id as contact, w.classification, cp.id, cp.person_b as source from who w
-      join core.contact_pair cp on cp.person_a = w.id and cp.withdrawn_at is null
-      union all
-      select w.id, w.classification, cp.id, cp.person_a from who w
-      join core.contact_pair cp on cp.person_b = w.id and cp.withdrawn_at is null),
-    told as materialized (
-      select s.contact,
+          where k.person_id = p.id and k.classification = 'contact'))
+    select w.id, t.day_zero from who w
+    cross join lateral (
+      select count(*) as told,
         max(e.last_exposure) filter (where e.last_exposure ~ '^\d{4}-\d{2}-\d{2}$') as day_zero
-      from sides s
+      from (
+        select cp.id, cp.person_b as source from core.contact_pair cp
+        where cp.person_a = w.id and cp.withdrawn_at is null
+        union all
+        select cp.id, cp.person_a from core.contact_pair cp
+        where cp.person_b = w.id and cp.withdrawn_at is null) s
       join core.person q on q.id = s.source and q.withdrawn_at is null
       join core.exposure e on e.pair_id = s.id and e.withdrawn_at is null
       where q.classification in ('confirmed', 'probable', 'suspected')
-          and (s.classification = 'contact' or e.named_by = q.id
-            or s.classification is not null and e.named_by is distinct from s.contact)
-        or q.classification is null and s.classification = 'contact'
-      group by s.contact)
-    select w.id, t.day_zero from who w left join told t on t.contact = w.id
-    where w.classification = 'contact' or t.contact is not null;
+          and (w.classification = 'contact' or e.named_by = q.id
+            or w.classification is not null and e.named_by is distinct from w.id)
+        or q.classification is null and w.classification = 'contact') t
+    where w.classification = 'contact' or t.told > 0;
 end $$;
 
 -- Who stands with whom: people of a household, and people who share a telephone number; the latter
@@ -48,32 +46,38 @@ create or replace function core.refresh_together(p_people uuid[]) returns void
 language plpgsql volatile security definer set search_path = pg_catalog, pg_temp
 set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off as $$
 begin
-  with tokens as materialized (
+  -- No two of these parts are joined with each other: of a whole investigation that would not end.
+  with tokens as (
     select distinct t.investigation_id, t.token from unnest(p_people) u (id)
     join identity.search_token t on t.person_id = u.id and t.kind = 1),
-  members as materialized (
-    select k.token, f.person_id, h.number from tokens k
+  members as (
+    select f.person_id, count(*) over k as holders, min(h.number) over k as home,
+      min(f.person_id::text) over k as first
+    from tokens k
     join identity.search_token t on t.investigation_id = k.investigation_id and t.token = k.token
       and t.kind = 1
     join core.follow_up f on f.person_id = t.person_id
     join core.person p on p.id = f.person_id
-    left join core.place h on h.id = p.household_id),
-  numbers as materialized (
-    select m.token, min(m.number) as home, min(m.person_id::text) as first
-    from members m group by m.token having count(*) > 1),
-  sharing as (
-    select m.person_id, min(n.home) as home, min(n.first) as first
-    from numbers n join members m on m.token = n.token group by m.person_id),
+    left join core.place h on h.id = p.household_id
+    window k as (partition by k.investigation_id, k.token)),
+  touched as (
+    select x.person_id, min(x.home) as home, min(x.first) as first from (
+      select u.id as person_id, null::integer as home, null::text as first
+      from unnest(p_people) u (id)
+      union all
+      select m.person_id, case when m.holders > 1 then m.home end,
+        case when m.holders > 1 then m.first end
+      from members m) x
+    group by x.person_id),
   worded as (
     select f.person_id, case
-        when s.home is not null or h.number is not null
-          then 'household-' || coalesce(s.home, h.number)
-        when s.first is not null then 'phone-' || s.first end as word
-    from (select u.id from unnest(p_people) u (id) union select m.person_id from members m) x (id)
-    join core.follow_up f on f.person_id = x.id
+        when t.home is not null or h.number is not null
+          then 'household-' || coalesce(t.home, h.number)
+        when t.first is not null then 'phone-' || t.first end as word
+    from touched t
+    join core.follow_up f on f.person_id = t.person_id
     join core.person p on p.id = f.person_id
-    left join core.place h on h.id = p.household_id
-    left join sharing s on s.person_id = f.person_id)
+    left join core.place h on h.id = p.household_id)
   update core.follow_up f set together = w.word from worded w
   where f.person_id = w.person_id and f.together is distinct from w.word;
 end $$;

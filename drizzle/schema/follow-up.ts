@@ -1,5 +1,5 @@
 import { sql } from "drizzle-orm";
-import { boolean, check, index, text, uniqueIndex, uuid } from "drizzle-orm/pg-core";
+import { boolean, check, index, integer, text, uniqueIndex, uuid } from "drizzle-orm/pg-core";
 import { investigation } from "./investigations.ts";
 import { person } from "./people.ts";
 import { at, bytea, core, identity, recordedAt } from "./shared.ts";
@@ -82,6 +82,11 @@ export const followUp = core.table(
     investigationId: uuid("investigation_id").notNull(),
     // Day of the last exposure to a case; null while none is known to the day.
     dayZero: text("day_zero"),
+    // The same as a number, YYYYMMDD, for order and range: beside row security an index is used only
+    // with comparisons that cannot leak what they compare, and those of text are none.
+    dayKey: integer("day_key")
+      .notNull()
+      .generatedAlwaysAs(sql`coalesce(replace(day_zero, '-', '')::integer, 99991231)`),
     // Still a contact, and the follow-up was not ended.
     open: boolean("open").notNull().default(true),
     // A symptom report that no later day has taken back.
@@ -90,14 +95,8 @@ export const followUp = core.table(
     together: text("together"),
   },
   (t) => [
-    index("follow_up_all").on(
-      t.investigationId,
-      sql`coalesce(${t.dayZero}, '9999-12-31')`,
-      t.personId,
-    ),
-    index("follow_up_open")
-      .on(t.investigationId, sql`coalesce(${t.dayZero}, '9999-12-31')`, t.personId)
-      .where(sql`${t.open}`),
+    index("follow_up_all").on(t.investigationId, t.dayKey, t.personId),
+    index("follow_up_open").on(t.investigationId, t.dayKey, t.personId).where(sql`${t.open}`),
     index("follow_up_symptoms").on(t.investigationId).where(sql`${t.symptomatic} and ${t.open}`),
     index("follow_up_together")
       .on(t.investigationId, t.together)

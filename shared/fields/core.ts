@@ -184,6 +184,7 @@ export const CORE_FIELDS = [
     ["person_id", "operational", "FFFF"],
     ["investigation_id", "operational", "FFFF"],
     ["day_zero", "operational", "FFFF"],
+    ["day_key", "operational", "FFFF"],
     ["open", "operational", "FFFF"],
     ["symptomatic", "health", "FFFF"],
     // Says who shares a telephone also of people whom a tracer may not name.

@@ -38,6 +38,9 @@ const item = (over: Partial<FollowUpItem>): FollowUpItem => ({
   state: "under_follow_up",
   symptomatic: false,
   lastCheck: null,
+  end: null,
+  reopenedOn: null,
+  dayZeroGap: null,
   expectedFrom: "2026-05-22",
   dueDays: Array.from({ length: 14 }, (_, index) => ({
     day: addDays("2026-05-22", index),

@@ -1,28 +1,28 @@
 import { type SQL, sql } from "drizzle-orm";
-import { dayKey, inDays, isShown, type ListQuestion } from "./shown.ts";
+import { dayKey, inDays, isShown, type ListQuestion, NO_DAY } from "./shown.ts";
 
 /**
- * One page in the order of day 0 without reading all who are shown: `counted` (n) and `page`
- * (person_id, day_zero, symptomatic, together, line) as common table expressions. Those with
- * symptoms, and who stands with them, are few and are read whole. Of the rest, the first of each
+ * One page in the order of day 0 without reading all who are shown: `counted` and
+ * `undated` (n), and `page`, as common table expressions. Those with symptoms, and who stands with
+ * them, are few and are read whole. Of the rest, the first of each
  * group is found along the index, as many as the page can reach, and brings the others with it.
  */
 export function pageByIndex(question: ListQuestion): SQL {
   const { investigationId: here, limit, offset, down } = question;
   const direction = sql.raw(down ? "desc" : "asc");
   const earlier = sql.raw(down ? ">" : "<");
-  const here_ = (alias: string) => sql`${sql.raw(alias)}.investigation_id = ${here}`;
+  const inside = (alias: string) => sql`${sql.raw(alias)}.investigation_id = ${here}`;
   const shown = (alias: string) => isShown(alias, question);
   return sql`with
     sick as materialized (
       select f.person_id, f.together from core.follow_up f
-      where ${here_("f")} and f.symptomatic and f.open and ${shown("f")}),
+      where ${inside("f")} and f.symptomatic and f.open and ${shown("f")}),
     sick_groups as materialized (
       select distinct s.together from sick s where s.together is not null),
     top_people as (
       select s.person_id from sick s
       union
-      select m.person_id from sick_groups s join core.follow_up m on ${here_("m")}
+      select m.person_id from sick_groups s join core.follow_up m on ${inside("m")}
         and m.together = s.together and ${shown("m")}),
     top as (
       select f.person_id, f.day_zero, f.together, f.symptomatic and f.open as symptomatic,
@@ -35,17 +35,17 @@ export function pageByIndex(question: ListQuestion): SQL {
       select t.*, row_number() over (order by t.at, t.symptomatic desc, t.place) as line
       from top_grouped t),
     counted as (
-      select ((select count(*) from core.follow_up f where ${here_("f")} and ${inDays("f", question)})
+      select ((select count(*) from core.follow_up f where ${inside("f")} and ${inDays("f", question)})
         + (select count(*) from sick s join core.follow_up f on f.person_id = s.person_id
            where not (${inDays("f", question)})))::int as n),
     leads as materialized (
       select f.person_id, f.day_zero, f.together, ${dayKey("f")} as day
       from core.follow_up f
-      where ${here_("f")} and ${inDays("f", question)} and not (f.symptomatic and f.open)
+      where ${inside("f")} and ${inDays("f", question)} and not (f.symptomatic and f.open)
         and (f.together is null
           or not exists (select 1 from sick_groups s where s.together = f.together)
             and not exists (select 1 from core.follow_up e
-              where ${here_("e")} and e.together = f.together and ${inDays("e", question)}
+              where ${inside("e")} and e.together = f.together and ${inDays("e", question)}
                 and (${dayKey("e")}, e.person_id) ${earlier} (${dayKey("f")}, f.person_id)))
       order by ${dayKey("f")} ${direction}, f.person_id ${direction}
       limit greatest(0, ${offset + limit} - (select count(*) from top_lines))),
@@ -58,7 +58,9 @@ export function pageByIndex(question: ListQuestion): SQL {
         count(*) over (partition by l.person_id)
       from leads l cross join lateral (
         select f.person_id, f.day_zero, ${dayKey("f")} as day from core.follow_up f
-        where ${here_("f")} and f.together = l.together and ${inDays("f", question)}) m),
+        where ${inside("f")} and f.together = l.together and ${inDays("f", question)}
+        -- Kept apart: joined as a whole, all who are due would be read.
+        offset 0) m),
     lines as (
       select t.person_id, t.day_zero, t.symptomatic, t.together, t.mates, t.line,
         t.line - row_number() over (partition by t.together order by t.line) as at
@@ -71,9 +73,15 @@ export function pageByIndex(question: ListQuestion): SQL {
       from rest r
       window w as (order by r.lead_day ${direction}, r.lead ${direction},
         r.day ${direction}, r.person_id ${direction})),
+    undated as (
+      select count(*)::int as n from core.follow_up f
+      where ${inside("f")} and f.open and ${dayKey("f")} = ${NO_DAY}),
+    cut as materialized (select l.* from lines l order by l.line limit ${limit} offset ${offset}),
     page as (
-      select l.person_id, l.day_zero, l.symptomatic, case when l.mates > 1 then
-          case when l.together like 'phone-%' then 'phone-' || l.at else l.together end
-        end as together, l.line
-      from lines l order by l.line limit ${limit} offset ${offset})`;
+      select p.id as person_id, p.study_number, p.area, p.classification, p.assigned_account_id,
+        p.version, p.recorded_at, true as mine, c.day_zero, c.symptomatic,
+        case when c.mates > 1 then
+          case when c.together like 'phone-%' then 'phone-' || c.at else c.together end
+        end as together, c.line
+      from cut c join core.person p on p.id = c.person_id)`;
 }

@@ -6,7 +6,7 @@ import { invalid } from "../../http/problem.ts";
 import type { Actor } from "../../http/route.ts";
 import { pageByIndex } from "./page-by-index.ts";
 import { pageOfFew } from "./page-of-few.ts";
-import { dayKey, type ListQuestion, NO_DAY } from "./shown.ts";
+import { dayKey, type ListQuestion } from "./shown.ts";
 
 /** Somebody under follow-up, as the list reads it. */
 export interface FollowUpRow {
@@ -31,8 +31,8 @@ const SORTS: Record<string, SQL> = {
   // The last due day lies a fixed number of days after day 0, so both sort alike.
   lastDueDay: dayKey("f"),
   dayZero: dayKey("f"),
-  studyNumber: sql`p.study_number`,
-  area: sql`p.area`,
+  studyNumber: sql`f.study_number`,
+  area: sql`f.area`,
 };
 
 function readSort(sort = "lastDueDay"): { key: string; by: SQL; down: boolean } {
@@ -79,10 +79,10 @@ export async function listFollowUp(
   const met =
     found === null
       ? sql`true`
-      : sql`(p.id = any (${sql.param(`{${found.join(",")}}`)}::uuid[]) or p.study_number like ${`${start}%`})`;
+      : sql`(f.person_id = any (${sql.param(`{${found.join(",")}}`)}::uuid[]) or f.study_number like ${`${start}%`})`;
   const page = wide
     ? pageByIndex(question)
-    : pageOfFew(question, { by, met, stored: actor.role === "supervisor" });
+    : pageOfFew(question, { by, met, near: actor.role === "tracer" });
   const answer = await tx.execute<{
     rows: FollowUpRow[];
     total: number;
@@ -91,16 +91,14 @@ export async function listFollowUp(
     sql`${page}
         select
           (select n from counted) as total,
-          (select count(*)::int from core.follow_up f
-           where f.investigation_id = ${actor.investigationId} and f.open
-             and ${dayKey("f")} = ${NO_DAY}) as "withoutDayZero",
-          (select coalesce(json_agg(json_build_object('id', p.id, 'studyNumber', p.study_number,
-              'area', p.area, 'classification', p.classification,
-              'assignedTo', p.assigned_account_id, 'version', p.version,
-              'recordedAt', p.recorded_at, 'symptomatic', g.symptomatic, 'together', g.together,
-              'dayZero', g.day_zero, 'mine', core.ctx_may_name(p.id))
+          (select n from undated) as "withoutDayZero",
+          (select coalesce(json_agg(json_build_object('id', g.person_id,
+              'studyNumber', g.study_number, 'area', g.area, 'classification', g.classification,
+              'assignedTo', g.assigned_account_id, 'version', g.version,
+              'recordedAt', g.recorded_at, 'symptomatic', g.symptomatic, 'together', g.together,
+              'dayZero', g.day_zero, 'mine', g.mine)
               order by g.line), '[]'::json)
-           from page g join core.person p on p.id = g.person_id) as rows`,
+           from page g) as rows`,
   );
   return answer.rows[0] ?? { rows: [], total: 0, withoutDayZero: 0 };
 }

@@ -15,11 +15,13 @@ export interface ListQuestion {
   offset: number;
 }
 
-/** Stands for "no day 0" where rows are put in order: after every day, as in the table's indexes. */
-export const NO_DAY = sql.raw("'9999-12-31'");
+/** Stands for "no day 0" where rows are put in order: after every day. */
+export const NO_DAY = sql.raw("99991231");
 
-/** Day 0 of a row of `core.follow_up` as the indexes hold it. */
-export const dayKey = (alias: string): SQL => sql.raw(`coalesce(${alias}.day_zero, '9999-12-31')`);
+/** Day 0 of a row of `core.follow_up` as a number, YYYYMMDD. */
+export const dayKey = (alias: string): SQL => sql.raw(`${alias}.day_key`);
+
+const keyOf = (day: string): number => Number(day.replaceAll("-", ""));
 
 /**
  * Which rows a list shows by their days alone: contacts whose day today is 1 … M; all with a day 0;
@@ -29,8 +31,9 @@ export function inDays(alias: string, question: ListQuestion): SQL {
   const { show, today, monitoringDays } = question;
   const key = dayKey(alias);
   const open = sql.raw(`${alias}.open`);
-  const first = shiftDay(today, -monitoringDays);
-  if (show === "due") return sql`${open} and ${key} between ${first} and ${shiftDay(today, -1)}`;
+  const first = sql`${keyOf(shiftDay(today, -monitoringDays))}::integer`;
+  const last = sql`${keyOf(shiftDay(today, -1))}::integer`;
+  if (show === "due") return sql`${open} and ${key} between ${first} and ${last}`;
   if (show === "ended") return sql`(${key} < ${first} or not ${open})`;
   if (show === "without_day_zero") return sql`${open} and ${key} = ${NO_DAY}`;
   return sql`${key} < ${NO_DAY}`;
