@@ -5,6 +5,11 @@ import userEvent from "@testing-library/user-event";
 import { createMemoryRouter, RouterProvider } from "react-router-dom";
 import { afterEach, describe, expect, it, vi } from "vitest";
 import type { FollowUpItem } from "../../shared/contracts/follow-up.ts";
+import {
+  DEFAULT_CASE_RULES,
+  DEFAULT_EXPOSURE_GRADING,
+  type Settings,
+} from "../../shared/contracts/settings.ts";
 import { ToastProvider } from "../../src/components/ui/toast-provider.tsx";
 import {
   commonScale,
@@ -52,12 +57,41 @@ const item = (over: Partial<FollowUpItem>): FollowUpItem => ({
 
 const today = "2026-05-27";
 
+const settingsOf = (symptoms: Settings["symptoms"]): Settings => ({
+  name: "Harbour",
+  invented: true,
+  timeZone: "UTC",
+  countryCode: "GB",
+  populationAtRisk: null,
+  caseDefinition: "",
+  caseRules: DEFAULT_CASE_RULES,
+  incubationMin: 1,
+  incubationMax: 14,
+  infectiousBefore: 2,
+  infectiousAfter: 10,
+  monitoringDays: 14,
+  clusterWindowDays: 14,
+  clusterMinimumCases: 2,
+  closureDays: null,
+  lostAfterDays: 3,
+  smallCellThreshold: 5,
+  exposureGrading: DEFAULT_EXPOSURE_GRADING,
+  symptoms,
+  texts: [],
+  practice: false,
+  caseDefinitionVersion: 1,
+  closureDaysInForce: 28,
+  today: "2026-05-27",
+  version: 1,
+});
+
 function open(
   items: FollowUpItem[],
   {
     at = "/follow",
     withoutDayZero = 0,
     total = 120,
+    settings = () => Response.json(settingsOf([{ code: "itch", label: "Itching skin" }])),
     answer = (_count: number) => Response.json({ id: item({}).id }, { status: 201 }),
   } = {},
 ) {
@@ -73,6 +107,7 @@ function open(
       });
       return answer(sent.length);
     }
+    if (url.pathname.endsWith("/settings")) return settings();
     asked.push(url.searchParams);
     const page = Number(url.searchParams.get("page"));
     const body = {
@@ -243,7 +278,8 @@ describe("follow room", () => {
     await user.click(bar.getByRole("button", { name: "symptoms, note" }));
     await user.click(await screen.findByRole("radio", { name: "yes" }));
     expect(screen.getAllByText(/call local emergency services/)).toHaveLength(2);
-    await user.click(screen.getByRole("checkbox", { name: "fever" }));
+    await user.click(await screen.findByRole("checkbox", { name: "Itching skin" }));
+    expect(screen.queryByRole("checkbox", { name: "fever" })).toBeNull();
     await user.selectOptions(screen.getByRole("combobox", { name: "Who answered" }), "relative");
     await user.type(screen.getByRole("textbox", { name: "Note" }), "asks for a visit");
     await user.click(bar.getByRole("button", { name: "spoken to" }));
@@ -253,7 +289,7 @@ describe("follow room", () => {
       body: {
         outcome: "spoken",
         symptoms: "yes",
-        symptomCodes: ["fever"],
+        symptomCodes: ["itch"],
         respondent: "relative",
         note: "asks for a visit",
       },
@@ -298,6 +334,107 @@ describe("follow room", () => {
       body: { version: 3, classification: "probable" },
     });
     await waitFor(() => expect(screen.queryByRole("alertdialog")).toBeNull());
+  });
+
+  it("says so when the list of symptoms cannot be had, and records without it", async () => {
+    const { sent, user } = open([item({})], {
+      settings: () => Response.json({ code: "unavailable" }, { status: 503 }),
+    });
+    const bar = within(await screen.findByRole("group", { name: "Check of Linnet Marsh" }));
+    await user.click(bar.getByRole("button", { name: "symptoms, note" }));
+    await user.click(await screen.findByRole("radio", { name: "yes" }));
+    expect(await screen.findByRole("button", { name: /again/i })).toBeTruthy();
+    await user.click(bar.getByRole("button", { name: "seen" }));
+    await waitFor(() => expect(sent).toHaveLength(1));
+    expect(sent[0]?.body).toEqual({ outcome: "seen", symptoms: "yes" });
+  });
+
+  it("ends a follow-up in two steps, and not without a reason", async () => {
+    const { sent, user } = open([item({})]);
+    await user.click(await screen.findByRole("button", { name: "end follow-up" }));
+    const question = within(await screen.findByRole("alertdialog"));
+    await user.click(question.getByRole("button", { name: "End follow-up" }));
+    expect(await question.findByText("Needed")).toBeTruthy();
+    expect(sent).toHaveLength(0);
+    await user.click(question.getByRole("radio", { name: "died" }));
+    expect(question.getByText(/fills no other date/)).toBeTruthy();
+    await user.click(question.getByRole("radio", { name: "refused" }));
+    await user.click(question.getByRole("button", { name: "End follow-up" }));
+    await waitFor(() => expect(sent).toHaveLength(1));
+    expect(sent[0]).toMatchObject({ path: `${item({}).id}/end`, body: { reason: "refused" } });
+    expect(sent[0]?.key).toMatch(/^[0-9a-f-]{36}$/);
+    await waitFor(() => expect(screen.queryByRole("alertdialog")).toBeNull());
+  });
+
+  it("says beside the day what is wrong with it, and keeps what was chosen", async () => {
+    const { user } = open([item({})], {
+      answer: () =>
+        Response.json(
+          {
+            type: "about:blank",
+            title: "Some fields need another look",
+            status: 422,
+            code: "invalid",
+            instance: "",
+            errors: [{ path: "day", code: "before_day_zero" }],
+          },
+          { status: 422, headers: { "content-type": "application/problem+json" } },
+        ),
+    });
+    await user.click(await screen.findByRole("button", { name: "end follow-up" }));
+    const question = within(await screen.findByRole("alertdialog"));
+    await user.click(question.getByRole("radio", { name: "moved away" }));
+    await user.click(question.getByRole("button", { name: "End follow-up" }));
+    expect(await question.findByText("Before day 0 of this contact")).toBeTruthy();
+    expect((question.getByRole("radio", { name: "moved away" }) as HTMLInputElement).checked).toBe(
+      true,
+    );
+  });
+
+  it("shows an end with its day, and reopens after a question", async () => {
+    const end = {
+      id: "5f5c1d8a-3f0e-4f5c-8a69-6a1c4a8d7e0f",
+      reason: "moved",
+      day: today,
+    } as const;
+    const { sent, user } = open([item({ state: "moved", end })], {
+      answer: () => new Response(null, { status: 204 }),
+    });
+    const row = within(await screen.findByRole("listitem"));
+    expect(row.getByText("moved away")).toBeTruthy();
+    expect(row.getByRole("img", { name: /follow-up ended before its last day/ })).toBeTruthy();
+    expect(row.queryByRole("group")).toBeNull();
+    await user.click(row.getByRole("button", { name: "reopen" }));
+    const question = within(await screen.findByRole("alertdialog"));
+    await user.click(question.getByRole("button", { name: "Reopen" }));
+    await waitFor(() => expect(sent[0]?.path).toBe(`${item({}).id}/end/${end.id}`));
+    await waitFor(() => expect(screen.queryByRole("alertdialog")).toBeNull());
+    expect(dueDays(item({ end, state: "moved" }), today).at(-1)?.day).toBe(today);
+  });
+
+  it("lists who has no day 0 with the reason and a way to mend it", async () => {
+    const { asked, user } = open(
+      [
+        item({
+          dayZero: null,
+          lastDueDay: null,
+          dayNumber: null,
+          dueDays: [],
+          dayZeroGap: "month_only",
+          reopenedOn: "2026-05-20",
+        }),
+      ],
+      { withoutDayZero: 1 },
+    );
+    await user.click(await screen.findByRole("button", { name: "show them" }));
+    await waitFor(() => expect(asked.at(-1)?.get("show")).toBe("without_day_zero"));
+    const row = within(await screen.findByRole("listitem"));
+    expect(row.getByText("no day 0")).toBeTruthy();
+    expect(row.getByText(/known to the month only/)).toBeTruthy();
+    expect(row.getByText(/^reopened /)).toBeTruthy();
+    const mend = row.getByRole("link", { name: "Complete the exposure of Linnet Marsh" });
+    expect(mend.getAttribute("href")).toMatch(/\/trace\/people\/5f5c1d8a/);
+    expect(screen.queryByText("1 without a day 0:")).toBeNull();
   });
 
   it("says in words when nobody is due", async () => {

@@ -105,3 +105,27 @@ test("those who stand together are neighbours in the list", () => {
     expect((places.at(-1) ?? 0) - (places[0] ?? 0), word).toBe(places.length - 1);
   }
 });
+
+test("a tracer who holds everybody reads the list in the supervisor's order", async () => {
+  const tracer = await signInAs(app, "tracer", supervisor.investigationId);
+  await asAdmin(
+    app,
+    "update core.person set assigned_account_id = $2 where investigation_id = $1",
+    [supervisor.investigationId, tracer.accountId],
+  );
+  const order = async (member: Member, query: Record<string, string>) => {
+    const answer = await member.client.get(`${member.base}/follow-up`, query);
+    const { items, total } = followUpList.parse(answer.body);
+    return { total, lines: items.map((item) => [item.id, item.together, item.symptomatic]) };
+  };
+  for (const show of ["due", "all", "ended", "without_day_zero"]) {
+    for (const sort of ["lastDueDay", "-lastDueDay"]) {
+      for (const page of ["1", "2", "3", "9"]) {
+        const query = { show, sort, page, pageSize: "17" };
+        expect(await order(tracer, query), JSON.stringify(query)).toEqual(
+          await order(supervisor, query),
+        );
+      }
+    }
+  }
+});
