@@ -5,6 +5,7 @@ import { ageBandOf, isCase } from "../../shared/vocabulary.ts";
 import type { Outbreak } from "./generator/types.ts";
 import { insertRows } from "./insert-rows.ts";
 import { loadChecks } from "./load-checks.ts";
+import { loadEnds } from "./load-ends.ts";
 import { loadIdentity } from "./load-identity.ts";
 import { loadInterviews } from "./load-interviews.ts";
 import type { LoadTarget } from "./load-target.ts";
@@ -179,4 +180,5 @@ export async function loadOutbreak(target: LoadTarget, outbreak: Outbreak): Prom
   );
   await loadInterviews(target, outbreak, idOf, placeOf);
   await loadChecks(target, outbreak, idOf);
+  await loadEnds(target, outbreak, idOf);
 }

@@ -69,7 +69,14 @@ afterAll(async () => {
 test("the rounds of the story show its states, with calls answered and not", () => {
   const states = new Set(people.map((item) => item.state));
   expect([...states]).toEqual(
-    expect.arrayContaining(["under_follow_up", "completed", "lost", "became_case"]),
+    expect.arrayContaining([
+      "under_follow_up",
+      "completed",
+      "lost",
+      "became_case",
+      "moved",
+      "refused",
+    ]),
   );
   const days = people.flatMap((item) => item.dueDays.map((due) => due.outcome));
   expect(days.filter((outcome) => outcome === "spoken").length).toBeGreaterThan(100);

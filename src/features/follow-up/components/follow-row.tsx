@@ -72,8 +72,8 @@ export function FollowRow({ item, investigationId, ...strip }: FollowRowProps) {
               className="text-kelp underline decoration-1 underline-offset-4
                 pointer-coarse:inline-block pointer-coarse:py-2"
             >
-              Complete the exposure
-              <span className="sr-only"> of {item.name ?? item.studyNumber}</span>
+              Complete the exposure{" "}
+              <span className="sr-only">of {item.name ?? item.studyNumber}</span>
             </Link>
           </p>
         ) : (
