@@ -58,6 +58,8 @@ export const FIELD_ERRORS = {
   result_before_specimen: "The result is before the specimen",
   before_day_zero: "Before day 0 of this contact",
   not_followed: "This person is not a contact with follow-up",
+  already_ended: "This follow-up has been ended already",
+  after_end: "After the day on which this follow-up was ended; reopen it first",
   only_with_symptoms: "Only where symptoms are reported",
   nobody_answered: "Nobody answered, so there is nothing to report",
   not_a_zone: "Not a time zone",

@@ -35,6 +35,8 @@ export const EVENTS = [
   "follow_check.recorded",
   "follow_check.withdrawn",
   "follow_checks.opened",
+  "follow_up.ended",
+  "follow_up.reopened",
   "match_reviews.listed",
   "import.staged",
   "import.committed",

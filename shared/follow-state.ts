@@ -1,12 +1,14 @@
-import type { CheckOutcome, Classification, FollowState } from "./vocabulary.ts";
+import type { CheckOutcome, Classification, FollowEnd, FollowState } from "./vocabulary.ts";
 import { CHECK_OUTCOMES, isCase } from "./vocabulary.ts";
 import { addDays } from "./windows.ts";
 
 /** What the state of a contact's follow-up is derived from. Days are local to the investigation. */
 export interface FollowFacts {
   classification: Classification | null;
-  /** Day of the last exposure. */
-  dayZero: string;
+  /** A recorded end that has not been taken back. */
+  ended: FollowEnd | null;
+  /** Day of the last exposure; null while it is not known to the day. */
+  dayZero: string | null;
   /** M: follow-up is due on days 1 … M after day 0. */
   monitoringDays: number;
   today: string;
@@ -15,6 +17,15 @@ export interface FollowFacts {
   /** N: due days in a row without being reached after which a contact is lost. */
   lostAfterDays: number;
   checks: readonly { day: string; outcome: CheckOutcome }[];
+}
+
+/**
+ * First day on which the absence of a check counts as missed: the day after somebody came on record,
+ * since nobody could have called before; or the day of reopening, since nobody had to before it.
+ */
+export function expectedSince(onRecord: string, reopenedOn: string | null): string {
+  const next = addDays(onRecord, 1);
+  return reopenedOn !== null && reopenedOn > next ? reopenedOn : next;
 }
 
 /** Best outcome of each day on which there was a check. */
@@ -35,6 +46,7 @@ export function isSeen(outcome: CheckOutcome | null | undefined): boolean {
 
 /** Due days in a row, up to today, on which the contact was not reached or nobody tried. */
 function missedInARow(facts: FollowFacts, best: ReadonlyMap<string, CheckOutcome>): number {
+  if (facts.dayZero === null) return 0;
   let missed = 0;
   for (let number = facts.monitoringDays; number >= 1; number -= 1) {
     const day = addDays(facts.dayZero, number);
@@ -53,14 +65,19 @@ function missedInARow(facts: FollowFacts, best: ReadonlyMap<string, CheckOutcome
 /**
  * State of a contact's follow-up (methods A.2, A.3). Completed only when the contact was seen or
  * spoken to on day M or after it; a new exposure moves day 0 and keeps the checks, so a completed
- * follow-up may open again. Lost ends as soon as the contact is reached.
+ * follow-up may open again. Lost ends as soon as the contact is reached. An end that somebody recorded
+ * stands until it is taken back; only becoming a case goes before it. Without a day 0 nothing is due,
+ * so nobody is completed or lost.
  */
 export function followState(facts: FollowFacts): FollowState {
   if (isCase(facts.classification)) return "became_case";
   if (facts.classification === "not_a_case") return "not_a_contact";
+  if (facts.ended !== null) return facts.ended;
   const best = bestOutcomes(facts.checks);
-  const lastDue = addDays(facts.dayZero, facts.monitoringDays);
-  for (const [day, outcome] of best) if (day >= lastDue && isSeen(outcome)) return "completed";
+  const lastDue = facts.dayZero === null ? null : addDays(facts.dayZero, facts.monitoringDays);
+  for (const [day, outcome] of best) {
+    if (lastDue !== null && day >= lastDue && isSeen(outcome)) return "completed";
+  }
   if (missedInARow(facts, best) >= facts.lostAfterDays) return "lost";
   for (const outcome of best.values()) if (outcome !== "not_reached") return "under_follow_up";
   return "to_be_notified";

@@ -47,14 +47,21 @@ export type InterviewOutcome = (typeof INTERVIEW_OUTCOMES)[number];
 export const CHECK_OUTCOMES = ["seen", "spoken", "message", "not_reached"] as const;
 export type CheckOutcome = (typeof CHECK_OUTCOMES)[number];
 
-/** States of a contact's follow-up (methods A.3); all but the last two follow from the checks. */
+/** Why a follow-up was ended by somebody's word (methods A.3); the last: entered in error. */
+export const FOLLOW_ENDS = ["refused", "moved", "died", "not_a_contact"] as const;
+export type FollowEnd = (typeof FOLLOW_ENDS)[number];
+
+/**
+ * States of a contact's follow-up (methods A.3). The first four follow from the checks, the fifth
+ * from the classification, the others from a recorded end (the last also from a classification).
+ */
 export const FOLLOW_STATES = [
   "to_be_notified",
   "under_follow_up",
   "completed",
   "lost",
   "became_case",
-  "not_a_contact",
+  ...FOLLOW_ENDS,
 ] as const;
 export type FollowState = (typeof FOLLOW_STATES)[number];
 

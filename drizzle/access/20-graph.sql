@@ -44,62 +44,26 @@ begin
       and cp.person_a = least(u.id, p_person) and cp.person_b = greatest(u.id, p_person);
 end $$;
 
--- Contacts under follow-up whom the acting person may see, with day 0: the latest last exposure day
--- to a case (or to someone not yet classified) over all their pairs, because one contact has one
--- follow-up whoever named them. Partial and missing days give no day 0. A person not yet classified
--- counts as a contact once a case has named them. Contacts who became a case, or were found to be
--- none, keep their day 0 and with it their history; what they themselves told does not move it.
--- Planned anew each time: the list of people may hold ten or a hundred thousand.
+-- Contacts under follow-up whom the acting person may see, or one of them, with day 0.
 drop function if exists core.follow_up_days();
 create or replace function core.follow_up_days(p_only uuid)
 returns table (person_id uuid, day_zero text)
 language plpgsql stable security definer set search_path = pg_catalog, pg_temp
 set plan_cache_mode = force_custom_plan as $$
-declare
-  c record;
-  v_people uuid[];
+declare c record;
 begin
   select * into c from core.ctx();
-  if c.account_id is null or c.role not in ('tracer', 'supervisor') then
+  if c.account_id is null or c.role not in ('tracer', 'supervisor', 'officer') then
     raise insufficient_privilege using message = 'no context';
   end if;
-  if c.role = 'tracer' then
-    select coalesce(array_agg(p.id), '{}') into v_people from core.person p
-    where p.id = any ((select core.ctx_people())::uuid[]) and p.withdrawn_at is null
-      and (p.classification = 'contact' or p.classification is null or p.became_case
-        or p.classification = 'not_a_case' and exists (select 1 from core.classification k
-          where k.person_id = p.id and k.classification = 'contact'))
-      and (p_only is null or p.id = p_only);
+  if c.role <> 'tracer' then
+    return query select f.person_id, f.day_zero from core.follow_up f
+      where f.investigation_id = c.investigation_id and (p_only is null or f.person_id = p_only);
   else
-    select coalesce(array_agg(p.id), '{}') into v_people from core.person p
-    where p.investigation_id = c.investigation_id and p.withdrawn_at is null
-      and (p.classification = 'contact' or p.classification is null or p.became_case
-        or p.classification = 'not_a_case' and exists (select 1 from core.classification k
-          where k.person_id = p.id and k.classification = 'contact'))
-      and (p_only is null or p.id = p_only);
+    return query select f.person_id, f.day_zero from core.follow_up f
+      where f.person_id = any ((select core.ctx_people())::uuid[])
+        and f.investigation_id = c.investigation_id and (p_only is null or f.person_id = p_only);
   end if;
-  return query
-    with sides as (
-      select cp.id, cp.person_a as contact, cp.person_b as source from core.contact_pair cp
-      where cp.person_a = any (v_people) and cp.withdrawn_at is null
-      union all
-      select cp.id, cp.person_b, cp.person_a from core.contact_pair cp
-      where cp.person_b = any (v_people) and cp.withdrawn_at is null),
-    told as (
-      select s.contact,
-        max(e.last_exposure) filter (where e.last_exposure ~ '^\d{4}-\d{2}-\d{2}$') as day_zero
-      from sides s
-      join core.person p on p.id = s.contact
-      join core.person q on q.id = s.source and q.withdrawn_at is null
-      join core.exposure e on e.pair_id = s.id and e.withdrawn_at is null
-      where q.classification in ('confirmed', 'probable', 'suspected')
-          and (p.classification = 'contact' or e.named_by = q.id
-            or p.classification is not null and e.named_by is distinct from p.id)
-        or q.classification is null and p.classification = 'contact'
-      group by s.contact)
-    select p.id, t.day_zero from core.person p
-    left join told t on t.contact = p.id
-    where p.id = any (v_people) and (p.classification = 'contact' or t.contact is not null);
 end $$;
 
 -- The message of an event: ids and versions only; delivered when the transaction commits.

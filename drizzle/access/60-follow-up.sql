@@ -1,29 +1,52 @@
--- Which of these people share a telephone number, as far as the acting person may open theirs: a
--- running number for each shared one. Neither the number nor its token leaves the database.
-create or replace function identity.shared_phones(p_people uuid[])
-returns table (person_id uuid, shared integer)
+-- Everyone under follow-up within the acting tracer's scope, with what the due list shows of them.
+-- Who stands together is told as far as the tracer may open whose numbers are shared; neither number
+-- nor token leaves the database. One function, because beside row security each of these joins would
+-- search the whole scope again for every row.
+drop function if exists identity.shared_phones(uuid[]);
+create or replace function core.followed_near()
+returns table (person_id uuid, day_zero text, day_key integer, open boolean, symptomatic boolean,
+  together text, study_number text, area text, classification text, assigned_account_id uuid,
+  version integer, recorded_at timestamptz, mine boolean)
 language plpgsql stable security definer set search_path = pg_catalog, pg_temp
-set plan_cache_mode = force_custom_plan as $$
+set enable_seqscan = off set enable_mergejoin = off as $$
 declare
   c record;
-  v_people uuid[] := p_people;
+  v_people uuid[];
+  v_named uuid[];
 begin
   select * into c from core.ctx();
-  if c.account_id is null or c.role not in ('tracer', 'supervisor') then
+  if c.account_id is null or c.role <> 'tracer' then
     raise insufficient_privilege using message = 'no context';
   end if;
-  if c.role = 'tracer' then
-    v_people := array(
-      select n.id from unnest(core.ctx_named_people()) n (id) where n.id = any (p_people));
-  end if;
+  v_people := core.ctx_people();
+  v_named := core.ctx_named_people();
   return query
-    with held as (
-      select t.person_id as id, t.token, min(t.person_id::text) over (partition by t.token) as first,
-        count(*) over (partition by t.token) as met
+    with named as materialized (select n.id from unnest(v_named) n (id)),
+    followed as materialized (
+      select f.person_id, f.day_zero, f.day_key, f.open, f.symptomatic, h.number, p.study_number,
+        p.area, p.classification, p.assigned_account_id, p.version, p.recorded_at
       from unnest(v_people) u (id)
-      join identity.search_token t on t.person_id = u.id and t.kind = 1
-        and t.investigation_id = c.investigation_id)
-    select h.id, (dense_rank() over (order by h.first))::integer from held h where h.met > 1;
+      join core.follow_up f on f.person_id = u.id and f.investigation_id = c.investigation_id
+      join core.person p on p.id = f.person_id
+      left join core.place h on h.id = p.household_id),
+    numbers as (
+      select f.person_id, count(*) over k as holders, min(f.number) over k as home,
+        min(f.person_id::text) over k as first
+      from followed f join named n on n.id = f.person_id
+      join identity.search_token t on t.person_id = f.person_id and t.kind = 1
+      window k as (partition by t.token)),
+    sharing as (
+      select m.person_id, min(m.home) as home, min(m.first) as first
+      from numbers m where m.holders > 1 group by m.person_id)
+    select f.person_id, f.day_zero, f.day_key, f.open, f.symptomatic,
+      case when s.home is not null or f.number is not null
+          then 'household-' || coalesce(s.home, f.number)
+        when s.first is not null then 'phone-' || s.first end,
+      f.study_number, f.area, f.classification, f.assigned_account_id, f.version, f.recorded_at,
+      n.id is not null
+    from followed f
+    left join sharing s on s.person_id = f.person_id
+    left join named n on n.id = f.person_id;
 end $$;
 
 -- Keeps the sealed note of a check that the acting person has just recorded.

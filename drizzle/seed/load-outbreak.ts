@@ -5,6 +5,7 @@ import { ageBandOf, isCase } from "../../shared/vocabulary.ts";
 import type { Outbreak } from "./generator/types.ts";
 import { insertRows } from "./insert-rows.ts";
 import { loadChecks } from "./load-checks.ts";
+import { loadEnds } from "./load-ends.ts";
 import { loadIdentity } from "./load-identity.ts";
 import { loadInterviews } from "./load-interviews.ts";
 import type { LoadTarget } from "./load-target.ts";
@@ -185,5 +186,6 @@ export async function loadOutbreak(target: LoadTarget, outbreak: Outbreak): Prom
   target.progress?.("tests", outbreak.tests.length);
   await loadInterviews(target, outbreak, idOf, placeOf);
   await loadChecks(target, outbreak, idOf);
+  await loadEnds(target, outbreak, idOf);
   target.progress?.("checks of contacts", outbreak.checks.length);
 }

@@ -78,10 +78,13 @@ export const symptomCode = z
   .string({ error: "not_text" })
   .regex(/^[a-z][a-z0-9_]{0,39}$/, { error: "invalid" });
 
+/** Most symptoms a list may hold. */
+export const SYMPTOM_LIMIT = 40;
+
 export const symptomList = z
   .array(z.strictObject({ code: symptomCode, label: text(LIMITS.shortText, 1) }))
   .min(1, { error: "required" })
-  .max(40, { error: "too_many" })
+  .max(SYMPTOM_LIMIT, { error: "too_many" })
   .refine((list) => new Set(list.map((one) => one.code)).size === list.length, {
     error: "repeated",
   });

@@ -183,6 +183,27 @@ export const CORE_FIELDS = [
     ["recorded_by", "operational", "FFNF"],
     ["withdrawn_at", "operational", "FFFF"],
   ]),
+  ...table("core.follow_end", [
+    ["id", "operational", "FFFF"],
+    ["investigation_id", "operational", "FFFF"],
+    ["person_id", "operational", "FFFF"],
+    ["reason", "health", "FFFF"],
+    ["day", "operational", "FFFF"],
+    ["recorded_at", "operational", "FFFF"],
+    ["recorded_by", "operational", "FFNF"],
+    ["withdrawn_at", "operational", "FFFF"],
+    ["withdrawn_by", "operational", "FFNF"],
+  ]),
+  ...table("core.follow_up", [
+    ["person_id", "operational", "FFFF"],
+    ["investigation_id", "operational", "FFFF"],
+    ["day_zero", "operational", "FFFF"],
+    ["day_key", "operational", "FFFF"],
+    ["open", "operational", "FFFF"],
+    ["symptomatic", "health", "FFFF"],
+    // Says who shares a telephone also of people whom a tracer may not name.
+    ["together", "quasi", "NFNN"],
+  ]),
   ...table("core.match_review", [
     ["id", "operational", "NFNN"],
     ["investigation_id", "operational", "NFNN"],

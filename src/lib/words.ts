@@ -1,6 +1,8 @@
+import type { DayZeroGap } from "../../shared/contracts/follow-up.ts";
 import type {
   CheckOutcome,
   Classification,
+  FollowEnd,
   FollowState,
   InterviewOutcome,
   Setting,
@@ -41,7 +43,23 @@ export const followStateWords: Readonly<Record<FollowState, string>> = {
   completed: "completed",
   lost: "lost to follow-up",
   became_case: "became a case",
+  refused: "refused",
+  moved: "moved away",
+  died: "died",
   not_a_contact: "not a contact",
+};
+
+export const endWords: Readonly<Record<FollowEnd, string>> = {
+  refused: "refused",
+  moved: "moved away",
+  died: "died",
+  not_a_contact: "not a contact, entered in error",
+};
+
+export const gapWords: Readonly<Record<DayZeroGap, string>> = {
+  no_exposure: "no exposure to a case on record",
+  month_only: "last exposure known to the month only",
+  not_known: "no whole last exposure day on record",
 };
 
 export const checkWords: Readonly<Record<CheckOutcome, string>> = {

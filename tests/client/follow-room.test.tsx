@@ -1,108 +1,19 @@
 // @vitest-environment jsdom
-import { QueryClient, QueryClientProvider } from "@tanstack/react-query";
-import { cleanup, configure, render, screen, waitFor, within } from "@testing-library/react";
-import userEvent from "@testing-library/user-event";
-import { createMemoryRouter, RouterProvider } from "react-router-dom";
+import { cleanup, configure, screen, waitFor, within } from "@testing-library/react";
 import { afterEach, describe, expect, it, vi } from "vitest";
 import type { FollowUpItem } from "../../shared/contracts/follow-up.ts";
-import { ToastProvider } from "../../src/components/ui/toast-provider.tsx";
 import {
   commonScale,
   dayWords,
   dueDays,
   followMark,
 } from "../../src/features/follow-up/lib/due-days.ts";
-import { Component } from "../../src/features/follow-up/routes/follow-route.tsx";
 import { addDays } from "../../src/lib/calendar-day.ts";
-import { InvestigationContext } from "../../src/lib/investigation-context.ts";
-import { investigation } from "./support/interview-desk.tsx";
+import { item, openRoom, today } from "./support/follow-room.tsx";
 
 configure({ asyncUtilTimeout: 15_000 });
 vi.setConfig({ testTimeout: 30_000 });
 afterEach(cleanup);
-
-const item = (over: Partial<FollowUpItem>): FollowUpItem => ({
-  id: "5f5c1d8a-3f0e-4f5c-8a69-6a1c4a8d7e02",
-  studyNumber: "K4T-29X7",
-  name: "Linnet Marsh",
-  phone: "07700 900071",
-  area: "Harbour",
-  classification: "contact",
-  assignedTo: null,
-  dayZero: "2026-05-21",
-  lastDueDay: "2026-06-04",
-  dayNumber: 6,
-  monitoringDays: 14,
-  mine: true,
-  version: 3,
-  state: "under_follow_up",
-  symptomatic: false,
-  lastCheck: null,
-  expectedFrom: "2026-05-22",
-  dueDays: Array.from({ length: 14 }, (_, index) => ({
-    day: addDays("2026-05-22", index),
-    outcome: null,
-  })),
-  together: null,
-  ...over,
-});
-
-const today = "2026-05-27";
-
-function open(
-  items: FollowUpItem[],
-  {
-    at = "/follow",
-    withoutDayZero = 0,
-    total = 120,
-    answer = (_count: number) => Response.json({ id: item({}).id }, { status: 201 }),
-  } = {},
-) {
-  const asked: URLSearchParams[] = [];
-  const sent: { path: string; key: string | null; body: unknown }[] = [];
-  vi.stubGlobal("fetch", async (address: string, init: RequestInit = {}) => {
-    const url = new URL(address, "http://localhost");
-    if (init.method !== "GET") {
-      sent.push({
-        path: url.pathname.replace(/^.*\/follow-up\/|^.*\/people\//, ""),
-        key: new Headers(init.headers).get("idempotency-key"),
-        body: init.body ? JSON.parse(String(init.body)) : null,
-      });
-      return answer(sent.length);
-    }
-    asked.push(url.searchParams);
-    const page = Number(url.searchParams.get("page"));
-    const body = {
-      items,
-      total,
-      page,
-      pageSize: 50,
-      today,
-      withoutDayZero,
-      lostAfterDays: 3,
-    };
-    return new Response(JSON.stringify(body), { headers: { "content-type": "application/json" } });
-  });
-  const router = createMemoryRouter(
-    [
-      { path: "/follow", element: <Component /> },
-      { path: "*", element: <p>another page</p> },
-    ],
-    { initialEntries: [at] },
-  );
-  render(
-    <QueryClientProvider
-      client={new QueryClient({ defaultOptions: { queries: { retry: false } } })}
-    >
-      <InvestigationContext value={investigation}>
-        <ToastProvider>
-          <RouterProvider router={router} />
-        </ToastProvider>
-      </InvestigationContext>
-    </QueryClientProvider>,
-  );
-  return { asked, sent, router, user: userEvent.setup({ delay: null }) };
-}
 
 describe("due days", () => {
   it("show what is known of each day, and leave out what nobody could do", () => {
@@ -151,7 +62,7 @@ describe("due days", () => {
 
 describe("follow room", () => {
   it("shows who is due, how to reach them and what is known of each day", async () => {
-    const { asked } = open([item({})]);
+    const { asked } = openRoom([item({})]);
     const list = await screen.findByRole("list", { name: "Contacts under follow-up" });
     const row = within(list).getByRole("listitem");
     expect(within(row).getByRole("link", { name: "Linnet Marsh" }).getAttribute("href")).toMatch(
@@ -169,24 +80,24 @@ describe("follow room", () => {
     ).toBeTruthy();
     expect(screen.getByText(/This system does not watch for emergencies/)).toBeTruthy();
     expect(Object.fromEntries(asked[0] ?? [])).toEqual({ show: "due", page: "1", pageSize: "50" });
-    expect(screen.queryByText(/without a day 0/)).toBeNull();
+    expect(screen.queryByText(/without a day 0:/)).toBeNull();
   });
 
   it("goes by study number where name and phone are not the reader's to know", async () => {
     const { name: _name, phone: _phone, ...closed } = item({});
-    open([closed]);
+    openRoom([closed]);
     expect(await screen.findByRole("link", { name: "K4T-29X7" })).toBeTruthy();
     expect(screen.getByText("number not open")).toBeTruthy();
     expect(document.querySelector('a[href^="tel:"]')).toBeNull();
   });
 
   it("names how many have no day 0", async () => {
-    open([item({})], { withoutDayZero: 3 });
+    openRoom([item({})], { withoutDayZero: 3 });
     expect(await screen.findByText("3 without a day 0:")).toBeTruthy();
   });
 
   it("filters and pages through the address, with study numbers but never a name", async () => {
-    const { asked, router, user } = open([item({})]);
+    const { asked, router, user } = openRoom([item({})]);
     await screen.findByRole("link", { name: "Linnet Marsh" });
     await user.click(screen.getByRole("button", { name: "Next" }));
     await waitFor(() => expect(asked.at(-1)?.get("page")).toBe("2"));
@@ -206,7 +117,7 @@ describe("follow room", () => {
   });
 
   it("records by one press, and a press tried again is the same record", async () => {
-    const { sent, user } = open([item({})], {
+    const { sent, user } = openRoom([item({})], {
       answer: (count) =>
         count === 1
           ? Response.json({ code: "unavailable" }, { status: 503 })
@@ -235,12 +146,13 @@ describe("follow room", () => {
   });
 
   it("takes symptoms, respondent and note along, with the words of care beside them", async () => {
-    const { sent, user } = open([item({})]);
+    const { sent, user } = openRoom([item({})]);
     const bar = within(await screen.findByRole("group", { name: "Check of Linnet Marsh" }));
     await user.click(bar.getByRole("button", { name: "symptoms, note" }));
     await user.click(await screen.findByRole("radio", { name: "yes" }));
     expect(screen.getAllByText(/call local emergency services/)).toHaveLength(2);
-    await user.click(screen.getByRole("checkbox", { name: "fever" }));
+    await user.click(await screen.findByRole("checkbox", { name: "Itching skin" }));
+    expect(screen.queryByRole("checkbox", { name: "fever" })).toBeNull();
     await user.selectOptions(screen.getByRole("combobox", { name: "Who answered" }), "relative");
     await user.type(screen.getByRole("textbox", { name: "Note" }), "asks for a visit");
     await user.click(bar.getByRole("button", { name: "spoken to" }));
@@ -250,7 +162,7 @@ describe("follow room", () => {
       body: {
         outcome: "spoken",
         symptoms: "yes",
-        symptomCodes: ["fever"],
+        symptomCodes: ["itch"],
         respondent: "relative",
         note: "asks for a visit",
       },
@@ -259,7 +171,7 @@ describe("follow room", () => {
   });
 
   it("says the state, symptoms and who stands together; a case is checked no more", async () => {
-    open([
+    openRoom([
       item({ symptomatic: true, state: "lost", together: "household-12" }),
       item({
         id: "5f5c1d8a-3f0e-4f5c-8a69-6a1c4a8d7e03",
@@ -284,7 +196,7 @@ describe("follow room", () => {
   });
 
   it("makes a contact a case after a question", async () => {
-    const { sent, user } = open([item({})], { answer: () => Response.json({}) });
+    const { sent, user } = openRoom([item({})], { answer: () => Response.json({}) });
     await user.click(await screen.findByRole("button", { name: "meets the definition" }));
     const question = within(await screen.findByRole("alertdialog"));
     await user.click(question.getByRole("radio", { name: "probable case" }));
@@ -297,8 +209,21 @@ describe("follow room", () => {
     await waitFor(() => expect(screen.queryByRole("alertdialog")).toBeNull());
   });
 
+  it("says so when the list of symptoms cannot be had, and records without it", async () => {
+    const { sent, user } = openRoom([item({})], {
+      settings: () => Response.json({ code: "unavailable" }, { status: 503 }),
+    });
+    const bar = within(await screen.findByRole("group", { name: "Check of Linnet Marsh" }));
+    await user.click(bar.getByRole("button", { name: "symptoms, note" }));
+    await user.click(await screen.findByRole("radio", { name: "yes" }));
+    expect(await screen.findByRole("button", { name: /again/i })).toBeTruthy();
+    await user.click(bar.getByRole("button", { name: "seen" }));
+    await waitFor(() => expect(sent).toHaveLength(1));
+    expect(sent[0]?.body).toEqual({ outcome: "seen", symptoms: "yes" });
+  });
+
   it("says in words when nobody is due", async () => {
-    open([], { total: 0 });
+    openRoom([], { total: 0 });
     expect(await screen.findByText("No contact is due today")).toBeTruthy();
   });
 });

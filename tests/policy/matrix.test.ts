@@ -28,6 +28,7 @@ beforeAll(async () => {
   objects = {
     personId: { own: world.people.held, other: world.foreign },
     checkId: { own: await checkOf(world.people.held), other: await checkOf(world.foreign) },
+    endId: { own: await endOf(world.people.held), other: await endOf(world.foreign) },
     memberId: {
       own: world.everyone.epidemiologist.memberId,
       other: world.others.epidemiologist.memberId,
@@ -81,6 +82,29 @@ async function teamIn(investigationId: string): Promise<string> {
     [id, investigationId, `Team ${id.slice(0, 8)}`],
   );
   return id;
+}
+
+/** Another person held by whoever holds the held one. */
+async function likeHeld(): Promise<string> {
+  const made = await world.admin.query(
+    `insert into core.person (id, investigation_id, study_number, classification,
+       assigned_account_id, recorded_by)
+     select gen_random_uuid(), investigation_id, left(gen_random_uuid()::text, 8), 'contact',
+       assigned_account_id, recorded_by from core.person where id = $1 returning id`,
+    [world.people.held],
+  );
+  return made.rows[0].id;
+}
+
+/** An end of a person's follow-up. */
+async function endOf(personId: string): Promise<string> {
+  const made = await world.admin.query(
+    `insert into core.follow_end (id, investigation_id, person_id, reason, day)
+     select gen_random_uuid(), investigation_id, id, 'moved', '2099-03-04' from core.person
+     where id = $1 returning id`,
+    [personId],
+  );
+  return made.rows[0].id;
 }
 
 /** An invitation that nobody took up, past the routes. */
@@ -137,6 +161,12 @@ async function addressOf(
     }
     if (route.method === "delete" && object === "own" && name === "teamId") {
       own = await teamIn(world.here);
+    }
+    if (route.method === "delete" && object === "own" && name === "endId") {
+      // One follow-up has one end, so each deletion gets a contact of its own.
+      const person = await likeHeld();
+      own = await endOf(person);
+      path = path.replace(world.people.held, person);
     }
     if (route.method === "delete" && object === "own" && name === "invitationId") {
       own = await openInvitation(world.here);

@@ -84,6 +84,10 @@ export const WRITES: Record<string, Writes> = {
     insert: ["tracer", "supervisor"],
     update: { roles: ["tracer", "supervisor"], columns: ["withdrawn_at"] },
   },
+  "core.follow_end": {
+    insert: ["tracer", "supervisor"],
+    update: { roles: ["tracer", "supervisor"], columns: ["withdrawn_at", "withdrawn_by"] },
+  },
   "core.place": {
     insert: RECORDERS,
     update: { roles: RECORDERS, columns: ["name", "setting", "area", "version"] },
@@ -179,6 +183,8 @@ const TRACER_ROWS: Record<string, string> = {
   "core.interview": `${HERE} and person_id = ${SCOPE}`,
   "core.group_exposure": `${HERE} and person_id = ${SCOPE}`,
   "core.follow_check": `${HERE} and person_id = ${SCOPE}`,
+  "core.follow_end": `${HERE} and person_id = ${SCOPE}`,
+  "core.follow_up": `${HERE} and person_id = ${SCOPE}`,
   "core.contact_pair": `${HERE} and person_a = ${SCOPE} and person_b = ${SCOPE}`,
   "core.exposure": `${HERE} and exists (select 1 from core.contact_pair cp where cp.id = pair_id)`,
   "core.match_review": "false",
@@ -212,6 +218,7 @@ const TRACER_ADDS: Record<string, string> = {
   "core.interview": `${HERE} and core.ctx_can_link(person_id)`,
   "core.group_exposure": `${HERE} and core.ctx_can_link(person_id)`,
   "core.follow_check": `${HERE} and core.ctx_can_link(person_id)`,
+  "core.follow_end": `${HERE} and core.ctx_can_link(person_id)`,
   "core.contact_pair": `${HERE} and core.ctx_can_link(person_a) and core.ctx_can_link(person_b)`,
   "core.exposure": `${HERE} and core.ctx_can_tell(pair_id)`,
 };
@@ -233,6 +240,8 @@ export const CORE_TABLES = [
   "core.exposure",
   "core.group_exposure",
   "core.follow_check",
+  "core.follow_end",
+  "core.follow_up",
   "core.match_review",
   "core.graph_change",
   "core.outbox",

@@ -1,14 +1,14 @@
 import { sql } from "drizzle-orm";
 import { accessTo, openableKeys, readableColumns } from "../../../shared/fields.ts";
-import { bestOutcomes, followState } from "../../../shared/follow-state.ts";
+import { bestOutcomes, expectedSince, followState } from "../../../shared/follow-state.ts";
 import { type Classification, isCase } from "../../../shared/vocabulary.ts";
 import { infectiousWindow, monitoringPeriod, sourceWindow } from "../../../shared/windows.ts";
-import { dayIn, now, shiftDay } from "../../clock.ts";
+import { dayIn, now } from "../../clock.ts";
 import type { Tx } from "../../db/with-tx.ts";
 import type { Actor } from "../../http/route.ts";
 import type { KeyRing } from "../../identity/keys.ts";
 import { openPeople } from "../../identity/records.ts";
-import { checksOf } from "../follow-up/store.ts";
+import { checksOf, endsOf } from "../follow-up/store.ts";
 import type { InvestigationRow } from "../investigations/store.ts";
 import { type CorePerson, peopleById } from "./queries.ts";
 
@@ -108,7 +108,7 @@ async function dayZeroOf(
 ): Promise<(string | null)[]> {
   if (actor.role === "tracer" || actor.role === "supervisor") {
     const found = await tx.execute<{ day_zero: string | null }>(
-      sql`select day_zero from core.follow_up_days(${person.id}::uuid)`,
+      sql`select day_zero from core.follow_up where person_id = ${person.id}`,
     );
     return found.rows.map((row) => row.day_zero);
   }
@@ -125,12 +125,17 @@ async function checkedDays(
   dayZero: string,
 ) {
   const checks = (await checksOf(tx, [person.id])).get(person.id) ?? [];
-  const expectedFrom = shiftDay(dayIn(settings.timeZone, String(person.recordedAt)), 1);
+  const ends = (await endsOf(tx, [person.id], settings.timeZone)).get(person.id);
+  const expectedFrom = expectedSince(
+    dayIn(settings.timeZone, String(person.recordedAt)),
+    ends?.reopenedOn ?? null,
+  );
   const { monitoringDays, lostAfterDays } = settings;
   return {
     expectedFrom,
     state: followState({
       classification: person.classification as Classification | null,
+      ended: ends?.standing?.reason ?? null,
       dayZero,
       monitoringDays,
       today: dayIn(settings.timeZone, now()),

@@ -2,7 +2,10 @@ import { markText } from "./mark-text.ts";
 import { PersonMark } from "./person-mark.tsx";
 import type { PersonMarkInput } from "./person-mark-input.ts";
 
-const followUp = (share: number, state: "active" | "completed" | "lost") => ({ share, state });
+const followUp = (share: number, state: "active" | "completed" | "lost" | "ended") => ({
+  share,
+  state,
+});
 
 const shown: readonly PersonMarkInput[] = [
   { classification: "confirmed" },
@@ -12,6 +15,7 @@ const shown: readonly PersonMarkInput[] = [
   { classification: "contact", followUp: followUp(0.6, "active") },
   { classification: "contact", followUp: followUp(1, "completed") },
   { classification: "contact", followUp: followUp(0.3, "lost") },
+  { classification: "contact", followUp: followUp(0.3, "ended") },
   { classification: "not_a_case" },
 ];
 

@@ -64,6 +64,14 @@ function ring({ followUp }: PersonMarkInput, paint: MarkPaint, color: string): M
     ];
   }
   if (followUp.state === "lost") return brokenRing(paint, color);
+  if (followUp.state === "ended") {
+    // The share done stays as it was; a square stop stands inside.
+    const { share } = followUp;
+    return [
+      ...ring({ classification: "contact", followUp: { share, state: "active" } }, paint, color),
+      path("M9.25 9.25h5.5v5.5h-5.5Z", { fill: paint.ink, stroke: "none" }),
+    ];
+  }
   const share = followUp.state === "completed" ? 1 : Math.min(1, Math.max(0, followUp.share));
   const track = circle(ringRadius, { fill: paint.paper, stroke: paint.quiet, strokeWidth: 1.25 });
   if (share === 0) return [track];

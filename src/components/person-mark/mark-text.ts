@@ -16,6 +16,7 @@ export function markText(input: PersonMarkInput): string {
   if (input.classification === "contact" && followUp) {
     if (followUp.state === "completed") parts.push("follow-up completed");
     else if (followUp.state === "lost") parts.push("lost to follow-up");
+    else if (followUp.state === "ended") parts.push("follow-up ended before its last day");
     else parts.push(`${formatShare(followUp.share)} of follow-up done`);
   } else if (input.wasContact && input.classification !== "contact") {
     parts.push("was a contact before");

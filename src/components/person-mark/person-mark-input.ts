@@ -4,7 +4,7 @@ export type PersonMarkInput = {
   /** A case that was a contact under follow-up before: disc inside a ring. */
   wasContact?: boolean;
   /** Follow-up of a contact; `share` is days done of days due, 0 … 1. */
-  followUp?: { share: number; state: "active" | "completed" | "lost" };
+  followUp?: { share: number; state: "active" | "completed" | "lost" | "ended" };
   /**
    * Place of the group in the colour set (0 = first); "rest" or a place past the set is grey;
    * undefined draws in ink, where groups are not the question.

@@ -37,6 +37,8 @@ export const actionWords: Readonly<Record<EventName, string>> = {
   "follow_up.listed": "read the follow-up list",
   "follow_check.recorded": "recorded a check",
   "follow_check.withdrawn": "took back a check",
+  "follow_up.ended": "ended a follow-up",
+  "follow_up.reopened": "reopened a follow-up",
   "follow_checks.opened": "read the notes of checks",
   "match_reviews.listed": "read possible matches",
   "import.staged": "checked a file",

@@ -69,7 +69,14 @@ afterAll(async () => {
 test("the rounds of the story show its states, with calls answered and not", () => {
   const states = new Set(people.map((item) => item.state));
   expect([...states]).toEqual(
-    expect.arrayContaining(["under_follow_up", "completed", "lost", "became_case"]),
+    expect.arrayContaining([
+      "under_follow_up",
+      "completed",
+      "lost",
+      "became_case",
+      "moved",
+      "refused",
+    ]),
   );
   const days = people.flatMap((item) => item.dueDays.map((due) => due.outcome));
   expect(days.filter((outcome) => outcome === "spoken").length).toBeGreaterThan(100);
@@ -103,5 +110,37 @@ test("those who stand together are neighbours in the list", () => {
     const places = people.flatMap((item, place) => (item.together === word ? [place] : []));
     expect(places.length, word).toBeGreaterThan(1);
     expect((places.at(-1) ?? 0) - (places[0] ?? 0), word).toBe(places.length - 1);
+  }
+});
+
+test("a tracer who holds everybody reads the list in the supervisor's order", async () => {
+  const tracer = await signInAs(app, "tracer", supervisor.investigationId);
+  await asAdmin(
+    app,
+    "update core.person set assigned_account_id = $2 where investigation_id = $1",
+    [supervisor.investigationId, tracer.accountId],
+  );
+  const order = async (member: Member, query: Record<string, string>) => {
+    const answer = await member.client.get(`${member.base}/follow-up`, query);
+    const { items, total } = followUpList.parse(answer.body);
+    // A shared number's word is good for one list only: who has the same one is what counts.
+    const lines = items.map(({ id, together, symptomatic }) => [
+      id,
+      together?.startsWith("phone-")
+        ? items.findIndex((one) => one.together === together)
+        : together,
+      symptomatic,
+    ]);
+    return { total, lines };
+  };
+  for (const show of ["due", "all", "ended", "without_day_zero"]) {
+    for (const sort of ["lastDueDay", "-lastDueDay"]) {
+      for (const page of ["1", "2", "3", "9"]) {
+        const query = { show, sort, page, pageSize: "17" };
+        expect(await order(tracer, query), JSON.stringify(query)).toEqual(
+          await order(supervisor, query),
+        );
+      }
+    }
   }
 });

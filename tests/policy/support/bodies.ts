@@ -65,6 +65,7 @@ const BODIES: Record<string, (world: World) => unknown> = {
     symptoms: "no",
     respondent: "self",
   }),
+  "post /api/investigations/:id/follow-up/:personId/end": () => ({ reason: "moved" }),
   "post /api/investigations/:id/places": () => ({ name: "Hall", setting: "workplace" }),
   "post /api/investigations/:id/interviews": (world) => ({
     personId: world.people.held,

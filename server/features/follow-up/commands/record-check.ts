@@ -10,6 +10,7 @@ import type { Actor } from "../../../http/route.ts";
 import { checkNote } from "../../../identity/check-note.ts";
 import type { KeyRing } from "../../../identity/keys.ts";
 import type { InvestigationRow } from "../../investigations/store.ts";
+import { endsOf } from "../store.ts";
 
 /**
  * Records one attempt to reach a contact. The day is today in the investigation's zone unless one
@@ -17,7 +18,7 @@ import type { InvestigationRow } from "../../investigations/store.ts";
  *
  * @returns the id of the check
  * @throws HttpProblem not_found out of scope; invalid for somebody who is no contact, a day in the
- *   future or one before day 0
+ *   future, one before day 0 or after a recorded end, and a symptom that is not in the list
  */
 export async function recordCheck(
   tx: Tx,
@@ -32,7 +33,7 @@ export async function recordCheck(
   );
   if (person.rows.length === 0) throw new HttpProblem("not_found");
   const followed = await tx.execute<{ day_zero: string | null }>(
-    sql`select day_zero from core.follow_up_days(${personId}::uuid)`,
+    sql`select day_zero from core.follow_up where person_id = ${personId}`,
   );
   const contact = followed.rows[0];
   if (!contact) throw invalid({ path: "", code: "not_followed" });
@@ -41,6 +42,12 @@ export async function recordCheck(
   if (day > today) throw invalid({ path: "day", code: "in_future" });
   if (contact.day_zero !== null && day < contact.day_zero) {
     throw invalid({ path: "day", code: "before_day_zero" });
+  }
+  const end = (await endsOf(tx, [personId], settings.timeZone)).get(personId)?.standing;
+  if (end && day > end.day) throw invalid({ path: "day", code: "after_end" });
+  const known = new Set(settings.symptoms.map((symptom) => symptom.code));
+  if (input.symptomCodes.some((code) => !known.has(code))) {
+    throw invalid({ path: "symptomCodes", code: "not_in_list" });
   }
   const id = randomUUID();
   await tx.execute(

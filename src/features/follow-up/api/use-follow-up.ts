@@ -1,10 +1,10 @@
 import { keepPreviousData, useQuery } from "@tanstack/react-query";
-import { followUpList } from "../../../../shared/contracts/follow-up.ts";
+import { type FollowShow, followUpList } from "../../../../shared/contracts/follow-up.ts";
 import { api, inInvestigation } from "../../../lib/api-client.ts";
 import { investigationKey } from "../../../lib/query-keys.ts";
 
 export type FollowUpAsk = {
-  show: "due" | "all" | "ended";
+  show: FollowShow;
   /** A study number or its beginning; names never go into an address. */
   q: string;
   sort: string | undefined;

@@ -10,6 +10,7 @@ import { checkWords } from "../../../lib/words.ts";
 import { useRecordCheck } from "../api/record-check.ts";
 import { useWithdrawCheck } from "../api/withdraw-check.ts";
 import { type CheckDetails, checkBody, noDetails } from "../lib/check-details.ts";
+import { EndFollowUp } from "./end-follow-up.tsx";
 import { MakeCase } from "./make-case.tsx";
 
 // Most checks are one press; what is asked beside it comes when it is wanted.
@@ -65,6 +66,7 @@ export function CheckBar({ investigationId, person, today }: CheckBarProps) {
       {details ? (
         <Suspense fallback={<LoadingState label="Opening the form" rows={2} />}>
           <DetailsForm
+            investigationId={investigationId}
             called={person.called}
             name={`check-${person.id}`}
             value={details}
@@ -94,6 +96,7 @@ export function CheckBar({ investigationId, person, today }: CheckBarProps) {
           {details ? "without details" : "symptoms, note"}
         </Button>
         {person.mine ? <MakeCase investigationId={investigationId} person={person} /> : null}
+        <EndFollowUp investigationId={investigationId} person={person} today={today} />
       </fieldset>
       {record.isError ? (
         <Notice tone="error" title="Not recorded." className="mt-2">

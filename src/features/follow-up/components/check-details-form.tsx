@@ -1,6 +1,5 @@
 import { LIMITS } from "../../../../shared/contracts/common.ts";
-import { RESPONDENTS, SYMPTOMS } from "../../../../shared/vocabulary.ts";
-import { CheckboxField } from "../../../components/fields/checkbox-field.tsx";
+import { RESPONDENTS } from "../../../../shared/vocabulary.ts";
 import { RadioRow } from "../../../components/fields/radio-row.tsx";
 import { SelectField } from "../../../components/fields/select-field.tsx";
 import { TextField } from "../../../components/fields/text-field.tsx";
@@ -8,6 +7,7 @@ import { TextareaField } from "../../../components/fields/textarea-field.tsx";
 import { Caution } from "../../../components/ui/caution.tsx";
 import { wordFor } from "../../../lib/words.ts";
 import type { CheckDetails } from "../lib/check-details.ts";
+import { SymptomBoxes } from "./symptom-boxes.tsx";
 
 const symptomAnswers = [
   { value: "", label: "not asked" },
@@ -19,6 +19,7 @@ const symptomAnswers = [
 const respondents = RESPONDENTS.map((value) => ({ value, label: wordFor({}, value) }));
 
 export type CheckDetailsFormProps = {
+  investigationId: string;
   called: string;
   /** Keeps the radio buttons of this contact apart from those of others. */
   name: string;
@@ -28,7 +29,14 @@ export type CheckDetailsFormProps = {
 };
 
 /** Symptoms, who answered, a note and another day; recorded with the press of an outcome below. */
-export function CheckDetailsForm({ called, name, value, today, onChange }: CheckDetailsFormProps) {
+export function CheckDetailsForm({
+  investigationId,
+  called,
+  name,
+  value,
+  today,
+  onChange,
+}: CheckDetailsFormProps) {
   const set = (change: Partial<CheckDetails>) => onChange({ ...value, ...change });
   return (
     <fieldset className="mb-2 border-s-2 border-rule ps-3">
@@ -42,25 +50,11 @@ export function CheckDetailsForm({ called, name, value, today, onChange }: Check
       />
       {value.symptoms === "yes" ? (
         <>
-          <fieldset className="mt-1">
-            <legend className="text-sm font-bold">Which symptoms</legend>
-            <div className="flex flex-wrap gap-x-4">
-              {SYMPTOMS.map((symptom) => (
-                <CheckboxField
-                  key={symptom}
-                  label={wordFor({}, symptom)}
-                  checked={value.symptomCodes.includes(symptom)}
-                  onChange={(event) =>
-                    set({
-                      symptomCodes: event.target.checked
-                        ? [...value.symptomCodes, symptom]
-                        : value.symptomCodes.filter((one) => one !== symptom),
-                    })
-                  }
-                />
-              ))}
-            </div>
-          </fieldset>
+          <SymptomBoxes
+            investigationId={investigationId}
+            value={value.symptomCodes}
+            onChange={(symptomCodes) => set({ symptomCodes })}
+          />
           <Caution className="my-2">
             A symptom report needs a person's action now. This system does not watch for
             emergencies; call local emergency services.

@@ -4,11 +4,13 @@ import { paths } from "../../../app/paths.ts";
 import { PersonMark } from "../../../components/person-mark/person-mark.tsx";
 import { Answer } from "../../../components/ui/answer.tsx";
 import { formatDay } from "../../../lib/formatters.ts";
+import { gapWords } from "../../../lib/words.ts";
 import { dayWords, followMark } from "../lib/due-days.ts";
 import { CheckBar } from "./check-bar.tsx";
 import { DueStrip, type DueStripProps } from "./due-strip.tsx";
 import { followColumns } from "./follow-grid.ts";
 import { FollowStatus, isFollowed } from "./follow-status.tsx";
+import { ReopenFollowUp } from "./reopen-follow-up.tsx";
 
 export type FollowRowProps = Omit<DueStripProps, "item"> & {
   item: FollowUpItem;
@@ -54,7 +56,7 @@ export function FollowRow({ item, investigationId, ...strip }: FollowRowProps) {
       </p>
       <p className="text-end lg:text-start">
         {dayWords(item)}
-        {item.dayNumber > item.monitoringDays ? null : (
+        {item.lastDueDay === null || (item.dayNumber ?? 0) > item.monitoringDays ? null : (
           <span className="text-sm text-ink-2">
             {" "}
             · last due {formatDay(item.lastDueDay, { style: "short" })}
@@ -62,7 +64,21 @@ export function FollowRow({ item, investigationId, ...strip }: FollowRowProps) {
         )}
       </p>
       <div className="col-span-2 min-w-0 lg:col-span-1">
-        <DueStrip item={item} {...strip} />
+        {item.dayZeroGap ? (
+          <p className="text-sm text-ink-2">
+            {gapWords[item.dayZeroGap]}.{" "}
+            <Link
+              to={paths.person(investigationId, item.id)}
+              className="text-kelp underline decoration-1 underline-offset-4
+                pointer-coarse:inline-block pointer-coarse:py-2"
+            >
+              Complete the exposure{" "}
+              <span className="sr-only">of {item.name ?? item.studyNumber}</span>
+            </Link>
+          </p>
+        ) : (
+          <DueStrip item={item} {...strip} />
+        )}
       </div>
       <div className="col-span-full flex min-w-0 flex-wrap items-center gap-x-5 gap-y-1.5">
         <FollowStatus item={item} />
@@ -71,6 +87,13 @@ export function FollowRow({ item, investigationId, ...strip }: FollowRowProps) {
             investigationId={investigationId}
             person={{ ...item, called: item.name ?? item.studyNumber }}
             today={strip.today}
+          />
+        ) : null}
+        {item.end && item.state === item.end.reason ? (
+          <ReopenFollowUp
+            investigationId={investigationId}
+            person={{ id: item.id, called: item.name ?? item.studyNumber }}
+            end={item.end}
           />
         ) : null}
       </div>

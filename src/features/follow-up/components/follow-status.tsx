@@ -1,5 +1,5 @@
 import type { FollowUpItem } from "../../../../shared/contracts/follow-up.ts";
-import type { FollowState } from "../../../../shared/vocabulary.ts";
+import { FOLLOW_ENDS, type FollowState } from "../../../../shared/vocabulary.ts";
 import { Tag, type TagTone } from "../../../components/ui/tag.tsx";
 import { formatDay } from "../../../lib/formatters.ts";
 import { checkWords, followStateWords } from "../../../lib/words.ts";
@@ -10,12 +10,17 @@ const tones: Readonly<Record<FollowState, TagTone>> = {
   completed: "kelp",
   lost: "coral",
   became_case: "plain",
+  refused: "ochre",
+  moved: "quiet",
+  died: "plain",
   not_a_contact: "quiet",
 };
 
+const OVER: readonly FollowState[] = ["became_case", ...FOLLOW_ENDS];
+
 /** Contacts of whom checks are still made; also after the last day, when it is to be caught up. */
 export function isFollowed(state: FollowState): boolean {
-  return state !== "became_case" && state !== "not_a_contact";
+  return !OVER.includes(state);
 }
 
 export function StateTag({ state }: { state: FollowState }) {
@@ -31,7 +36,7 @@ function togetherWords(together: string): string {
 
 /** State of a contact, symptoms first, and the last check in words. */
 export function FollowStatus({ item }: { item: FollowUpItem }) {
-  const { lastCheck } = item;
+  const { lastCheck, end, reopenedOn } = item;
   return (
     <p className="flex flex-wrap items-baseline gap-x-2 gap-y-1 text-sm text-ink-2 xl:w-[33rem]">
       {item.symptomatic ? (
@@ -40,6 +45,12 @@ export function FollowStatus({ item }: { item: FollowUpItem }) {
         </Tag>
       ) : null}
       <StateTag state={item.state} />
+      {end && item.state === end.reason ? (
+        <span>on {formatDay(end.day, { style: "short" })}</span>
+      ) : null}
+      {reopenedOn && !end ? (
+        <Tag tone="quiet">reopened {formatDay(reopenedOn, { style: "short" })}</Tag>
+      ) : null}
       {item.together ? <Tag tone="blue">{togetherWords(item.together)}</Tag> : null}
       <span>
         {lastCheck

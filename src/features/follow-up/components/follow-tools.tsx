@@ -5,7 +5,8 @@ import type { FollowUpAsk } from "../api/use-follow-up.ts";
 const shows: readonly { value: FollowUpAsk["show"]; label: string }[] = [
   { value: "due", label: "due today" },
   { value: "all", label: "all with a day 0" },
-  { value: "ended", label: "past their last day" },
+  { value: "ended", label: "past their last day, or ended" },
+  { value: "without_day_zero", label: "without a day 0" },
 ];
 
 const sorts = [

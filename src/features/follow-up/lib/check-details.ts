@@ -1,11 +1,11 @@
-import type { CheckOutcome, Symptom } from "../../../../shared/vocabulary.ts";
+import type { CheckOutcome } from "../../../../shared/vocabulary.ts";
 import type { CheckBody } from "../api/record-check.ts";
 
 /** What may be noted beside an outcome; "" is "not asked". */
 export interface CheckDetails {
   day: string;
   symptoms: string;
-  symptomCodes: readonly Symptom[];
+  symptomCodes: readonly string[];
   respondent: string;
   note: string;
 }

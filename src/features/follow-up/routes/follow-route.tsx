@@ -1,6 +1,8 @@
 import { useCallback } from "react";
 import { useSearchParams } from "react-router-dom";
+import { FOLLOW_SHOWS } from "../../../../shared/contracts/follow-up.ts";
 import { RoomPage } from "../../../components/layouts/room-page.tsx";
+import { Button } from "../../../components/ui/button.tsx";
 import { Caution } from "../../../components/ui/caution.tsx";
 import { EmptyState } from "../../../components/ui/empty-state.tsx";
 import { ErrorState } from "../../../components/ui/error-state.tsx";
@@ -14,12 +16,11 @@ import { type FollowUpAsk, useFollowUp } from "../api/use-follow-up.ts";
 import { FollowList } from "../components/follow-list.tsx";
 import { FollowTools } from "../components/follow-tools.tsx";
 
-const shows: readonly FollowUpAsk["show"][] = ["due", "all", "ended"];
 const sizes = [25, 50, 100];
 
 /** What an address asks for; anything it cannot mean is left at its default. */
 function readAsk(search: URLSearchParams): FollowUpAsk {
-  const show = shows.find((one) => one === search.get("show")) ?? "due";
+  const show = FOLLOW_SHOWS.find((one) => one === search.get("show")) ?? "due";
   const page = Math.trunc(Number(search.get("page")));
   const pageSize = Number(search.get("pageSize"));
   return {
@@ -34,7 +35,8 @@ function readAsk(search: URLSearchParams): FollowUpAsk {
 const empty: Record<FollowUpAsk["show"], string> = {
   due: "No contact is due today",
   all: "No contact with a day 0 is on record",
-  ended: "No contact is past the last due day",
+  ended: "No contact is past the last due day, and no follow-up was ended",
+  without_day_zero: "Every contact has a day 0",
 };
 
 /** The Follow room: contacts with their due days, `/i/:investigationId/follow`. */
@@ -85,7 +87,9 @@ export function Component() {
         <>
           {data.items.length === 0 ? (
             <EmptyState title={ask.q ? "No study number begins so in this list" : empty[ask.show]}>
-              A contact is listed once a last exposure day is known to the day.
+              {ask.show === "without_day_zero"
+                ? "Each last exposure is known to the day."
+                : "A contact has due days once a last exposure is known to the day."}
             </EmptyState>
           ) : (
             <>
@@ -106,11 +110,18 @@ export function Component() {
               />
             </>
           )}
-          {data.withoutDayZero > 0 ? (
+          {data.withoutDayZero > 0 && ask.show !== "without_day_zero" ? (
             <Notice tone="warn" title={`${formatNumber(data.withoutDayZero)} without a day 0:`}>
               {data.withoutDayZero === 1 ? "this contact has" : "these contacts have"} no last
-              exposure day known to the day, so no due days and no place in this list. Ask the case
-              again, or complete the exposure.
+              exposure day known to the day, so no due days. Ask the case again, or complete the
+              exposure.{" "}
+              <Button
+                size="small"
+                variant="plain"
+                onClick={() => onChange({ show: "without_day_zero", q: "" })}
+              >
+                show them
+              </Button>
             </Notice>
           ) : null}
           <p className="mt-3 text-sm text-ink-2">
