@@ -8,6 +8,7 @@ import { interviewRoutes } from "./features/interviews/routes.ts";
 import { invitationRoutes } from "./features/investigations/invitations.ts";
 import { memberRoutes } from "./features/investigations/members.ts";
 import { investigationPlainRoutes, investigationRoutes } from "./features/investigations/routes.ts";
+import { settingsRoutes } from "./features/investigations/settings-routes.ts";
 import { teamRoutes } from "./features/investigations/teams.ts";
 import { networkRoutes } from "./features/network/routes.ts";
 import { peopleListRoutes } from "./features/people/list-routes.ts";
@@ -22,6 +23,7 @@ import type { Services } from "./services.ts";
 /** Every route of an investigation; the one list that app, document and tests are made from. */
 export const ROUTES: readonly AnyRoute[] = [
   ...investigationRoutes,
+  ...settingsRoutes,
   ...memberRoutes,
   ...teamRoutes,
   ...invitationRoutes,

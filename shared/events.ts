@@ -9,6 +9,7 @@ export const EVENTS = [
   "account.password_reset",
   "investigation.created",
   "investigation.changed",
+  "investigation.practice_reset",
   "member.invited",
   "member.invitation_withdrawn",
   "member.added",
@@ -61,5 +62,6 @@ export const TOPICS = [
   "exports",
   "members",
   "clusters",
+  "settings",
 ] as const;
 export type Topic = (typeof TOPICS)[number];

@@ -14,7 +14,9 @@ begin
      or p_role not in ('tracer', 'supervisor', 'epidemiologist', 'officer')
      or (p_team is not null and not exists (
        select 1 from core.team t where t.id = p_team and t.investigation_id = c.investigation_id
-         and t.removed_at is null)) then
+         and t.removed_at is null))
+      -- What is for practice sends nothing.
+      or exists (select 1 from core.investigation v where v.id = c.investigation_id and v.practice) then
     raise insufficient_privilege;
   end if;
   if (select count(*) from auth.invitation i

@@ -13,4 +13,6 @@ export interface LoadTarget {
   teams?: ReadonlyMap<string, string>;
   /** Called when a part is in, for who waits. */
   progress?: (part: string, rows: number) => void;
+  /** Version of the case definition that classifications are made with; 1 when left out. */
+  caseDefinitionVersion?: number;
 }

@@ -1,11 +1,11 @@
 import type { Outbreak } from "../../drizzle/seed/generator/types.ts";
+import { dayNumber } from "../../shared/core/index.ts";
 import {
+  type ClusterSettings,
   groupCases,
   type ProposedCluster,
   type Stay,
-} from "../../server/features/clusters/group-cases.ts";
-import type { ClusterSettings } from "../../server/features/clusters/settings.ts";
-import { dayNumber } from "../../shared/core/index.ts";
+} from "../../shared/group-cases.ts";
 
 const DAY = /^\d{4}-\d{2}-\d{2}$/;
 

@@ -46,6 +46,8 @@ const FUNCTIONS: Record<string, readonly (Role | "system" | "auth")[]> = {
   "identity.tokens_added()": [],
   "identity.tokens_dropped()": [],
   "core.followed_near()": ["tracer"],
+  "core.has_demo_members()": ["supervisor", "officer"],
+  "core.empty_practice()": ["supervisor"],
   "identity.put_check_note(uuid, bytea)": ["tracer", "supervisor"],
   "identity.open_check_notes(uuid)": ["tracer", "supervisor"],
   "core.day_lasts(text, text)": [...ROLES, "auth"],

@@ -1,9 +1,14 @@
+import {
+  type ClusterSettings,
+  type DatedCase,
+  groupCases,
+  type ProposedCluster,
+} from "../../../shared/group-cases.ts";
 import { withTx } from "../../db/with-tx.ts";
 import { safeError } from "../../http/translate-error.ts";
 import type { Services } from "../../services.ts";
 import { loadInvestigation } from "../investigations/store.ts";
-import { type DatedCase, groupCases, type ProposedCluster } from "./group-cases.ts";
-import { type ClusterSettings, clusterSettings } from "./settings.ts";
+import { clusterSettings } from "./settings.ts";
 import { loadClusterInput } from "./store.ts";
 
 /** Proposed clusters of an investigation, in their order, with the cases they are made of. */

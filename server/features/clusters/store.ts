@@ -1,8 +1,8 @@
 import { sql } from "drizzle-orm";
 import { CLUSTER_KINDS, type ClusterKind } from "../../../shared/contracts/clusters.ts";
 import { dayNumber } from "../../../shared/core/index.ts";
+import type { ClusterInput, DatedCase, Stay } from "../../../shared/group-cases.ts";
 import type { Tx } from "../../db/with-tx.ts";
-import type { ClusterInput, DatedCase, Stay } from "./group-cases.ts";
 
 const CASES = sql`core.person p where p.investigation_id = `;
 const COUNTED = sql` and p.classification in ('confirmed', 'probable') and p.withdrawn_at is null`;

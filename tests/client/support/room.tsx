@@ -23,6 +23,7 @@ const investigation: Investigation = {
   incubationMin: 1,
   incubationMax: 14,
   monitoringDays: 14,
+  practice: false,
   caseDefinitionVersion: 1,
   graphVersion: 1482,
   version: 1,

@@ -43,6 +43,7 @@ const investigation: Investigation = {
   incubationMin: 1,
   incubationMax: 14,
   monitoringDays: 14,
+  practice: false,
   caseDefinitionVersion: 1,
   graphVersion: 3,
   version: 1,

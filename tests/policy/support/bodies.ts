@@ -36,6 +36,9 @@ export async function exportOf(
 /** A body each route accepts, so that only access decides. A new route with a body stands here. */
 const BODIES: Record<string, (world: World) => unknown> = {
   "patch /api/investigations/:id": () => ({ version: 1, infectiousBefore: 2 }),
+  "patch /api/investigations/:id/settings": () => ({ version: 1, infectiousBefore: 2 }),
+  "post /api/investigations/:id/settings/preview": () => ({ version: 1, infectiousBefore: 3 }),
+  "post /api/investigations/:id/settings/practice-reset": () => ({ version: 1, name: "Some name" }),
   "post /api/investigations/:id/members": () => ({ email: "no@body.example", role: "tracer" }),
   "patch /api/investigations/:id/members/:memberId": () => ({ version: 1, endsOn: "2099-12-31" }),
   "post /api/investigations/:id/teams": () => ({ name: "Body team" }),
