@@ -28,6 +28,8 @@ export const investigationInput = z.strictObject({
   name: text(LIMITS.name, 1),
   /** Left out: as the account that opens it, invented for one of the demo. */
   invented: z.boolean({ error: "wrong_type" }).optional(),
+  /** To learn with: always invented, may be emptied, sends nothing, counts nowhere. */
+  practice: z.boolean({ error: "wrong_type" }).default(false),
   timeZone: timeZone.default("UTC"),
   countryCode: z
     .string()
@@ -57,6 +59,7 @@ export const investigationAnswer = z.strictObject({
   id: uuid,
   name: z.string(),
   invented: z.boolean(),
+  practice: z.boolean(),
   timeZone: z.string(),
   countryCode: z.string(),
   today: z.string(),

@@ -1,6 +1,7 @@
 /** First word of every query key inside an investigation; live topics are mapped onto these. */
 export type QueryWord =
   | "investigation"
+  | "settings"
   | "members"
   | "invitations"
   | "people"

@@ -9,6 +9,7 @@ export function presentInvestigation(row: InvestigationRow, roles: readonly Role
     id: row.id,
     name: row.name,
     invented: row.invented,
+    practice: row.practice,
     timeZone: row.timeZone,
     countryCode: row.countryCode,
     today: dayIn(row.timeZone, now()),

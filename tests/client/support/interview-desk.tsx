@@ -21,6 +21,7 @@ export const investigation: Investigation = {
   id: investigationId,
   name: "Sallow Bay",
   invented: true,
+  practice: false,
   timeZone: "Europe/Dublin",
   countryCode: "GB",
   today: "2026-05-27",

@@ -14,6 +14,7 @@ const investigation: Investigation = {
   id: ids.investigation,
   name: "Sallow Bay",
   invented: true,
+  practice: false,
   timeZone: "UTC",
   countryCode: "GB",
   today: "2026-05-27",

@@ -34,6 +34,7 @@ const investigation: Investigation = {
   id: investigationId,
   name: "Sallow Bay",
   invented: true,
+  practice: false,
   timeZone: "UTC",
   countryCode: "GB",
   today: "2026-05-27",
