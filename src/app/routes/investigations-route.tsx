@@ -43,6 +43,7 @@ export function Component() {
           <Section title="New investigation">
             <CreateInvestigationForm
               demo={session.demo}
+              mayPractise={session.actingRole === "supervisor"}
               onCancel={() => setCreating(false)}
               onCreated={() => {
                 setCreating(false);

@@ -5,7 +5,7 @@ import {
   symptomList,
 } from "../../../shared/contracts/settings.ts";
 import { languageName } from "./language-name.ts";
-import { textKindWords } from "./setting-words.ts";
+import { joined, textKindWords } from "./setting-words.ts";
 
 function symptomDifferences(from: unknown, to: unknown): string[] | null {
   const before = symptomList.safeParse(from ?? DEFAULT_SYMPTOMS);
@@ -14,12 +14,14 @@ function symptomDifferences(from: unknown, to: unknown): string[] | null {
   const old = new Map(before.data.map(({ code, label }) => [code, label]));
   const now = new Map(after.data.map(({ code, label }) => [code, label]));
   const lines: string[] = [];
+  const added = [...now].filter(([code]) => !old.has(code)).map(([, label]) => label);
+  const removed = [...old].filter(([code]) => !now.has(code)).map(([, label]) => label);
+  if (added.length > 0) lines.push(`added ${joined(added)}`);
   for (const [code, label] of now) {
     const was = old.get(code);
-    if (was === undefined) lines.push(`added ${label}`);
-    else if (was !== label) lines.push(`renamed ${was} to ${label}`);
+    if (was !== undefined && was !== label) lines.push(`renamed ${was} to ${label}`);
   }
-  for (const [code, label] of old) if (!now.has(code)) lines.push(`removed ${label}`);
+  if (removed.length > 0) lines.push(`removed ${joined(removed)}`);
   const kept = (list: Iterable<string>, other: Map<string, string>) =>
     [...list].filter((code) => other.has(code)).join(" ");
   if (kept(old.keys(), now) !== kept(now.keys(), old)) lines.push("put in another order");

@@ -32,7 +32,7 @@ export function joined(words: readonly string[], last = "and"): string {
 function ruleWords(rules: CaseRules, one: keyof CaseRules): string {
   const ticked = CRITERIA.filter((criterion) => rules[one][criterion]);
   const what = ticked.map((criterion) => criteriaWords[criterion]);
-  return `${one}: ${what.length === 0 ? "asks for nothing" : joined(what)}`;
+  return `${one}: ${what.length === 0 ? "nobody (nothing is ticked)" : joined(what)}`;
 }
 
 /** The grading as one sentence; numbers as they stand, so that a half-typed one shows as such. */

@@ -41,6 +41,8 @@ const schema = z.preprocess((typed) => {
 export type CreateInvestigationFormProps = {
   /** Demo accounts may only open investigations marked invented. */
   demo: boolean;
+  /** Whether the acting role may open one to practise with. */
+  mayPractise: boolean;
   onCreated: () => void;
   onCancel: () => void;
 };
@@ -48,6 +50,7 @@ export type CreateInvestigationFormProps = {
 /** Opens a new investigation with its first settings. */
 export function CreateInvestigationForm({
   demo,
+  mayPractise,
   onCreated,
   onCancel,
 }: CreateInvestigationFormProps) {
@@ -142,12 +145,14 @@ export function CreateInvestigationForm({
         texts; what a change would move is shown before it is saved.
       </p>
       <div>
-        <CheckboxField
-          label="To practise with"
-          hint="It may be emptied and filled anew, sends nothing and counts nowhere; what is in it is invented. This cannot be changed later."
-          error={words("practice")}
-          {...form.register("practice")}
-        />
+        {mayPractise ? (
+          <CheckboxField
+            label="To practise with"
+            hint="Opened with people of its own making. It may be emptied and filled anew, sends nothing and counts nowhere. Practice stays practice."
+            error={words("practice")}
+            {...form.register("practice")}
+          />
+        ) : null}
         {practice ? (
           <p className="mt-2">Marked as invented and as practice on every page.</p>
         ) : (

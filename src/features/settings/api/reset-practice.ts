@@ -1,11 +1,19 @@
 import { useMutation, useQueryClient } from "@tanstack/react-query";
+import { settingsAnswer } from "../../../../shared/contracts/settings.ts";
 import { api, inInvestigation } from "../../../lib/api-client.ts";
+
+/** The version that was looked at, and the name, typed to confirm. */
+export type PracticeReset = { version: number; name: string };
 
 /** Empties a practice investigation and fills it anew. Supervisors only. */
 export function useResetPractice(investigationId: string) {
   const queryClient = useQueryClient();
   return useMutation({
-    mutationFn: () => api.post(inInvestigation(investigationId, "settings/practice-reset")),
+    mutationFn: (body: PracticeReset) =>
+      api.post(inInvestigation(investigationId, "settings/practice-reset"), {
+        body,
+        schema: settingsAnswer,
+      }),
     onSuccess: () => queryClient.invalidateQueries({ queryKey: ["i", investigationId] }),
   });
 }

@@ -54,10 +54,15 @@ export function CaseRulesEditor() {
           </tbody>
         </Table>
       </ScrollRegion>
-      {error ? <p className="mt-1 text-sm text-coral">{error}</p> : null}
+      {error ? (
+        <p className="mt-1 text-sm text-coral">
+          <span className="font-bold">Check: </span>
+          {error}
+        </p>
+      ) : null}
       {open.map((one) => (
         <p key={one} className="mt-1 text-sm text-ochre">
-          With nothing ticked, “{classificationWords[one]}” takes in everybody who reaches it.
+          With nothing ticked, nobody meets the rule of a {classificationWords[one]}.
         </p>
       ))}
     </div>

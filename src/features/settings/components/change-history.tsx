@@ -78,11 +78,11 @@ function ChangeRows({ change, zone }: { change: SettingChange; zone: string }) {
               </span>
             </HeadCell>
             <Cell rowSpan={span} className="align-top">
-              {change.by ?? <span className="text-ink-2 italic">not shown</span>}
+              {change.by ?? <span className="whitespace-nowrap text-ink-2 italic">not shown</span>}
             </Cell>
           </>
         ) : null}
-        <Cell className="min-w-36">{settingLabel(setting)}</Cell>
+        <Cell className={`min-w-36 ${index > 0 ? "ps-2!" : ""}`}>{settingLabel(setting)}</Cell>
         {lines && lines.length > 0 ? (
           <Cell colSpan={2} className="min-w-56">
             {lines.join("; ")}

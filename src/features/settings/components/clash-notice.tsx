@@ -1,6 +1,6 @@
+import { useEffect, useRef } from "react";
 import type { SettingKey, Settings } from "../../../../shared/contracts/settings.ts";
 import { Button } from "../../../components/ui/button.tsx";
-import { Notice } from "../../../components/ui/notice.tsx";
 import { ScrollRegion } from "../../../components/ui/scroll-region.tsx";
 import { Cell, HeadCell, Table } from "../../../components/ui/table.tsx";
 import { SETTING_KEYS, type SettingsValues, toSettings } from "../form/setting-values.ts";
@@ -13,6 +13,8 @@ export type ClashNoticeProps = {
   saved: Settings;
   values: SettingsValues;
   changed: readonly SettingKey[];
+  /** It answers an attempt to save, and did not come by itself. */
+  takesFocus: boolean;
   onTakeSaved: (setting: SettingKey) => void;
   onTakeAll: () => void;
   onSettle: () => void;
@@ -21,30 +23,42 @@ export type ClashNoticeProps = {
 /** Somebody saved first: what was typed stays, and the saved values stand beside it to be taken. */
 export function ClashNotice(props: ClashNoticeProps) {
   const { begun, saved, values, changed, onTakeSaved, onTakeAll, onSettle } = props;
+  const heading = useRef<HTMLHeadingElement>(null);
+  const takesFocus = props.takesFocus;
+  useEffect(() => {
+    if (takesFocus) heading.current?.focus();
+  }, [takesFocus]);
   const yours = toSettings(values);
   const theirs = SETTING_KEYS.filter(
     (key) => JSON.stringify(begun[key]) !== JSON.stringify(saved[key]),
   );
   const rows = SETTING_KEYS.filter((key) => theirs.includes(key) || changed.includes(key));
   return (
-    <div className="mb-6">
-      <Notice
-        tone="warn"
-        title="Someone else saved the settings first."
-        actions={
-          <>
-            <Button size="small" onClick={onTakeAll}>
-              Take all saved values
-            </Button>
-            <Button size="small" onClick={onSettle}>
-              Go on with mine
-            </Button>
-          </>
-        }
-      >
-        What you typed is still here. Settings you did not touch show what is saved now; see again
-        what yours would move.
-      </Notice>
+    <section
+      id="clash"
+      aria-labelledby="clash-title"
+      className="scroll-mt-4 border-t border-coral pt-3 pb-4"
+    >
+      <div className="flex flex-wrap items-baseline gap-x-4 gap-y-2">
+        <h2
+          id="clash-title"
+          ref={heading}
+          tabIndex={-1}
+          className="me-auto scroll-mt-4 text-[1.0625rem] text-coral"
+        >
+          Someone else saved the settings first
+        </h2>
+        <Button size="small" onClick={onTakeAll}>
+          Take all saved values
+        </Button>
+        <Button size="small" onClick={onSettle}>
+          Go on with mine
+        </Button>
+      </div>
+      <p className="mt-1">
+        What you typed is still in its boxes. Settings you did not touch show what is saved now; see
+        again what yours would move, then save.
+      </p>
       <ScrollRegion label="Saved values and yours" className="mt-3">
         <Table caption="Settings that either of you changed">
           <thead>
@@ -87,6 +101,6 @@ export function ClashNotice(props: ClashNoticeProps) {
           </tbody>
         </Table>
       </ScrollRegion>
-    </div>
+    </section>
   );
 }

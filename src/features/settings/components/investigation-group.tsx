@@ -43,19 +43,21 @@ export function InvestigationGroup() {
         />
       </SettingRow>
       <SettingRow settings={["timeZone"]}>
-        <TextField
-          label={notes.timeZone.label}
-          hint={`${notes.timeZone.does} As listed by IANA, such as Europe/Lisbon.`}
-          list="time-zones"
-          spellCheck={false}
-          error={fieldWords(errors.timeZone?.message)}
-          {...register("timeZone")}
-        />
-        <datalist id="time-zones">
-          {zones.map((zone) => (
-            <option key={zone} value={zone} />
-          ))}
-        </datalist>
+        <div>
+          <TextField
+            label={notes.timeZone.label}
+            hint={`${notes.timeZone.does} As listed by IANA, such as Europe/Lisbon.`}
+            list="time-zones"
+            spellCheck={false}
+            error={fieldWords(errors.timeZone?.message)}
+            {...register("timeZone")}
+          />
+          <datalist id="time-zones">
+            {zones.map((zone) => (
+              <option key={zone} value={zone} />
+            ))}
+          </datalist>
+        </div>
       </SettingRow>
       <SettingRow settings={["countryCode"]}>
         <TextField

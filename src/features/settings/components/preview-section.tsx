@@ -38,7 +38,7 @@ export function PreviewSection({ preview, changed, saved }: PreviewSectionProps)
         </Notice>
       ) : null}
       {moves.length > 0 ? (
-        <ScrollRegion label="What would move, table">
+        <ScrollRegion label="What would move, table" className="max-w-5xl">
           <Table caption="What the change would move" hideCaption>
             <thead>
               <tr>
@@ -52,12 +52,14 @@ export function PreviewSection({ preview, changed, saved }: PreviewSectionProps)
             <tbody>
               {moves.map(({ setting, measure, before, after }) => (
                 <tr key={`${setting} ${measure}`}>
-                  <HeadCell scope="row">{settingLabel(setting)}</HeadCell>
-                  <Cell className="min-w-48">{measureWords[measure]}</Cell>
+                  <HeadCell scope="row" className="max-sm:text-sm">
+                    {settingLabel(setting)}
+                  </HeadCell>
+                  <Cell className="min-w-28 max-sm:text-sm">{measureWords[measure]}</Cell>
                   <Cell numeric>{formatNumber(before)}</Cell>
                   <Cell numeric>{formatNumber(after)}</Cell>
                   <Cell
-                    className={`whitespace-nowrap ${before === after ? "text-ink-2" : "font-bold"}`}
+                    className={`sm:whitespace-nowrap max-sm:text-sm ${before === after ? "text-ink-2" : "font-bold"}`}
                   >
                     {differenceWords(before, after)}
                   </Cell>

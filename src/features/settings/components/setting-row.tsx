@@ -77,14 +77,14 @@ function SettingNotes({ settings }: { settings: readonly SettingKey[] }) {
     <div className="min-w-0 space-y-2 text-sm text-ink-2">
       {uses.map((words) => (
         <p key={words}>
-          <strong className="text-ink">Used by</strong> {words}
+          <strong className="text-ink">Used by</strong>: {words}
         </p>
       ))}
       {examples.length > 0 ? (
         <div>
           <p>
-            <strong className="text-ink">Published examples</strong>, no recommendation: local law
-            and guidance decide.
+            <strong className="text-ink">Published examples</strong>, no advice: local public-health
+            law and guidance decide.
           </p>
           <ul className="mt-0.5 list-disc space-y-0.5 ps-4 marker:text-rule">
             {examples.map((one) => (

@@ -31,6 +31,14 @@ export function SettingsForm({ investigationId, saved, readOnly }: SettingsFormP
   const desk = useSettingsForm(investigationId, saved);
   const { form, base, values, changed, begun, shown, preview, patch } = desk;
   const error = patch.error ?? preview.error;
+  const hint =
+    Object.keys(form.formState.errors).length > 0
+      ? "Look at the boxes marked “Check”."
+      : shown
+        ? "What would move is shown above."
+        : desk.outdated
+          ? "Changed since you looked; see again what would move, then save."
+          : "See what would move, then save.";
 
   return (
     <SettingsDeskContext
@@ -39,14 +47,6 @@ export function SettingsForm({ investigationId, saved, readOnly }: SettingsFormP
       <FormProvider {...form}>
         <form noValidate onSubmit={(event) => void desk.ask(event)}>
           <UnsavedGuard unsaved={changed.length > 0} />
-          {begun ? (
-            <ClashNotice
-              {...{ begun, saved: base, values, changed }}
-              onTakeSaved={desk.putBack}
-              onTakeAll={desk.putAllBack}
-              onSettle={desk.settle}
-            />
-          ) : null}
           <InvestigationGroup />
           <CaseDefinitionGroup />
           <WindowsGroup />
@@ -56,6 +56,15 @@ export function SettingsForm({ investigationId, saved, readOnly }: SettingsFormP
           <SmallNumbersGroup />
           <TextsGroup />
           {shown ? <PreviewSection preview={shown} changed={changed} saved={base} /> : null}
+          {begun && changed.length > 0 ? (
+            <ClashNotice
+              {...{ begun, saved: base, values, changed }}
+              takesFocus={desk.stale}
+              onTakeSaved={desk.putBack}
+              onTakeAll={desk.putAllBack}
+              onSettle={desk.settle}
+            />
+          ) : null}
           {error && changed.length > 0 && !begun ? (
             <Notice tone="error" title={patch.error ? "Not saved." : "Not counted."}>
               {errorWords(error)}. What you typed is still here.
@@ -64,8 +73,9 @@ export function SettingsForm({ investigationId, saved, readOnly }: SettingsFormP
           {changed.length > 0 ? (
             <SaveBar
               changes={changed.length}
+              hint={hint}
+              clash={begun !== null}
               previewed={shown !== null}
-              outdated={desk.outdated}
               asking={preview.isPending}
               saving={patch.isPending}
               onAsk={() => void desk.ask()}

@@ -97,7 +97,7 @@ export function TextsEditor() {
                 error={fieldWords(errors?.text?.message ?? errors?.language?.message)}
                 {...register(`texts.${index}.text`)}
               />
-              <Button variant="plain" size="small" onClick={() => drop(index)}>
+              <Button variant="plain" size="small" className="-ms-2" onClick={() => drop(index)}>
                 Remove <span className="sr-only">{name}</span>
               </Button>
             </div>

@@ -31,7 +31,7 @@ export function WindowsStrip() {
   const example = exampleRows(numbers, saved.today);
   if (!example) {
     return (
-      <p className="border-b border-rule py-4 text-sm text-ink-2 italic">
+      <p className="pt-4 text-sm text-ink-2 italic">
         The example is drawn once all five numbers can be read.
       </p>
     );

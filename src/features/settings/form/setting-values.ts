@@ -125,7 +125,9 @@ export function changeSchema(saved: Settings) {
       const min = patch.incubationMin ?? saved.incubationMin;
       const max = patch.incubationMax ?? saved.incubationMax;
       if (max < min) {
-        context.addIssue({ code: "custom", path: ["incubationMax"], message: "max_below_min" });
+        // Beside the one that was changed, as the server says it.
+        const path = patch.incubationMax === undefined ? "incubationMin" : "incubationMax";
+        context.addIssue({ code: "custom", path: [path], message: "max_below_min" });
       }
     }),
   );

@@ -32,6 +32,8 @@ export function Component() {
   const { actingRole } = useSession();
   const settings = useQuery(settingsQuery(id));
   const readOnly = !hasDuty(actingRole, "changeSettings");
+  // Who changed what is no business of the doorstep; the server says the same.
+  const seesHistory = actingRole !== "tracer";
   const { data } = settings;
   return (
     <RoomPage
@@ -51,25 +53,31 @@ export function Component() {
           </Caution>
           <nav aria-label="Parts of the settings" className="mb-5" data-print="hide">
             <ul className="flex flex-wrap gap-x-5 gap-y-1 text-sm">
-              {parts.map(([part, words]) => (
-                <li key={part}>
-                  <a
-                    href={`#${part}`}
-                    className="inline-flex min-h-6 items-center text-kelp underline decoration-1 underline-offset-4"
-                  >
-                    {words}
-                  </a>
-                </li>
-              ))}
+              {parts
+                .filter(([part]) => part !== "history" || seesHistory)
+                .map(([part, words]) => (
+                  <li key={part}>
+                    <a
+                      href={`#${part}`}
+                      className="inline-flex min-h-6 items-center text-kelp underline decoration-1 underline-offset-4"
+                    >
+                      {words}
+                    </a>
+                  </li>
+                ))}
             </ul>
           </nav>
-          {data.practice ? <PracticeSection investigationId={id} name={name} /> : null}
+          {data.practice ? (
+            <PracticeSection investigationId={id} name={data.name} version={data.version} />
+          ) : null}
           <SettingsForm investigationId={id} saved={data} readOnly={readOnly} />
-          <div id="history" className="scroll-mt-4 border-t border-ink pt-3">
-            <Section title="History of changes">
-              <ChangeHistory />
-            </Section>
-          </div>
+          {seesHistory ? (
+            <div id="history" className="scroll-mt-4 border-t border-ink pt-3">
+              <Section title="History of changes">
+                <ChangeHistory />
+              </Section>
+            </div>
+          ) : null}
         </>
       ) : null}
     </RoomPage>
