@@ -7,6 +7,7 @@ import { interviewRoutes } from "./features/interviews/routes.ts";
 import { invitationRoutes } from "./features/investigations/invitations.ts";
 import { memberRoutes } from "./features/investigations/members.ts";
 import { investigationPlainRoutes, investigationRoutes } from "./features/investigations/routes.ts";
+import { settingsRoutes } from "./features/investigations/settings-routes.ts";
 import { networkRoutes } from "./features/network/routes.ts";
 import { peopleRoutes } from "./features/people/routes.ts";
 import { placeRoutes } from "./features/places/routes.ts";
@@ -19,6 +20,7 @@ import type { Services } from "./services.ts";
 /** Every route of an investigation; the one list that app, document and tests are made from. */
 export const ROUTES: readonly AnyRoute[] = [
   ...investigationRoutes,
+  ...settingsRoutes,
   ...memberRoutes,
   ...invitationRoutes,
   ...peopleRoutes,

@@ -9,6 +9,7 @@ export const EVENTS = [
   "account.password_reset",
   "investigation.created",
   "investigation.changed",
+  "investigation.practice_reset",
   "member.invited",
   "member.invitation_withdrawn",
   "member.added",
@@ -39,5 +40,5 @@ export const EVENTS = [
 export type EventName = (typeof EVENTS)[number];
 
 /** Topics of the live stream; a message carries ids and versions only. */
-export const TOPICS = ["graph", "people", "interviews", "imports", "members"] as const;
+export const TOPICS = ["graph", "people", "interviews", "imports", "members", "settings"] as const;
 export type Topic = (typeof TOPICS)[number];

@@ -60,7 +60,7 @@ declare
   v_people uuid[];
 begin
   select * into c from core.ctx();
-  if c.account_id is null or c.role not in ('tracer', 'supervisor') then
+  if c.account_id is null or c.role not in ('tracer', 'supervisor', 'officer') then
     raise insufficient_privilege using message = 'no context';
   end if;
   if c.role = 'tracer' then

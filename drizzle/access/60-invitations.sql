@@ -11,7 +11,9 @@ begin
   if c.role is null or c.role not in ('supervisor', 'officer')
      or p_role not in ('tracer', 'supervisor', 'epidemiologist', 'officer')
      or (p_team is not null and not exists (
-       select 1 from core.team t where t.id = p_team and t.investigation_id = c.investigation_id)) then
+       select 1 from core.team t where t.id = p_team and t.investigation_id = c.investigation_id))
+     -- What is for practice sends nothing.
+     or exists (select 1 from core.investigation v where v.id = c.investigation_id and v.practice) then
     raise insufficient_privilege;
   end if;
   if (select count(*) from auth.invitation i

@@ -126,7 +126,7 @@ export async function loadOutbreak(target: LoadTarget, outbreak: Outbreak): Prom
         recorded_by: account(person.enteredBy),
         updated_at: person.recordedAt,
         version: 1,
-        case_definition_version: 1,
+        case_definition_version: target.caseDefinitionVersion ?? 1,
       };
     }),
   );
@@ -147,7 +147,7 @@ export async function loadOutbreak(target: LoadTarget, outbreak: Outbreak): Prom
       id: randomUUID(),
       person_id: idOf(entry.personId),
       classification: entry.classification,
-      case_definition_version: 1,
+      case_definition_version: target.caseDefinitionVersion ?? 1,
       recorded_at: entry.recordedAt,
     })),
   );

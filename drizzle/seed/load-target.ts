@@ -9,4 +9,6 @@ export interface LoadTarget {
   /** Account of each tracer id the outbreak was generated with. */
   accounts: ReadonlyMap<string, string>;
   country: string;
+  /** Version of the case definition that classifications are made with; 1 when left out. */
+  caseDefinitionVersion?: number;
 }

@@ -14,11 +14,13 @@ async function readStep(
   investigationId: string,
   store: GraphStore,
 ): Promise<Step | null> {
-  const found = await client.query<{ graph_version: string }>(
-    "select graph_version from core.investigation where id = $1",
+  const found = await client.query<{ graph_version: string; time_zone: string }>(
+    "select graph_version, time_zone from core.investigation where id = $1",
     [investigationId],
   );
   const version = Number(found.rows[0]?.graph_version ?? Number.NaN);
+  // A setting, not a change of the graph: it may be another one at the same version.
+  store.timeZone = found.rows[0]?.time_zone ?? store.timeZone;
   if (version === store.version) return { version, rows: null };
   if (!(version > store.version)) return null;
   const { rows: changes } = await client.query<Change>(

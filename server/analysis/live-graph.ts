@@ -16,9 +16,9 @@ export type LoadedGraph = {
 };
 
 async function loaded(store: GraphStore): Promise<LoadedGraph> {
-  const today = () => dayIn(store.timeZone, now());
-  let day = today();
-  const groups = await LiveGroups.read(store, startOfDayIn(store.timeZone, day).getTime() - 1);
+  const startOfToday = () => startOfDayIn(store.timeZone, dayIn(store.timeZone, now()));
+  let start = startOfToday();
+  const groups = await LiveGroups.read(store, start.getTime() - 1);
   let snapshot: GraphSnapshot | null = null;
   return {
     store,
@@ -28,9 +28,10 @@ async function loaded(store: GraphStore): Promise<LoadedGraph> {
       return snapshot;
     },
     since() {
-      const start = startOfDayIn(store.timeZone, today());
-      if (day !== today()) {
-        day = today();
+      const current = startOfToday();
+      // Another day, or another zone by a change of the settings.
+      if (current.getTime() !== start.getTime()) {
+        start = current;
         groups.since(start.getTime() - 1);
       }
       return start;

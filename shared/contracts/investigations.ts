@@ -1,58 +1,45 @@
 import { z } from "zod";
 import { ROLES } from "../roles.ts";
-import { LIMITS, listOf, rowVersion, text, uuid } from "./common.ts";
-import { isTimeZone } from "./settings.ts";
+import { LIMITS, listOf, text, uuid } from "./common.ts";
+import { SETTING_SHAPES, settingsPatch } from "./settings.ts";
 
-const whole = (min: number, max: number) =>
-  z
-    .number({ error: "not_a_number" })
-    .int({ error: "not_a_whole_number" })
-    .min(min, { error: "too_small" })
-    .max(max, { error: "too_big" });
+const settings = SETTING_SHAPES;
 
-const timeZone = z
-  .string({ error: "required" })
-  .max(64, { error: "too_long" })
-  .refine(isTimeZone, { error: "not_a_zone" });
-
-const settings = {
-  populationAtRisk: whole(1, 100_000_000).nullable(),
-  infectiousBefore: whole(0, 60),
-  infectiousAfter: whole(1, 120),
-  incubationMin: whole(0, 120),
-  incubationMax: whole(1, 365),
-  monitoringDays: whole(1, 120),
-};
-
-export const investigationInput = z.strictObject({
-  name: text(LIMITS.name, 1),
-  /** Left out: as the account that opens it, invented for one of the demo. */
-  invented: z.boolean({ error: "wrong_type" }).optional(),
-  /** To learn with: always invented, may be emptied, sends nothing, counts nowhere. */
-  practice: z.boolean({ error: "wrong_type" }).default(false),
-  timeZone: timeZone.default("UTC"),
-  countryCode: z
-    .string()
-    .regex(/^[A-Z]{2}$/, { error: "invalid" })
-    .default("GB"),
-  caseDefinition: text(LIMITS.note).default(""),
-  populationAtRisk: settings.populationAtRisk.default(null),
-  infectiousBefore: settings.infectiousBefore.default(2),
-  infectiousAfter: settings.infectiousAfter.default(10),
-  incubationMin: settings.incubationMin.default(1),
-  incubationMax: settings.incubationMax.default(14),
-  monitoringDays: settings.monitoringDays.default(14),
-});
+export const investigationInput = z
+  .strictObject({
+    name: settings.name,
+    /** Left out: as the account that opens it, invented for one of the demo. */
+    invented: settings.invented.optional(),
+    /** For learning: it is invented, filled with a small outbreak, and may be emptied. */
+    practice: z.boolean({ error: "wrong_type" }).default(false),
+    timeZone: settings.timeZone.default("UTC"),
+    countryCode: settings.countryCode.default("GB"),
+    caseDefinition: settings.caseDefinition.default(""),
+    populationAtRisk: settings.populationAtRisk.default(null),
+    infectiousBefore: settings.infectiousBefore.default(2),
+    infectiousAfter: settings.infectiousAfter.default(10),
+    incubationMin: settings.incubationMin.default(1),
+    incubationMax: settings.incubationMax.default(14),
+    monitoringDays: settings.monitoringDays.default(14),
+  })
+  .refine((input) => input.incubationMin <= input.incubationMax, {
+    path: ["incubationMax"],
+    error: "max_below_min",
+  })
+  .refine((input) => !input.practice || input.invented !== false, {
+    path: ["invented"],
+    error: "practice_is_invented",
+  });
 export type InvestigationInput = z.output<typeof investigationInput>;
 
 /** Change of the settings that part of the report stands on. */
-export const investigationPatch = z.strictObject({
-  version: rowVersion,
-  name: text(LIMITS.name, 1).optional(),
-  populationAtRisk: settings.populationAtRisk.optional(),
-  infectiousBefore: settings.infectiousBefore.optional(),
-  infectiousAfter: settings.infectiousAfter.optional(),
-  monitoringDays: settings.monitoringDays.optional(),
+export const investigationPatch = settingsPatch.pick({
+  version: true,
+  name: true,
+  populationAtRisk: true,
+  infectiousBefore: true,
+  infectiousAfter: true,
+  monitoringDays: true,
 });
 
 export const investigationAnswer = z.strictObject({

@@ -29,7 +29,10 @@ const criteria = z.strictObject({
   link: z.boolean({ error: "wrong_type" }),
 });
 
-/** Criteria by class, asked in this order; the first class whose criteria are all met is it. */
+/**
+ * Criteria by class, asked in this order; the first class whose criteria are all met is it. A class
+ * that asks for nothing is met by nobody.
+ */
 export const caseRules = z.strictObject(
   Object.fromEntries([...CASE_CLASSIFICATIONS].map((one) => [one, criteria])) as Record<
     (typeof CASE_CLASSIFICATIONS)[number],
@@ -230,3 +233,7 @@ export const caseDefinitionVersion = z.strictObject({
   recordedAt: z.string(),
 });
 export const caseDefinitionList = listOf(caseDefinitionVersion);
+
+/** Emptying a practice investigation and filling it again; its name is typed to confirm. */
+export const practiceReset = z.strictObject({ version: rowVersion, name: text(LIMITS.name, 1) });
+export type PracticeReset = z.output<typeof practiceReset>;

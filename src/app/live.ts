@@ -12,6 +12,7 @@ export const STALE_BY_TOPIC: Readonly<Record<Topic, readonly QueryWord[]>> = {
   interviews: ["interviews", "people", "follow-up", "match-reviews"],
   imports: ["imports", "people", "groups", "network", "clusters"],
   members: ["members", "invitations", "people"],
+  settings: ["settings", "investigation", "network", "groups", "clusters", "people", "follow-up"],
 };
 
 const allTopics = Object.keys(STALE_BY_TOPIC) as Topic[];

@@ -1,11 +1,11 @@
 import { describe, expect, it } from "vitest";
+import type { ClusterKind } from "../../shared/contracts/clusters.ts";
 import {
   type ClusterInput,
   type DatedCase,
   groupCases,
   type Stay,
-} from "../../server/features/clusters/group-cases.ts";
-import type { ClusterKind } from "../../shared/contracts/clusters.ts";
+} from "../../shared/group-cases.ts";
 import { randomLinks, seeded } from "./support/graphs.ts";
 
 const onDays = (...days: number[]): DatedCase[] =>

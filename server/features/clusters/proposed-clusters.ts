@@ -1,6 +1,10 @@
+import {
+  type ClusterSettings,
+  type DatedCase,
+  groupCases,
+  type ProposedCluster,
+} from "../../../shared/group-cases.ts";
 import type { Tx } from "../../db/with-tx.ts";
-import { type DatedCase, groupCases, type ProposedCluster } from "./group-cases.ts";
-import type { ClusterSettings } from "./settings.ts";
 import { clusterState, loadClusterInput } from "./store.ts";
 
 /** Proposed clusters of an investigation, in their order, with the cases they are made of. */

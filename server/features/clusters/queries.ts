@@ -1,8 +1,8 @@
 import { CLUSTER_MEMBERS_TOLD, type Cluster } from "../../../shared/contracts/clusters.ts";
 import type { ListQuery } from "../../../shared/contracts/common.ts";
 import { dayNumber, dayString } from "../../../shared/core/index.ts";
+import type { DatedCase, ProposedCluster } from "../../../shared/group-cases.ts";
 import { invalid } from "../../http/problem.ts";
-import type { DatedCase, ProposedCluster } from "./group-cases.ts";
 import type { ProposedClusters } from "./proposed-clusters.ts";
 
 const SORT_KEYS = ["number", "cases", "newInLast7Days", "firstDay", "lastDay", "places"] as const;

@@ -1,8 +1,8 @@
 import { sql } from "drizzle-orm";
 import { CLUSTER_KINDS, type ClusterKind } from "../../../shared/contracts/clusters.ts";
 import { dayNumber } from "../../../shared/core/index.ts";
+import type { ClusterInput, DatedCase, Stay } from "../../../shared/group-cases.ts";
 import type { Tx } from "../../db/with-tx.ts";
-import type { ClusterInput, DatedCase, Stay } from "./group-cases.ts";
 
 const CASES = sql`core.person p where p.investigation_id = `;
 const COUNTED = sql` and p.classification in ('confirmed', 'probable') and p.withdrawn_at is null`;
@@ -36,8 +36,8 @@ type Columns = {
   place_settings: (string | null)[] | null;
 };
 
-/** Days are written over and over: each is worked out once. */
-function dayReader(): (text: string | null | undefined) => number | null {
+/** Reads days as day numbers, null for none. They are written over and over: each is worked out once. */
+export function dayReader(): (text: string | null | undefined) => number | null {
   const known = new Map<string, number | null>();
   return (text) => {
     if (!text) return null;

@@ -41,6 +41,7 @@ export const invitationRoutes: AnyRoute[] = [
       if (services.mail.mode === "off") throw new HttpProblem("mail_off");
       const account = await accountOfEmail(tx, body.email);
       const investigation = await loadInvestigation(tx, actor.investigationId);
+      if (investigation.practice) throw new HttpProblem("practice_sends_nothing");
       if (account?.demo && !investigation.invented) {
         throw invalid({ path: "email", code: "demo_only" });
       }

@@ -4,17 +4,13 @@ import {
   investigationAnswer,
   investigationInput,
   investigationList,
-  investigationPatch,
 } from "../../../shared/contracts/investigations.ts";
 import { ROLES, type Role } from "../../../shared/roles.ts";
-import { recordEvent } from "../../audit/record-event.ts";
 import { withTx } from "../../db/with-tx.ts";
-import { HttpProblem } from "../../http/problem.ts";
 import { type AnyRoute, definePlainRoute, defineRoute, type PlainRoute } from "../../http/route.ts";
 import { signedInOf } from "../../http/sign-in.ts";
 import type { Services } from "../../services.ts";
 import { createInvestigation } from "./commands/create-investigation.ts";
-import { patchInvestigation } from "./commands/patch-investigation.ts";
 import { presentInvestigation } from "./present.ts";
 import { listInvestigations, loadInvestigation } from "./store.ts";
 
@@ -70,7 +66,7 @@ export function investigationPlainRoutes(services: Services): PlainRoute[] {
 
 const params = z.object({ id: z.uuid() });
 
-/** The acting investigation and its settings. */
+/** The acting investigation. */
 export const investigationRoutes: AnyRoute[] = [
   defineRoute({
     method: "get",
@@ -80,27 +76,6 @@ export const investigationRoutes: AnyRoute[] = [
     params,
     output: investigationAnswer,
     async run({ tx, actor }) {
-      return presentInvestigation(await loadInvestigation(tx, actor.investigationId), [actor.role]);
-    },
-  }),
-  defineRoute({
-    method: "patch",
-    path: "/api/investigations/:id",
-    summary: "Change settings that the report stands on",
-    policy: ["supervisor", "officer"],
-    params,
-    body: investigationPatch,
-    output: investigationAnswer,
-    async run({ tx, actor, body }) {
-      const changed = await patchInvestigation(tx, actor, body);
-      if (!changed) throw new HttpProblem("stale_version");
-      await recordEvent(tx, {
-        action: "investigation.changed",
-        accountId: actor.accountId,
-        role: actor.role,
-        investigationId: actor.investigationId,
-        fields: Object.keys(body).filter((key) => key !== "version"),
-      });
       return presentInvestigation(await loadInvestigation(tx, actor.investigationId), [actor.role]);
     },
   }),

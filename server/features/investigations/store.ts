@@ -87,10 +87,12 @@ export async function insertInvestigation(
   const id = randomUUID();
   await tx.execute(
     sql`insert into core.investigation (id, name, invented, time_zone, country_code, population_at_risk,
-        infectious_before, infectious_after, incubation_min, incubation_max, monitoring_days, recorded_by)
+        infectious_before, infectious_after, incubation_min, incubation_max, monitoring_days, practice,
+        recorded_by)
       values (${id}, ${input.name}, ${input.invented}, ${input.timeZone}, ${input.countryCode},
         ${input.populationAtRisk}, ${input.infectiousBefore}, ${input.infectiousAfter},
-        ${input.incubationMin}, ${input.incubationMax}, ${input.monitoringDays}, ${accountId})`,
+        ${input.incubationMin}, ${input.incubationMax}, ${input.monitoringDays}, ${input.practice},
+        ${accountId})`,
   );
   await tx.execute(
     sql`insert into core.case_definition (id, investigation_id, number, wording, recorded_by)

@@ -12,6 +12,7 @@ export const actionWords: Readonly<Record<EventName, string>> = {
   "account.first_officer_made": "made the first data officer",
   "investigation.created": "opened the investigation",
   "investigation.changed": "changed settings",
+  "investigation.practice_reset": "emptied and refilled the practice investigation",
   "member.invited": "invited a member",
   "member.invitation_withdrawn": "withdrew an invitation",
   "member.added": "added a member",

@@ -70,7 +70,7 @@ const asShipped: Partial<Record<SettingKey, string>> = {
 const writers: { [K in SettingKey]?: (value: never) => string } = {
   invented: (value: boolean) => (value ? "yes, invented" : "no, real"),
   caseRules: (value: CaseRules) =>
-    CASE_CLASSIFICATIONS.map((one) => ruleWords(value, one)).join("; "),
+    CASE_CLASSIFICATIONS.map((one) => ruleWords(value, one)).join("\n"),
   exposureGrading: (value: ExposureGrading) => gradingSentence(value),
   symptoms: (value: SymptomList) => value.map(({ label }) => label).join(", "),
   texts: (value: SettingTexts) =>

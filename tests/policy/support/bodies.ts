@@ -19,6 +19,9 @@ export async function stageImport(member: Member): Promise<string> {
 /** A body each route accepts, so that only access decides. A new route with a body stands here. */
 const BODIES: Record<string, (world: World) => unknown> = {
   "patch /api/investigations/:id": () => ({ version: 1, infectiousBefore: 2 }),
+  "patch /api/investigations/:id/settings": () => ({ version: 1, infectiousBefore: 2 }),
+  "post /api/investigations/:id/settings/preview": () => ({ version: 1, infectiousBefore: 3 }),
+  "post /api/investigations/:id/settings/practice-reset": () => ({ version: 1, name: "Some name" }),
   "post /api/investigations/:id/members": () => ({ email: "no@body.example", role: "tracer" }),
   "post /api/investigations/:id/invitations": () => ({ email: "no@body.example", role: "tracer" }),
   "delete /api/investigations/:id/members": () => ({ email: "no@body.example", role: "tracer" }),

@@ -148,7 +148,7 @@ export function CreateInvestigationForm({
         {mayPractise ? (
           <CheckboxField
             label="To practise with"
-            hint="Opened with people of its own making. It may be emptied and filled anew, sends nothing and counts nowhere. Practice stays practice."
+            hint="It opens with invented people, may be emptied and filled anew, sends nothing and counts nowhere. Practice stays practice."
             error={words("practice")}
             {...form.register("practice")}
           />

@@ -1,9 +1,6 @@
 import { useMutation, useQueryClient } from "@tanstack/react-query";
-import { settingsAnswer } from "../../../../shared/contracts/settings.ts";
+import { type PracticeReset, settingsAnswer } from "../../../../shared/contracts/settings.ts";
 import { api, inInvestigation } from "../../../lib/api-client.ts";
-
-/** The version that was looked at, and the name, typed to confirm. */
-export type PracticeReset = { version: number; name: string };
 
 /** Empties a practice investigation and fills it anew. Supervisors only. */
 export function useResetPractice(investigationId: string) {

@@ -45,7 +45,7 @@ export function DefinitionVersions() {
                 <Cell className="min-w-56 whitespace-pre-wrap wrap-anywhere">
                   {settingValueWords("caseDefinition", one.wording)}
                 </Cell>
-                <Cell className="min-w-56 text-sm text-ink-2">
+                <Cell className="min-w-56 whitespace-pre-wrap text-sm text-ink-2">
                   {settingValueWords("caseRules", one.rules)}
                 </Cell>
               </tr>

@@ -59,7 +59,7 @@ export function ResetPracticeDialog({
         label="Name of the investigation, to confirm"
         hint={`Type ${name}.`}
         value={typed}
-        error={differs ? "Not the name of this investigation" : fieldWords(beside?.code)}
+        error={fieldWords(differs ? "name_differs" : beside?.code)}
         onChange={(event) => {
           setTyped(event.target.value);
           setDiffers(false);

@@ -53,7 +53,7 @@ const longestValue = 90;
 
 function ChangedLine({ setting, named }: { setting: SettingKey; named: boolean }) {
   const { saved, putBack } = useSettingsDesk();
-  const words = settingValueWords(setting, saved[setting]);
+  const words = settingValueWords(setting, saved[setting]).replaceAll("\n", "; ");
   const label = settingLabel(setting);
   return (
     <p className="flex flex-wrap items-baseline gap-x-3 gap-y-1 border-s-2 border-ochre ps-2 text-sm">

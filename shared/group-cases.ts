@@ -1,6 +1,13 @@
-import { CLUSTER_KINDS, type ClusterKind } from "../../../shared/contracts/clusters.ts";
-import { UnionFind } from "../../../shared/core/index.ts";
-import type { ClusterSettings } from "./settings.ts";
+import { CLUSTER_KINDS, type ClusterKind } from "./contracts/clusters.ts";
+import { UnionFind } from "./core/index.ts";
+
+/** What proposed clusters are computed with. */
+export interface ClusterSettings {
+  /** Days that the reference days of two joined cases differ by at most. */
+  windowDays: number;
+  /** Cases that a proposed cluster has at least. */
+  minimumCases: number;
+}
 
 /** A confirmed or probable case with its reference day (a day number). */
 export interface DatedCase {
