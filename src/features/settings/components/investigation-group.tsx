@@ -1,3 +1,4 @@
+import { useState } from "react";
 import { CheckboxField } from "../../../components/fields/checkbox-field.tsx";
 import { TextField } from "../../../components/fields/text-field.tsx";
 import { fieldWords } from "../../../lib/form-errors.ts";
@@ -7,12 +8,15 @@ import { NumberSetting } from "./number-setting.tsx";
 import { SettingGroup } from "./setting-group.tsx";
 import { SettingRow } from "./setting-row.tsx";
 
-const zones = Intl.supportedValuesOf("timeZone");
+/** Made once: some four hundred entries that never change. */
+const zones = Intl.supportedValuesOf("timeZone").map((zone) => <option key={zone} value={zone} />);
 
 /** What the investigation is and where it is worked. */
 export function InvestigationGroup() {
   const { register, formState } = useSettings();
   const { saved } = useSettingsDesk();
+  // Offered once the box is used, so that the page is not weighed down by a list nobody opens.
+  const [offered, setOffered] = useState(false);
   const { errors } = formState;
   const notes = SETTING_NOTES;
   return (
@@ -48,15 +52,12 @@ export function InvestigationGroup() {
             label={notes.timeZone.label}
             hint={`${notes.timeZone.does} As listed by IANA, such as Europe/Lisbon.`}
             list="time-zones"
+            onFocus={() => setOffered(true)}
             spellCheck={false}
             error={fieldWords(errors.timeZone?.message)}
             {...register("timeZone")}
           />
-          <datalist id="time-zones">
-            {zones.map((zone) => (
-              <option key={zone} value={zone} />
-            ))}
-          </datalist>
+          <datalist id="time-zones">{offered ? zones : null}</datalist>
         </div>
       </SettingRow>
       <SettingRow settings={["countryCode"]}>

@@ -1,4 +1,4 @@
-import { FormProvider } from "react-hook-form";
+import { memo, useMemo } from "react";
 import type { Settings } from "../../../../shared/contracts/settings.ts";
 import { Notice } from "../../../components/ui/notice.tsx";
 import { UnsavedGuard } from "../../../components/ui/unsaved-guard.tsx";
@@ -25,6 +25,22 @@ export type SettingsFormProps = {
   readOnly: boolean;
 };
 
+/** Apart, so that a key in one box does not draw the whole page again. */
+const Groups = memo(function Groups() {
+  return (
+    <>
+      <InvestigationGroup />
+      <CaseDefinitionGroup />
+      <WindowsGroup />
+      <FollowUpGroup />
+      <ClustersGroup />
+      <ExposureGroup />
+      <SmallNumbersGroup />
+      <TextsGroup />
+    </>
+  );
+});
+
 /** All settings in one form, grouped by what people decide; read as words by the other roles. */
 export function SettingsForm({ investigationId, saved, readOnly }: SettingsFormProps) {
   const toast = useToast();
@@ -40,54 +56,50 @@ export function SettingsForm({ investigationId, saved, readOnly }: SettingsFormP
           ? "Changed since you looked; see again what would move, then save."
           : "See what would move, then save.";
 
+  const { putBack } = desk;
+  const changedWords = changed.join(" ");
+  const shared = useMemo(
+    () => ({ form, saved: base, readOnly, changed: new Set(changedWords.split(" ")), putBack }),
+    [form, base, readOnly, changedWords, putBack],
+  );
+
   return (
-    <SettingsDeskContext
-      value={{ saved: base, readOnly, changed: new Set(changed), putBack: desk.putBack }}
-    >
-      <FormProvider {...form}>
-        <form noValidate onSubmit={(event) => void desk.ask(event)}>
-          <UnsavedGuard unsaved={changed.length > 0} />
-          <InvestigationGroup />
-          <CaseDefinitionGroup />
-          <WindowsGroup />
-          <FollowUpGroup />
-          <ClustersGroup />
-          <ExposureGroup />
-          <SmallNumbersGroup />
-          <TextsGroup />
-          {shown ? <PreviewSection preview={shown} changed={changed} saved={base} /> : null}
-          {begun && changed.length > 0 ? (
-            <ClashNotice
-              {...{ begun, saved: base, values, changed }}
-              takesFocus={desk.stale}
-              onTakeSaved={desk.putBack}
-              onTakeAll={desk.putAllBack}
-              onSettle={desk.settle}
-            />
-          ) : null}
-          {error && changed.length > 0 && !begun ? (
-            <Notice tone="error" title={patch.error ? "Not saved." : "Not counted."}>
-              {errorWords(error)}. What you typed is still here.
-            </Notice>
-          ) : null}
-          {changed.length > 0 ? (
-            <SaveBar
-              changes={changed.length}
-              hint={hint}
-              clash={begun !== null}
-              previewed={shown !== null}
-              asking={preview.isPending}
-              saving={patch.isPending}
-              onAsk={() => void desk.ask()}
-              onSave={() => {
-                if (!shown) return;
-                desk.save(shown.patch, () => toast({ tone: "done", text: "Settings saved." }));
-              }}
-              onPutBack={desk.putAllBack}
-            />
-          ) : null}
-        </form>
-      </FormProvider>
+    <SettingsDeskContext value={shared}>
+      <form noValidate onSubmit={(event) => void desk.ask(event)}>
+        <UnsavedGuard unsaved={changed.length > 0} />
+        <Groups />
+        {shown ? <PreviewSection preview={shown} changed={changed} saved={base} /> : null}
+        {begun && changed.length > 0 ? (
+          <ClashNotice
+            {...{ begun, saved: base, values, changed }}
+            takesFocus={desk.stale}
+            onTakeSaved={desk.putBack}
+            onTakeAll={desk.putAllBack}
+            onSettle={desk.settle}
+          />
+        ) : null}
+        {error && changed.length > 0 && !begun ? (
+          <Notice tone="error" title={patch.error ? "Not saved." : "Not counted."}>
+            {errorWords(error)}. What you typed is still here.
+          </Notice>
+        ) : null}
+        {changed.length > 0 ? (
+          <SaveBar
+            changes={changed.length}
+            hint={hint}
+            clash={begun !== null}
+            previewed={shown !== null}
+            asking={preview.isPending}
+            saving={patch.isPending}
+            onAsk={() => void desk.ask()}
+            onSave={() => {
+              if (!shown) return;
+              desk.save(shown.patch, () => toast({ tone: "done", text: "Settings saved." }));
+            }}
+            onPutBack={desk.putAllBack}
+          />
+        ) : null}
+      </form>
     </SettingsDeskContext>
   );
 }

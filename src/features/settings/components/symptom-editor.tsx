@@ -1,5 +1,5 @@
 import { useEffect, useId, useRef, useState } from "react";
-import { useFieldArray } from "react-hook-form";
+import { useFieldArray, useWatch } from "react-hook-form";
 import { TextField } from "../../../components/fields/text-field.tsx";
 import { Button } from "../../../components/ui/button.tsx";
 import { fieldWords } from "../../../lib/form-errors.ts";
@@ -22,7 +22,8 @@ export function SymptomEditor() {
   const focusNext = useRef<string | null>(null);
   const id = useId();
   const { label: title, does } = SETTING_NOTES.symptoms;
-  const nameOf = (index: number) => getValues(`symptoms.${index}.label`).trim() || "it";
+  const current = useWatch({ control, name: "symptoms" });
+  const nameOf = (index: number) => current[index]?.label.trim() || "it";
 
   // A moved row is put elsewhere in the page, which takes the focus off its button.
   useEffect(() => {

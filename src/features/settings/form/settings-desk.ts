@@ -1,15 +1,18 @@
 import { createContext, useContext } from "react";
-import { useFormContext } from "react-hook-form";
+import { type UseFormReturn, useFormState } from "react-hook-form";
 import type { SettingKey, Settings, SettingsPatch } from "../../../../shared/contracts/settings.ts";
 import type { SettingsValues } from "./setting-values.ts";
 
-/** What the rows of the settings page share. */
+export type SettingsFormOf = UseFormReturn<SettingsValues, unknown, SettingsPatch>;
+
+/** What the rows of the settings page share. It stays the same object while one types in a box. */
 export type SettingsDesk = {
+  form: SettingsFormOf;
   /** The settings in force. */
   saved: Settings;
   /** The acting role may read only. */
   readOnly: boolean;
-  changed: ReadonlySet<SettingKey>;
+  changed: ReadonlySet<string>;
   putBack: (setting: SettingKey) => void;
 };
 
@@ -22,7 +25,9 @@ export function useSettingsDesk(): SettingsDesk {
   return desk;
 }
 
-/** The one form of the settings page. */
+/** The one form of the settings page, with its errors; values are watched where they are shown. */
 export function useSettings() {
-  return useFormContext<SettingsValues, unknown, SettingsPatch>();
+  const { register, control, getValues } = useSettingsDesk().form;
+  const { errors } = useFormState({ control });
+  return { register, control, getValues, formState: { errors } };
 }

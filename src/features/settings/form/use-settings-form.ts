@@ -1,5 +1,5 @@
 import { useQueryClient } from "@tanstack/react-query";
-import { useEffect, useState } from "react";
+import { useCallback, useEffect, useState } from "react";
 import { useForm } from "react-hook-form";
 import type {
   SettingKey,
@@ -62,6 +62,15 @@ export function useSettingsForm(investigationId: string, saved: Settings) {
     if (mine.length > 0) setBegun((first) => first ?? base);
   }, [saved, base, form]);
 
+  const putBack = useCallback(
+    (setting: SettingKey) => {
+      const typed = form.getValues();
+      const others = changedSettings(typed, base).filter((one) => one !== setting);
+      form.reset(keeping(base, typed, others));
+    },
+    [form, base],
+  );
+
   function refused(error: unknown) {
     showFieldErrors(error, form.setError, (path) => (path.split(".")[0] ?? "") in values);
     if (error instanceof ApiError && error.code === "stale_version") {
@@ -103,15 +112,7 @@ export function useSettingsForm(investigationId: string, saved: Settings) {
       });
     },
     /** Drops what was typed for one setting. */
-    putBack(setting: SettingKey) {
-      form.reset(
-        keeping(
-          base,
-          form.getValues(),
-          changed.filter((one) => one !== setting),
-        ),
-      );
-    },
+    putBack,
     /** Drops all that was typed. */
     putAllBack() {
       form.reset(valuesOf(base));
