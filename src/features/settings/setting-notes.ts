@@ -42,7 +42,7 @@ export const SETTING_NOTES: Readonly<Record<SettingKey, SettingNote>> = {
     uses: "the two thresholds of Review and Compare, and comparison with random mixing in the whole population. Nothing of who is on record changes.",
   },
   caseDefinition: {
-    label: "Wording",
+    label: "Wording of the case definition",
     does: "Clinical, laboratory and epidemiological criteria with limits of person, place and time.",
     uses: "every classification, which shows it. A change makes a new version; each classification keeps the version it was made with.",
   },
@@ -129,7 +129,7 @@ export const SETTING_NOTES: Readonly<Record<SettingKey, SettingNote>> = {
     ],
   },
   exposureGrading: {
-    label: "When a contact is high-risk",
+    label: "Exposure grading",
     does: "Any one of these makes an exposure high-risk.",
     uses: "the grade beside contact pairs and contacts, and their order in Follow.",
     examples: [

@@ -39,7 +39,7 @@ function GradingEditor() {
   return (
     <div className="space-y-3">
       <div>
-        <p className="text-sm font-bold">{SETTING_NOTES.exposureGrading.label}</p>
+        <p className="text-sm font-bold">What makes it high-risk</p>
         <p className="text-sm text-ink-2">{SETTING_NOTES.exposureGrading.does}</p>
       </div>
       <label className="flex min-h-9 items-center gap-2">

@@ -43,23 +43,33 @@ export function PreviewSection({ preview, changed, saved }: PreviewSectionProps)
             <thead>
               <tr>
                 <HeadCell>setting</HeadCell>
-                <HeadCell>what</HeadCell>
-                <HeadCell numeric>before</HeadCell>
-                <HeadCell numeric>after</HeadCell>
-                <HeadCell>difference</HeadCell>
+                <HeadCell className="max-sm:px-1">what</HeadCell>
+                <HeadCell numeric className="max-sm:px-1">
+                  before
+                </HeadCell>
+                <HeadCell numeric className="max-sm:px-1">
+                  after
+                </HeadCell>
+                <HeadCell className="max-sm:ps-1">difference</HeadCell>
               </tr>
             </thead>
             <tbody>
               {moves.map(({ setting, measure, before, after }) => (
                 <tr key={`${setting} ${measure}`}>
-                  <HeadCell scope="row" className="max-sm:text-sm">
+                  <HeadCell scope="row" className="max-sm:pe-1 max-sm:text-sm">
                     {settingLabel(setting)}
                   </HeadCell>
-                  <Cell className="min-w-28 max-sm:text-sm">{measureWords[measure]}</Cell>
-                  <Cell numeric>{formatNumber(before)}</Cell>
-                  <Cell numeric>{formatNumber(after)}</Cell>
+                  <Cell className="min-w-24 max-sm:px-1 max-sm:text-sm">
+                    {measureWords[measure]}
+                  </Cell>
+                  <Cell numeric className="max-sm:px-1 max-sm:text-sm">
+                    {formatNumber(before)}
+                  </Cell>
+                  <Cell numeric className="max-sm:px-1 max-sm:text-sm">
+                    {formatNumber(after)}
+                  </Cell>
                   <Cell
-                    className={`sm:whitespace-nowrap max-sm:text-sm ${before === after ? "text-ink-2" : "font-bold"}`}
+                    className={`sm:whitespace-nowrap max-sm:ps-1 max-sm:text-sm ${before === after ? "text-ink-2" : "font-bold"}`}
                   >
                     {differenceWords(before, after)}
                   </Cell>

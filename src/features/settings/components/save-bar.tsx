@@ -40,11 +40,12 @@ export function SaveBar(props: SaveBarProps) {
       <Button variant="plain" className="max-sm:px-0!" onClick={props.onPutBack}>
         Put all back
       </Button>
-      <div className="flex gap-2 max-sm:w-full max-sm:*:flex-1">
+      <div className="flex gap-2 max-sm:w-full max-sm:*:grow">
         <Button
           variant={previewed ? "quiet" : "primary"}
           pending={asking}
           pendingLabel="Counting"
+          className="max-sm:px-2"
           onClick={props.onAsk}
         >
           See what would move
