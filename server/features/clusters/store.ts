@@ -36,8 +36,8 @@ type Columns = {
   place_settings: (string | null)[] | null;
 };
 
-/** Reads days as day numbers, null for none. They are written over and over: each is worked out once. */
-export function dayReader(): (text: string | null | undefined) => number | null {
+/** Days are written over and over: each is worked out once. */
+function dayReader(): (text: string | null | undefined) => number | null {
   const known = new Map<string, number | null>();
   return (text) => {
     if (!text) return null;

@@ -69,7 +69,7 @@ test("it is opened by a supervisor, invented, and filled with an outbreak to pra
   expect(page.body.name).toEqual(expect.any(String));
   const followed = await supervisor.client.get(`${supervisor.base}/follow-up`, { show: "all" });
   expect(followed.body.total).toBeGreaterThan(5);
-  const network = await supervisor.client.get(`${supervisor.base}/network`);
+  const network = await supervisor.client.get(`${supervisor.base}/network/summary`);
   expect(network.body.people).toBe(60);
   const found = await supervisor.client.post(`${supervisor.base}/people/search`, {
     q: page.body.name,
@@ -155,7 +155,7 @@ test("a reset empties what was done, keeps the settings, and fills it again for 
     "ref,name\nz,Zq\n",
   );
   const graph = async () =>
-    (await supervisor.client.get(`${supervisor.base}/network`)).body.graphVersion as number;
+    (await supervisor.client.get(`${supervisor.base}/network/summary`)).body.graphVersion as number;
   const was = await graph();
 
   const answer = await reset(supervisor, { version: 2, name: "Learning" });
@@ -168,7 +168,7 @@ test("a reset empties what was done, keeps the settings, and fills it again for 
   expect(places.body.items[0].number).toBe(1);
   expect((await supervisor.client.get(`${supervisor.base}/imports`)).body.total).toBe(0);
   await expect.poll(graph).toBeGreaterThan(was);
-  const groups = await supervisor.client.get(`${supervisor.base}/network`);
+  const groups = await supervisor.client.get(`${supervisor.base}/network/summary`);
   expect(groups.body.people).toBe(60);
 
   const definitions = await asAdmin<{ v: number }>(

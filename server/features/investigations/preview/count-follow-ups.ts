@@ -18,25 +18,50 @@ export interface AlikeContacts {
 }
 
 interface Row extends Omit<AlikeContacts, "checks"> {
-  /** Each check as its day and the first letter of its outcome, by day. */
-  checks: string | null;
+  /** Last day on which the contact was seen or spoken to. */
+  seen: string | null;
+  /** Last due day on which they were reached in any way, by the shorter and the longer monitoring. */
+  reachedShort: string | null;
+  reachedLong: string | null;
+  /** Days without success that count although a gap there would not: today, and before entry. */
+  missed: string | null;
 }
 
-const OUTCOME_OF: Record<string, CheckOutcome> = {
-  s: "seen",
-  p: "spoken",
-  m: "message",
-  n: "not_reached",
-};
+/** The checks that a state can depend on; all others leave it as it is. */
+function decisiveChecks(row: Row): AlikeContacts["checks"] {
+  const missed = row.missed === null ? [] : row.missed.split(" ");
+  return [
+    ...(row.seen ? [{ day: row.seen, outcome: "seen" as const }] : []),
+    ...[row.reachedShort, row.reachedLong].flatMap((day) =>
+      day ? [{ day, outcome: "message" as const }] : [],
+    ),
+    ...missed.map((day) => ({ day, outcome: "not_reached" as const })),
+  ];
+}
 
 /**
  * Contacts with a day 0, grouped in the database by what their state is derived from: many have the
- * same, so that a hundred thousand become some thousands.
+ * same, so that a hundred thousand become some thousands. Of more than a million checks only those
+ * come along that the state can depend on (`followState`): the last day seen, the last due day
+ * reached in any way, and unsuccessful days that are no gap. A gap and a day without success count
+ * alike on the days between entry and today.
+ *
+ * @param today local day in the investigation's zone
+ * @param monitoring the numbers of monitoring days to be counted with, the lower one first
  */
-export async function loadContacts(tx: Tx, settings: SettingsRow): Promise<AlikeContacts[]> {
+export async function loadContacts(
+  tx: Tx,
+  settings: SettingsRow,
+  today: string,
+  [short, long]: readonly [number, number],
+): Promise<AlikeContacts[]> {
+  const due = (days: number) => sql`((l.day_zero::date + ${days}::int)::text)`;
+  const reached = sql`k.outcome <> 'not_reached' and k.day <= ${today}`;
   const found = await tx.execute<{ rows: Row[] | null }>(
-    sql`with days as materialized (
-          select d.person_id, d.day_zero from core.follow_up_days(null) d
+    sql`with listed as materialized (
+          select p.id, p.classification, d.day_zero,
+            ((p.recorded_at at time zone ${settings.timeZone})::date + 1)::text as expected_from
+          from core.follow_up_days(null) d join core.person p on p.id = d.person_id
           where d.day_zero is not null),
         sick as materialized (
           select distinct y.person_id from core.follow_check y
@@ -45,31 +70,28 @@ export async function loadContacts(tx: Tx, settings: SettingsRow): Promise<Alike
               select 1 from core.follow_check n where n.person_id = y.person_id
                 and n.day > y.day and n.symptoms = 'no' and n.withdrawn_at is null)),
         checked as materialized (
-          select k.person_id, string_agg(k.day || case k.outcome when 'seen' then 's'
-              when 'spoken' then 'p' when 'message' then 'm' else 'n' end, ' ' order by k.day) as all
-          from core.follow_check k
+          select k.person_id,
+            max(k.day collate "C") filter (where k.outcome in ('seen', 'spoken')) as seen,
+            max(k.day collate "C") filter (where ${reached} and k.day <= ${due(short)}) as short,
+            max(k.day collate "C") filter (where ${reached} and k.day <= ${due(long)}) as long,
+            string_agg(k.day, ' ') filter (where k.outcome = 'not_reached'
+              and (k.day = ${today} or k.day < l.expected_from)) as missed
+          from core.follow_check k join listed l on l.id = k.person_id
           where k.investigation_id = ${settings.id} and k.withdrawn_at is null
+            and (l.classification = 'contact' or l.classification is null)
           group by k.person_id),
         alike as (
-          select p.classification, d.day_zero, k.all, s.person_id is not null as symptomatic,
-            (p.recorded_at at time zone ${settings.timeZone})::date + 1 as expected_from,
-            count(*)::int as count
-          from days d join core.person p on p.id = d.person_id
-          left join sick s on s.person_id = d.person_id
-          left join checked k on k.person_id = d.person_id
-          group by 1, 2, 3, 4, 5)
+          select l.classification, l.day_zero, l.expected_from, k.seen, k.short, k.long, k.missed,
+            s.person_id is not null as symptomatic, count(*)::int as count
+          from listed l left join sick s on s.person_id = l.id
+          left join checked k on k.person_id = l.id
+          group by 1, 2, 3, 4, 5, 6, 7, 8)
         select json_agg(json_build_object('classification', classification, 'dayZero', day_zero,
-          'expectedFrom', expected_from::text, 'symptomatic', symptomatic, 'checks', "all",
-          'count', count)) as rows
+          'expectedFrom', expected_from, 'symptomatic', symptomatic, 'seen', seen,
+          'reachedShort', short, 'reachedLong', long, 'missed', missed, 'count', count)) as rows
         from alike`,
   );
-  return (found.rows[0]?.rows ?? []).map((row) => ({
-    ...row,
-    checks: (row.checks ?? "").split(" ").flatMap((word) => {
-      const outcome = OUTCOME_OF[word.slice(10)];
-      return outcome ? [{ day: word.slice(0, 10), outcome }] : [];
-    }),
-  }));
+  return (found.rows[0]?.rows ?? []).map((row) => ({ ...row, checks: decisiveChecks(row) }));
 }
 
 /** What the round of a day looks like under some settings. */
