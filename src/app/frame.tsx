@@ -4,6 +4,7 @@ import type { Investigation } from "../../shared/contracts/investigations.ts";
 import { hasDuty } from "../../shared/roles.ts";
 import { AppFrame } from "../components/layouts/app-frame.tsx";
 import { Notice } from "../components/ui/notice.tsx";
+import { Tag } from "../components/ui/tag.tsx";
 import { AccountMenu } from "../features/session/components/account-menu.tsx";
 import { InvestigationSwitch, RoleSwitch } from "../features/session/components/acting-switch.tsx";
 import { GeneralCaution } from "../features/session/components/general-caution.tsx";
@@ -38,6 +39,7 @@ export function Frame({ investigation, readAt, children }: FrameProps) {
 
   const acting = session.memberships.find((one) => one.investigationId === session.investigationId);
   const invented = investigation?.invented ?? acting?.invented ?? false;
+  const practice = investigation?.practice ?? false;
   return (
     <CutOffContext value={setCutOff}>
       <AppFrame
@@ -51,6 +53,9 @@ export function Frame({ investigation, readAt, children }: FrameProps) {
             session={session}
             investigationsTo={paths.investigations}
             passwordTo={paths.password}
+            settingsTo={
+              session.investigationId ? paths.settings(session.investigationId) : undefined
+            }
             membersTo={
               session.investigationId && hasDuty(session.actingRole, "manageMembers")
                 ? paths.members(session.investigationId)
@@ -60,7 +65,7 @@ export function Frame({ investigation, readAt, children }: FrameProps) {
             onRoomKeysChange={setRoomKeys}
           />
         }
-        banner={invented ? "Invented data: no person, place or illness here is real." : undefined}
+        banner={invented || practice ? <DataMark practice={practice} /> : undefined}
         cutOffLine={
           investigation ? <CutOffLine {...{ investigation, readAt, cutOff }} /> : undefined
         }
@@ -80,6 +85,19 @@ export function Frame({ investigation, readAt, children }: FrameProps) {
       </AppFrame>
     </CutOffContext>
   );
+}
+
+/** Whether what is on the page is real: said in words, on every page. */
+function DataMark({ practice }: { practice: boolean }) {
+  if (practice) {
+    return (
+      <>
+        <Tag tone="ochre">practice</Tag> To practise with: all is invented, may be emptied, sends
+        nothing and counts nowhere.
+      </>
+    );
+  }
+  return "Invented data: no person, place or illness here is real.";
 }
 
 function CutOffLine(props: {

@@ -13,7 +13,7 @@ export const STALE_BY_TOPIC: Readonly<Record<Topic, readonly QueryWord[]>> = {
   imports: ["imports", "people", "groups", "network", "clusters"],
   members: ["members", "invitations", "teams", "people"],
   clusters: ["clusters"],
-  settings: ["investigation", "network", "groups", "clusters", "people", "follow-up"],
+  settings: ["settings", "investigation", "network", "groups", "clusters", "people", "follow-up"],
   exports: ["exports"],
 };
 

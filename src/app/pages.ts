@@ -14,6 +14,7 @@ export const pages = {
   review: () => import("../features/review/routes/review-route.tsx"),
   compare: () => import("../features/compare/routes/compare-route.tsx"),
   safeguard: () => import("./routes/safeguard-route.tsx"),
+  settings: () => import("../features/settings/routes/settings-route.tsx"),
   members: () => import("./routes/members-route.tsx"),
 } as const;
 

@@ -6,6 +6,7 @@ export const paths = {
   firstOfficer: "/first-officer",
   investigations: "/investigations",
   password: "/password",
+  settings: (investigationId: string) => `/i/${investigationId}/settings`,
   members: (investigationId: string) => `/i/${investigationId}/members`,
   trace: (investigationId: string) => `/i/${investigationId}/trace`,
   newPerson: (investigationId: string) => `/i/${investigationId}/trace/people/new`,

@@ -22,6 +22,7 @@ const rooms: RouteObject[] = [
   { path: "review", lazy: pages.review },
   { path: "compare", lazy: pages.compare },
   { path: "safeguard", lazy: pages.safeguard },
+  { path: "settings", lazy: pages.settings },
   { path: "members", lazy: pages.members },
 ];
 

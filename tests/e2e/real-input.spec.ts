@@ -21,7 +21,7 @@ async function openInvestigation(page: Page, title: string): Promise<string> {
   await page.getByRole("button", { name: "Open a new one" }).click();
   await page.getByLabel("Name", { exact: false }).first().fill(name);
   await page.getByLabel("Time zone").fill("Europe/Lisbon");
-  await expect(page.getByLabel(/^Invented data, for practice/)).toBeChecked();
+  await expect(page.getByLabel(/^Invented data: marked/)).toBeChecked();
   await page.getByRole("button", { name: "Open the investigation" }).click();
   await expect(page.getByText("Opened. You hold your acting role in it")).toBeVisible();
   await page.getByRole("button", { name: `Act here in ${name}` }).click();

@@ -36,6 +36,7 @@ const pagesOf: Record<Role, readonly Place[]> = {
     ["trace/people/{case}/interview", /^Interview of /],
     ["trace/places", "Places"],
     ["follow", "Follow"],
+    ["settings", "Settings"],
   ],
   supervisor: [
     ["trace", "Trace"],
@@ -48,6 +49,7 @@ const pagesOf: Record<Role, readonly Place[]> = {
     ["follow", "Follow"],
     ["review", "Review"],
     ["compare", "Compare"],
+    ["settings", "Settings"],
     ["members", "Members"],
   ],
   epidemiologist: [
@@ -56,6 +58,7 @@ const pagesOf: Record<Role, readonly Place[]> = {
     ["trace/places", "Places"],
     ["review", "Review"],
     ["compare", "Compare"],
+    ["settings", "Settings"],
   ],
   officer: [
     ["trace", "Trace"],
@@ -65,6 +68,7 @@ const pagesOf: Record<Role, readonly Place[]> = {
     ["safeguard", "Safeguard"],
     ["safeguard?tab=events", "Safeguard"],
     ["safeguard?tab=members", "Safeguard"],
+    ["settings", "Settings"],
     ["members", "Members"],
   ],
 };

@@ -10,18 +10,16 @@ import { LinkButton } from "../../components/ui/link-button.tsx";
 import { LoadingState } from "../../components/ui/loading-state.tsx";
 import { Tag } from "../../components/ui/tag.tsx";
 import { useToast } from "../../components/ui/use-toast.ts";
-import { investigationQuery } from "../../features/investigations/api/get-investigation.ts";
 import { investigationsQuery } from "../../features/investigations/api/get-investigations.ts";
 import { CreateInvestigationForm } from "../../features/investigations/components/create-investigation-form.tsx";
 import { InvestigationTable } from "../../features/investigations/components/investigation-table.tsx";
-import { SettingsForm } from "../../features/investigations/components/settings-form.tsx";
 import { useSwitchActing } from "../../features/session/components/acting-switch.tsx";
 import { errorKind } from "../../lib/api-error.ts";
 import { useSession } from "../../lib/session-context.ts";
 import { Frame } from "../frame.tsx";
 import { paths } from "../paths.ts";
 
-/** The investigations one works in; their settings; opening a new one. */
+/** The investigations one works in; the way to their settings; opening a new one. */
 export function Component() {
   const session = useSession();
   const toast = useToast();
@@ -45,6 +43,7 @@ export function Component() {
           <Section title="New investigation">
             <CreateInvestigationForm
               demo={session.demo}
+              mayPractise={session.actingRole === "supervisor"}
               onCancel={() => setCreating(false)}
               onCreated={() => {
                 setCreating(false);
@@ -82,31 +81,26 @@ export function Component() {
             />
           ) : null}
         </Section>
-        {mayChange && session.investigationId ? (
-          <Settings investigationId={session.investigationId} />
+        {session.investigationId ? (
+          <Section title="Settings">
+            <p>
+              {mayChange
+                ? "Windows, clusters, grades, texts and the case definition of the investigation you act in: see what a change would move before it is saved."
+                : "Windows, clusters, grades, texts and the case definition of the investigation you act in, and who changed them when."}
+            </p>
+            <p className="mt-3 flex flex-wrap gap-2">
+              <LinkButton to={paths.settings(session.investigationId)}>
+                Open the settings
+              </LinkButton>
+              {hasDuty(session.actingRole, "manageMembers") ? (
+                <LinkButton to={paths.members(session.investigationId)}>
+                  Members and invitations
+                </LinkButton>
+              ) : null}
+            </p>
+          </Section>
         ) : null}
       </RoomPage>
     </Frame>
-  );
-}
-
-function Settings({ investigationId }: { investigationId: string }) {
-  const investigation = useQuery(investigationQuery(investigationId));
-  if (!investigation.data) return null;
-  return (
-    <Section
-      title="Settings"
-      subLine={investigation.data.name}
-      actions={
-        <LinkButton size="small" to={paths.members(investigationId)}>
-          Members and invitations
-        </LinkButton>
-      }
-    >
-      <SettingsForm
-        investigation={investigation.data}
-        onReload={() => void investigation.refetch()}
-      />
-    </Section>
   );
 }

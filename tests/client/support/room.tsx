@@ -31,7 +31,11 @@ const investigation: Investigation = {
 };
 
 /** A path inside the investigation (with its query) → what the server answers. */
-export type Answers = (path: string, query: URLSearchParams) => unknown;
+export type Answers = (
+  path: string,
+  query: URLSearchParams,
+  request: { method: string; body: unknown },
+) => unknown;
 
 export type RoomOptions = {
   room: ComponentType;
@@ -47,11 +51,12 @@ export function renderRoom({ room: Room, at, rooms, answers, session: more }: Ro
   const asked: string[] = [];
   const cutOffs: unknown[] = [];
   const start = `/api/investigations/${ids.investigation}/`;
-  vi.stubGlobal("fetch", async (address: string, { method = "GET" }: RequestInit = {}) => {
+  vi.stubGlobal("fetch", async (address: string, { method = "GET", body }: RequestInit = {}) => {
     const url = new URL(address, "http://localhost");
     const path = url.pathname.replace(start, "");
     asked.push(`${method === "GET" ? "" : `${method} `}${path}${url.search}`);
-    const answer = answers(path, url.searchParams);
+    const sent = typeof body === "string" ? (JSON.parse(body) as unknown) : undefined;
+    const answer = answers(path, url.searchParams, { method, body: sent });
     if (answer instanceof Response) return answer;
     return new Response(JSON.stringify(answer), {
       headers: { "content-type": "application/json" },

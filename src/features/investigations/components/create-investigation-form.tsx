@@ -15,14 +15,16 @@ import { Notice } from "../../../components/ui/notice.tsx";
 import { UnsavedGuard } from "../../../components/ui/unsaved-guard.tsx";
 import { errorWords } from "../../../lib/api-error.ts";
 import { contractResolver, fieldWords, showFieldErrors } from "../../../lib/form-errors.ts";
+import { typedNumber } from "../../../lib/typed-number.ts";
 import { useCreateInvestigation } from "../api/create-investigation.ts";
-import { SETTING_FIELDS, type SettingKey, typedNumber } from "../setting-fields.ts";
+import { SETTING_FIELDS, type SettingKey } from "../setting-fields.ts";
 
 type Values = Record<
   SettingKey | "name" | "timeZone" | "countryCode" | "caseDefinition",
   string
 > & {
   invented: boolean;
+  practice: boolean;
 };
 
 const schema = z.preprocess((typed) => {
@@ -30,6 +32,7 @@ const schema = z.preprocess((typed) => {
   const numbers = SETTING_FIELDS.map(({ key }) => [key, typedNumber(values[key])]);
   return {
     ...values,
+    invented: values.invented || values.practice,
     countryCode: values.countryCode.trim().toUpperCase(),
     ...Object.fromEntries(numbers),
   };
@@ -38,6 +41,8 @@ const schema = z.preprocess((typed) => {
 export type CreateInvestigationFormProps = {
   /** Demo accounts may only open investigations marked invented. */
   demo: boolean;
+  /** Whether the acting role may open one to practise with. */
+  mayPractise: boolean;
   onCreated: () => void;
   onCancel: () => void;
 };
@@ -45,6 +50,7 @@ export type CreateInvestigationFormProps = {
 /** Opens a new investigation with its first settings. */
 export function CreateInvestigationForm({
   demo,
+  mayPractise,
   onCreated,
   onCancel,
 }: CreateInvestigationFormProps) {
@@ -63,8 +69,10 @@ export function CreateInvestigationForm({
       infectiousAfter: "10",
       monitoringDays: "14",
       invented: demo,
+      practice: false,
     },
   });
+  const practice = form.watch("practice");
   const { errors, isDirty } = form.formState;
   const words = (name: keyof Values) => fieldWords(errors[name]?.message);
 
@@ -102,7 +110,7 @@ export function CreateInvestigationForm({
         />
         <TextField
           label="Time zone"
-          hint="Days are counted in this zone. It cannot be changed later."
+          hint="Days are counted in this zone."
           error={words("timeZone")}
           {...form.register("timeZone")}
         />
@@ -132,13 +140,31 @@ export function CreateInvestigationForm({
           {...form.register("caseDefinition")}
         />
       </div>
-      <CheckboxField
-        label="Invented data, for practice: marked as such on every page"
-        disabled={demo}
-        hint={demo ? "Demo accounts work with invented data only." : undefined}
-        error={words("invented")}
-        {...form.register("invented", { disabled: false })}
-      />
+      <p className="text-sm text-ink-2">
+        All of this can be changed later in the settings, with the incubation, clusters, grades and
+        texts; what a change would move is shown before it is saved.
+      </p>
+      <div>
+        {mayPractise ? (
+          <CheckboxField
+            label="To practise with"
+            hint="It opens with invented people, may be emptied and filled anew, sends nothing and counts nowhere. Practice stays practice."
+            error={words("practice")}
+            {...form.register("practice")}
+          />
+        ) : null}
+        {practice ? (
+          <p className="mt-2">Marked as invented and as practice on every page.</p>
+        ) : (
+          <CheckboxField
+            label="Invented data: marked as such on every page"
+            disabled={demo}
+            hint={demo ? "Demo accounts work with invented data only." : undefined}
+            error={words("invented")}
+            {...form.register("invented", { disabled: false })}
+          />
+        )}
+      </div>
       <p className="flex flex-wrap gap-2">
         <Button variant="primary" type="submit" pending={create.isPending}>
           Open the investigation

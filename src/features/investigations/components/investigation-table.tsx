@@ -35,7 +35,12 @@ export function InvestigationTable({ investigations, action }: InvestigationTabl
           {investigations.map((one) => (
             <tr key={one.id}>
               <HeadCell scope="row" className="whitespace-nowrap">
-                {one.name} {one.invented ? <Tag tone="ochre">invented</Tag> : null}
+                {one.name}{" "}
+                {one.practice ? (
+                  <Tag tone="ochre">practice</Tag>
+                ) : one.invented ? (
+                  <Tag tone="ochre">invented</Tag>
+                ) : null}
               </HeadCell>
               <Cell>{one.roles.map((role) => ROLE_NAMES[role]).join(", ")}</Cell>
               <Cell numeric>

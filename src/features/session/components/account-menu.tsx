@@ -12,6 +12,8 @@ export type AccountMenuProps = {
   session: Session;
   investigationsTo: string;
   passwordTo: string;
+  /** The settings of the acting investigation; undefined while one acts in none. */
+  settingsTo: string | undefined;
   /** Where members are added; undefined for a role that may not. */
   membersTo: string | undefined;
   roomKeys: boolean;
@@ -23,6 +25,7 @@ export function AccountMenu({
   session,
   investigationsTo,
   passwordTo,
+  settingsTo,
   membersTo,
   roomKeys,
   onRoomKeysChange,
@@ -31,7 +34,8 @@ export function AccountMenu({
   const toast = useToast();
   const links = [
     ...(membersTo ? ([[membersTo, "Members and invitations"]] as const) : []),
-    [investigationsTo, "Investigations and settings"] as const,
+    ...(settingsTo ? ([[settingsTo, "Settings of the investigation"]] as const) : []),
+    [investigationsTo, "Investigations"] as const,
     [passwordTo, "Change password"] as const,
   ];
 
