@@ -1,7 +1,9 @@
 -- What the due list needs of everyone under follow-up stands in core.follow_up. It is derived, and
 -- kept in the transaction of whatever it is derived from by triggers, whoever writes: forms, files,
--- seeds, a merge. All of it is set-based. The planner is held to indexes: statistics know nothing of
--- tables that a long import is still filling.
+-- seeds, a merge. All of it is set-based. The planner is held to indexes and to the order in which the
+-- joins are written: statistics know nothing of tables that a long import is still filling. People
+-- are asked by id whether they are withdrawn in a form that the partial indexes of the line list do
+-- not answer to, since one of those read whole looks as cheap as the key.
 
 -- Day 0 of these people: the latest last exposure day to a case (or to someone not yet classified)
 -- over all their pairs, because one contact has one follow-up whoever named them. Partial and missing
@@ -11,12 +13,13 @@
 create or replace function core.day_zero_of(p_people uuid[])
 returns table (person_id uuid, day_zero text)
 language plpgsql stable set search_path = pg_catalog, pg_temp
-set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off as $$
+set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off
+set join_collapse_limit = 1 as $$
 begin
   return query
     with who as (
       select distinct p.id, p.classification from unnest(p_people) u (id)
-      join core.person p on p.id = u.id and p.withdrawn_at is null
+      join core.person p on p.id = u.id and coalesce(p.withdrawn_at, 'infinity') = 'infinity'
       where p.classification = 'contact' or p.classification is null or p.became_case
         or p.classification = 'not_a_case' and exists (select 1 from core.classification k
           where k.person_id = p.id and k.classification = 'contact'))
@@ -30,7 +33,7 @@ begin
         union all
         select cp.id, cp.person_a from core.contact_pair cp
         where cp.person_b = w.id and cp.withdrawn_at is null) s
-      join core.person q on q.id = s.source and q.withdrawn_at is null
+      join core.person q on q.id = s.source and coalesce(q.withdrawn_at, 'infinity') = 'infinity'
       join core.exposure e on e.pair_id = s.id and e.withdrawn_at is null
       where q.classification in ('confirmed', 'probable', 'suspected')
           and (w.classification = 'contact' or e.named_by = q.id
@@ -44,7 +47,8 @@ end $$;
 -- whoever shares a number with them, up to date.
 create or replace function core.refresh_together(p_people uuid[]) returns void
 language plpgsql volatile security definer set search_path = pg_catalog, pg_temp
-set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off as $$
+set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off
+set join_collapse_limit = 1 as $$
 begin
   -- No two of these parts are joined with each other: of a whole investigation that would not end.
   with tokens as (
@@ -86,7 +90,8 @@ end $$;
 -- own afterwards, so that of two who change one contact at once the second sees what the first did.
 create or replace function core.refresh_follow_up(p_people uuid[]) returns void
 language plpgsql volatile security definer set search_path = pg_catalog, pg_temp
-set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off as $$
+set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off
+set join_collapse_limit = 1 as $$
 declare
   v_gone uuid[];
   v_new uuid[];
@@ -125,7 +130,8 @@ end $$;
 -- New tellings can only bring a contact in or move day 0 forward, so the others need not be read.
 create or replace function core.exposures_added() returns trigger
 language plpgsql security definer set search_path = pg_catalog, pg_temp
-set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off as $$
+set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off
+set join_collapse_limit = 1 as $$
 declare v_missing uuid[];
 begin
   with told as materialized (
@@ -135,10 +141,10 @@ begin
     join core.contact_pair cp on cp.id = e.pair_id and cp.withdrawn_at is null
     cross join lateral (values (cp.person_a, cp.person_b), (cp.person_b, cp.person_a))
       s (contact, source)
-    join core.person p on p.id = s.contact and p.withdrawn_at is null
+    join core.person p on p.id = s.contact and coalesce(p.withdrawn_at, 'infinity') = 'infinity'
       and (p.classification is null or p.classification in ('contact', 'not_a_case')
         or p.became_case)
-    join core.person q on q.id = s.source and q.withdrawn_at is null
+    join core.person q on q.id = s.source and coalesce(q.withdrawn_at, 'infinity') = 'infinity'
     where e.withdrawn_at is null and (
       q.classification in ('confirmed', 'probable', 'suspected')
         and (p.classification = 'contact' or e.named_by = q.id
@@ -185,7 +191,8 @@ end $$;
 -- Nobody new has been named yet, nor has a number.
 create or replace function core.people_added() returns trigger
 language plpgsql security definer set search_path = pg_catalog, pg_temp
-set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off as $$
+set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off
+set join_collapse_limit = 1 as $$
 begin
   insert into core.follow_up (person_id, investigation_id, together)
   select n.id, n.investigation_id, 'household-' || h.number
@@ -233,7 +240,8 @@ end $$;
 -- Only of somebody found to be no case does the history decide whether they were a contact.
 create or replace function core.classifications_added() returns trigger
 language plpgsql security definer set search_path = pg_catalog, pg_temp
-set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off as $$
+set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off
+set join_collapse_limit = 1 as $$
 declare v_people uuid[];
 begin
   select array_agg(distinct p.id) into v_people from fresh n
@@ -246,7 +254,8 @@ end $$;
 
 create or replace function core.checks_written() returns trigger
 language plpgsql security definer set search_path = pg_catalog, pg_temp
-set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off as $$
+set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off
+set join_collapse_limit = 1 as $$
 declare v_people uuid[];
 begin
   select array_agg(distinct n.person_id) into v_people from fresh n
@@ -274,7 +283,8 @@ end $$;
 -- A number that nobody else has changes nothing for anybody.
 create or replace function identity.tokens_added() returns trigger
 language plpgsql security definer set search_path = pg_catalog, pg_temp
-set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off as $$
+set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off
+set join_collapse_limit = 1 as $$
 declare v_people uuid[];
 begin
   select array_agg(distinct n.person_id) into v_people from fresh n
@@ -287,7 +297,8 @@ end $$;
 
 create or replace function identity.tokens_dropped() returns trigger
 language plpgsql security definer set search_path = pg_catalog, pg_temp
-set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off as $$
+set enable_seqscan = off set enable_hashjoin = off set enable_mergejoin = off
+set join_collapse_limit = 1 as $$
 declare v_people uuid[];
 begin
   select array_agg(s.id) into v_people from (

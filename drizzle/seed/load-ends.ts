@@ -5,9 +5,12 @@ import type { LoadTarget } from "./load-target.ts";
 
 // One in so many of the contacts who are called goes away or will not be called again.
 const ONE_IN = 40;
-const REASONS = ["moved", "refused", "moved", "not_a_contact"] as const;
+const REASONS = ["moved", "refused", "died", "not_a_contact"] as const;
 
-/** Ends the follow-up of a few contacts on the day of their last call, by whoever made it. */
+/**
+ * Ends the follow-up of a few contacts on the day of their last call, by whoever made it: they moved
+ * away, will not be called again, died, or were none.
+ */
 export async function loadEnds(
   target: LoadTarget,
   outbreak: Outbreak,

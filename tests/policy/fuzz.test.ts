@@ -100,8 +100,22 @@ async function send(
   return { status: answer.status, code: JSON.parse(text).code };
 }
 
+/** Waits for what earlier requests set going in the background. */
+async function settled(): Promise<void> {
+  for (let tries = 0; tries < 400; tries++) {
+    const busy = await world.admin.query(
+      `select 1 from core.export where state = 'building'
+       union all select 1 from core.import where state = 'committing'`,
+    );
+    if (busy.rowCount === 0) return;
+    await new Promise((done) => setTimeout(done, 50));
+  }
+  throw new Error("work in the background did not end");
+}
+
 /** A word for everything that is stored of investigations and people. */
 async function stored(): Promise<string> {
+  await settled();
   const tables = await world.admin.query<{ name: string }>(
     `select format('%I.%I', schemaname, tablename) as name from pg_tables
      where schemaname in ('core', 'identity') and tablename <> 'outbox' order by 1`,

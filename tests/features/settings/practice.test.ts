@@ -296,7 +296,7 @@ test("it sends nothing: no invitation, but accounts that exist may join", async 
     await client.query("select set_config('app.ctx', $1, true)", [row?.nonce]);
     const refused = await client
       .query(
-        "select auth.invite($1::uuid, 'a@b.example', 'tracer', null, 'hash', $1::uuid, '\\x00'::bytea)",
+        "select auth.invite($1::uuid, 'a@b.example', 'tracer', null, null, 'hash', $1::uuid, '\\x00'::bytea)",
         [randomUUID()],
       )
       .catch((error: { code: string }) => error.code);
