@@ -26,6 +26,8 @@ export default defineConfig({
           name: "client",
           environment: "jsdom",
           include: ["tests/client/**/*.test.{ts,tsx}"],
+          // Typing key by key into a page is slow where other work shares the processor.
+          testTimeout: 30_000,
         },
       },
       {

@@ -97,7 +97,9 @@ async function main(): Promise<void> {
       );
       process.exit(1);
     }
-    void announce();
+    announce().catch((error: unknown) =>
+      log.error({ event: "start not announced in full", error: safeError(error) }),
+    );
   });
   server.requestTimeout = 60_000;
   server.headersTimeout = 10_000;

@@ -62,7 +62,7 @@ function show(program, args, { minutes, env, running }) {
 }
 
 async function check(program, args, running) {
-  const trouble = await show(program, args, { minutes: 3, running });
+  const trouble = await show(program, args, { minutes: 8, running });
   return trouble
     ? { passed: 0, failed: 1, skipped: [], faults: [`${program}: ${trouble}`] }
     : { passed: 1, failed: 0, skipped: [], faults: [] };
@@ -126,7 +126,7 @@ async function e2e(running) {
   const file = join(RESULTS, "e2e.json");
   rmSync(file, { force: true });
   const trouble = await show("playwright", ["test"], {
-    minutes: 7,
+    minutes: 20,
     env: { E2E_RESULTS: file },
     running,
   });
@@ -145,19 +145,19 @@ const PARTS = {
     [
       "core, architecture and client",
       (running) =>
-        vitest("core", ["--project", "core", "--project", "client"], { minutes: 4, running }),
+        vitest("core", ["--project", "core", "--project", "client"], { minutes: 12, running }),
     ],
   ],
   api: [
     [
       "API, policy and server",
-      (running) => vitest("api", ["--project", "api"], { minutes: 7, running }),
+      (running) => vitest("api", ["--project", "api"], { minutes: 25, running }),
     ],
     ...zones.map((zone) => [
       `API under TZ=${zone}`,
       (running) =>
         vitest(`api in ${zone}`, ["--project", "api", ".zones.test.ts"], {
-          minutes: 3,
+          minutes: 8,
           zone,
           running,
         }),
