@@ -6,20 +6,73 @@ export { buildGraph, type Graph, type PairEnds } from "./graph/build-graph.ts";
 export { type Components, components } from "./graph/components.ts";
 export { type InducedSubgraph, inducedSubgraph } from "./graph/induced-subgraph.ts";
 export { UnionFind, type UnionResult } from "./graph/union-find.ts";
+export {
+  connectedProbability,
+  connectivityLimit,
+  connectivityOffset,
+  lnConnectedProbability,
+  MOST_PEOPLE_EXACT,
+} from "./measures/connectivity.ts";
 export { countedPairs } from "./measures/counted-pairs.ts";
 export { degreeCounts } from "./measures/degree-counts.ts";
+export {
+  type DegreeBin,
+  type DegreeFit,
+  degreeFit,
+  FEWEST_EXPECTED,
+} from "./measures/degree-fit.ts";
+export {
+  type DegreeLaw,
+  observedDegreeLaw,
+  poissonDegreeLaw,
+} from "./measures/degree-generating.ts";
+export {
+  binomialDegrees,
+  type PoissonError,
+  poissonDegrees,
+  poissonError,
+} from "./measures/degree-law.ts";
+export { degreeVariance } from "./measures/degree-variance.ts";
 export { density, possiblePairs } from "./measures/density.ts";
+export { type Dispersion, dispersion } from "./measures/dispersion.ts";
+export { type DistanceEstimates, distanceEstimates } from "./measures/distance-estimates.ts";
+export { excessDegreeRatio, meanExcessDegree } from "./measures/excess-degree.ts";
+export { expectedIsolatesGnm, expectedIsolatesGnp } from "./measures/expected-isolates.ts";
+export {
+  expectedTrianglesGnm,
+  expectedTrianglesGnp,
+  expectedTwoPathsGnm,
+  expectedTwoPathsGnp,
+} from "./measures/expected-triangles.ts";
 export { isolates } from "./measures/isolates.ts";
 export { largestShare } from "./measures/largest-share.ts";
 export { meanDegree } from "./measures/mean-degree.ts";
+export { type MeanDegreeIntervals, meanDegreeIntervals } from "./measures/mean-degree-intervals.ts";
 export { meanDegreeInterviewed } from "./measures/mean-degree-interviewed.ts";
 export type { Measured, UndefinedReason } from "./measures/measured.ts";
+export {
+  type DirectedMeasure,
+  type Direction,
+  MEASURE_DIRECTIONS,
+  MONOTONE_PROPERTIES,
+  type MonotoneProperty,
+  type Transition,
+} from "./measures/monotone-properties.ts";
 export {
   type NetworkReport,
   networkReport,
   type ReportOptions,
 } from "./measures/network-report.ts";
+export { type Percolation, percolation, transmissibility } from "./measures/percolation.ts";
+export {
+  type CriticalWindow,
+  criticalWindow,
+  largestSmallGroup,
+  type RandomMixingGroups,
+  randomMixingGroups,
+} from "./measures/random-mixing-groups.ts";
 export { recall } from "./measures/recall.ts";
+export { removalThresholdDegrees, removalThresholdMixing } from "./measures/removal-thresholds.ts";
 export {
   FEWEST_FOR_VERDICT,
   FULL_COVERAGE,
@@ -34,7 +87,40 @@ export { triangles } from "./measures/triangles.ts";
 export { twoPaths } from "./measures/two-paths.ts";
 export { type Region, regionsMet, type Verdict, verdictOf } from "./measures/verdict.ts";
 export { createStream, type RandomStream, Xoshiro } from "./random/random-stream.ts";
+export { binomialCdf, binomialPmf, binomialQuantile, binomialUpper } from "./stats/binomial-law.ts";
+export { chiSquaredCdf, chiSquaredQuantile, chiSquaredUpper } from "./stats/chi-squared-law.ts";
+export { clopperPearsonInterval } from "./stats/clopper-pearson-interval.ts";
+export { digamma, trigamma } from "./stats/digamma.ts";
+export {
+  gammaCdf,
+  gammaPdf,
+  gammaQuantile,
+  gammaUpper,
+  gammaUpperQuantile,
+} from "./stats/gamma-law.ts";
+export {
+  hypergeometricCdf,
+  hypergeometricPmf,
+  hypergeometricQuantile,
+  hypergeometricUpper,
+  hypergeometricVariance,
+  type Urn,
+} from "./stats/hypergeometric-law.ts";
+export { incompleteBeta } from "./stats/incomplete-beta.ts";
+export { incompleteGamma, type Tails } from "./stats/incomplete-gamma.ts";
+export { inverseBetaLower, inverseBetaUpper } from "./stats/inverse-beta.ts";
+export { inverseGammaLower, inverseGammaUpper } from "./stats/inverse-gamma.ts";
 export { lambertGiantShare } from "./stats/lambert-giant-share.ts";
+export { lnGamma } from "./stats/ln-gamma.ts";
+export {
+  negativeBinomialCdf,
+  negativeBinomialPmf,
+  negativeBinomialQuantile,
+  negativeBinomialUpper,
+} from "./stats/negative-binomial-law.ts";
+export { normalCdf, normalQuantile, normalUpper } from "./stats/normal-law.ts";
+export { poissonCdf, poissonPmf, poissonQuantile, poissonUpper } from "./stats/poisson-law.ts";
+export { studentCdf, studentQuantile } from "./stats/student-law.ts";
 export { type Interval, wilsonInterval, Z_95 } from "./stats/wilson-interval.ts";
 export { dayNumber, dayString, MISSING_DAY } from "./time/day-number.ts";
 export {

@@ -9,7 +9,14 @@ export type UndefinedReason =
   | "coverage_low"
   | "recall_unknown"
   | "recall_low"
-  | "no_double_reports";
+  | "no_double_reports"
+  | "no_pairs"
+  | "all_pairs"
+  | "at_threshold"
+  | "not_above_threshold"
+  | "not_below_threshold"
+  | "no_further_pairs"
+  | "too_many_people";
 
 /** A number, or `null` with the reason; never NaN, and never 0 standing in for "undefined". */
 export type Measured =
