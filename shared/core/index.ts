@@ -4,7 +4,14 @@
  */
 export { type Articulation, articulation } from "./graph/articulation.ts";
 export { buildGraph, type Graph, type PairEnds } from "./graph/build-graph.ts";
-export { type Components, components } from "./graph/components.ts";
+export {
+  type Communities,
+  type CommunityStart,
+  communities,
+  communitySearch,
+  FEWEST_STARTS,
+} from "./graph/communities.ts";
+export { type Components, components, connectedParts } from "./graph/components.ts";
 export { coreNumbers } from "./graph/core-numbers.ts";
 export { type InducedSubgraph, inducedSubgraph } from "./graph/induced-subgraph.ts";
 export { UnionFind, type UnionResult } from "./graph/union-find.ts";
@@ -26,6 +33,7 @@ export {
   type MixingCounts,
   mixingCounts,
 } from "./measures/mixing-counts.ts";
+export { modularity } from "./measures/modularity.ts";
 export {
   type NetworkReport,
   networkReport,
