@@ -4,11 +4,36 @@
  */
 export { buildGraph, type Graph, type PairEnds } from "./graph/build-graph.ts";
 export { type Components, components } from "./graph/components.ts";
+export { foldLeaves } from "./graph/fold-leaves.ts";
 export { type InducedSubgraph, inducedSubgraph } from "./graph/induced-subgraph.ts";
+export { type Relabelled, searchOrder } from "./graph/search-order.ts";
+export { SOURCE_CHUNKS } from "./graph/source-chunks.ts";
 export { UnionFind, type UnionResult } from "./graph/union-find.ts";
+export {
+  addChunks,
+  type BetweennessPlan,
+  betweenness,
+  betweennessChunk,
+  betweennessPlan,
+  normalisedBetweenness,
+} from "./measures/betweenness.ts";
+export {
+  type Closeness,
+  type ClosenessSums,
+  closeness,
+  closenessChunk,
+  closenessOf,
+} from "./measures/closeness.ts";
 export { countedPairs } from "./measures/counted-pairs.ts";
 export { degreeCounts } from "./measures/degree-counts.ts";
 export { density, possiblePairs } from "./measures/density.ts";
+export {
+  EIGENVECTOR_STEPS,
+  EIGENVECTOR_TOLERANCE,
+  type EigenvectorCentrality,
+  eigenvectorCentrality,
+} from "./measures/eigenvector-centrality.ts";
+export type { Estimate, EstimatePerPerson } from "./measures/estimate.ts";
 export { isolates } from "./measures/isolates.ts";
 export { largestShare } from "./measures/largest-share.ts";
 export { meanDegree } from "./measures/mean-degree.ts";
@@ -19,7 +44,24 @@ export {
   networkReport,
   type ReportOptions,
 } from "./measures/network-report.ts";
+export {
+  addDistances,
+  EXACT_UP_TO_PEOPLE,
+  type PathFigures,
+  pathFigures,
+  pathFiguresOf,
+} from "./measures/path-figures.ts";
 export { recall } from "./measures/recall.ts";
+export {
+  addSampledChunks,
+  type DrawnSources,
+  drawSources,
+  type SampledChunk,
+  sampledBetweenness,
+  sampledBetweennessChunk,
+} from "./measures/sampled-betweenness.ts";
+export { sampledCloseness } from "./measures/sampled-closeness.ts";
+export { type SampledPathFigures, sampledPathFigures } from "./measures/sampled-path-figures.ts";
 export {
   FEWEST_FOR_VERDICT,
   FULL_COVERAGE,
@@ -33,6 +75,7 @@ export { transitivity } from "./measures/transitivity.ts";
 export { triangles } from "./measures/triangles.ts";
 export { twoPaths } from "./measures/two-paths.ts";
 export { type Region, regionsMet, type Verdict, verdictOf } from "./measures/verdict.ts";
+export { drawPeople } from "./random/draw-people.ts";
 export { createStream, type RandomStream, Xoshiro } from "./random/random-stream.ts";
 export { lambertGiantShare } from "./stats/lambert-giant-share.ts";
 export { type Interval, wilsonInterval, Z_95 } from "./stats/wilson-interval.ts";

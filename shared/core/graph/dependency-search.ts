@@ -9,17 +9,20 @@ const SMALLEST = 2 ** -900;
 /**
  * Shortest paths from one person at a time, counted, and how much each other person stands on them.
  *
- * Forwards, the pairs that lead one step further are written down, so that the way back touches
- * only those, and without asking again. On the way back each person `v` carries
+ * Forwards, level by level, the steps that lead one further are written down, so that the way back
+ * touches only those. On the way back each person `v` carries
  * `g(v) = weight(v) / paths(v) + Σ g(child)`; the dependency of the source on `v` is then
  * `paths(v) · Σ g(child)`.
+ *
+ * Whether a step leads further is a coin toss to the processor, so the loops over steps do not
+ * branch on it: a step is always written and the place moves on by the sign bit of a difference.
  *
  * Path counts are doubles: exact to 2^53, a relative 1e-16 a step beyond. Above 2^400 a level is
  * scaled by 2^-400, as only ratios of neighbouring levels matter; counts that fall 2^-900 below
  * their level's scale are rounded up to it, which no network but an artificial one can notice.
  *
- * Cost of a source: O(n + m). Source: Brandes 2001, *A faster algorithm for betweenness
- * centrality*.
+ * Cost of a source: O(people and pairs of its group). Source: Brandes 2001, *A faster algorithm
+ * for betweenness centrality*.
  */
 export class DependencySearch {
   /** People reached by the last `run`, the source first, by distance. */
@@ -28,108 +31,136 @@ export class DependencySearch {
   readonly dependency: Float64Array;
   readonly #graph: Graph;
   readonly #weight: Float64Array;
+  // Between runs: UNREACHED, 0 and 0 for everyone.
   readonly #distance: Int32Array;
   readonly #paths: Float64Array;
+  readonly #sums: Float64Array;
   readonly #carried: Float64Array;
+  // Steps from a parent to a child one further away, level by level.
+  readonly #parents: Int32Array;
   readonly #children: Int32Array;
-  readonly #childEnds: Int32Array;
-  /** Places in `order`, [from, to), of the levels whose children were scaled. */
-  readonly #scaled: number[] = [];
+  // Level d: people order[levelStart[d]] …, steps stepStart[d] …, scale of its children.
+  readonly #levelStart: Int32Array;
+  readonly #stepStart: Int32Array;
+  readonly #childScale: Float64Array;
 
   /** @param weight how many people each person of `graph` stands for as an end of paths */
   constructor(graph: Graph, weight: Float64Array) {
     const { n, m } = graph;
     this.#graph = graph;
     this.#weight = weight;
-    this.order = new Int32Array(n);
+    // One place more than needed where a value is written before it is known to count.
+    this.order = new Int32Array(n + 1);
     this.dependency = new Float64Array(n);
-    this.#distance = new Int32Array(n);
+    this.#distance = new Int32Array(n).fill(UNREACHED);
     this.#paths = new Float64Array(n);
+    this.#sums = new Float64Array(n);
     this.#carried = new Float64Array(n);
-    this.#children = new Int32Array(m);
-    this.#childEnds = new Int32Array(n);
+    this.#parents = new Int32Array(m + 1);
+    this.#children = new Int32Array(m + 1);
+    this.#levelStart = new Int32Array(n + 2);
+    this.#stepStart = new Int32Array(n + 2);
+    this.#childScale = new Float64Array(n + 1);
   }
 
   /** Searches from `source`; answers with the number of people reached, the source included. */
   run(source: number): number {
-    const reached = this.#forwards(source);
-    let end = reached;
-    for (let k = this.#scaled.length - 2; k >= 0; k -= 2) {
-      const from = this.#scaled[k]!;
-      const to = this.#scaled[k + 1]!;
-      this.#backwards(to, end, 1);
-      this.#backwards(from, to, SCALE);
-      end = from;
-    }
-    this.#backwards(0, end, 1);
-    return reached;
+    const levels = this.#forwards(source);
+    this.#backwards(levels);
+    this.#distance[source] = UNREACHED;
+    this.#paths[source] = 0;
+    return this.#levelStart[levels]!;
   }
 
   #forwards(source: number): number {
     const { offsets, neighbours } = this.#graph;
-    const distance = this.#distance.fill(UNREACHED);
+    const distance = this.#distance;
     const paths = this.#paths;
     const order = this.order;
+    const parents = this.#parents;
     const children = this.#children;
-    const childEnds = this.#childEnds;
-    this.#scaled.length = 0;
+    const levelStart = this.#levelStart;
+    const stepStart = this.#stepStart;
     distance[source] = 0;
     paths[source] = 1;
     order[0] = source;
     let from = 0;
     let tail = 1;
-    let written = 0;
-    for (let next = 1; from < tail; next++) {
+    let steps = 0;
+    let level = 0;
+    while (from < tail) {
+      levelStart[level] = from;
+      stepStart[level] = steps;
       const to = tail;
+      const first = steps;
       let most = 0;
       for (let at = from; at < to; at++) {
         const u = order[at]!;
-        const count = paths[u]!;
-        if (count > most) most = count;
+        if (paths[u]! > most) most = paths[u]!;
         const end = offsets[u + 1]!;
         for (let k = offsets[u]!; k < end; k++) {
           const v = neighbours[k]!;
-          const held = distance[v]!;
-          if (held < next) continue;
-          if (held === UNREACHED) {
-            distance[v] = next;
-            paths[v] = count;
-            order[tail++] = v;
-          } else {
-            paths[v]! += count;
-          }
-          children[written++] = v;
-        }
-        childEnds[at] = written;
-      }
-      if (most > LARGE) {
-        this.#scaled.push(from, to);
-        for (let at = to; at < tail; at++) {
-          paths[order[at]!] = Math.max(paths[order[at]!]! * SCALE, SMALLEST);
+          parents[steps] = u;
+          children[steps] = v;
+          // 1 when v is not yet reached: level − distance is negative.
+          steps += (level - distance[v]!) >>> 31;
         }
       }
+      const next = level + 1;
+      for (let k = first; k < steps; k++) {
+        const v = children[k]!;
+        paths[v]! += paths[parents[k]!]!;
+        order[tail] = v;
+        tail += (next - distance[v]!) >>> 31;
+        distance[v] = next;
+      }
+      this.#childScale[level] = most > LARGE ? this.#scale(to, tail) : 1;
       from = to;
+      level = next;
     }
-    return tail;
+    levelStart[level] = tail;
+    stepStart[level] = steps;
+    return level;
   }
 
-  #backwards(from: number, to: number, scale: number): void {
-    const order = this.order;
-    const weight = this.#weight;
+  /** Scales the path counts of one level. */
+  #scale(from: number, to: number): number {
     const paths = this.#paths;
+    for (let at = from; at < to; at++) {
+      const v = this.order[at]!;
+      paths[v] = Math.max(paths[v]! * SCALE, SMALLEST);
+    }
+    return SCALE;
+  }
+
+  /** The way back over all levels but the source's; leaves the scratch arrays as it found them. */
+  #backwards(levels: number): void {
+    const weight = this.#weight;
+    const distance = this.#distance;
+    const paths = this.#paths;
+    const sums = this.#sums;
     const carried = this.#carried;
+    const order = this.order;
     const dependency = this.dependency;
+    const parents = this.#parents;
     const children = this.#children;
-    const childEnds = this.#childEnds;
-    for (let at = to - 1; at >= from; at--) {
-      const v = order[at]!;
-      const end = childEnds[at]!;
-      let sum = 0;
-      for (let k = at === 0 ? 0 : childEnds[at - 1]!; k < end; k++) sum += carried[children[k]!]!;
-      sum *= scale;
-      const count = paths[v]!;
-      carried[v] = weight[v]! / count + sum;
-      dependency[v] = count * sum;
+    for (let level = levels - 1; level > 0; level--) {
+      const lastStep = this.#stepStart[level + 1]!;
+      for (let k = this.#stepStart[level]!; k < lastStep; k++) {
+        sums[parents[k]!]! += carried[children[k]!]!;
+      }
+      const scale = this.#childScale[level]!;
+      const end = this.#levelStart[level + 1]!;
+      for (let at = this.#levelStart[level]!; at < end; at++) {
+        const v = order[at]!;
+        const count = paths[v]!;
+        const sum = sums[v]! * scale;
+        carried[v] = weight[v]! / count + sum;
+        dependency[v] = count * sum;
+        distance[v] = UNREACHED;
+        paths[v] = 0;
+        sums[v] = 0;
+      }
     }
   }
 }

@@ -3,11 +3,9 @@ import { DependencySearch } from "../graph/dependency-search.ts";
 import { foldLeaves } from "../graph/fold-leaves.ts";
 import { inducedSubgraph } from "../graph/induced-subgraph.ts";
 import { searchOrder } from "../graph/search-order.ts";
+import { allChunks, checkParts, chunkRange } from "../graph/source-chunks.ts";
 import { possiblePairs } from "./density.ts";
 import { defined, type Measured, undefinedBecause } from "./measured.ts";
-
-/** Parts into which the sources are cut, always: the sums come out alike whoever does them. */
-export const BETWEENNESS_CHUNKS = 32;
 
 /** What every worker needs to know to work out its chunks. */
 export type BetweennessPlan = {
@@ -54,21 +52,18 @@ export function betweennessPlan(graph: Graph): BetweennessPlan {
 }
 
 /**
- * One of the `BETWEENNESS_CHUNKS` parts, by number in the core. Workers may take the chunks in any
+ * One of the `SOURCE_CHUNKS` parts, by number in the core. Workers may take the chunks in any
  * order and share; `addChunks` brings them together.
  *
  * @throws RangeError for a chunk that does not exist
  */
 export function betweennessChunk(plan: BetweennessPlan, chunk: number): Float64Array {
-  if (!Number.isInteger(chunk) || chunk < 0 || chunk >= BETWEENNESS_CHUNKS) {
-    throw new RangeError(`chunk must lie in 0 … ${BETWEENNESS_CHUNKS - 1}`);
-  }
   const { core, weight } = plan;
   const part = new Float64Array(core.n);
   const search = new DependencySearch(core, weight);
   const { order, dependency } = search;
-  const end = Math.floor(((chunk + 1) * core.n) / BETWEENNESS_CHUNKS);
-  for (let s = Math.floor((chunk * core.n) / BETWEENNESS_CHUNKS); s < end; s++) {
+  const [from, to] = chunkRange(core.n, chunk);
+  for (let s = from; s < to; s++) {
     const reached = search.run(s);
     // Each unordered pair is met from both of its ends.
     const half = weight[s]! / 2;
@@ -84,7 +79,7 @@ export function betweennessChunk(plan: BetweennessPlan, chunk: number): Float64A
  * @throws RangeError unless every chunk is there
  */
 export function addChunks(plan: BetweennessPlan, parts: readonly Float64Array[]): Float64Array {
-  if (parts.length !== BETWEENNESS_CHUNKS) throw new RangeError("every chunk is needed, in order");
+  checkParts(parts);
   const core = new Float64Array(plan.core.n);
   for (const part of parts) for (let u = 0; u < core.length; u++) core[u]! += part[u]!;
   const answer = plan.throughTrees.slice();
@@ -104,8 +99,10 @@ export function addChunks(plan: BetweennessPlan, parts: readonly Float64Array[])
  */
 export function betweenness(graph: Graph): Float64Array {
   const plan = betweennessPlan(graph);
-  const parts = Array.from({ length: BETWEENNESS_CHUNKS }, (_, k) => betweennessChunk(plan, k));
-  return addChunks(plan, parts);
+  return addChunks(
+    plan,
+    allChunks((chunk) => betweennessChunk(plan, chunk)),
+  );
 }
 
 /**
