@@ -24,7 +24,7 @@ export function allDistances(n: number, links: Links): AllDistances {
   }
   // Paths to v are the paths to those of its contacts who are one step nearer.
   const paths = distance.map((row, u) => {
-    const counts = Array.from({ length: n }, (_, v) => (u === v ? 1 : 0));
+    const counts = Array.from({ length: n }, (_, v): number => (u === v ? 1 : 0));
     const people = row.map((_, v) => v).filter((v) => v !== u && row[v] !== Infinity);
     for (const v of people.sort((x, y) => (row[x] ?? 0) - (row[y] ?? 0))) {
       for (const w of contacts[v] ?? []) {
