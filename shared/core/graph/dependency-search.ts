@@ -16,6 +16,8 @@ const SMALLEST = 2 ** -900;
  *
  * Whether a step leads further is a coin toss to the processor, so the loops over steps do not
  * branch on it: a step is always written and the place moves on by the sign bit of a difference.
+ * Everything but the rows is kept by place in the order of arrival, so that a level lies in one
+ * stretch of memory.
  *
  * Path counts are doubles: exact to 2^53, a relative 1e-16 a step beyond. Above 2^400 a level is
  * scaled by 2^-400, as only ratios of neighbouring levels matter; counts that fall 2^-900 below
@@ -27,16 +29,17 @@ const SMALLEST = 2 ** -900;
 export class DependencySearch {
   /** People reached by the last `run`, the source first, by distance. */
   readonly order: Int32Array;
-  /** Dependency of the last source on each person reached; undefined for the source itself. */
+  /** Dependency of the last source on each person, by place in `order`; [0] means nothing. */
   readonly dependency: Float64Array;
   readonly #graph: Graph;
   readonly #weight: Float64Array;
-  // Between runs: UNREACHED, 0 and 0 for everyone.
-  readonly #distance: Int32Array;
+  // Place of each person in `order`; between runs UNREACHED for everyone.
+  readonly #place: Int32Array;
+  // By place; between runs 0 everywhere.
   readonly #paths: Float64Array;
   readonly #sums: Float64Array;
   readonly #carried: Float64Array;
-  // Steps from a parent to a child one further away, level by level.
+  // Steps from a parent to a child one further away, level by level; by place once written.
   readonly #parents: Int32Array;
   readonly #children: Int32Array;
   // Level d: people order[levelStart[d]] …, steps stepStart[d] …, scale of its children.
@@ -52,7 +55,7 @@ export class DependencySearch {
     // One place more than needed where a value is written before it is known to count.
     this.order = new Int32Array(n + 1);
     this.dependency = new Float64Array(n);
-    this.#distance = new Int32Array(n).fill(UNREACHED);
+    this.#place = new Int32Array(n).fill(UNREACHED);
     this.#paths = new Float64Array(n);
     this.#sums = new Float64Array(n);
     this.#carried = new Float64Array(n);
@@ -67,22 +70,22 @@ export class DependencySearch {
   run(source: number): number {
     const levels = this.#forwards(source);
     this.#backwards(levels);
-    this.#distance[source] = UNREACHED;
-    this.#paths[source] = 0;
+    this.#place[source] = UNREACHED;
+    this.#paths[0] = 0;
     return this.#levelStart[levels]!;
   }
 
   #forwards(source: number): number {
     const { offsets, neighbours } = this.#graph;
-    const distance = this.#distance;
+    const place = this.#place;
     const paths = this.#paths;
     const order = this.order;
     const parents = this.#parents;
     const children = this.#children;
     const levelStart = this.#levelStart;
     const stepStart = this.#stepStart;
-    distance[source] = 0;
-    paths[source] = 1;
+    place[source] = 0;
+    paths[0] = 1;
     order[0] = source;
     let from = 0;
     let tail = 1;
@@ -96,27 +99,31 @@ export class DependencySearch {
       let most = 0;
       for (let at = from; at < to; at++) {
         const u = order[at]!;
-        if (paths[u]! > most) most = paths[u]!;
+        if (paths[at]! > most) most = paths[at]!;
         const end = offsets[u + 1]!;
         for (let k = offsets[u]!; k < end; k++) {
           const v = neighbours[k]!;
-          parents[steps] = u;
+          parents[steps] = at;
           children[steps] = v;
-          // 1 when v is not yet reached: level − distance is negative.
-          steps += (level - distance[v]!) >>> 31;
+          // 1 when v has no place before `to`, so lies beyond this level.
+          steps += (to - 1 - place[v]!) >>> 31;
         }
       }
-      const next = level + 1;
       for (let k = first; k < steps; k++) {
         const v = children[k]!;
-        paths[v]! += paths[parents[k]!]!;
+        const held = place[v]!;
+        // 1 when v has no place yet: they get the next one.
+        const fresh = (tail - 1 - held) >>> 31;
+        const at = held + ((tail - held) & -fresh);
         order[tail] = v;
-        tail += (next - distance[v]!) >>> 31;
-        distance[v] = next;
+        tail += fresh;
+        place[v] = at;
+        children[k] = at;
+        paths[at]! += paths[parents[k]!]!;
       }
       this.#childScale[level] = most > LARGE ? this.#scale(to, tail) : 1;
       from = to;
-      level = next;
+      level++;
     }
     levelStart[level] = tail;
     stepStart[level] = steps;
@@ -126,17 +133,14 @@ export class DependencySearch {
   /** Scales the path counts of one level. */
   #scale(from: number, to: number): number {
     const paths = this.#paths;
-    for (let at = from; at < to; at++) {
-      const v = this.order[at]!;
-      paths[v] = Math.max(paths[v]! * SCALE, SMALLEST);
-    }
+    for (let at = from; at < to; at++) paths[at] = Math.max(paths[at]! * SCALE, SMALLEST);
     return SCALE;
   }
 
   /** The way back over all levels but the source's; leaves the scratch arrays as it found them. */
   #backwards(levels: number): void {
     const weight = this.#weight;
-    const distance = this.#distance;
+    const place = this.#place;
     const paths = this.#paths;
     const sums = this.#sums;
     const carried = this.#carried;
@@ -153,13 +157,13 @@ export class DependencySearch {
       const end = this.#levelStart[level + 1]!;
       for (let at = this.#levelStart[level]!; at < end; at++) {
         const v = order[at]!;
-        const count = paths[v]!;
-        const sum = sums[v]! * scale;
-        carried[v] = weight[v]! / count + sum;
-        dependency[v] = count * sum;
-        distance[v] = UNREACHED;
-        paths[v] = 0;
-        sums[v] = 0;
+        const count = paths[at]!;
+        const sum = sums[at]! * scale;
+        carried[at] = weight[v]! / count + sum;
+        dependency[at] = count * sum;
+        place[v] = UNREACHED;
+        paths[at] = 0;
+        sums[at] = 0;
       }
     }
   }

@@ -67,7 +67,7 @@ export function betweennessChunk(plan: BetweennessPlan, chunk: number): Float64A
     const reached = search.run(s);
     // Each unordered pair is met from both of its ends.
     const half = weight[s]! / 2;
-    for (let at = 1; at < reached; at++) part[order[at]!]! += half * dependency[order[at]!]!;
+    for (let at = 1; at < reached; at++) part[order[at]!]! += half * dependency[at]!;
   }
   return part;
 }

@@ -52,7 +52,7 @@ export function sampledBetweennessChunk(
     const reached = search.run(drawn.core[s]!);
     for (let at = 1; at < reached; at++) {
       const u = order[at]!;
-      const half = dependency[u]! / 2;
+      const half = dependency[at]! / 2;
       sum[u]! += times * half;
       squares[u]! += times * half * half;
     }
