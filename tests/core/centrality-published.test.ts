@@ -123,6 +123,28 @@ describe("more of the karate club", () => {
   });
 });
 
+// Source: networkx 2.8.8, eigenvector_centrality to 1e-14 and eigvalsh of numpy, without weights.
+describe.each([
+  ["karate club", karate(), 33, 0.373363470291, 6.725697727632],
+  ["Les Misérables", lesMiserables(), null, 0.317841260352, 12.005754950138],
+  [
+    "women and events, which have no odd circle",
+    davis(),
+    davisEvent(8),
+    0.35824342557,
+    6.74190812491,
+  ],
+  ["Florentine marriages", florentine(), null, 0.430308094041, 3.256103745431],
+] as const)("%s", (_name, { n, links }, person, most, eigenvalue) => {
+  it("has its eigenvector centrality and eigenvalue", () => {
+    const answer = eigenvectorCentrality(graphOf(n, links)).value;
+    const centrality = answer?.centrality ?? new Float64Array();
+    expect(Math.max(...centrality)).toBeCloseTo(most, DIGITS);
+    expect(answer?.eigenvalue).toBeCloseTo(eigenvalue, DIGITS);
+    if (person !== null) expect(centrality.indexOf(Math.max(...centrality))).toBe(person);
+  });
+});
+
 // Source: methods C.6.5, last paragraph: other editions keep the family without a marriage.
 describe("Florentine marriages with Pucci, who married nobody", () => {
   const alone = graphOf(15, florentine().links);
