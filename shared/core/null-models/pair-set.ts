@@ -65,13 +65,16 @@ export class PairSet {
 
   /** Whether the pair is in the set; the order of the ends does not matter. */
   has(u: number, v: number): boolean {
-    return u < v ? this.#find(u, v) >= 0 : this.#find(v, u) >= 0;
+    const swap = (u - v) & ((u - v) >> 31);
+    return this.#find(v + swap, u - swap) >= 0;
   }
 
   /** Adds a pair. @returns false when it was there already */
   add(u: number, v: number): boolean {
-    const low = u < v ? u : v;
-    const high = u < v ? v : u;
+    // Which end is lower is a coin toss the processor cannot foresee: no branch.
+    const swap = (u - v) & ((u - v) >> 31);
+    const low = v + swap;
+    const high = u - swap;
     const found = this.#find(low, high);
     if (found >= 0) return false;
     const slot = -1 - found;

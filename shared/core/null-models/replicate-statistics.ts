@@ -184,9 +184,7 @@ export class ReplicateStatistics {
     const local = this.#wants.has("averageClustering");
     if (!local && !this.#needs(["triangles", "transitivity"])) return;
     const degrees = this.#degrees;
-    const triangles = local
-      ? this.#triangles.countByPerson(network, degrees)
-      : this.#triangles.count(network, degrees);
+    const triangles = this.#triangles.count(network, degrees, local);
     const at = this.#triangles.byPerson;
     let paths = 0;
     let clustering = 0;
