@@ -64,7 +64,13 @@ export { SwapChain } from "./null-models/swap-chain.ts";
 export { type TracedRecord, tracedDesign } from "./null-models/traced-design.ts";
 export { type TracedDesign, tracedSampler } from "./null-models/traced-sampler.ts";
 export { createStream, type RandomStream, Xoshiro } from "./random/random-stream.ts";
+export { benjaminiHochberg, holm } from "./stats/adjusted-p.ts";
 export { lambertGiantShare } from "./stats/lambert-giant-share.ts";
+export { type MonteCarloP, monteCarloP, TIE_TOLERANCE } from "./stats/monte-carlo-p.ts";
+export { type Envelope, pointwiseEnvelope } from "./stats/pointwise-envelope.ts";
+export { quantile } from "./stats/quantile.ts";
+export { FEWEST_FOR_ENVELOPE, type RankEnvelope, rankEnvelope } from "./stats/rank-envelope.ts";
+export { type ReplicateSummary, replicateSummary } from "./stats/replicate-summary.ts";
 export { type Interval, wilsonInterval, Z_95 } from "./stats/wilson-interval.ts";
 export { dayNumber, dayString, MISSING_DAY } from "./time/day-number.ts";
 export {
