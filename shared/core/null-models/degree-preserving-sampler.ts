@@ -34,12 +34,12 @@ export function degreePreservingSampler(
   if (!Number.isSafeInteger(proposalsPerPair) || proposalsPerPair < 1) {
     throw new RangeError("proposalsPerPair must be a whole number >= 1");
   }
-  const chain = new SwapChain(ends, length, isInterviewed);
+  const chain = new SwapChain(n, ends, length, isInterviewed);
   return {
     sample(random: RandomStream): SampledNetwork {
       chain.reset();
       chain.run(proposalsPerPair * chain.length, random);
-      return { people: n, a: chain.a, b: chain.b, length: chain.length, isInterviewed };
+      return { people: n, ...chain.pairs(), isInterviewed };
     },
   };
 }
