@@ -34,10 +34,8 @@ export function gnmSampler(n: number, m: number): Sampler {
       // In rounds: as many as are missing are drawn, then repeats dropped. Two plain loops run
       // twice as fast as one that draws and looks up by turns, and the outcome is the same.
       while (length < drawn) {
-        for (let k = length; k < drawn; k++) {
-          a[k] = random.below(n);
-          b[k] = random.below(n);
-        }
+        random.fillBelow(n, a, length, drawn);
+        random.fillBelow(n, b, length, drawn);
         for (let k = length; k < drawn; k++) {
           const u = a[k]!;
           const v = b[k]!;

@@ -14,12 +14,13 @@ function pointsOn(degreeDifference: number, numberDifference: number): number {
  *
  * Every pair is pointed from the person with fewer pairs to the one with more (equal: lower to
  * higher number), as in `triangles`, and what a person points at is dropped into a row. A triangle
- * is a pair whose two rows share a person. Each row also has two signatures, bits for five binary
- * digits of each number in it: rows whose signatures share no bit share nobody, which settles nearly
- * every pair of a random network in a step or two.
+ * is a pair whose two rows share a person. Each row also has a signature of
+ * two halves, each with a bit for four binary digits of every number in it: rows whose signatures
+ * share no bit in either half share nobody, which settles nearly every pair of a random network in
+ * one step.
  *
  * Cost: O(n + m·√m), in practice near linear. Source: forward algorithm, Schank & Wagner 2005
- * (recalled); methods C.5.1. The signatures are Bloom filters with one hash each (Bloom 1970).
+ * (recalled); methods C.5.1. The signature is a Bloom filter (Bloom 1970).
  */
 export class PairTriangles {
   #starts = new Int32Array(0);
@@ -33,7 +34,7 @@ export class PairTriangles {
     const { a, b, length, people } = network;
     if (this.#starts.length < people + 2) {
       this.#starts = new Int32Array(people + 2);
-      this.#signatures = new Int32Array(2 * people);
+      this.#signatures = new Int32Array(people);
       this.#marked = new Int32Array(people);
     }
     if (this.#targets.length < length) this.#targets = new Int32Array(a.length);
@@ -41,7 +42,7 @@ export class PairTriangles {
     const targets = this.#targets;
     const signatures = this.#signatures;
     starts.fill(0, 0, people + 2);
-    signatures.fill(0, 0, 2 * people);
+    signatures.fill(0, 0, people);
     for (let k = 0; k < length; k++) {
       const u = a[k]!;
       const v = b[k]!;
@@ -57,8 +58,7 @@ export class PairTriangles {
       const from = v + swap;
       const to = u - swap;
       targets[starts[from + 1]!++] = to;
-      signatures[2 * from]! |= 1 << (to & 31);
-      signatures[2 * from + 1]! |= 1 << ((to >>> 5) & 31);
+      signatures[from]! |= (1 << (to & 15)) | (65536 << ((to >>> 4) & 15));
     }
   }
 
@@ -80,9 +80,9 @@ export class PairTriangles {
     for (let k = 0; k < length; k++) {
       const u = a[k]!;
       const v = b[k]!;
-      if ((signatures[2 * u]! & signatures[2 * v]!) === 0) continue;
-      if ((signatures[2 * u + 1]! & signatures[2 * v + 1]!) === 0) continue;
-      count += this.#shared(u, v, k, local);
+      const both = signatures[u]! & signatures[v]!;
+      // The product is 0 when either half is; one branch is easier to foresee than two.
+      if (Math.imul(both & 65535, both >>> 16) !== 0) count += this.#shared(u, v, k, local);
     }
     return count;
   }

@@ -17,6 +17,9 @@ export function fedStream(numbers: readonly number[]): RandomStream & { used: nu
       return number;
     },
     below: (n: number) => Math.floor(stream.next() * n),
+    fillBelow(n: number, out: Int32Array, from: number, to: number) {
+      for (let k = from; k < to; k++) out[k] = stream.below(n);
+    },
   };
   return stream;
 }
