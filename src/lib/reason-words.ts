@@ -12,6 +12,21 @@ const words: Record<UndefinedReason, string> = {
   recall_unknown: "without a recall estimate the figure is a lower bound",
   recall_low: "corrected for recall, the figure may reach the threshold",
   no_double_reports: "no contact pair was told by both of its people",
+  no_pairs: "nobody here has a contact pair",
+  no_overlap: "nobody stands on both lists",
+  no_contacts_followed: "no contact was followed to an outcome",
+  no_group_or_contact: "no group exposure and no contact is on record",
+  no_rows: "the table has no rows",
+  no_values: "there are no values",
+  one_value: "there is only one value",
+  values_all_equal: "all values are equal",
+  values_not_positive: "a value is zero or negative",
+  no_cases: "there are no cases",
+  no_offspring: "no case is known to have infected anyone",
+  no_overdispersion: "no over-dispersion detectable: the counts vary no more than chance alone",
+  zero_count: "a day has no case, and the log of 0 does not exist",
+  too_few_days: "there are too few days",
+  growth_unbounded: "all cases fall on the first or the last day",
 };
 
 /** Why a figure is missing or its verdict withheld, in words; undefined without a reason. */

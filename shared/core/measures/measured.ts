@@ -9,7 +9,22 @@ export type UndefinedReason =
   | "coverage_low"
   | "recall_unknown"
   | "recall_low"
-  | "no_double_reports";
+  | "no_double_reports"
+  | "no_pairs"
+  | "no_overlap"
+  | "no_contacts_followed"
+  | "no_group_or_contact"
+  | "no_rows"
+  | "no_values"
+  | "one_value"
+  | "values_all_equal"
+  | "values_not_positive"
+  | "no_cases"
+  | "no_offspring"
+  | "no_overdispersion"
+  | "zero_count"
+  | "too_few_days"
+  | "growth_unbounded";
 
 /** A number, or `null` with the reason; never NaN, and never 0 standing in for "undefined". */
 export type Measured =
