@@ -82,3 +82,11 @@ export {
   exposureFilter,
   type FilteredPairs,
 } from "./time/exposure-filter.ts";
+export { type FilmFrame, type FilmInput, type GroupFilm, groupFilm } from "./time/group-film.ts";
+export { type GroupEvent, LivingGroups } from "./time/living-groups.ts";
+export {
+  type DatedSpans,
+  type PairSpans,
+  spansAsItHappened,
+  spansAsWeKnewIt,
+} from "./time/pair-spans.ts";
