@@ -6,6 +6,7 @@ export { buildGraph, type Graph, type PairEnds } from "./graph/build-graph.ts";
 export { type Components, components } from "./graph/components.ts";
 export { type InducedSubgraph, inducedSubgraph } from "./graph/induced-subgraph.ts";
 export { UnionFind, type UnionResult } from "./graph/union-find.ts";
+export { type AnonymisedRows, anonymiseRows, type CodeLadder } from "./measures/anonymise-rows.ts";
 export {
   type Comparability,
   comparability,
@@ -37,7 +38,9 @@ export {
   expectedObservation,
   type ObservationDesign,
 } from "./measures/expected-observation.ts";
+export { feasibleInterval } from "./measures/feasible-interval.ts";
 export { isolates } from "./measures/isolates.ts";
+export { type Anonymity, type CodeColumn, kAnonymity } from "./measures/k-anonymity.ts";
 export { largestShare } from "./measures/largest-share.ts";
 export { meanDegree } from "./measures/mean-degree.ts";
 export { meanDegreeInterviewed } from "./measures/mean-degree-interviewed.ts";
@@ -48,12 +51,21 @@ export {
   networkReport,
   type ReportOptions,
 } from "./measures/network-report.ts";
+export { type PublishedTable, tableWithTotals } from "./measures/published-table.ts";
 export { recall } from "./measures/recall.ts";
 export {
   type InterviewRecord,
   type SeenThroughInterviews,
   seenThroughInterviews,
 } from "./measures/seen-through-interviews.ts";
+export {
+  type CellState,
+  publishedRate,
+  type SuppressedCell,
+  type SuppressedTable,
+  type SuppressionOptions,
+  suppressCells,
+} from "./measures/suppress-cells.ts";
 export {
   FEWEST_FOR_VERDICT,
   FULL_COVERAGE,
