@@ -23,9 +23,36 @@ export {
   type ObservationState,
   type Standing,
 } from "./measures/comparability-table.ts";
+export {
+  connectedProbability,
+  connectivityLimit,
+  connectivityOffset,
+  lnConnectedProbability,
+  MOST_PEOPLE_EXACT,
+} from "./measures/connectivity.ts";
 export { countedPairs } from "./measures/counted-pairs.ts";
 export { degreeCounts } from "./measures/degree-counts.ts";
+export {
+  type DegreeBin,
+  type DegreeFit,
+  degreeFit,
+  FEWEST_EXPECTED,
+} from "./measures/degree-fit.ts";
+export {
+  type DegreeLaw,
+  observedDegreeLaw,
+  poissonDegreeLaw,
+} from "./measures/degree-generating.ts";
+export {
+  binomialDegrees,
+  type PoissonError,
+  poissonDegrees,
+  poissonError,
+} from "./measures/degree-law.ts";
+export { degreeVariance } from "./measures/degree-variance.ts";
 export { density, possiblePairs } from "./measures/density.ts";
+export { type Dispersion, dispersion } from "./measures/dispersion.ts";
+export { type DistanceEstimates, distanceEstimates } from "./measures/distance-estimates.ts";
 export {
   type DoubleReports,
   doubleReports,
@@ -33,26 +60,51 @@ export {
   type SidedReports,
   sidedReports,
 } from "./measures/double-reports.ts";
+export { excessDegreeRatio, meanExcessDegree } from "./measures/excess-degree.ts";
+export { expectedIsolatesGnm, expectedIsolatesGnp } from "./measures/expected-isolates.ts";
 export {
   type ExpectedObservation,
   expectedObservation,
   type ObservationDesign,
 } from "./measures/expected-observation.ts";
+export {
+  expectedTrianglesGnm,
+  expectedTrianglesGnp,
+  expectedTwoPathsGnm,
+  expectedTwoPathsGnp,
+} from "./measures/expected-triangles.ts";
 export { feasibleInterval } from "./measures/feasible-interval.ts";
 export { isolates } from "./measures/isolates.ts";
 export { type Anonymity, type CodeColumn, kAnonymity } from "./measures/k-anonymity.ts";
 export { largestShare } from "./measures/largest-share.ts";
 export { meanDegree } from "./measures/mean-degree.ts";
+export { type MeanDegreeIntervals, meanDegreeIntervals } from "./measures/mean-degree-intervals.ts";
 export { meanDegreeInterviewed } from "./measures/mean-degree-interviewed.ts";
 export type { Measured, UndefinedReason } from "./measures/measured.ts";
-export { neighbourDegree } from "./measures/neighbour-degree.ts";
+export {
+  type DirectedMeasure,
+  type Direction,
+  MEASURE_DIRECTIONS,
+  MONOTONE_PROPERTIES,
+  type MonotoneProperty,
+  type Transition,
+} from "./measures/monotone-properties.ts";
 export {
   type NetworkReport,
   networkReport,
   type ReportOptions,
 } from "./measures/network-report.ts";
+export { type Percolation, percolation, transmissibility } from "./measures/percolation.ts";
 export { type PublishedTable, tableWithTotals } from "./measures/published-table.ts";
+export {
+  type CriticalWindow,
+  criticalWindow,
+  largestSmallGroup,
+  type RandomMixingGroups,
+  randomMixingGroups,
+} from "./measures/random-mixing-groups.ts";
 export { recall } from "./measures/recall.ts";
+export { removalThresholdDegrees, removalThresholdMixing } from "./measures/removal-thresholds.ts";
 export {
   type InterviewRecord,
   type SeenThroughInterviews,
@@ -83,9 +135,42 @@ export { unresolvedShare } from "./measures/unresolved-share.ts";
 export { type NamingCounts, type UnseenPeople, unseenPeople } from "./measures/unseen-people.ts";
 export { type Region, regionsMet, type Verdict, verdictOf } from "./measures/verdict.ts";
 export { createStream, type RandomStream, Xoshiro } from "./random/random-stream.ts";
+export { binomialCdf, binomialPmf, binomialQuantile, binomialUpper } from "./stats/binomial-law.ts";
+export { chiSquaredCdf, chiSquaredQuantile, chiSquaredUpper } from "./stats/chi-squared-law.ts";
+export { clopperPearsonInterval } from "./stats/clopper-pearson-interval.ts";
+export { digamma, trigamma } from "./stats/digamma.ts";
+export {
+  gammaCdf,
+  gammaPdf,
+  gammaQuantile,
+  gammaUpper,
+  gammaUpperQuantile,
+} from "./stats/gamma-law.ts";
+export {
+  hypergeometricCdf,
+  hypergeometricPmf,
+  hypergeometricQuantile,
+  hypergeometricUpper,
+  hypergeometricVariance,
+  type Urn,
+} from "./stats/hypergeometric-law.ts";
+export { incompleteBeta } from "./stats/incomplete-beta.ts";
+export { incompleteGamma, type Tails } from "./stats/incomplete-gamma.ts";
+export { inverseBetaLower, inverseBetaUpper } from "./stats/inverse-beta.ts";
+export { inverseGammaLower, inverseGammaUpper } from "./stats/inverse-gamma.ts";
 export { lambertGiantShare } from "./stats/lambert-giant-share.ts";
+export { lnGamma } from "./stats/ln-gamma.ts";
+export {
+  negativeBinomialCdf,
+  negativeBinomialPmf,
+  negativeBinomialQuantile,
+  negativeBinomialUpper,
+} from "./stats/negative-binomial-law.ts";
+export { normalCdf, normalQuantile, normalUpper } from "./stats/normal-law.ts";
+export { poissonCdf, poissonPmf, poissonQuantile, poissonUpper } from "./stats/poisson-law.ts";
 export { sampleQuantile } from "./stats/sample-quantile.ts";
 export { type SampleSummary, sampleSummary } from "./stats/sample-summary.ts";
+export { studentCdf, studentQuantile } from "./stats/student-law.ts";
 export { type Interval, wilsonInterval, Z_95 } from "./stats/wilson-interval.ts";
 export { dayNumber, dayString, MISSING_DAY } from "./time/day-number.ts";
 export {

@@ -12,7 +12,6 @@ const words: Record<UndefinedReason, string> = {
   recall_unknown: "without a recall estimate the figure is a lower bound",
   recall_low: "corrected for recall, the figure may reach the threshold",
   no_double_reports: "no contact pair was told by both of its people",
-  no_pairs: "nobody here has a contact pair",
   no_overlap: "nobody stands on both lists",
   no_contacts_followed: "no contact was followed to an outcome",
   no_group_or_contact: "no group exposure and no contact is on record",
@@ -27,6 +26,13 @@ const words: Record<UndefinedReason, string> = {
   zero_count: "a day has no case, and the log of 0 does not exist",
   too_few_days: "there are too few days",
   growth_unbounded: "all cases fall on the first or the last day",
+  no_pairs: "no contact pair is on record here",
+  all_pairs: "everyone here is in a contact pair with everyone else",
+  at_threshold: "it grows without bound at the threshold",
+  not_above_threshold: "it has a meaning above the threshold only",
+  not_below_threshold: "it has a meaning below the threshold only",
+  no_further_pairs: "nobody who is reached has a further contact pair",
+  too_many_people: "there are too many people to work it out exactly",
 };
 
 /** Why a figure is missing or its verdict withheld, in words; undefined without a reason. */

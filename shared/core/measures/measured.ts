@@ -24,7 +24,13 @@ export type UndefinedReason =
   | "no_overdispersion"
   | "zero_count"
   | "too_few_days"
-  | "growth_unbounded";
+  | "growth_unbounded"
+  | "all_pairs"
+  | "at_threshold"
+  | "not_above_threshold"
+  | "not_below_threshold"
+  | "no_further_pairs"
+  | "too_many_people";
 
 /** A number, or `null` with the reason; never NaN, and never 0 standing in for "undefined". */
 export type Measured =
