@@ -105,6 +105,7 @@ export {
 } from "./measures/random-mixing-groups.ts";
 export { recall } from "./measures/recall.ts";
 export { removalThresholdDegrees, removalThresholdMixing } from "./measures/removal-thresholds.ts";
+export { type SecondaryAttackRate, secondaryAttackRate } from "./measures/secondary-attack-rate.ts";
 export {
   type InterviewRecord,
   type SeenThroughInterviews,
@@ -139,6 +140,7 @@ export { binomialCdf, binomialPmf, binomialQuantile, binomialUpper } from "./sta
 export { chiSquaredCdf, chiSquaredQuantile, chiSquaredUpper } from "./stats/chi-squared-law.ts";
 export { clopperPearsonInterval } from "./stats/clopper-pearson-interval.ts";
 export { digamma, trigamma } from "./stats/digamma.ts";
+export { type GammaFit, gammaByLikelihood, gammaByMoments } from "./stats/gamma-fit.ts";
 export {
   gammaCdf,
   gammaPdf,
@@ -172,18 +174,48 @@ export { sampleQuantile } from "./stats/sample-quantile.ts";
 export { type SampleSummary, sampleSummary } from "./stats/sample-summary.ts";
 export { studentCdf, studentQuantile } from "./stats/student-law.ts";
 export { type Interval, wilsonInterval, Z_95 } from "./stats/wilson-interval.ts";
+export { type CaseR, COMPLETE_SHARE, caseR, caseRByCase } from "./time/case-r.ts";
+export { infectiousness } from "./time/case-series.ts";
 export { dayNumber, dayString, MISSING_DAY } from "./time/day-number.ts";
+export { type DoublingTime, doublingTime } from "./time/doubling-time.ts";
+export {
+  type CaseDays,
+  type CurveBin,
+  type CurveOptions,
+  curveBinDays,
+  type EpidemicCurve,
+  epidemicCurve,
+} from "./time/epidemic-curve.ts";
 export {
   type ExposureRange,
   type ExposureTable,
   exposureFilter,
   type FilteredPairs,
 } from "./time/exposure-filter.ts";
+export { extinctionProbability, noOffspringProbability } from "./time/extinction.ts";
 export { type FilmFrame, type FilmInput, type GroupFilm, groupFilm } from "./time/group-film.ts";
+export {
+  type LogLinearGrowth,
+  logLinearGrowth,
+  type PoissonGrowth,
+  poissonGrowth,
+} from "./time/growth.ts";
+export {
+  type HiddenWindow,
+  type InstantaneousInput,
+  instantaneousR,
+  WIDEST_VARIATION,
+  type WindowedR,
+} from "./time/instantaneous-r.ts";
 export { type GroupEvent, LivingGroups } from "./time/living-groups.ts";
+export { type OffspringFit, offspringFit } from "./time/offspring-fit.ts";
 export {
   type DatedSpans,
   type PairSpans,
   spansAsItHappened,
   spansAsWeKnewIt,
 } from "./time/pair-spans.ts";
+export { reproductionFromGrowth } from "./time/reproduction-from-growth.ts";
+export { type SerialInterval, serialInterval } from "./time/serial-interval.ts";
+export { meanOfWeights, serialIntervalWeights } from "./time/serial-interval-weights.ts";
+export { modelTopShare, observedTopShare } from "./time/top-share.ts";
