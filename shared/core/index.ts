@@ -11,7 +11,7 @@ export {
   communitySearch,
   FEWEST_STARTS,
 } from "./graph/communities.ts";
-export { type Components, type Components, components, components, connectedParts } from "./graph/components.ts";
+export { type Components, components, connectedParts } from "./graph/components.ts";
 export { coreNumbers } from "./graph/core-numbers.ts";
 export { foldLeaves } from "./graph/fold-leaves.ts";
 export { type InducedSubgraph, inducedSubgraph } from "./graph/induced-subgraph.ts";
@@ -120,6 +120,8 @@ export { meanDegree } from "./measures/mean-degree.ts";
 export { type MeanDegreeIntervals, meanDegreeIntervals } from "./measures/mean-degree-intervals.ts";
 export { meanDegreeInterviewed } from "./measures/mean-degree-interviewed.ts";
 export type { Measured, UndefinedReason } from "./measures/measured.ts";
+export { MISSING_GROUP, type MixingCounts, mixingCounts } from "./measures/mixing-counts.ts";
+export { modularity } from "./measures/modularity.ts";
 export {
   type DirectedMeasure,
   type Direction,
@@ -128,13 +130,6 @@ export {
   type MonotoneProperty,
   type Transition,
 } from "./measures/monotone-properties.ts";
-
-  MISSING_GROUP,
-  type MixingCounts,
-  mixingCounts,
-} from "./measures/mixing-counts.ts";
-
-export { modularity } from "./measures/modularity.ts";
 export {
   type NetworkReport,
   networkReport,
@@ -192,7 +187,7 @@ export {
   threshold,
 } from "./measures/threshold.ts";
 export { transitivity } from "./measures/transitivity.ts";
-export { triangles, triangles, trianglesByPerson } from "./measures/triangles.ts";
+export { triangles, trianglesByPerson } from "./measures/triangles.ts";
 export { type TwoLists, twoLists } from "./measures/two-lists.ts";
 export { twoPaths } from "./measures/two-paths.ts";
 export { unresolvedShare } from "./measures/unresolved-share.ts";
@@ -229,7 +224,7 @@ export { SwapChain } from "./null-models/swap-chain.ts";
 export { type TracedRecord, tracedDesign } from "./null-models/traced-design.ts";
 export { type TracedDesign, tracedSampler } from "./null-models/traced-sampler.ts";
 export { drawPeople } from "./random/draw-people.ts";
-export { createStream, createStream, type RandomStream, type RandomStream, Xoshiro, Xoshiro } from "./random/random-stream.ts";
+export { createStream, type RandomStream, Xoshiro } from "./random/random-stream.ts";
 export { benjaminiHochberg, holm } from "./stats/adjusted-p.ts";
 export { binomialCdf, binomialPmf, binomialQuantile, binomialUpper } from "./stats/binomial-law.ts";
 export { chiSquaredCdf, chiSquaredQuantile, chiSquaredUpper } from "./stats/chi-squared-law.ts";
@@ -255,7 +250,7 @@ export { incompleteBeta } from "./stats/incomplete-beta.ts";
 export { incompleteGamma, type Tails } from "./stats/incomplete-gamma.ts";
 export { inverseBetaLower, inverseBetaUpper } from "./stats/inverse-beta.ts";
 export { inverseGammaLower, inverseGammaUpper } from "./stats/inverse-gamma.ts";
-export { lambertGiantShare, lambertGiantShare } from "./stats/lambert-giant-share.ts";
+export { lambertGiantShare } from "./stats/lambert-giant-share.ts";
 export { lnGamma } from "./stats/ln-gamma.ts";
 export { type MonteCarloP, monteCarloP, TIE_TOLERANCE } from "./stats/monte-carlo-p.ts";
 export {

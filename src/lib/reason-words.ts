@@ -30,7 +30,6 @@ const words: Record<UndefinedReason, string> = {
   zero_count: "a day has no case, and the log of 0 does not exist",
   too_few_days: "there are too few days",
   growth_unbounded: "all cases fall on the first or the last day",
-  no_pairs: "no contact pair is on record here",
   all_pairs: "everyone here is in a contact pair with everyone else",
   at_threshold: "it grows without bound at the threshold",
   not_above_threshold: "it has a meaning above the threshold only",

@@ -34,7 +34,7 @@ export type UndefinedReason =
   | "not_above_threshold"
   | "not_below_threshold"
   | "no_further_pairs"
-  | "too_many_people";
+  | "too_many_people"
   | "no_reachable_pairs"
   | "fewer_than_three_people"
   | "not_converged"
