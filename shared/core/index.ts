@@ -46,11 +46,14 @@ export {
 } from "./measures/comparability.ts";
 export {
   COMPARABILITY,
+  COMPARISON_KEYS,
   type ComparisonKey,
   type ComparisonReason,
   type ComparisonRow,
   type ComparisonRule,
+  OBSERVATION_STATES,
   type ObservationState,
+  STANDINGS,
   type Standing,
 } from "./measures/comparability-table.ts";
 export {

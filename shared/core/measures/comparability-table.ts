@@ -2,37 +2,42 @@
  * What may be done with a figure or comparison: shown; shown with a warning or label; shown grey
  * with its reason (a number without a verdict, a baseline that does not fit); refused.
  */
-export type Standing = "show" | "warn" | "grey" | "refuse";
+export const STANDINGS = ["show", "warn", "grey", "refuse"] as const;
+export type Standing = (typeof STANDINGS)[number];
 
 /** How the network on record came about, as far as comparisons care. */
-export type ObservationState =
+export const OBSERVATION_STATES = [
   /** Declared complete: every pair is on record. */
-  | "complete"
+  "complete",
   /** At least 90 % of the people interviewed. */
-  | "covered"
+  "covered",
   /** Interviewed people chosen at random, and the network is the one among them. */
-  | "sampled"
+  "sampled",
   /** Chosen at random, but the network also holds people who were only named. */
-  | "sampled_with_named"
+  "sampled_with_named",
   /** Anything else: people found by tracing. */
-  | "traced"
+  "traced",
   /** Nobody interviewed, and not declared complete. */
-  | "unseen";
+  "unseen",
+] as const;
+export type ObservationState = (typeof OBSERVATION_STATES)[number];
 
 /** What is compared, and with what. */
-export type ComparisonKey =
-  | "threshold"
-  | "mean_degree_interviewed"
-  | "mean_degree_recorded"
-  | "expected_giant_share"
-  | "degree_law"
-  | "largest_group"
-  | "transitivity"
-  | "degree_assortativity"
-  | "mixing_preserving"
-  | "degree_preserving"
-  | "degree_preserving_interviewed_end"
-  | "traced_mixing";
+export const COMPARISON_KEYS = [
+  "threshold",
+  "mean_degree_interviewed",
+  "mean_degree_recorded",
+  "expected_giant_share",
+  "degree_law",
+  "largest_group",
+  "transitivity",
+  "degree_assortativity",
+  "mixing_preserving",
+  "degree_preserving",
+  "degree_preserving_interviewed_end",
+  "traced_mixing",
+] as const;
+export type ComparisonKey = (typeof COMPARISON_KEYS)[number];
 
 /** Why; the words for the screen live there. */
 export type ComparisonReason =
