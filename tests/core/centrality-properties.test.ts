@@ -213,14 +213,14 @@ describe("long and many-pathed networks", () => {
     [5, "few paths"],
     [33, "more than 2^32 paths"],
     [60, "more than 2^53 paths"],
-    [1300, "more paths than a double can hold"],
+    [1100, "more paths than a double can hold"],
   ])("%i diamonds in a row: %s", (k) => {
     expectClose(betweenness(graphOf(3 * k + 1, diamonds(k))), expected(k));
   });
 
   // Source: a path of n people has mean distance (n + 1)/3, exactly.
-  it("a chain of 3,000 people", () => {
-    const n = 3000;
+  it("a chain of 1,000 people", () => {
+    const n = 1000;
     const chain = graphOf(
       n,
       Array.from({ length: n - 1 }, (_, u) => [u, u + 1] as const),
