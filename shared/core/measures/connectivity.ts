@@ -29,7 +29,7 @@ export function connectivityLimit(x: number): number {
 /** One step of the walk: from `from` to `to`, u people not yet found, each found with chance h. */
 function spread(u: number, h: number, weight: number, found: number, to: Float64Array): void {
   const mode = Math.min(u, Math.floor((u + 1) * h));
-  const peak = weight * binomialWeight(mode, u, h, 1 - h);
+  const peak = weight * binomialWeight(mode, u - mode, h, 1 - h);
   to[found + mode]! += peak;
   const odds = h / (1 - h);
   if (odds === Number.POSITIVE_INFINITY) return;

@@ -40,7 +40,7 @@ function pooled(counts: ArrayLike<number>, n: number, p: number): DegreeBin[] {
   let expected = 0;
   let left = n;
   for (let k = 0; k <= most; k++) {
-    const here = n * binomialWeight(k, most, p, 1 - p);
+    const here = n * binomialWeight(k, most - k, p, 1 - p);
     expected += here;
     if (expected < FEWEST_EXPECTED) continue;
     bins.push({ from, to: k, expected, observed: observedIn(from, k) });

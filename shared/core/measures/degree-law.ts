@@ -25,7 +25,8 @@ export function binomialDegrees(n: number, p: number, largest: number): Float64A
   checkPeople(n, 1);
   checkShare(p);
   const law = new Float64Array(largest + 1);
-  for (let k = 0; k <= Math.min(largest, n - 1); k++) law[k] = binomialWeight(k, n - 1, p, 1 - p);
+  for (let k = 0; k <= Math.min(largest, n - 1); k++)
+    law[k] = binomialWeight(k, n - 1 - k, p, 1 - p);
   return law;
 }
 
@@ -62,7 +63,7 @@ export function poissonError(n: number, p: number): PoissonError {
   let beyond = trials + 1;
   for (let k = middle; k <= trials; k++) {
     const poisson = poissonWeight(k, c);
-    const binomial = binomialWeight(k, trials, p, q);
+    const binomial = binomialWeight(k, trials - k, p, q);
     sum += Math.abs(binomial - poisson);
     if (k > c && poisson < 1e-20 && binomial < 1e-20) {
       beyond = k + 1;
@@ -73,7 +74,7 @@ export function poissonError(n: number, p: number): PoissonError {
   if (beyond > trials) sum += poissonUpper(trials, c);
   for (let k = middle - 1; k >= 0; k--) {
     const poisson = poissonWeight(k, c);
-    const binomial = binomialWeight(k, trials, p, q);
+    const binomial = binomialWeight(k, trials - k, p, q);
     sum += Math.abs(binomial - poisson);
     if (poisson < 1e-20 && binomial < 1e-20) break;
   }

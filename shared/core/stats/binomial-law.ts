@@ -12,7 +12,7 @@ function check(trials: number, p: number): void {
 /** Probability of k successes; 0 for a k that is no whole number from 0 to the trials. */
 export function binomialPmf(k: number, trials: number, p: number): number {
   check(trials, p);
-  return Number.isInteger(k) && k >= 0 && k <= trials ? binomialWeight(k, trials, p, 1 - p) : 0;
+  return Number.isInteger(k) && k >= 0 && k <= trials ? binomialWeight(k, trials - k, p, 1 - p) : 0;
 }
 
 /** Probability of k or fewer successes. Cost: as `incompleteBeta`. */

@@ -17,9 +17,11 @@ function weight(k: number, { total, marked, drawn }: Urn): number {
   if (total === 0) return 1;
   const p = drawn / total;
   const q = (total - drawn) / total;
-  const others = binomialWeight(drawn - k, total - marked, p, q);
+  const others = binomialWeight(drawn - k, total - marked - drawn + k, p, q);
   if (others === 0) return 0;
-  return (binomialWeight(k, marked, p, q) * others) / binomialWeight(drawn, total, p, q);
+  return (
+    (binomialWeight(k, marked - k, p, q) * others) / binomialWeight(drawn, total - drawn, p, q)
+  );
 }
 
 const fewest = ({ total, marked, drawn }: Urn) => Math.max(0, marked + drawn - total);

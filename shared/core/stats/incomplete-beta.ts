@@ -4,46 +4,47 @@ import { binomialWeight } from "./law-weights.ts";
 /** Steps needed grow like √max(a, b) at worst. */
 const MOST_STEPS = 1_000_000;
 
-/** The continued fraction of I_x(a, b), quick for x < (a + 1)/(a + b + 2). */
-function fractionOf(a: number, b: number, x: number): number {
+/**
+ * The continued fraction of a·B(a, b)·I_x(a, b)/(x^a y^b), the even part of DLMF 8.17.22, quick for
+ * x < (a + 1)/(a + b + 2). It meets x and y only in a·y − b·x, so that one success in 1e11 trials
+ * keeps its digits; method of Lentz as changed by Thompson and Barnett.
+ */
+function fractionOf(a: number, b: number, x: number, y: number): number {
   const tiny = 1e-300;
-  let c = 1;
-  let d = 1 - ((a + b) * x) / (a + 1);
-  if (Math.abs(d) < tiny) d = tiny;
-  d = 1 / d;
-  let fraction = d;
+  const first = a * y - b * x + 1;
+  let value = (a * first) / (a + 1);
+  if (value === 0) value = tiny;
+  let c = value;
+  let d = 0;
   for (let k = 1; k < MOST_STEPS; k++) {
-    const even = (k * (b - k) * x) / ((a + 2 * k - 1) * (a + 2 * k));
-    d = 1 + even * d;
+    const odd = a + 2 * k - 1;
+    const turn = (k * (b - k) * x) / odd;
+    const numerator = ((a + k - 1) / odd) * (a + b + k - 1) * x * turn;
+    const denominator = k + turn + ((a + k) / (odd + 2)) * (first + k * (1 + y));
+    d = denominator + numerator * d;
     if (Math.abs(d) < tiny) d = tiny;
-    c = 1 + even / c;
-    if (Math.abs(c) < tiny) c = tiny;
-    d = 1 / d;
-    fraction *= d * c;
-    const odd = (-(a + k) * (a + b + k) * x) / ((a + 2 * k) * (a + 2 * k + 1));
-    d = 1 + odd * d;
-    if (Math.abs(d) < tiny) d = tiny;
-    c = 1 + odd / c;
+    c = denominator + numerator / c;
     if (Math.abs(c) < tiny) c = tiny;
     d = 1 / d;
     const factor = d * c;
-    fraction *= factor;
+    value *= factor;
     if (Math.abs(factor - 1) <= 2.3e-16) break;
   }
-  return fraction;
+  return a / value;
 }
 
 /** x^a y^b / (a·B(a, b)) times the fraction. */
 function tail(a: number, b: number, x: number, y: number): number {
-  const front = (binomialWeight(a, a + b, x, y) * b) / (a + b);
-  return Math.min(1, front * fractionOf(a, b, x));
+  const front = (binomialWeight(a, b, x, y) * b) / (a + b);
+  return Math.min(1, front * fractionOf(a, b, x, y));
 }
 
 /**
  * Regularised incomplete beta function: lower I_x(a, b), the share of a beta law below x, and upper
- * 1 − I_x(a, b). The smaller of the two is worked out first-hand.
+ * 1 − I_x(a, b). On each side of the middle the tail on that side is worked out first-hand.
  *
- * Relative error below 1e-11 for a and b up to 1e6 and beyond.
+ * Relative error below 1e-11 for a and b up to 1e6 and beyond; with a shape below 0.01 the smaller
+ * tail may lose a digit more.
  *
  * @param x 0 … 1
  * @param y 1 − x, given apart where x is close to 1 and known better than its double
@@ -51,7 +52,8 @@ function tail(a: number, b: number, x: number, y: number): number {
  * @param b > 0
  * @throws RangeError outside these ranges
  *
- * Cost: O(√max(a, b)) at worst. Source: DLMF 8.17.22 (continued fraction), 8.17.4 (symmetry).
+ * Cost: O(√max(a, b)) at worst. Source: DLMF 8.17.22 (continued fraction; the
+ * contracted form as in Didonato & Morris 1992, ACM TOMS 18:360), 8.17.4 (symmetry).
  */
 export function incompleteBeta(x: number, a: number, b: number, y = 1 - x): Tails {
   if (!(a > 0 && b > 0 && Number.isFinite(a + b))) throw new RangeError("a and b must be > 0");

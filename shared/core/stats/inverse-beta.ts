@@ -23,7 +23,7 @@ function solve(wanted: number, rising: boolean, a: number, b: number): number {
     const tails = incompleteBeta(x, a, b, y);
     return {
       tail: rising ? tails.lower : tails.upper,
-      density: (binomialWeight(a, a + b, x, y) * a * b) / (a + b),
+      density: (binomialWeight(a, b, x, y) * a * b) / (a + b),
     };
   };
   const longest = 2 + 8 / Math.sqrt(Math.min(a, b));

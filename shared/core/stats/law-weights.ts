@@ -17,15 +17,16 @@ export function poissonWeight(x: number, m: number): number {
 }
 
 /**
- * Γ(n + 1)/(Γ(x + 1)Γ(n − x + 1)) · p^x q^(n − x): the binomial probability, for any real
- * 0 <= x <= n. Both p and q = 1 − p are given, because 1 − p forgets a small p or q.
+ * Γ(n + 1)/(Γ(x + 1)Γ(r + 1)) · p^x q^r with n = x + r: the binomial probability of x successes and
+ * r failures, for any real x and r >= 0. Failures and q = 1 − p are given apart, because n − x and
+ * 1 − p forget small ones.
  *
  * Relative error near 1e-14 for n from 0 to beyond 1e11. Cost: O(1). Source: as `poissonWeight`.
  */
-export function binomialWeight(x: number, n: number, p: number, q: number): number {
+export function binomialWeight(x: number, rest: number, p: number, q: number): number {
   if (p === 0) return x === 0 ? 1 : 0;
-  if (q === 0) return x === n ? 1 : 0;
-  const rest = n - x;
+  if (q === 0) return rest === 0 ? 1 : 0;
+  const n = x + rest;
   if (x === 0) return Math.exp(n * (p < 0.1 ? Math.log1p(-p) : Math.log(q)));
   if (rest === 0) return Math.exp(n * (q < 0.1 ? Math.log1p(-q) : Math.log(p)));
   const exponent =

@@ -22,7 +22,7 @@ export function negativeBinomialPmf(z: number, mean: number, dispersion: number)
   if (mean === 0) return z === 0 ? 1 : 0;
   if (z === 0) return Math.exp(-dispersion * Math.log1p(mean / dispersion));
   const all = mean + dispersion;
-  const weight = binomialWeight(dispersion, z + dispersion, dispersion / all, mean / all);
+  const weight = binomialWeight(dispersion, z, dispersion / all, mean / all);
   return (weight * dispersion) / (z + dispersion);
 }
 

@@ -14,10 +14,14 @@ function checkDegrees(df: number): void {
 export function studentCdf(t: number, df: number): number {
   checkDegrees(df);
   if (Number.isNaN(t)) throw new RangeError("t must be a number");
-  const square = t * t;
-  if (square === Number.POSITIVE_INFINITY) return t < 0 ? 0 : 1;
-  const whole = df + square;
-  const half = incompleteBeta(df / whole, df / 2, 0.5, square / whole).lower / 2;
+  // x = 1/(1 + r²) and y = r²/(1 + r²) with r² = t²/df, without r² growing past the doubles.
+  const ratio = Math.abs(t) / Math.sqrt(df);
+  const far = ratio > 1;
+  const square = (far ? 1 / ratio : ratio) ** 2;
+  const major = 1 / (1 + square);
+  const minor = square * major;
+  const [x, y] = far ? [minor, major] : [major, minor];
+  const half = incompleteBeta(x, df / 2, 0.5, y).lower / 2;
   return t < 0 ? half : 1 - half;
 }
 
