@@ -13,9 +13,27 @@ export {
 } from "./graph/communities.ts";
 export { type Components, components, connectedParts } from "./graph/components.ts";
 export { coreNumbers } from "./graph/core-numbers.ts";
+export { foldLeaves } from "./graph/fold-leaves.ts";
 export { type InducedSubgraph, inducedSubgraph } from "./graph/induced-subgraph.ts";
+export { type Relabelled, searchOrder } from "./graph/search-order.ts";
+export { SOURCE_CHUNKS } from "./graph/source-chunks.ts";
 export { UnionFind, type UnionResult } from "./graph/union-find.ts";
 export { attributeAssortativity } from "./measures/attribute-assortativity.ts";
+export {
+  addChunks,
+  type BetweennessPlan,
+  betweenness,
+  betweennessChunk,
+  betweennessPlan,
+  normalisedBetweenness,
+} from "./measures/betweenness.ts";
+export {
+  type Closeness,
+  type ClosenessSums,
+  closeness,
+  closenessChunk,
+  closenessOf,
+} from "./measures/closeness.ts";
 export { type Clustering, clustering } from "./measures/clustering.ts";
 export { colemanHomophily, type Homophily } from "./measures/coleman-homophily.ts";
 export { countedPairs } from "./measures/counted-pairs.ts";
@@ -23,6 +41,13 @@ export { degreeAssortativity } from "./measures/degree-assortativity.ts";
 export { degreeCounts } from "./measures/degree-counts.ts";
 export { density, possiblePairs } from "./measures/density.ts";
 export { type EiIndex, eiIndex } from "./measures/ei-index.ts";
+export {
+  EIGENVECTOR_STEPS,
+  EIGENVECTOR_TOLERANCE,
+  type EigenvectorCentrality,
+  eigenvectorCentrality,
+} from "./measures/eigenvector-centrality.ts";
+export type { Estimate, EstimatePerPerson } from "./measures/estimate.ts";
 export { isolates } from "./measures/isolates.ts";
 export { largestShare } from "./measures/largest-share.ts";
 export { meanDegree } from "./measures/mean-degree.ts";
@@ -39,7 +64,24 @@ export {
   networkReport,
   type ReportOptions,
 } from "./measures/network-report.ts";
+export {
+  addDistances,
+  EXACT_UP_TO_PEOPLE,
+  type PathFigures,
+  pathFigures,
+  pathFiguresOf,
+} from "./measures/path-figures.ts";
 export { recall } from "./measures/recall.ts";
+export {
+  addSampledChunks,
+  type DrawnSources,
+  drawSources,
+  type SampledChunk,
+  sampledBetweenness,
+  sampledBetweennessChunk,
+} from "./measures/sampled-betweenness.ts";
+export { sampledCloseness } from "./measures/sampled-closeness.ts";
+export { type SampledPathFigures, sampledPathFigures } from "./measures/sampled-path-figures.ts";
 export {
   FEWEST_FOR_VERDICT,
   FULL_COVERAGE,
@@ -59,6 +101,7 @@ export {
 } from "./null-models/degree-preserving-sampler.ts";
 export { gnmSampler } from "./null-models/gnm-sampler.ts";
 export { gnpSampler } from "./null-models/gnp-sampler.ts";
+export { HEAVY_STATISTICS, type HeavyStatistic } from "./null-models/heavy-statistics.ts";
 export { householdSampler } from "./null-models/household-sampler.ts";
 export { mixingSampler } from "./null-models/mixing-sampler.ts";
 export { type NullModel, samplerOf } from "./null-models/null-model.ts";
@@ -83,6 +126,7 @@ export type { SampledNetwork, Sampler } from "./null-models/sampled-network.ts";
 export { SwapChain } from "./null-models/swap-chain.ts";
 export { type TracedRecord, tracedDesign } from "./null-models/traced-design.ts";
 export { type TracedDesign, tracedSampler } from "./null-models/traced-sampler.ts";
+export { drawPeople } from "./random/draw-people.ts";
 export { createStream, type RandomStream, Xoshiro } from "./random/random-stream.ts";
 export { benjaminiHochberg, holm } from "./stats/adjusted-p.ts";
 export { lambertGiantShare } from "./stats/lambert-giant-share.ts";

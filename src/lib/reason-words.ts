@@ -16,6 +16,10 @@ const words: Record<UndefinedReason, string> = {
   recall_unknown: "without a recall estimate the figure is a lower bound",
   recall_low: "corrected for recall, the figure may reach the threshold",
   no_double_reports: "no contact pair was told by both of its people",
+  no_reachable_pairs: "nobody here is connected to anybody",
+  fewer_than_three_people: "there are fewer than three people in this population",
+  not_converged: "the calculation did not settle within its limit of steps",
+  sample_too_small: "nobody in the sample drawn is connected to anybody",
 };
 
 /** Why a figure is missing or its verdict withheld, in words; undefined without a reason. */
