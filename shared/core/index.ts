@@ -202,6 +202,7 @@ export {
 } from "./null-models/degree-preserving-sampler.ts";
 export { gnmSampler } from "./null-models/gnm-sampler.ts";
 export { gnpSampler } from "./null-models/gnp-sampler.ts";
+export { HEAVY_STATISTICS, type HeavyStatistic } from "./null-models/heavy-statistics.ts";
 export { householdSampler } from "./null-models/household-sampler.ts";
 export { mixingSampler } from "./null-models/mixing-sampler.ts";
 export { type NullModel, samplerOf } from "./null-models/null-model.ts";
