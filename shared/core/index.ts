@@ -224,6 +224,11 @@ export {
   replicateRunner,
 } from "./null-models/run-replicates.ts";
 export type { SampledNetwork, Sampler } from "./null-models/sampled-network.ts";
+export {
+  type CurveSummary,
+  type ReplicatesSummary,
+  summariseReplicates,
+} from "./null-models/summarise-replicates.ts";
 export { SwapChain } from "./null-models/swap-chain.ts";
 export { type TracedRecord, tracedDesign } from "./null-models/traced-design.ts";
 export { type TracedDesign, tracedSampler } from "./null-models/traced-sampler.ts";
