@@ -82,7 +82,8 @@ function spanWords(what: string, from?: string, to?: string): string {
 /** A filter in words; empty without one. */
 export function narrowedWords(filter: ExportFilter): string {
   const { classification, interviewed, interviewState, assigned, followUp } = filter;
-  const state = interviewState === "none" ? "not begun" : interviewWords[interviewState ?? ""];
+  const state =
+    interviewState === "none" ? "not begun" : interviewState && interviewWords[interviewState];
   return [
     classification ? filterWords[classification] : "",
     interviewed === "yes" ? "interviewed" : interviewed === "no" ? "not interviewed" : "",

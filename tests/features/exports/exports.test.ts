@@ -132,7 +132,7 @@ describe("what a file holds follows from the registry", () => {
 
   test("every filter of the line list narrows the file as it narrows the list", async () => {
     const { supervisor } = everyone;
-    const filters = [
+    const filters: Record<string, string>[] = [
       { interviewState: "none" },
       { interviewed: "no" },
       { followUp: "no" },
