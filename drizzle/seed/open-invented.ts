@@ -1,6 +1,7 @@
 import { randomUUID } from "node:crypto";
 import type pg from "pg";
 import type { InvestigationKeys, KeyRing } from "../../server/identity/keys.ts";
+import type { EventName } from "../../shared/events.ts";
 import type { Role } from "../../shared/roles.ts";
 
 /**
@@ -16,6 +17,8 @@ export const STORY_SETTINGS = {
 } as const;
 /** A week, and five cases: proposed clusters then stay apart from each other, and few. */
 export const STORY_CLUSTERS = { windowDays: 7, minimumCases: 5 } as const;
+
+const GIVEN: EventName = "member.added";
 
 export const STORY_ZONE = "UTC";
 export const STORY_COUNTRY = "GB";
@@ -85,6 +88,11 @@ export async function openInvented(
     await client.query(
       "insert into core.member (id, investigation_id, account_id, role, team_id) values ($1, $2, $3, $4, $5)",
       [randomUUID(), id, member.accountId, member.role, member.teamId ?? null],
+    );
+    // Nobody signed in gave the role: the event has no account, and names the role as others do.
+    await client.query(
+      "insert into audit.event (investigation_id, action, fields) values ($1, $2, $3)",
+      [id, GIVEN, [`role:${member.role}`]],
     );
   }
   return { id, keys: keys.unwrap(id, wrapped) };

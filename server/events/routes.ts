@@ -16,6 +16,16 @@ function markBackground(request: Request): void {
   Object.defineProperty(request.session, "background", { value: true, enumerable: false });
 }
 
+/** True when the role that a stream acts in has a last day. */
+async function hasLastDay(services: Services, who: SignedIn): Promise<boolean> {
+  const found = await services.pools.auth.query(
+    `select 1 from core.member where account_id = $1 and investigation_id = $2 and role = $3
+       and ended_at is null and ends_on is not null`,
+    [who.accountId, who.investigationId, who.actingRole],
+  );
+  return found.rows.length > 0;
+}
+
 /** True while the stream's session, account and membership are what they were. */
 async function stillHolds(request: Request, services: Services, was: SignedIn): Promise<boolean> {
   const reloaded = await new Promise<boolean>((resolve) => {
@@ -49,9 +59,12 @@ function stream(request: Request, response: Response, services: Services): void 
   const end = () => {
     response.end();
   };
+  // Until it is known, and wherever a day may end the role meanwhile, each message is asked about.
+  let mayEnd = true;
   const check = (text: string) =>
     stillHolds(request, services, who)
-      .then((holds) => {
+      .then(async (holds) => {
+        mayEnd = holds && (await hasLastDay(services, who));
         if (holds) write(text);
         else end();
       })
@@ -61,13 +74,14 @@ function stream(request: Request, response: Response, services: Services): void 
     // A tracer sees a few people only: what changed elsewhere carries no id for them.
     const id = who.actingRole === "tracer" ? null : message.id;
     const text = `data: ${JSON.stringify({ ...message, id })}\n\n`;
-    // Whoever is no member any more hears no further word.
-    if (message.topic === "members") void check(text);
+    // Whoever is no member any more hears no further word; a zone that is changed moves last days.
+    if (mayEnd || message.topic === "members" || message.topic === "settings") void check(text);
     else write(text);
   };
   const pulse = setInterval(() => void check(": still here\n\n"), PULSE_MS);
   const leaveHub = services.hub.subscribe(who.investigationId ?? "", { tell, end });
   const leaveAccount = enterStream(who.accountId, { end, check: () => check("") });
+  void check(": here\n\n");
   response.on("close", () => {
     clearInterval(pulse);
     leaveHub();

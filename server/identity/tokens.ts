@@ -1,7 +1,11 @@
 import { createHmac } from "node:crypto";
 import anyAscii from "any-ascii";
 import { doubleMetaphone } from "double-metaphone";
-import { type CountryCode, parsePhoneNumberFromString } from "libphonenumber-js";
+import {
+  type CountryCode,
+  isSupportedCountry,
+  parsePhoneNumberFromString,
+} from "libphonenumber-js";
 
 /** What a search token stands for; stored as a small integer beside it. */
 export const TOKEN_KINDS = { phone: 1, email: 2, namePart: 3, nameSound: 4 } as const;
@@ -12,6 +16,11 @@ const TOKEN_BYTES = 16;
 /** Keyed token of a normalised value (HMAC-SHA-256, 128 bits kept). */
 export function tokenOf(key: Buffer, kind: string | number, value: string): Buffer {
   return createHmac("sha256", key).update(`${kind}|${value}`).digest().subarray(0, TOKEN_BYTES);
+}
+
+/** True for a country whose telephone numbers can be read: a typing error is none. */
+export function hasPhoneNumbers(countryCode: string): boolean {
+  return isSupportedCountry(countryCode as CountryCode);
 }
 
 /** Name parts folded for case, accents and script: "Élise d'Añez" gives elise, d, anez. */

@@ -1,8 +1,8 @@
 import { z } from "zod";
 import { ROLES } from "../roles.ts";
-import { CLASSIFICATIONS } from "../vocabulary.ts";
-import { LIMITS, listOf, optionalText, text, uuid } from "./common.ts";
+import { LIMITS, listOf, optionalText, uuid } from "./common.ts";
 import { IMPORT_KINDS } from "./imports.ts";
+import { filterSet } from "./people-filters.ts";
 
 /** What an export is for; `other` is said in words. */
 export const EXPORT_PURPOSES = [
@@ -30,14 +30,8 @@ export const EXPORT_HOURS = 24;
 const choice = <const T extends readonly [string, ...string[]]>(values: T) =>
   z.enum(values, { error: "not_in_list" });
 
-/** The line list's filters, by coded values and area. What was searched for is no part of them. */
-export const exportFilter = z.strictObject({
-  classification: choice([...CLASSIFICATIONS, "case"]).optional(),
-  interviewed: choice(["yes", "no"]).optional(),
-  assigned: choice(["me", "none"]).optional(),
-  needs: choice(["interview"]).optional(),
-  area: text(LIMITS.shortText, 1).optional(),
-});
+/** The line list's filters, all of them. What was searched for is no part of them. */
+export const exportFilter = filterSet;
 export type ExportFilter = z.output<typeof exportFilter>;
 
 export const exportInput = z

@@ -31,7 +31,7 @@ export const peopleFilters = {
   reportFrom: day.optional(),
   reportTo: day.optional(),
 };
-const filterSet = z.strictObject(peopleFilters);
+export const filterSet = z.strictObject(peopleFilters);
 export type PeopleFilters = z.output<typeof filterSet>;
 
 /** The person's field that a filter tells about: who may not read it may not filter by it. */

@@ -2,15 +2,25 @@ import { z } from "zod";
 import { CASE_CLASSIFICATIONS, SETTINGS, SYMPTOMS } from "../vocabulary.ts";
 import { LIMITS, listOf, rowVersion, text, uuid } from "./common.ts";
 
+/** A number left blank is needed; only what is there can be no number. */
+const numberCode = (issue: { input?: unknown }) =>
+  issue.input === "" || issue.input === null || issue.input === undefined
+    ? "required"
+    : "not_a_number";
+
 const whole = (min: number, max: number) =>
   z
-    .number({ error: "not_a_number" })
+    .number({ error: numberCode })
     .int({ error: "not_a_whole_number" })
     .min(min, { error: "too_small" })
     .max(max, { error: "too_big" });
 
-/** True when this runtime knows the IANA zone. */
+/**
+ * True when this runtime knows the IANA zone. A bare offset such as `+05:30` is none: PostgreSQL
+ * reads its sign the other way, and it has no summer time.
+ */
 export function isTimeZone(zone: string): boolean {
+  if (!/^[A-Za-z]/.test(zone)) return false;
   try {
     new Intl.DateTimeFormat("en", { timeZone: zone });
     return true;
@@ -62,7 +72,7 @@ export const exposureGrading = z.strictObject({
   /** At least this long, and no further apart than that. */
   highMinutes: whole(1, 1440),
   highDistanceM: z
-    .number({ error: "not_a_number" })
+    .number({ error: numberCode })
     .min(0.1, { error: "too_small" })
     .max(100, { error: "too_big" }),
 });

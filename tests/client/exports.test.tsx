@@ -6,14 +6,28 @@ import type { Export } from "../../shared/contracts/exports.ts";
 import type { Role } from "../../shared/roles.ts";
 import { Component } from "../../src/app/routes/exports-route.tsx";
 import { ToastProvider } from "../../src/components/ui/toast-provider.tsx";
-import { holdsWords } from "../../src/features/exports/export-words.ts";
+import { holdsWords, narrowedWords } from "../../src/features/exports/export-words.ts";
 import { filterFromAddress } from "../../src/features/exports/filter-from-address.ts";
+import { CODED, type CodedFilter } from "../../src/features/people/use-list-state.ts";
+import { formatDay } from "../../src/lib/formatters.ts";
 import { ids } from "./support/network-answers.ts";
 import { type Answers, renderRoom } from "./support/room.tsx";
 
 afterEach(cleanup);
 
 const me = ids.small;
+
+const inAddress: Record<CodedFilter, string> = {
+  classification: "contact",
+  interviewed: "no",
+  interviewState: "none",
+  assigned: "team",
+  followUp: "no",
+  onsetFrom: "2026-05-01",
+  onsetTo: "2026-05-02",
+  reportFrom: "2026-05-03",
+  reportTo: "2026-05-04",
+};
 
 function file(over: Partial<Export> = {}): Export {
   return {
@@ -181,9 +195,18 @@ describe("asking for a file", () => {
     expect(holdsWords("pairs", "epidemiologist", false)).toBe(
       "People stand by study number; households by number.",
     );
-    expect(filterFromAddress(new URLSearchParams("assigned=me&needs=x&q=Jo"))).toEqual({
+    expect(filterFromAddress(new URLSearchParams("assigned=me&needs=x&q=Jo&area=Jo"))).toEqual({
       assigned: "me",
     });
+    // Whatever narrows the list narrows the file: nothing more leaves than was on the screen.
+    const address = new URLSearchParams(CODED.map((name) => [name, inAddress[name]]));
+    expect(filterFromAddress(address)).toEqual(inAddress);
+    const [onset, onsetEnd, report, reportEnd] = CODED.slice(-4).map((name) =>
+      formatDay(inAddress[name]),
+    );
+    expect(narrowedWords(filterFromAddress(address))).toBe(
+      `contacts, not interviewed, interview not begun, assigned to your team, without any check of follow-up, onset from ${onset} to ${onsetEnd}, reported from ${report} to ${reportEnd}`,
+    );
   });
 
   it("is not open to a tracer", () => {

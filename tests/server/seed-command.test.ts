@@ -122,6 +122,16 @@ describe("the command", { timeout: 180_000 }, () => {
       expect(counts[table], table).toBeGreaterThan(20);
     }
     expect(counts.member).toBe(4);
+    // A role that is given stands in the access record, also when a command gave it.
+    const given = await asAdmin<{ fields: string[]; account_id: string | null }>(
+      app,
+      "select fields, account_id from audit.event where investigation_id = $1 and action = 'member.added'",
+      [id],
+    );
+    expect(given.flatMap((event) => event.fields).sort()).toEqual(
+      ["epidemiologist", "officer", "supervisor", "tracer"].map((role) => `role:${role}`),
+    );
+    expect(given.every((event) => event.account_id === null)).toBe(true);
     expect(await countsOf(other)).toEqual(before);
     const [shape] = await asAdmin(
       app,

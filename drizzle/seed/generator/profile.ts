@@ -15,8 +15,7 @@ const STREETS = ["Street", "Lane", "Steps", "Row", "Terrace", "Close", "Slip"];
 
 function partialBirthDate(rng: Rng, full: string, asked: boolean): string | null {
   const roll = rng.next();
-  if (roll < 0.05) return full.slice(0, 7);
-  if (roll < 0.08) return full.slice(0, 4);
+  if (roll < 0.08) return full.slice(0, 7);
   if (roll < 0.1) return UNKNOWN;
   if (roll < 0.115) return REFUSED;
   return !asked && roll < 0.4 ? null : full;

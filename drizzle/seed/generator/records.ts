@@ -145,7 +145,7 @@ export function createRecordBook(town: Town, seed: number, calendar: Calendar): 
     const { name, birthDate, phone, sex, area } = itemAt(people, original);
     const profile: Profile = {
       name: respellName(rng, name),
-      birthDate: birthDate !== null && /^\d{4}/.test(birthDate) ? birthDate.slice(0, 4) : null,
+      birthDate: birthDate !== null && /^\d{4}/.test(birthDate) ? birthDate.slice(0, 7) : null,
       sex,
       area,
       address: null,

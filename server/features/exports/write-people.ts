@@ -2,6 +2,7 @@ import { type SQL, sql } from "drizzle-orm";
 import { PEOPLE_COLUMNS } from "../../../shared/contracts/imports.ts";
 import { IDENTITY_COLUMNS } from "../../../shared/export-columns.ts";
 import { readableColumns } from "../../../shared/fields.ts";
+import { peopleConditions } from "../../db/people-conditions.ts";
 import { type BuildContext, slices, turn } from "./build-context.ts";
 import { openDoor, refNamer } from "./open-identity.ts";
 
@@ -12,29 +13,11 @@ const CORE_COLUMNS = PEOPLE_COLUMNS.filter(
 
 /** The line list's filter as SQL, on `core.person p`. */
 function filtered({ actor, filter }: BuildContext): SQL {
-  const where: SQL[] = [
+  const where = [
     sql`p.investigation_id = ${actor.investigationId}`,
     sql`p.withdrawn_at is null`,
+    ...peopleConditions(filter, actor),
   ];
-  const { classification, needs, interviewed, area, assigned } = filter;
-  if (classification === "case" || needs === "interview") {
-    where.push(sql`p.classification in ('confirmed', 'probable', 'suspected')`);
-  }
-  if (classification && classification !== "case") {
-    where.push(sql`p.classification = ${classification}`);
-  }
-  if (needs === "interview") {
-    where.push(
-      sql`(p.interview_state is null or p.interview_state in ('attempted', 'partial', 'unreachable'))`,
-    );
-  }
-  if (interviewed === "yes") where.push(sql`p.interviewed = 'yes'`);
-  if (interviewed === "no") where.push(sql`p.interviewed is distinct from 'yes'`);
-  if (area) where.push(sql`p.area = ${area}`);
-  if (assigned === "me") where.push(sql`p.assigned_account_id = ${actor.accountId}`);
-  if (assigned === "none") {
-    where.push(sql`p.assigned_account_id is null and p.assigned_team_id is null`);
-  }
   return sql.join(where, sql` and `);
 }
 

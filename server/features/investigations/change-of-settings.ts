@@ -7,6 +7,7 @@ import {
 import type { FieldError } from "../../../shared/errors.ts";
 import type { Tx } from "../../db/with-tx.ts";
 import { HttpProblem, invalid } from "../../http/problem.ts";
+import { hasPhoneNumbers } from "../../identity/tokens.ts";
 import { databaseKnowsZone, hasDemoMembers, type SettingsRow } from "./settings-store.ts";
 
 const KEYS = Object.keys(SETTING_SHAPES) as SettingKey[];
@@ -58,6 +59,9 @@ export async function planChange(
     !(await databaseKnowsZone(tx, change.after.timeZone))
   ) {
     errors.push({ path: "timeZone", code: "not_a_zone" });
+  }
+  if (change.changed.includes("countryCode") && !hasPhoneNumbers(change.after.countryCode)) {
+    errors.push({ path: "countryCode", code: "not_in_list" });
   }
   if (errors.length > 0) throw invalid(...errors);
   return change;

@@ -1,11 +1,12 @@
 import { type SQL, sql } from "drizzle-orm";
 import type { PeopleQuery } from "../../../shared/contracts/people.ts";
 import { openableKeys, readableColumns } from "../../../shared/fields.ts";
+import { peopleConditions } from "../../db/people-conditions.ts";
 import type { Tx } from "../../db/with-tx.ts";
 import type { Actor } from "../../http/route.ts";
 import type { InvestigationKeys } from "../../identity/keys.ts";
 import { findPeople, refToken } from "../../identity/records.ts";
-import { filterConditions, type Order, orderOf } from "./list-filters.ts";
+import { type Order, orderOf } from "./list-order.ts";
 import { type CorePerson, peopleById, selection } from "./queries.ts";
 import { asStudyNumber } from "./study-number.ts";
 
@@ -47,7 +48,7 @@ export async function listCondition(
   const where = [
     sql`p.investigation_id = ${actor.investigationId}`,
     sql`p.withdrawn_at is null`,
-    ...filterConditions(query, actor),
+    ...peopleConditions(query, actor),
   ];
   if (query.q) where.push(await typed(tx, keys, actor, query.q, country));
   return sql.join(where, sql` and `);

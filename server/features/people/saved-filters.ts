@@ -9,10 +9,11 @@ import {
   type SavedFilterPatch,
   type SavedQuestion,
 } from "../../../shared/contracts/people-filters.ts";
+import { peopleConditions } from "../../db/people-conditions.ts";
 import type { Tx } from "../../db/with-tx.ts";
 import { HttpProblem, invalid } from "../../http/problem.ts";
 import type { Actor } from "../../http/route.ts";
-import { filterConditions, orderOf } from "./list-filters.ts";
+import { orderOf } from "./list-order.ts";
 
 type Row = SavedFilter & Record<string, unknown>;
 
@@ -43,7 +44,7 @@ function usable({ sort, ...filters }: SavedQuestion, actor: Actor): boolean {
  */
 async function checkQuestion(tx: Tx, actor: Actor, { sort, ...filters }: SavedQuestion) {
   orderOf(sort, actor.role);
-  filterConditions(filters, actor);
+  peopleConditions(filters, actor);
   if (filters.area === undefined) return;
   const known = await tx.execute(
     sql`select 1 from core.person p where p.investigation_id = ${actor.investigationId}

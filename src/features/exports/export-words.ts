@@ -2,7 +2,8 @@ import type { Export, ExportFilter, ExportPurpose } from "../../../shared/contra
 import { exportedIdentity, namesHouseholds } from "../../../shared/export-columns.ts";
 import { accessTo } from "../../../shared/fields.ts";
 import type { Role } from "../../../shared/roles.ts";
-import { formatNumber } from "../../lib/formatters.ts";
+import { formatDay, formatNumber } from "../../lib/formatters.ts";
+import { interviewWords } from "../../lib/words.ts";
 
 export const kindWords: Readonly<Record<Export["kind"], string>> = {
   people: "line list",
@@ -66,18 +67,36 @@ const filterWords: Readonly<Record<string, string>> = {
   contact: "contacts",
 };
 
+const assignedWords: Readonly<Record<string, string>> = {
+  me: "assigned to you",
+  team: "assigned to your team",
+  none: "assigned to nobody",
+};
+
+function spanWords(what: string, from?: string, to?: string): string {
+  if (!from && !to) return "";
+  const parts = [from ? `from ${formatDay(from)}` : "", to ? `to ${formatDay(to)}` : ""];
+  return `${what} ${parts.filter(Boolean).join(" ")}`;
+}
+
 /** A filter in words; empty without one. */
 export function narrowedWords(filter: ExportFilter): string {
-  const parts: string[] = [];
-  if (filter.classification) parts.push(filterWords[filter.classification] ?? "");
-  if (filter.interviewed) {
-    parts.push(filter.interviewed === "yes" ? "interviewed" : "not interviewed");
-  }
-  if (filter.assigned)
-    parts.push(filter.assigned === "me" ? "assigned to you" : "assigned to nobody");
-  if (filter.needs) parts.push("waiting for an interview");
-  if (filter.area) parts.push("of one area");
-  return parts.filter(Boolean).join(", ");
+  const { classification, interviewed, interviewState, assigned, followUp } = filter;
+  const state =
+    interviewState === "none" ? "not begun" : interviewState && interviewWords[interviewState];
+  return [
+    classification ? filterWords[classification] : "",
+    interviewed === "yes" ? "interviewed" : interviewed === "no" ? "not interviewed" : "",
+    state ? `interview ${state}` : "",
+    assigned ? (assignedWords[assigned] ?? "assigned to one member") : "",
+    followUp ? `${followUp === "yes" ? "with a" : "without any"} check of follow-up` : "",
+    filter.needs ? "waiting for an interview" : "",
+    filter.area ? "of one area" : "",
+    spanWords("onset", filter.onsetFrom, filter.onsetTo),
+    spanWords("reported", filter.reportFrom, filter.reportTo),
+  ]
+    .filter(Boolean)
+    .join(", ");
 }
 
 /** What a file is, as the list says it. */

@@ -1,6 +1,7 @@
 import { type ExportFilter, exportFilter } from "../../../shared/contracts/exports.ts";
 
-const coded = ["classification", "interviewed", "assigned", "needs"] as const;
+/** What can be typed (an area may be) never stands in an address. */
+const coded = exportFilter.keyof().exclude(["area"]).options;
 
 /** The line list's coded filters, as they stand in an address; whatever is no filter is left out. */
 export function filterFromAddress(params: URLSearchParams): ExportFilter {

@@ -129,6 +129,32 @@ describe("what a file holds follows from the registry", () => {
     const hidden = await ask(epidemiologist, { kind: "people", filter: { assigned: "none" } });
     expect(hidden.body.errors).toEqual([{ path: "filter.assigned", code: "not_in_list" }]);
   });
+
+  test("every filter of the line list narrows the file as it narrows the list", async () => {
+    const { supervisor } = everyone;
+    const filters: Record<string, string>[] = [
+      { interviewState: "none" },
+      { interviewed: "no" },
+      { followUp: "no" },
+      { followUp: "yes" },
+      { assigned: "team" },
+      { assigned: supervisor.accountId },
+      { onsetFrom: "2026-05-01", onsetTo: "2026-05-31" },
+      { reportTo: "1999-12-31" },
+    ];
+    const numbers = new Set<number>();
+    for (const filter of filters) {
+      const list = await supervisor.client.get(`${supervisor.base}/people`, filter);
+      expect(list.status, JSON.stringify(filter)).toBe(200);
+      const made = await takeOut(supervisor, { kind: "people", filter });
+      expect(made.rows, JSON.stringify(filter)).toBe(list.body.total);
+      numbers.add(made.rows);
+    }
+    expect(numbers.size).toBeGreaterThan(1);
+    const back = { onsetFrom: "2026-05-31", onsetTo: "2026-05-01" };
+    const refused = await ask(supervisor, { kind: "people", filter: back });
+    expect(refused.body.errors).toEqual([{ path: "filter.onsetTo", code: "last_before_first" }]);
+  });
 });
 
 test("bad input is refused beside its field, and nothing is made", async () => {

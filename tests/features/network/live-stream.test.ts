@@ -1,8 +1,9 @@
 import { get, type IncomingMessage } from "node:http";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { dayIn, now, shiftDay } from "../../../server/clock.ts";
 import { startTestApp, type TestApp } from "../../support/app.ts";
 import { buildInvestigation, type Member, PASSWORD, signInAs } from "../../support/factories.ts";
-import { contactRow, register, submit } from "../../support/field-work.ts";
+import { asAdmin, contactRow, register, submit } from "../../support/field-work.ts";
 
 let app: TestApp;
 let id: string;
@@ -131,6 +132,21 @@ describe("GET live", () => {
       await stream.ended;
     },
   );
+
+  it("tells nothing more from the end of a role's last day on, which nobody announces", async () => {
+    const leaving = await signInAs(app, "supervisor", id);
+    const lastDay = (day: string) =>
+      asAdmin(app, "update core.member set ends_on = $2 where id = $1", [leaving.memberId, day]);
+    const today = dayIn("UTC", now());
+    await lastDay(today);
+    const stream = await openStream(leaving);
+    const heard = await register(tracer, { name: "Jan Zale" });
+    await until(() => messagesOf(stream).some((message) => message.id === heard));
+    await lastDay(shiftDay(today, -1));
+    const unheard = await register(tracer, { name: "Kit Alder" });
+    await stream.ended;
+    expect(messagesOf(stream).some((message) => message.id === unheard)).toBe(false);
+  });
 
   it("tells a member whose membership ended nothing more", async () => {
     const leaving = await signInAs(app, "epidemiologist", id);

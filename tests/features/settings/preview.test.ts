@@ -126,15 +126,19 @@ describe("follow-up", () => {
     await check(supervisor, of(12), { day: ago(4), outcome: "seen" });
     // Symptomatic long after the end, so due all the same; seen on its last day.
     await check(supervisor, of(20), { day: ago(6), outcome: "seen", symptoms: "yes" });
+    // Without a day 0, so never due; at its end all the same, as the round lists it.
+    const gone = await register(supervisor, { classification: "contact" });
+    const end = `${supervisor.base}/follow-up/${gone}/end`;
+    expect((await supervisor.client.post(end, { reason: "moved" }, true)).status).toBe(201);
     const listed = async (show: string) =>
       (await supervisor.client.get(`${supervisor.base}/follow-up`, { show })).body.total as number;
     const [due, ended] = [await listed("due"), await listed("ended")];
     const all = (await supervisor.client.get(`${supervisor.base}/follow-up`, { show: "all" })).body;
     const lost = all.items.filter((one: { state: string }) => one.state === "lost").length;
-    expect([due, ended, lost]).toEqual([4, 1, 2]);
+    expect([due, ended, lost]).toEqual([4, 2, 2]);
     expect(await moves(officer, { monitoringDays: 13 })).toEqual({
       contacts_due_today: [due, 3],
-      follow_ups_ended: [ended, 2],
+      follow_ups_ended: [ended, 3],
       follow_ups_lost: [lost, 2],
     });
     expect(await moves(officer, { lostAfterDays: 2 })).toEqual({ follow_ups_lost: [2, 3] });

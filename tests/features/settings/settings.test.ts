@@ -182,6 +182,9 @@ test.each([
     "max_below_min",
   ],
   ["a zone that is none", { timeZone: "Mars/Olympus" }, "timeZone", "not_a_zone"],
+  ["an offset in place of a zone", { timeZone: "+05:30" }, "timeZone", "not_a_zone"],
+  ["a number left blank", { monitoringDays: null }, "monitoringDays", "required"],
+  ["a country that has no telephone numbers", { countryCode: "ZZ" }, "countryCode", "not_in_list"],
   ["a threshold below the floor", { smallCellThreshold: 4 }, "smallCellThreshold", "too_small"],
   [
     "a symptom twice",

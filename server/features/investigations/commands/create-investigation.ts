@@ -5,6 +5,7 @@ import { recordEvent } from "../../../audit/record-event.ts";
 import { withTx } from "../../../db/with-tx.ts";
 import { HttpProblem, invalid } from "../../../http/problem.ts";
 import type { SignedIn } from "../../../http/sign-in.ts";
+import { hasPhoneNumbers } from "../../../identity/tokens.ts";
 import type { Services } from "../../../services.ts";
 import { databaseKnowsZone } from "../settings-store.ts";
 import { insertInvestigation } from "../store.ts";
@@ -26,6 +27,9 @@ export async function createInvestigation(
   if (input.practice && role !== "supervisor") throw new HttpProblem("role_refused");
   if (who.demo && !invented) {
     throw new HttpProblem("invalid", { errors: [{ path: "invented", code: "demo_only" }] });
+  }
+  if (!hasPhoneNumbers(input.countryCode)) {
+    throw invalid({ path: "countryCode", code: "not_in_list" });
   }
   const hash = createHash("sha256").update(JSON.stringify(input)).digest("base64url");
   const opened = await withTx({ pool: services.pools.auth, nonce: null }, async (tx) => {

@@ -8,7 +8,7 @@ import type { SettingsRow } from "../settings-store.ts";
 /** Contacts of whom everything that states follow from is the same, and how many they are. */
 export interface AlikeContacts {
   classification: Classification | null;
-  /** Null: not known to the day; such a contact is listed while symptomatic. */
+  /** Null: not known to the day; such a contact is listed while symptomatic, and once ended. */
   dayZero: string | null;
   /** Still followed: neither a case, nor found to be none, nor ended otherwise. */
   open: boolean;
@@ -71,7 +71,8 @@ export async function loadContacts(
               as reopened
             from core.follow_end e where e.investigation_id = ${settings.id} group by 1) r
             on r.person_id = p.id
-          where d.investigation_id = ${settings.id} and (d.day_zero is not null or d.open and d.symptomatic)),
+          where d.investigation_id = ${settings.id}
+            and (d.day_zero is not null or not d.open or d.symptomatic)),
         checked as materialized (
           select k.person_id,
             max(k.day collate "C") filter (where k.outcome in ('seen', 'spoken')) as seen,

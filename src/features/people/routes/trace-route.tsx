@@ -8,11 +8,12 @@ import { useInvestigation } from "../../../lib/investigation-context.ts";
 import { useSession } from "../../../lib/session-context.ts";
 import { InterviewQueue } from "../components/interview-queue.tsx";
 import { LineList } from "../components/line-list.tsx";
+import { CODED } from "../use-list-state.ts";
 
 /** The line list's coded filters, to be taken along to the export. */
 function codedFilters(params: URLSearchParams): string {
   const kept = new URLSearchParams();
-  for (const name of ["classification", "interviewed", "assigned"]) {
+  for (const name of CODED) {
     const value = params.get(name);
     if (value) kept.set(name, value);
   }

@@ -1,34 +1,7 @@
 import { type SQL, sql } from "drizzle-orm";
-import { type PeopleFilters, refusedFilters } from "../../../shared/contracts/people-filters.ts";
-import { sortableColumns } from "../../../shared/fields.ts";
-import type { Role } from "../../../shared/roles.ts";
-import { invalid } from "../../http/problem.ts";
-import type { Actor } from "../../http/route.ts";
-
-/** How a list is ordered: by one column of `core.person p`, the id deciding between equals. */
-export interface Order {
-  by: SQL;
-  down: boolean;
-}
-
-/**
- * Reads a sort key such as `-onsetDate`; without one the latest recorded come first.
- *
- * @throws HttpProblem invalid for a key the role may not sort by
- */
-export function orderOf(sort: string | undefined, role: Role): Order {
-  if (!sort) return { by: sql`p.recorded_at`, down: true };
-  const down = sort.startsWith("-");
-  const key = down ? sort.slice(1) : sort;
-  const columns = sortableColumns(role);
-  const column = columns[key];
-  if (column) return { by: sql`p.${sql.identifier(column)}`, down };
-  // The day somebody died is the day of their outcome, where that is what it was.
-  if (key === "diedDate" && columns.outcome && columns.outcomeDate) {
-    return { by: sql`case when p.outcome = 'died' then p.outcome_date end`, down };
-  }
-  throw invalid({ path: "sort", code: "not_sortable" });
-}
+import { type PeopleFilters, refusedFilters } from "../../shared/contracts/people-filters.ts";
+import { invalid } from "../http/problem.ts";
+import type { Actor } from "../http/route.ts";
 
 /**
  * Days of a column between two days. Days are text: a month known without its day sorts before its
@@ -53,22 +26,24 @@ function assignedTo(actor: Actor, assigned: string): SQL {
 }
 
 /**
- * Conditions on `core.person p` for the filters of a list.
+ * Conditions on `core.person p` for the filters of the line list, and of files made from it.
  *
+ * @param under what stands before each path of an error, such as `filter.`
  * @throws HttpProblem invalid, with the path of each filter that the role may not use or that cannot
  *   be met
  */
-export function filterConditions(filters: PeopleFilters, actor: Actor): SQL[] {
+export function peopleConditions(filters: PeopleFilters, actor: Actor, under = ""): SQL[] {
   const refused = refusedFilters(filters, actor.role);
   if (refused.length > 0) {
-    throw invalid(...refused.map((path) => ({ path, code: "not_in_list" as const })));
+    throw invalid(...refused.map((key) => ({ path: under + key, code: "not_in_list" as const })));
   }
   for (const [from, to] of [
     ["onsetFrom", "onsetTo"],
     ["reportFrom", "reportTo"],
   ] as const) {
     const [first, last] = [filters[from], filters[to]];
-    if (first && last && last < first) throw invalid({ path: to, code: "last_before_first" });
+    if (first && last && last < first)
+      throw invalid({ path: under + to, code: "last_before_first" });
   }
   const where: SQL[] = [];
   const { classification, interviewed, interviewState, followUp, needs, area, assigned } = filters;
