@@ -140,7 +140,7 @@ export function peopleFile(): WeekFile {
       "result_before_specimen",
       { "Probe am": daysAgo(3), "Befund am": daysAgo(2), Befund: "negative" },
     ),
-    mistyped("R-20", "Renske Sielmann", ["Geburtstag", "1776-07-04"], "birth_date", "out_of_range"),
+    mistyped("R-20", "Renske Sielmann", ["Geburtstag", "1776-07-04"], "birth_date", "not_a_day"),
     mistyped("R-21", "Sievert Tiden", ["Befund", "vielleicht"], "result", "not_in_list", {
       "Probe am": daysAgo(3),
       Befund: "pending",
