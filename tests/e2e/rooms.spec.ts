@@ -45,6 +45,7 @@ const pagesOf: Record<Role, readonly Place[]> = {
     ["trace/people/{case}/interview", /^Interview of /],
     ["trace/places", "Places"],
     ["trace/import", "Import a list"],
+    ["trace/export", "Export"],
     ["trace/matches", "Possible duplicates"],
     ["follow", "Follow"],
     ["review", "Review"],
@@ -56,6 +57,7 @@ const pagesOf: Record<Role, readonly Place[]> = {
     ["trace", "Trace"],
     ["trace/people/{person}", /./],
     ["trace/places", "Places"],
+    ["trace/export", "Export"],
     ["review", "Review"],
     ["compare", "Compare"],
     ["settings", "Settings"],
@@ -107,9 +109,12 @@ async function lookAt(page: Page, address: string, heading: string | RegExp, wat
     await settled(page);
     await expect(page.getByRole("heading", { level: 1, name: heading })).toBeVisible();
     if (heading === "Compare") {
-      // The picture is fetched when it comes near.
-      await page.locator("#network-picture").scrollIntoViewIfNeeded();
-      await expect(page.getByRole("img", { name: /^Network picture: / })).toBeVisible();
+      // The picture is fetched when it comes near; what is drawn above may push it away once more.
+      await expect(async () => {
+        await page.locator("#network-picture").scrollIntoViewIfNeeded();
+        const picture = page.getByRole("img", { name: /^Network picture: / });
+        await expect(picture).toBeVisible({ timeout: 10_000 });
+      }).toPass({ timeout: 60_000 });
     }
     await expect(page.getByText(/^Invented data: no person/)).toBeVisible();
     await expect(

@@ -144,7 +144,8 @@ const VirtualRow = memo(function VirtualRow<Row extends object>(props: VirtualRo
                 type="checkbox"
                 // Not in the tab order: the row is, and Space on it does the same.
                 tabIndex={-1}
-                className="block"
+                // A grid, as every box is: the tick is a child of it.
+                className="grid"
                 aria-label={selectLabel}
                 checked={selected ?? false}
                 onChange={() => actions.toggle(row)}

@@ -28,9 +28,9 @@ const coded = (key: Key, words: Record<string, string>) => (person: Person) => (
 
 /** Every column there can be, in order. Which of them are shown is up to the keys of the answer. */
 const SPECS: readonly Spec[] = [
-  { key: "name", header: "Name", cell: plain("name"), width: 184 },
+  { key: "name", header: "Name", cell: plain("name"), width: 172 },
   { key: "nameMasked", header: "Name, masked", cell: plain("nameMasked") },
-  { key: "phone", header: "Telephone", cell: plain("phone"), width: 156 },
+  { key: "phone", header: "Telephone", cell: plain("phone"), width: 148 },
   {
     key: "phoneLast2",
     header: "Telephone, last two",
@@ -44,12 +44,12 @@ const SPECS: readonly Spec[] = [
     sortKey: "classification",
     cell: coded("classification", classificationWords),
   },
-  { key: "onsetDate", header: "Onset", sortKey: "onsetDate", cell: day("onsetDate") },
+  { key: "onsetDate", header: "Onset", sortKey: "onsetDate", cell: day("onsetDate"), width: 116 },
   { key: "reportDate", header: "Reported", sortKey: "reportDate", cell: day("reportDate") },
   { key: "birthYear", header: "Birth year", cell: plain("birthYear"), numeric: true },
   { key: "ageBand", header: "Age", sortKey: "ageBand", cell: plain("ageBand"), width: 96 },
-  { key: "sex", header: "Sex", sortKey: "sex", cell: plain("sex"), width: 88 },
-  { key: "area", header: "Area", sortKey: "area", cell: plain("area"), width: 160 },
+  { key: "sex", header: "Sex", sortKey: "sex", cell: plain("sex"), width: 80 },
+  { key: "area", header: "Area", sortKey: "area", cell: plain("area"), width: 128 },
   {
     key: "occupation",
     header: "Occupation",
@@ -76,6 +76,7 @@ const SPECS: readonly Spec[] = [
     header: "Result",
     sortKey: "result",
     cell: coded("result", {}),
+    width: 104,
     pending: (person) => person.result === "pending",
   },
   { key: "resultDate", header: "Day of result", sortKey: "resultDate", cell: day("resultDate") },
@@ -83,6 +84,7 @@ const SPECS: readonly Spec[] = [
     key: "interviewState",
     header: "Interview",
     sortKey: "interviewState",
+    width: 112,
     cell: (person) =>
       person.interviewState ? (
         wordFor(interviewWords, person.interviewState)
@@ -148,7 +150,7 @@ export function peopleColumns(context: PeopleColumnsContext): DataColumn<Person>
       sortKey: "studyNumber",
       hideable: false,
       rowHeader: true,
-      width: 152,
+      width: 144,
       cell: (person) => <PersonLabel person={person} />,
     },
   ];
@@ -159,7 +161,7 @@ export function peopleColumns(context: PeopleColumnsContext): DataColumn<Person>
     columns.push({
       id: "assignedTo",
       header: "Assigned to",
-      width: 160,
+      width: 120,
       cell: ({ assignedTo, assignedTeam }) => {
         if (assignedTo === accountId) return "you";
         if (assignedTo) return names.get(assignedTo) ?? "a member";

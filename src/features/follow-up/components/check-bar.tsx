@@ -62,7 +62,7 @@ export function CheckBar({ investigationId, person, today }: CheckBarProps) {
   }
 
   return (
-    <div className={details || record.isError ? "min-w-0 basis-full" : "min-w-0"}>
+    <div className={details || record.isError ? "min-w-0 basis-full" : "min-w-0 max-sm:basis-full"}>
       {details ? (
         <Suspense fallback={<LoadingState label="Opening the form" rows={2} />}>
           <DetailsForm

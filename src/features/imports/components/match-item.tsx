@@ -64,7 +64,7 @@ export function MatchItem({ investigationId, item, pending, onDecide }: MatchIte
           )}
         </div>
       </div>
-      <p className="mt-2 flex flex-wrap items-baseline gap-x-4 gap-y-2">
+      <div className="mt-2 flex flex-wrap items-baseline gap-x-4 gap-y-2">
         <span className="min-w-0 flex-1 basis-60 text-sm text-ink-2">
           Looks alike: {matchedWords[matchedOn]}
         </span>
@@ -87,7 +87,7 @@ export function MatchItem({ investigationId, item, pending, onDecide }: MatchIte
             Another person
           </Button>
         </span>
-      </p>
+      </div>
     </li>
   );
 }

@@ -10,7 +10,7 @@ import { saveText } from "../../../lib/save-text.ts";
 import { toCsv } from "../../../lib/to-csv.ts";
 
 const pageSize = 25;
-/** Kinds of problem named above the table. */
+/** Kinds of problem named above the table, where it does not say each just once anyway. */
 const mostKinds = 8;
 
 export type ProblemTableProps = { problems: Import["problems"]; problemCount: number };
@@ -52,7 +52,7 @@ export function ProblemTable({ problems, problemCount }: ProblemTableProps) {
       }
       actions={<Button onClick={download}>Download as CSV</Button>}
     >
-      {kinds.length > 1 || problems.length > pageSize ? (
+      {kinds.length < problems.length && (kinds.length > 1 || last > 1) ? (
         <ul className="mb-3 max-w-[70ch] text-ink-2">
           {kinds.slice(0, mostKinds).map(({ column, code, count }) => (
             <li key={`${column} ${code}`}>

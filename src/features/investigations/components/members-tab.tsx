@@ -36,8 +36,9 @@ function memberColumns(
       cell: (member) =>
         member.accountId === accountId ? `${member.displayName} (you)` : member.displayName,
     },
-    { id: "email", header: "E-mail", cell: (member) => member.email },
+    // Before the address, which on a phone would push it out of sight.
     { id: "role", header: "Role", cell: (member) => ROLE_NAMES[member.role] },
+    { id: "email", header: "E-mail", cell: (member) => member.email },
     { id: "team", header: "Team", cell: (member) => member.team ?? noValue },
     { id: "since", header: "Since", cell: (member) => formatInstant(member.since, timeZone) },
     {

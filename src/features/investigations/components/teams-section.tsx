@@ -5,6 +5,7 @@ import type { DataColumn } from "../../../components/data-table/data-column.ts";
 import { DataTable } from "../../../components/data-table/data-table.tsx";
 import { Section } from "../../../components/layouts/section.tsx";
 import { Button } from "../../../components/ui/button.tsx";
+import { EmptyState } from "../../../components/ui/empty-state.tsx";
 import { useToast } from "../../../components/ui/use-toast.ts";
 import { ApiError, errorKind, errorWords } from "../../../lib/api-error.ts";
 import { fieldWords } from "../../../lib/form-errors.ts";
@@ -97,6 +98,12 @@ export function TeamsSection() {
           updating={list.isPlaceholderData}
           errorKind={errorKind(list.error)}
           onRetry={() => void list.refetch()}
+          empty={
+            <EmptyState title="No team yet">
+              People are assigned to one member each. Make a team where several share the same
+              people.
+            </EmptyState>
+          }
           tools={naming ? undefined : <Button onClick={() => setNaming("new")}>Make a team</Button>}
         />
       </Section>

@@ -41,11 +41,13 @@ export function DefinitionVersions() {
                 <HeadCell scope="row" numeric>
                   {formatNumber(one.number)}
                 </HeadCell>
-                <Cell className="whitespace-nowrap">{formatInstant(one.recordedAt, timeZone)}</Cell>
-                <Cell className="min-w-56 whitespace-pre-wrap wrap-anywhere">
+                <Cell className="sm:whitespace-nowrap max-sm:text-sm">
+                  {formatInstant(one.recordedAt, timeZone)}
+                </Cell>
+                <Cell className="min-w-28 whitespace-pre-wrap sm:min-w-56 max-sm:text-sm">
                   {settingValueWords("caseDefinition", one.wording)}
                 </Cell>
-                <Cell className="min-w-56 whitespace-pre-wrap text-sm text-ink-2">
+                <Cell className="min-w-24 whitespace-pre-wrap text-sm sm:min-w-56 text-ink-2">
                   {settingValueWords("caseRules", one.rules)}
                 </Cell>
               </tr>

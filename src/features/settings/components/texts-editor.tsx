@@ -117,7 +117,7 @@ export function TextsEditor() {
         <TextField
           ref={box}
           label="Language"
-          hint="A language tag, such as en, pt-BR or ar."
+          hint="Its tag, such as en or ar."
           spellCheck={false}
           value={typed}
           error={fieldWords(error)}
