@@ -2,18 +2,23 @@ import { existsSync, mkdirSync, readdirSync, readFileSync, rmSync } from "node:f
 import { join, resolve } from "node:path";
 import { gzipSync } from "node:zlib";
 import { startCluster, stopCluster } from "../scripts/lib/postgres.mjs";
+import { shiftDay } from "../server/clock.ts";
 import {
   benchOutbreak,
   HELD_CASES,
+  LAST_DAY,
   makeAccounts,
   makeDatabase,
   signIn,
   storeOutbreak,
 } from "./support/bench-database.ts";
 import { startServer, stopServer } from "./support/bench-server.ts";
+import { benchExports } from "./support/exports.ts";
+import { benchFollowUp } from "./support/follow-up.ts";
 import { spread } from "./support/http-client.ts";
 import { heldCases, submitInterview } from "./support/interviews.ts";
 import { benchLists } from "./support/lists.ts";
+import { benchPreviews } from "./support/previews.ts";
 
 // Fixed, so that two runs measure the same data.
 const SEED = 7;
@@ -36,7 +41,7 @@ async function prepare(clusterUrl: string, size: number): Promise<Prepared> {
     database,
     ROLES,
   );
-  const outbreak = benchOutbreak(SEED, size);
+  const outbreak = benchOutbreak(SEED, size, true);
   const investigationId = await storeOutbreak(database, "Bench", outbreak, {
     tracer,
     supervisor,
@@ -88,12 +93,12 @@ async function measure(prepared: Prepared) {
   }
   const asOf: number[] = [];
   for (let back = 0; back < 20; back++) {
-    const day = `2026-05-${String(1 + back).padStart(2, "0")}`;
+    const day = shiftDay(LAST_DAY, back - 19);
     asOf.push(
       (
         await supervisor.call(
           "GET",
-          `${base}/network/summary?population=all&asOf=${day}&from=2026-04-16&to=${day}`,
+          `${base}/network/summary?population=all&asOf=${day}&from=${shiftDay(LAST_DAY, -34)}&to=${day}`,
         )
       ).ms,
     );
@@ -109,6 +114,10 @@ async function measure(prepared: Prepared) {
     officer: await signIn(server.origin, "officer"),
   };
   const lineList = await benchLists(clients, base);
+  const followUp = await benchFollowUp(base, { tracer, supervisor });
+  const previews = await benchPreviews(supervisor, base);
+  // Files are given out only soon after a password was given.
+  const files = await benchExports(await signIn(server.origin, "officer"), base);
   await stopServer(server);
   server = await startServer(prepared.databaseUrl, FOLDER);
   const again = await signIn(server.origin, "supervisor");
@@ -125,6 +134,9 @@ async function measure(prepared: Prepared) {
     summaryRangeMs: spread(asOf),
     summaryColdMs: [Math.round(cold), Math.round(coldAgain)],
     lineList,
+    followUp,
+    previewMs: previews,
+    exports: files,
     serverReadyMs: server.readyMs,
   };
 }

@@ -2,6 +2,7 @@ import { randomUUID } from "node:crypto";
 import pg from "pg";
 import { generateOutbreak } from "../../drizzle/seed/generator/generate-outbreak.ts";
 import { loadOutbreak } from "../../drizzle/seed/load-outbreak.ts";
+import { dayIn, now } from "../../server/clock.ts";
 import { loadSecrets } from "../../server/config/secrets.ts";
 import { migrate } from "../../server/db/migrate.ts";
 import { hashPassword } from "../../server/features/session/password.ts";
@@ -10,8 +11,11 @@ import type { Role } from "../../shared/roles.ts";
 import { BenchClient } from "./http-client.ts";
 
 const PASSWORD = "only for measuring, never kept";
-/** Last day of every outbreak that is measured. */
-export const LAST_DAY = "2026-05-20";
+/**
+ * Last day of every outbreak that is measured: today in the zone of its investigation, so that the
+ * due lists hold what a running outbreak has. Runs of different days differ in dates only.
+ */
+export const LAST_DAY = dayIn("UTC", now());
 const SETTINGS = {
   monitoringDays: 14,
   infectiousBefore: 2,
@@ -68,10 +72,11 @@ export async function makeAccounts(
 }
 
 /**
- * An outbreak from the seeded generator, without its follow-up rows; a large one runs for more than
- * a year.
+ * An outbreak from the seeded generator; a large one runs for more than a year.
+ *
+ * @param followUpChecks true: with the daily checks of its contacts, else without any
  */
-export function benchOutbreak(seed: number, people: number) {
+export function benchOutbreak(seed: number, people: number, followUpChecks = false) {
   return generateOutbreak({
     seed,
     people,
@@ -79,7 +84,7 @@ export function benchOutbreak(seed: number, people: number) {
     lastDay: LAST_DAY,
     tracers: ["first", "second", "third"],
     pairsPerPerson: 3,
-    followUpChecks: false,
+    followUpChecks,
     ...SETTINGS,
   });
 }

@@ -1,3 +1,5 @@
+import { shiftDay } from "../../server/clock.ts";
+import { LAST_DAY } from "./bench-database.ts";
 import type { BenchClient } from "./http-client.ts";
 
 /** Twelve people named for the first time, different in each round. */
@@ -7,8 +9,8 @@ function contacts(round: number): Record<string, unknown>[] {
     phone: `+44 20 7946 ${String((round * 12 + index) % 10_000).padStart(4, "0")}`,
     setting: ["household", "workplace", "social"][index % 3],
     place: index % 3 === 1 ? "Bench Works" : null,
-    firstExposure: "2026-05-16",
-    lastExposure: "2026-05-18",
+    firstExposure: shiftDay(LAST_DAY, -4),
+    lastExposure: shiftDay(LAST_DAY, -2),
     minutes: 30 + index,
     physical: index % 2 === 0,
     indoors: true,

@@ -1,3 +1,5 @@
+import { shiftDay } from "../../server/clock.ts";
+import { LAST_DAY } from "./bench-database.ts";
 import type { BenchClient } from "./http-client.ts";
 import { spread } from "./http-client.ts";
 
@@ -16,7 +18,7 @@ const SORTS = ["", "onsetDate", "-onsetDate", "-reportDate", "studyNumber", "cla
 const FILTERS = [
   "classification=case",
   "classification=contact&interviewed=no",
-  "onsetFrom=2026-05-01&onsetTo=2026-05-14",
+  `onsetFrom=${shiftDay(LAST_DAY, -19)}&onsetTo=${shiftDay(LAST_DAY, -6)}`,
   "interviewState=complete",
   "followUp=no",
   "needs=interview",

@@ -90,27 +90,30 @@ end $$;
 
 -- People whose identity a tracer may open: held people, and contacts (not cases) of held cases.
 -- A case seen from a held contact stays a study number: a contact is not told who the case is.
+-- Held to indexes: with a few thousand of them the planner would read everybody instead.
 create or replace function core.ctx_named_people() returns uuid[]
-language plpgsql stable security definer set search_path = pg_catalog, pg_temp as $$
+language plpgsql stable security definer set search_path = pg_catalog, pg_temp
+set enable_seqscan = off as $$
 declare
   v_held uuid[] := core.ctx_held();
   v_cases uuid[];
+  v_near uuid[];
 begin
   v_cases := array(
-    select p.id from unnest(v_held) h (id)
-    join core.person p on p.id = h.id
-      and p.classification in ('confirmed', 'probable', 'suspected'));
+    select p.id from core.person p
+    where p.id = any (v_held) and p.classification in ('confirmed', 'probable', 'suspected'));
+  -- Whom a case met is often met by several: first who they are, then each looked up once.
+  v_near := array(
+    select cp.person_b from unnest(v_cases) h (id)
+    join core.contact_pair cp on cp.person_a = h.id and cp.withdrawn_at is null
+    union
+    select cp.person_a from unnest(v_cases) h (id)
+    join core.contact_pair cp on cp.person_b = h.id and cp.withdrawn_at is null);
   return array(
     select h.id from unnest(v_held) h (id)
     union
-    select p.id from unnest(v_cases) h (id)
-    join core.contact_pair cp on cp.person_a = h.id and cp.withdrawn_at is null
-    join core.person p on p.id = cp.person_b
-      and (p.classification is null or p.classification in ('contact', 'not_a_case'))
-    union
-    select p.id from unnest(v_cases) h (id)
-    join core.contact_pair cp on cp.person_b = h.id and cp.withdrawn_at is null
-    join core.person p on p.id = cp.person_a
+    select p.id from core.person p
+    where p.id = any (v_near)
       and (p.classification is null or p.classification in ('contact', 'not_a_case')));
 end $$;
 

@@ -88,6 +88,7 @@ returns table (person_id uuid, kinds smallint[])
 language plpgsql volatile security definer set search_path = pg_catalog, pg_temp as $$
 declare
   c record;
+  v_met uuid[];
   v_named uuid[];
 begin
   select * into c from core.ctx();
@@ -95,8 +96,16 @@ begin
   if not exists (select 1 from auth.field_right r where r.role = c.role and r.field = 'name') then
     raise insufficient_privilege using message = 'search not open to this role';
   end if;
-  -- A tracer's people are fewer than those who share a name: they are looked up among their own.
-  if c.role = 'tracer' then v_named := core.ctx_named_people(); end if;
+  if c.role = 'tracer' then
+    -- Of a few who are met each is asked; a tracer's people are fewer than those who share a name,
+    -- who are looked up among them.
+    v_met := array(
+      select distinct t.person_id from identity.search_token t
+      where t.investigation_id = c.investigation_id and t.token = any (p_all || p_any)
+      limit 201);
+    v_named := case when cardinality(v_met) > 200 then core.ctx_named_people()
+      else core.ctx_named_of(v_met) end;
+  end if;
   return query
     with hits as (
       select t.person_id, array_agg(distinct t.kind) as kinds,

@@ -1,9 +1,11 @@
--- Everyone under follow-up within the acting tracer's scope, with what the due list shows of them.
--- Who stands together is told as far as the tracer may open whose numbers are shared; neither number
--- nor token leaves the database. One function, because beside row security each of these joins would
--- search the whole scope again for every row.
+-- Everyone under follow-up within the acting tracer's scope, with what the due list shows of them;
+-- with days (YYYYMMDD as numbers) only who is listed as due between them, and those without a day 0.
+-- Who stands together is told as far as the tracer may open whose numbers are shared, whether those
+-- are listed or not; neither number nor token leaves the database. One function, because beside row
+-- security each of these joins would search the whole scope again for every row.
 drop function if exists identity.shared_phones(uuid[]);
-create or replace function core.followed_near()
+drop function if exists core.followed_near();
+create or replace function core.followed_near(p_first integer, p_last integer)
 returns table (person_id uuid, day_zero text, day_key integer, open boolean, symptomatic boolean,
   together text, study_number text, area text, classification text, assigned_account_id uuid,
   version integer, recorded_at timestamptz, mine boolean)
@@ -22,31 +24,38 @@ begin
   v_named := core.ctx_named_people();
   return query
     with named as materialized (select n.id from unnest(v_named) n (id)),
-    followed as materialized (
-      select f.person_id, f.day_zero, f.day_key, f.open, f.symptomatic, h.number, p.study_number,
-        p.area, p.classification, p.assigned_account_id, p.version, p.recorded_at
-      from unnest(v_people) u (id)
-      join core.follow_up f on f.person_id = u.id and f.investigation_id = c.investigation_id
-      join core.person p on p.id = f.person_id
-      left join core.place h on h.id = p.household_id),
+    near as materialized (
+      select f.person_id, f.day_zero, f.day_key, f.open, f.symptomatic, f.together
+      from core.follow_up f
+      where f.person_id = any (v_people) and f.investigation_id = c.investigation_id),
+    -- Without a word in core.follow_up nobody stands with anybody in the whole investigation.
     numbers as (
-      select f.person_id, count(*) over k as holders, min(f.number) over k as home,
-        min(f.person_id::text) over k as first
-      from followed f join named n on n.id = f.person_id
+      select f.person_id, t.token, count(*) over (partition by t.token) as holders
+      from near f join named n on n.id = f.person_id
       join identity.search_token t on t.person_id = f.person_id and t.kind = 1
-      window k as (partition by t.token)),
+      where f.together is not null),
+    shared as (
+      select m.person_id, min(h.number) over k as home, min(m.person_id::text) over k as first
+      from numbers m join core.person p on p.id = m.person_id
+      left join core.place h on h.id = p.household_id
+      where m.holders > 1
+      window k as (partition by m.token)),
     sharing as (
-      select m.person_id, min(m.home) as home, min(m.first) as first
-      from numbers m where m.holders > 1 group by m.person_id)
+      select s.person_id, min(s.home) as home, min(s.first) as first
+      from shared s group by s.person_id)
     select f.person_id, f.day_zero, f.day_key, f.open, f.symptomatic,
-      case when s.home is not null or f.number is not null
-          then 'household-' || coalesce(s.home, f.number)
+      case when s.home is not null or h.number is not null
+          then 'household-' || coalesce(s.home, h.number)
         when s.first is not null then 'phone-' || s.first end,
-      f.study_number, f.area, f.classification, f.assigned_account_id, f.version, f.recorded_at,
+      p.study_number, p.area, p.classification, p.assigned_account_id, p.version, p.recorded_at,
       n.id is not null
-    from followed f
+    from near f
+    join core.person p on p.id = f.person_id
+    left join core.place h on h.id = p.household_id and f.together is not null
     left join sharing s on s.person_id = f.person_id
-    left join named n on n.id = f.person_id;
+    left join named n on n.id = f.person_id
+    where p_first is null
+      or f.open and (f.day_key between p_first and p_last or f.symptomatic or f.day_key = 99991231);
 end $$;
 
 -- Keeps the sealed note of a check that the acting person has just recorded.

@@ -84,7 +84,7 @@ export const person = core.table(
   },
   (t) => [
     uniqueIndex("person_study_number").on(t.investigationId, t.studyNumber),
-    // One for each order that the line list offers at first sight: any page of it, and its total, are
+    // One for each order that somebody works in: any page of it, and its total, are
     // then read from the index alone. Other orders are sorted for each question.
     listOrder("recorded", t.investigationId, t.recordedAt, t),
     listOrder("study", t.investigationId, t.studyNumber, t),
@@ -96,6 +96,10 @@ export const person = core.table(
     listOrder("area", t.investigationId, t.area, t),
     listOrder("result", t.investigationId, t.result, t),
     listOrder("interview", t.investigationId, t.interviewState, t),
+    listOrder("occupation", t.investigationId, t.occupation, t),
+    listOrder("outcome", t.investigationId, t.outcome, t),
+    listOrder("specimen", t.investigationId, t.specimenDate, t),
+    listOrder("isolation", t.investigationId, t.isolationDate, t),
     index("person_household").on(t.householdId),
     index("person_assigned").on(t.assignedAccountId),
     index("person_team").on(t.assignedTeamId),

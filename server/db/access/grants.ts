@@ -45,7 +45,7 @@ const FUNCTIONS: Record<string, readonly (Role | "system" | "auth")[]> = {
   "core.ends_written()": [],
   "identity.tokens_added()": [],
   "identity.tokens_dropped()": [],
-  "core.followed_near()": ["tracer"],
+  "core.followed_near(integer, integer)": ["tracer"],
   "core.has_demo_members()": ["supervisor", "officer"],
   "core.empty_practice()": ["supervisor"],
   "identity.put_check_note(uuid, bytea)": ["tracer", "supervisor"],

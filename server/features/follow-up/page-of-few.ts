@@ -1,5 +1,5 @@
 import { type SQL, sql } from "drizzle-orm";
-import { dayKey, isShown, type ListQuestion, NO_DAY } from "./shown.ts";
+import { dayKey, dueKeys, isShown, type ListQuestion, NO_DAY } from "./shown.ts";
 
 /**
  * One page in any order, from reading every contact that is shown: `counted` and `undated` (n), and
@@ -15,8 +15,9 @@ export function pageOfFew(
 ): SQL {
   const { by, met, near } = choice;
   const direction = sql.raw(question.down ? "desc" : "asc");
+  const [first, last] = question.show === "due" ? dueKeys(question) : [null, null];
   const people = near
-    ? sql`select f.* from core.followed_near() f`
+    ? sql`select f.* from core.followed_near(${first}::integer, ${last}::integer) f`
     : sql`select f.person_id, f.day_zero, f.day_key, f.open, f.symptomatic, f.together,
             p.study_number, p.area, p.classification, p.assigned_account_id, p.version,
             p.recorded_at, true as mine

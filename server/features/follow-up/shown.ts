@@ -23,16 +23,20 @@ export const dayKey = (alias: string): SQL => sql.raw(`${alias}.day_key`);
 
 const keyOf = (day: string): number => Number(day.replaceAll("-", ""));
 
+/** Days 0 of those due today, first and last, as numbers. */
+export function dueKeys({ today, monitoringDays }: ListQuestion): readonly [number, number] {
+  return [keyOf(shiftDay(today, -monitoringDays)), keyOf(shiftDay(today, -1))];
+}
+
 /**
  * Which rows a list shows by their days alone: contacts whose day today is 1 … M; all with a day 0;
  * those past day M, or whose follow-up ended otherwise; those without a day 0.
  */
 export function inDays(alias: string, question: ListQuestion): SQL {
-  const { show, today, monitoringDays } = question;
+  const { show } = question;
   const key = dayKey(alias);
   const open = sql.raw(`${alias}.open`);
-  const first = sql`${keyOf(shiftDay(today, -monitoringDays))}::integer`;
-  const last = sql`${keyOf(shiftDay(today, -1))}::integer`;
+  const [first, last] = dueKeys(question).map((day) => sql`${day}::integer`) as [SQL, SQL];
   if (show === "due") return sql`${open} and ${key} between ${first} and ${last}`;
   if (show === "ended") return sql`(${key} < ${first} or not ${open})`;
   if (show === "without_day_zero") return sql`${open} and ${key} = ${NO_DAY}`;

@@ -59,47 +59,76 @@ interface Slice {
   offset: number;
 }
 
-async function idsOf(tx: Tx, where: SQL, order: SQL, { limit, offset }: Slice): Promise<string[]> {
-  if (limit <= 0) return [];
+/** Which rows are asked for, in which of their orders. */
+interface Run {
+  where: SQL;
+  by: SQL;
+  down: boolean;
+  /** How many rows there are, where that is known. */
+  total: number | null;
+}
+
+/**
+ * Ids of a slice, in the order of an index. What lies in the second half is read from the end, so
+ * that no page walks over more than half of everybody.
+ */
+async function idsOf(
+  tx: Tx,
+  { where, by, down, total }: Run,
+  { limit, offset }: Slice,
+): Promise<string[]> {
+  const count = total === null ? limit : Math.min(limit, total - offset);
+  if (count <= 0) return [];
+  const fromEnd = total !== null && offset > total / 2;
+  const order =
+    down !== fromEnd ? sql`${by} desc nulls first, p.id desc` : sql`${by} asc nulls last, p.id asc`;
+  const skip = fromEnd ? total - offset - count : offset;
   const found = await tx.execute<{ id: string }>(
-    sql`select p.id from core.person p where ${where} order by ${order} limit ${limit} offset ${offset}`,
+    sql`select p.id from core.person p where ${where} order by ${order} limit ${count} offset ${skip}`,
   );
-  return found.rows.map((row) => row.id);
+  const ids = found.rows.map((row) => row.id);
+  return fromEnd ? ids.reverse() : ids;
 }
 
 /**
  * Ids of one page. Downwards, people without a value still come last, which no index read backwards
  * gives: the two parts are asked for one after the other, each in the order of the same index.
  *
- * @param known how many of them have a value to sort by
+ * @param total how many there are, with and without a value
  */
 async function pageIds(
   tx: Tx,
   where: SQL,
   { by, down }: Order,
-  { limit, offset }: Slice,
-  known: number,
+  slice: Slice,
+  total: number,
 ): Promise<string[]> {
-  if (!down) return idsOf(tx, where, sql`${by}, p.id`, { limit, offset });
-  const order = sql`${by} desc, p.id desc`;
-  const first = await idsOf(tx, sql`${where} and ${by} is not null`, order, {
-    limit: Math.min(limit, Math.max(0, known - offset)),
-    offset,
-  });
-  const rest = await idsOf(tx, sql`${where} and ${by} is null`, order, {
-    limit: limit - first.length,
-    offset: Math.max(0, offset - known),
-  });
+  if (!down) return idsOf(tx, { where, by, down, total }, slice);
+  const known = { where: sql`${where} and ${by} is not null`, by, down };
+  const first = await idsOf(tx, { ...known, total: null }, slice);
+  const missing = Math.min(slice.limit, total - slice.offset) - first.length;
+  if (missing <= 0) return first;
+  // Where the first part ends here its length is known; else it is counted.
+  const before =
+    first.length > 0 || slice.offset === 0
+      ? slice.offset + first.length
+      : await countOf(tx, known.where);
+  const rest = await idsOf(
+    tx,
+    { where: sql`${where} and ${by} is null`, by, down, total: total - before },
+    { limit: missing, offset: Math.max(0, slice.offset - before) },
+  );
   return [...first, ...rest];
 }
 
 type Page = { rows: CorePerson[]; total: number };
 
-async function counts(tx: Tx, where: SQL, { by }: Order) {
-  const counted = await tx.execute<{ total: number; known: number }>(
-    sql`select count(*)::int as total, count(${by})::int as known from core.person p where ${where}`,
+async function countOf(tx: Tx, where: SQL): Promise<number> {
+  // Nothing else beside it: a count alone is read from whichever index is smallest.
+  const counted = await tx.execute<{ total: number }>(
+    sql`select count(*)::int as total from core.person p where ${where}`,
   );
-  return counted.rows[0] ?? { total: 0, known: 0 };
+  return counted.rows[0]?.total ?? 0;
 }
 
 /**
@@ -107,9 +136,8 @@ async function counts(tx: Tx, where: SQL, { by }: Order) {
  * the order; the rest of the rows is read for those alone.
  */
 async function pageOfAll(tx: Tx, actor: Actor, where: SQL, order: Order, slice: Slice) {
-  const { total, known } = await counts(tx, where, order);
-  const limit = Math.min(slice.limit, Math.max(0, total - slice.offset));
-  const ids = await pageIds(tx, where, order, { ...slice, limit }, known);
+  const total = await countOf(tx, where);
+  const ids = slice.offset < total ? await pageIds(tx, where, order, slice, total) : [];
   const found = new Map(
     (await peopleById(tx, actor.role, ids)).map((person) => [person.id, person]),
   );
@@ -136,7 +164,7 @@ async function pageInSight(tx: Tx, actor: Actor, where: SQL, order: Order, slice
   );
   const [first] = found.rows;
   if (first) return { rows: found.rows, total: first.total };
-  return { rows: [], total: slice.offset === 0 ? 0 : (await counts(tx, where, order)).total };
+  return { rows: [], total: slice.offset === 0 ? 0 : await countOf(tx, where) };
 }
 
 /** One page of the line list, and how many it has in all. */

@@ -58,11 +58,12 @@ export async function presentPeople(
       households = await openPlaces(tx, keys, places);
     }
   }
-  const masked = await maskedOf(
-    tx,
-    actor.role,
-    rows.map((row) => row.id),
-  );
+  const forms = IDENTITY_FIELDS.flatMap((field) => {
+    const access = field.access[actor.role];
+    return (access === "masked" && field.masked) || (access === "coarse" && field.coarse) || [];
+  });
+  const ids = forms.length > 0 ? rows.map((row) => row.id) : [];
+  const masked = await maskedOf(tx, actor.role, ids);
   const allowed = personKeys(actor.role);
   return rows.map((row) => {
     const identity = row.mine ? (opened.get(row.id) ?? {}) : undefined;
@@ -74,15 +75,7 @@ export async function presentPeople(
     if (identity && allowed.includes("household") && wanted.length > 0) {
       out.household = row.householdId ? (households.get(row.householdId) ?? null) : null;
     }
-    for (const field of IDENTITY_FIELDS) {
-      const form =
-        field.access[actor.role] === "masked"
-          ? field.masked
-          : field.access[actor.role] === "coarse"
-            ? field.coarse
-            : undefined;
-      if (form) out[form.key] = masked.get(row.id)?.[form.column] ?? null;
-    }
+    for (const form of forms) out[form.key] = masked.get(row.id)?.[form.column] ?? null;
     out.diedDate = row.outcome === "died" ? row.outcomeDate : null;
     out.can = abilities(actor, row);
     return out;

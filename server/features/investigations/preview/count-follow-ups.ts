@@ -58,13 +58,15 @@ export async function loadContacts(
   today: string,
   [short, long]: readonly [number, number],
 ): Promise<AlikeContacts[]> {
-  const due = (days: number) => sql`((l.day_zero::date + ${days}::int)::text)`;
+  // Once for each contact, not for each of their checks.
+  const lastDue = (days: number) => sql`(d.day_zero::date + ${days}::int)::text collate "C"`;
   const reached = sql`k.outcome <> 'not_reached' and k.day <= ${today}`;
   const found = await tx.execute<{ rows: Row[] | null }>(
     sql`with listed as materialized (
           select p.id, p.classification, d.day_zero, d.open, d.symptomatic,
             greatest((p.recorded_at at time zone ${settings.timeZone})::date + 1,
-              r.reopened)::text as expected_from
+              r.reopened)::text collate "C" as expected_from,
+            ${lastDue(short)} as last_short, ${lastDue(long)} as last_long
           from core.follow_up d join core.person p on p.id = d.person_id
           left join (
             select e.person_id, max((e.withdrawn_at at time zone ${settings.timeZone})::date)
@@ -76,8 +78,8 @@ export async function loadContacts(
         checked as materialized (
           select k.person_id,
             max(k.day collate "C") filter (where k.outcome in ('seen', 'spoken')) as seen,
-            max(k.day collate "C") filter (where ${reached} and k.day <= ${due(short)}) as short,
-            max(k.day collate "C") filter (where ${reached} and k.day <= ${due(long)}) as long,
+            max(k.day collate "C") filter (where ${reached} and k.day <= l.last_short) as short,
+            max(k.day collate "C") filter (where ${reached} and k.day <= l.last_long) as long,
             string_agg(k.day, ' ') filter (where k.outcome = 'not_reached'
               and (k.day = ${today} or k.day < l.expected_from)) as missed
           from core.follow_check k join listed l on l.id = k.person_id

@@ -143,11 +143,13 @@ async function countedThere(tx: Tx, change: ChangeOfSettings, key: SettingKey): 
 
 /**
  * Lets this transaction read tables whole: everything is counted, so an index is the long way, but
- * the planner, who cannot see into functions, takes a hundred thousand contacts for a hundred.
+ * the planner, who cannot see into functions, takes a hundred thousand contacts for a hundred. Who asks what a
+ * change would move waits for it: on a busy machine it may take longer than other answers may.
  */
 async function readWhole(tx: Tx): Promise<void> {
   await tx.execute(
-    sql`select set_config('enable_nestloop', 'off', true), set_config('work_mem', '64MB', true)`,
+    sql`select set_config('enable_nestloop', 'off', true), set_config('work_mem', '64MB', true),
+      set_config('statement_timeout', '30s', true)`,
   );
 }
 

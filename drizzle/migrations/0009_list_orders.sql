@@ -1,0 +1,4 @@
+CREATE INDEX "person_list_occupation" ON "core"."person" USING btree ("investigation_id","occupation","id") WHERE "core"."person"."withdrawn_at" is null;--> statement-breakpoint
+CREATE INDEX "person_list_outcome" ON "core"."person" USING btree ("investigation_id","outcome","id") WHERE "core"."person"."withdrawn_at" is null;--> statement-breakpoint
+CREATE INDEX "person_list_specimen" ON "core"."person" USING btree ("investigation_id","specimen_date","id") WHERE "core"."person"."withdrawn_at" is null;--> statement-breakpoint
+CREATE INDEX "person_list_isolation" ON "core"."person" USING btree ("investigation_id","isolation_date","id") WHERE "core"."person"."withdrawn_at" is null;
