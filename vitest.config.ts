@@ -24,6 +24,7 @@ export default defineConfig({
         test: {
           ...common,
           name: "client",
+          setupFiles: [...common.setupFiles, "tests/client/support/patience.ts"],
           environment: "jsdom",
           include: ["tests/client/**/*.test.{ts,tsx}"],
           // Typing key by key into a page is slow where other work shares the processor.
