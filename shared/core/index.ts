@@ -2,10 +2,22 @@
  * The numeric core: typed arrays in, numbers and typed arrays out. It imports nothing outside its
  * folder and reads no clock; what is random comes from a seed and the number of a replicate.
  */
+export { type Articulation, articulation } from "./graph/articulation.ts";
 export { buildGraph, type Graph, type PairEnds } from "./graph/build-graph.ts";
-export { type Components, components } from "./graph/components.ts";
+export {
+  type Communities,
+  type CommunityStart,
+  communities,
+  communitySearch,
+  FEWEST_STARTS,
+} from "./graph/communities.ts";
+export { type Components, components, connectedParts } from "./graph/components.ts";
+export { coreNumbers } from "./graph/core-numbers.ts";
 export { type InducedSubgraph, inducedSubgraph } from "./graph/induced-subgraph.ts";
 export { UnionFind, type UnionResult } from "./graph/union-find.ts";
+export { attributeAssortativity } from "./measures/attribute-assortativity.ts";
+export { type Clustering, clustering } from "./measures/clustering.ts";
+export { colemanHomophily, type Homophily } from "./measures/coleman-homophily.ts";
 export {
   connectedProbability,
   connectivityLimit,
@@ -14,6 +26,7 @@ export {
   MOST_PEOPLE_EXACT,
 } from "./measures/connectivity.ts";
 export { countedPairs } from "./measures/counted-pairs.ts";
+export { degreeAssortativity } from "./measures/degree-assortativity.ts";
 export { degreeCounts } from "./measures/degree-counts.ts";
 export {
   type DegreeBin,
@@ -36,6 +49,7 @@ export { degreeVariance } from "./measures/degree-variance.ts";
 export { density, possiblePairs } from "./measures/density.ts";
 export { type Dispersion, dispersion } from "./measures/dispersion.ts";
 export { type DistanceEstimates, distanceEstimates } from "./measures/distance-estimates.ts";
+export { type EiIndex, eiIndex } from "./measures/ei-index.ts";
 export { excessDegreeRatio, meanExcessDegree } from "./measures/excess-degree.ts";
 export { expectedIsolatesGnm, expectedIsolatesGnp } from "./measures/expected-isolates.ts";
 export {
@@ -50,6 +64,8 @@ export { meanDegree } from "./measures/mean-degree.ts";
 export { type MeanDegreeIntervals, meanDegreeIntervals } from "./measures/mean-degree-intervals.ts";
 export { meanDegreeInterviewed } from "./measures/mean-degree-interviewed.ts";
 export type { Measured, UndefinedReason } from "./measures/measured.ts";
+export { MISSING_GROUP, type MixingCounts, mixingCounts } from "./measures/mixing-counts.ts";
+export { modularity } from "./measures/modularity.ts";
 export {
   type DirectedMeasure,
   type Direction,
@@ -83,7 +99,7 @@ export {
   threshold,
 } from "./measures/threshold.ts";
 export { transitivity } from "./measures/transitivity.ts";
-export { triangles } from "./measures/triangles.ts";
+export { triangles, trianglesByPerson } from "./measures/triangles.ts";
 export { twoPaths } from "./measures/two-paths.ts";
 export { type Region, regionsMet, type Verdict, verdictOf } from "./measures/verdict.ts";
 export { createStream, type RandomStream, Xoshiro } from "./random/random-stream.ts";

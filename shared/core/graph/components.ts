@@ -1,4 +1,5 @@
 import type { Graph } from "./build-graph.ts";
+import { labelsBySize } from "./labels-by-size.ts";
 
 /** Connected groups of a graph. Labels run 0, 1, 2, … by size descending, then smallest person. */
 export type Components = {
@@ -21,7 +22,6 @@ export function components(graph: Graph): Components {
   const queue = new Int32Array(n);
   const foundSizes = new Int32Array(n);
   let found = 0;
-  let largest = 0;
   for (let seed = 0; seed < n; seed++) {
     if (component[seed]! >= 0) continue;
     component[seed] = found;
@@ -40,21 +40,46 @@ export function components(graph: Graph): Components {
       }
     }
     foundSizes[found++] = tail;
-    if (tail > largest) largest = tail;
   }
+  return labelsBySize(component, foundSizes, found);
+}
 
-  // Groups were found by smallest person; a stable counting sort by size keeps that as the tie.
-  const starts = new Int32Array(largest + 2);
-  for (let g = 0; g < found; g++) starts[largest - foundSizes[g]! + 1]!++;
-  for (let s = 1; s < starts.length; s++) starts[s]! += starts[s - 1]!;
-  const label = new Int32Array(found);
-  const sizes = new Int32Array(found);
-  for (let g = 0; g < found; g++) {
-    const size = foundSizes[g]!;
-    const place = starts[largest - size]!++;
-    label[g] = place;
-    sizes[place] = size;
+/**
+ * The connected parts of each group of a partition: people are in one part when a chain of contacts
+ * within their group joins them. A partition whose groups are connected comes back as it was, with
+ * its labels in order.
+ *
+ * @param membership label of each person's group; any whole numbers
+ * @throws RangeError when the labels do not match the people
+ *
+ * Cost: O(n + m).
+ */
+export function connectedParts(graph: Graph, membership: Int32Array): Components {
+  const { n, offsets, neighbours } = graph;
+  if (membership.length !== n) throw new RangeError("membership must hold one label per person");
+  const component = new Int32Array(n).fill(-1);
+  const queue = new Int32Array(n);
+  const foundSizes = new Int32Array(n);
+  let found = 0;
+  for (let seed = 0; seed < n; seed++) {
+    if (component[seed]! >= 0) continue;
+    const group = membership[seed]!;
+    component[seed] = found;
+    queue[0] = seed;
+    let head = 0;
+    let tail = 1;
+    while (head < tail) {
+      const u = queue[head++]!;
+      const end = offsets[u + 1]!;
+      for (let k = offsets[u]!; k < end; k++) {
+        const v = neighbours[k]!;
+        if (component[v]! < 0 && membership[v] === group) {
+          component[v] = found;
+          queue[tail++] = v;
+        }
+      }
+    }
+    foundSizes[found++] = tail;
   }
-  for (let u = 0; u < n; u++) component[u] = label[component[u]!]!;
-  return { component, sizes };
+  return labelsBySize(component, foundSizes, found);
 }
