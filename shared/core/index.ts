@@ -13,9 +13,27 @@ export {
 } from "./graph/communities.ts";
 export { type Components, components, connectedParts } from "./graph/components.ts";
 export { coreNumbers } from "./graph/core-numbers.ts";
+export { foldLeaves } from "./graph/fold-leaves.ts";
 export { type InducedSubgraph, inducedSubgraph } from "./graph/induced-subgraph.ts";
+export { type Relabelled, searchOrder } from "./graph/search-order.ts";
+export { SOURCE_CHUNKS } from "./graph/source-chunks.ts";
 export { UnionFind, type UnionResult } from "./graph/union-find.ts";
 export { attributeAssortativity } from "./measures/attribute-assortativity.ts";
+export {
+  addChunks,
+  type BetweennessPlan,
+  betweenness,
+  betweennessChunk,
+  betweennessPlan,
+  normalisedBetweenness,
+} from "./measures/betweenness.ts";
+export {
+  type Closeness,
+  type ClosenessSums,
+  closeness,
+  closenessChunk,
+  closenessOf,
+} from "./measures/closeness.ts";
 export { type Clustering, clustering } from "./measures/clustering.ts";
 export { colemanHomophily, type Homophily } from "./measures/coleman-homophily.ts";
 export {
@@ -50,6 +68,13 @@ export { density, possiblePairs } from "./measures/density.ts";
 export { type Dispersion, dispersion } from "./measures/dispersion.ts";
 export { type DistanceEstimates, distanceEstimates } from "./measures/distance-estimates.ts";
 export { type EiIndex, eiIndex } from "./measures/ei-index.ts";
+export {
+  EIGENVECTOR_STEPS,
+  EIGENVECTOR_TOLERANCE,
+  type EigenvectorCentrality,
+  eigenvectorCentrality,
+} from "./measures/eigenvector-centrality.ts";
+export type { Estimate, EstimatePerPerson } from "./measures/estimate.ts";
 export { excessDegreeRatio, meanExcessDegree } from "./measures/excess-degree.ts";
 export { expectedIsolatesGnm, expectedIsolatesGnp } from "./measures/expected-isolates.ts";
 export {
@@ -79,6 +104,13 @@ export {
   networkReport,
   type ReportOptions,
 } from "./measures/network-report.ts";
+export {
+  addDistances,
+  EXACT_UP_TO_PEOPLE,
+  type PathFigures,
+  pathFigures,
+  pathFiguresOf,
+} from "./measures/path-figures.ts";
 export { type Percolation, percolation, transmissibility } from "./measures/percolation.ts";
 export {
   type CriticalWindow,
@@ -89,6 +121,16 @@ export {
 } from "./measures/random-mixing-groups.ts";
 export { recall } from "./measures/recall.ts";
 export { removalThresholdDegrees, removalThresholdMixing } from "./measures/removal-thresholds.ts";
+export {
+  addSampledChunks,
+  type DrawnSources,
+  drawSources,
+  type SampledChunk,
+  sampledBetweenness,
+  sampledBetweennessChunk,
+} from "./measures/sampled-betweenness.ts";
+export { sampledCloseness } from "./measures/sampled-closeness.ts";
+export { type SampledPathFigures, sampledPathFigures } from "./measures/sampled-path-figures.ts";
 export {
   FEWEST_FOR_VERDICT,
   FULL_COVERAGE,
@@ -102,6 +144,7 @@ export { transitivity } from "./measures/transitivity.ts";
 export { triangles, trianglesByPerson } from "./measures/triangles.ts";
 export { twoPaths } from "./measures/two-paths.ts";
 export { type Region, regionsMet, type Verdict, verdictOf } from "./measures/verdict.ts";
+export { drawPeople } from "./random/draw-people.ts";
 export { createStream, type RandomStream, Xoshiro } from "./random/random-stream.ts";
 export { binomialCdf, binomialPmf, binomialQuantile, binomialUpper } from "./stats/binomial-law.ts";
 export { chiSquaredCdf, chiSquaredQuantile, chiSquaredUpper } from "./stats/chi-squared-law.ts";

@@ -23,6 +23,10 @@ const words: Record<UndefinedReason, string> = {
   not_below_threshold: "it has a meaning below the threshold only",
   no_further_pairs: "nobody who is reached has a further contact pair",
   too_many_people: "there are too many people to work it out exactly",
+  no_reachable_pairs: "nobody here is connected to anybody",
+  fewer_than_three_people: "there are fewer than three people in this population",
+  not_converged: "the calculation did not settle within its limit of steps",
+  sample_too_small: "nobody in the sample drawn is connected to anybody",
 };
 
 /** Why a figure is missing or its verdict withheld, in words; undefined without a reason. */

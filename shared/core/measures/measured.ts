@@ -20,19 +20,26 @@ export type UndefinedReason =
   | "not_above_threshold"
   | "not_below_threshold"
   | "no_further_pairs"
-  | "too_many_people";
+  | "too_many_people"
+  | "no_reachable_pairs"
+  | "fewer_than_three_people"
+  | "not_converged"
+  | "sample_too_small";
 
-/** A number, or `null` with the reason; never NaN, and never 0 standing in for "undefined". */
-export type Measured =
-  | { readonly value: number; readonly reason: null }
+/** A value, or `null` with the reason; never NaN, and never 0 standing in for "undefined". */
+export type Measured<T = number> =
+  | { readonly value: T; readonly reason: null }
   | { readonly value: null; readonly reason: UndefinedReason };
 
 /** Wraps a defined value. */
-export function defined(value: number): Measured {
+export function defined<T>(value: T): Measured<T> {
   return { value, reason: null };
 }
 
 /** Wraps an undefined value with its reason. */
-export function undefinedBecause(reason: UndefinedReason): Measured {
+export function undefinedBecause(reason: UndefinedReason): {
+  readonly value: null;
+  readonly reason: UndefinedReason;
+} {
   return { value: null, reason };
 }
