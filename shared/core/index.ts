@@ -144,8 +144,39 @@ export { transitivity } from "./measures/transitivity.ts";
 export { triangles, trianglesByPerson } from "./measures/triangles.ts";
 export { twoPaths } from "./measures/two-paths.ts";
 export { type Region, regionsMet, type Verdict, verdictOf } from "./measures/verdict.ts";
+export {
+  BURN_IN_PER_PAIR,
+  degreePreservingSampler,
+} from "./null-models/degree-preserving-sampler.ts";
+export { gnmSampler } from "./null-models/gnm-sampler.ts";
+export { gnpSampler } from "./null-models/gnp-sampler.ts";
+export { householdSampler } from "./null-models/household-sampler.ts";
+export { mixingSampler } from "./null-models/mixing-sampler.ts";
+export { type NullModel, samplerOf } from "./null-models/null-model.ts";
+export { onlyGraph } from "./null-models/only-graph.ts";
+export { pairAt, type TwoEnds } from "./null-models/pair-at.ts";
+export { PairSet } from "./null-models/pair-set.ts";
+export {
+  ReplicateStatistics,
+  rowWidth,
+  STATISTICS,
+  type Statistic,
+  type StatisticsChoice,
+} from "./null-models/replicate-statistics.ts";
+export {
+  observedRow,
+  type ReplicatePlan,
+  type ReplicateRunner,
+  replicateRange,
+  replicateRunner,
+} from "./null-models/run-replicates.ts";
+export type { SampledNetwork, Sampler } from "./null-models/sampled-network.ts";
+export { SwapChain } from "./null-models/swap-chain.ts";
+export { type TracedRecord, tracedDesign } from "./null-models/traced-design.ts";
+export { type TracedDesign, tracedSampler } from "./null-models/traced-sampler.ts";
 export { drawPeople } from "./random/draw-people.ts";
 export { createStream, type RandomStream, Xoshiro } from "./random/random-stream.ts";
+export { benjaminiHochberg, holm } from "./stats/adjusted-p.ts";
 export { binomialCdf, binomialPmf, binomialQuantile, binomialUpper } from "./stats/binomial-law.ts";
 export { chiSquaredCdf, chiSquaredQuantile, chiSquaredUpper } from "./stats/chi-squared-law.ts";
 export { clopperPearsonInterval } from "./stats/clopper-pearson-interval.ts";
@@ -171,6 +202,7 @@ export { inverseBetaLower, inverseBetaUpper } from "./stats/inverse-beta.ts";
 export { inverseGammaLower, inverseGammaUpper } from "./stats/inverse-gamma.ts";
 export { lambertGiantShare } from "./stats/lambert-giant-share.ts";
 export { lnGamma } from "./stats/ln-gamma.ts";
+export { type MonteCarloP, monteCarloP, TIE_TOLERANCE } from "./stats/monte-carlo-p.ts";
 export {
   negativeBinomialCdf,
   negativeBinomialPmf,
@@ -178,7 +210,11 @@ export {
   negativeBinomialUpper,
 } from "./stats/negative-binomial-law.ts";
 export { normalCdf, normalQuantile, normalUpper } from "./stats/normal-law.ts";
+export { type Envelope, pointwiseEnvelope } from "./stats/pointwise-envelope.ts";
 export { poissonCdf, poissonPmf, poissonQuantile, poissonUpper } from "./stats/poisson-law.ts";
+export { quantile } from "./stats/quantile.ts";
+export { FEWEST_FOR_ENVELOPE, type RankEnvelope, rankEnvelope } from "./stats/rank-envelope.ts";
+export { type ReplicateSummary, replicateSummary } from "./stats/replicate-summary.ts";
 export { studentCdf, studentQuantile } from "./stats/student-law.ts";
 export { type Interval, wilsonInterval, Z_95 } from "./stats/wilson-interval.ts";
 export { dayNumber, dayString, MISSING_DAY } from "./time/day-number.ts";

@@ -61,6 +61,19 @@ describe("createStream", () => {
     }
   });
 
+  it("fills arrays with what single draws give", () => {
+    for (const n of [1, 2, 7, 10_000, 2 ** 21, 2 ** 21 + 1, 2 ** 31]) {
+      const one = createStream(4, n % 997);
+      const many = createStream(4, n % 997);
+      const out = new Int32Array(500);
+      many.fillBelow(n, out, 100, 400);
+      const wanted = Array.from({ length: 300 }, () => one.below(n));
+      expect([...out.subarray(100, 400)]).toEqual(wanted);
+      expect([out[99], out[400]]).toEqual([0, 0]);
+      expect(many.next()).toBe(one.next());
+    }
+  });
+
   it("refuses a seed or a stream that is no whole number in range", () => {
     for (const [seed, stream] of [
       [-1, 0],

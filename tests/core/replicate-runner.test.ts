@@ -1,0 +1,153 @@
+import { describe, expect, it } from "vitest";
+import { runInWorkers } from "../../server/analysis/replicates/run-in-workers.ts";
+import {
+  BURN_IN_PER_PAIR,
+  type NullModel,
+  type ReplicatePlan,
+  replicateRange,
+  replicateRunner,
+  rowWidth,
+} from "../../shared/core/index.ts";
+import { endsOf } from "./support/graphs.ts";
+import { karate } from "./support/published-networks.ts";
+
+const { n, links } = karate();
+const pairs = endsOf(links);
+const classOf = Int32Array.from({ length: n }, (_, u) => u % 3);
+
+const MODELS: NullModel[] = [
+  { kind: "gnp", n, p: 0.14 },
+  { kind: "gnm", n, m: 78 },
+  { kind: "degreePreserving", n, pairs, isInterviewed: null, proposalsPerPair: BURN_IN_PER_PAIR },
+  { kind: "mixing", pairs, classOf },
+  { kind: "household", pairs, householdOf: classOf },
+  {
+    kind: "traced",
+    design: {
+      population: 500,
+      interviews: 40,
+      pairProbability: 0.006,
+      recall: 0.8,
+      tracedShare: 0.7,
+    },
+  },
+];
+
+const planOf = (model: NullModel, seed = 9): ReplicatePlan => ({
+  seed,
+  model,
+  statistics: ["groups", "largestGroup", "transitivity", "degreeAssortativity", "degreeVariance"],
+  degreeBins: 8,
+  sizeBins: 5,
+  attribute: null,
+});
+
+const bytesOf = (table: Float64Array) =>
+  Buffer.from(table.buffer, table.byteOffset, table.byteLength).toString("hex");
+
+/** The table filled by ranges that end at the given replicates, taken in the given order. */
+function inRanges(plan: ReplicatePlan, cuts: readonly number[], backwards = false): Float64Array {
+  const width = rowWidth(plan);
+  const table = new Float64Array((cuts.at(-1) ?? 0) * width);
+  const ranges = cuts.map((to, at) => [at === 0 ? 0 : (cuts[at - 1] ?? 0), to] as const);
+  if (backwards) ranges.reverse();
+  for (const [from, to] of ranges) {
+    replicateRange(plan, from, to, (replicate, row) => {
+      table.set(row, replicate * width);
+      return true;
+    });
+  }
+  return table;
+}
+
+describe.each(MODELS)("replicates of $kind", (model) => {
+  it("are the same bytes however they are shared out, and change with the seed", () => {
+    const whole = bytesOf(inRanges(planOf(model), [24]));
+    expect(bytesOf(inRanges(planOf(model), [12, 24], true))).toBe(whole);
+    expect(bytesOf(inRanges(planOf(model), [1, 4, 7, 8, 15, 16, 23, 24], true))).toBe(whole);
+    expect(bytesOf(inRanges(planOf(model, 10), [24]))).not.toBe(whole);
+  });
+});
+
+describe("replicateRange", () => {
+  it("stops when told to, and refuses a range that is none", () => {
+    const plan = planOf(MODELS[1] as NullModel);
+    const seen: number[] = [];
+    replicateRange(plan, 3, 10, (replicate) => {
+      seen.push(replicate);
+      return replicate < 5;
+    });
+    expect(seen).toEqual([3, 4, 5]);
+    expect(() => replicateRange(plan, 2, 1, () => true)).toThrow(RangeError);
+    expect(() => replicateRunner({ ...plan, seed: -1 })).toThrow(/seed/);
+    expect(() => replicateRunner({ ...plan, degreeBins: 0.5 })).toThrow(/bins/);
+  });
+});
+
+describe("worker threads", () => {
+  const plan = planOf({ kind: "gnm", n: 400, m: 800 });
+
+  it("fill the same table with 1, 2 and 8 of them, and with none", async () => {
+    const alone = bytesOf(inRanges(plan, [60]));
+    for (const workers of [1, 2, 8]) {
+      const progress: number[] = [];
+      const run = await runInWorkers(plan, {
+        replicates: 60,
+        workers,
+        onProgress: (done) => progress.push(done),
+      });
+      expect([run.reached, run.stopped, run.width]).toEqual([60, null, 18]);
+      expect(bytesOf(run.table)).toBe(alone);
+      expect(progress.at(-1)).toBe(60);
+      expect([...progress].sort((x, y) => x - y)).toEqual(progress);
+    }
+  });
+
+  /** Far more work than a test waits for. */
+  const endless = { replicates: 100_000, workers: 2 };
+  const slow = planOf({ kind: "gnm", n: 20_000, m: 40_000 });
+
+  it("keep a beginning without gaps when cancelled", async () => {
+    const cancel = new AbortController();
+    const run = await runInWorkers(slow, {
+      ...endless,
+      signal: cancel.signal,
+      onProgress: (done) => {
+        if (done > 3) cancel.abort();
+      },
+    });
+    expect(run.stopped).toBe("cancel");
+    expect(run.reached).toBeGreaterThan(3);
+    expect(run.reached).toBeLessThan(endless.replicates);
+    expect(bytesOf(run.table.subarray(0, 4 * run.width))).toBe(bytesOf(inRanges(slow, [4])));
+    // The last row reached is whole, too.
+    const last = run.reached - 1;
+    replicateRange(slow, last, run.reached, (_, row) => {
+      expect(bytesOf(run.table.slice(last * run.width))).toBe(bytesOf(row));
+      return true;
+    });
+  });
+
+  it("stop at the time cap and say how far they came", async () => {
+    const run = await runInWorkers(slow, { ...endless, capMs: 1500 });
+    expect(run.stopped).toBe("cap");
+    expect(run.reached).toBeLessThan(endless.replicates);
+    expect(run.table.length).toBe(run.reached * run.width);
+  });
+
+  it("do nothing when cancelled beforehand or asked for nothing", async () => {
+    const early = await runInWorkers(plan, { ...endless, signal: AbortSignal.abort() });
+    expect([early.reached, early.stopped]).toEqual([0, "cancel"]);
+    const none = await runInWorkers(plan, { replicates: 0, workers: 2 });
+    expect([none.reached, none.stopped, none.table.length]).toEqual([0, null, 0]);
+  });
+
+  it("pass on what is wrong with a plan", async () => {
+    const impossible = planOf({ kind: "gnm", n: 3, m: 9 });
+    await expect(runInWorkers(impossible, { replicates: 5, workers: 2 })).rejects.toThrow(
+      /possible pairs/,
+    );
+    await expect(runInWorkers(plan, { replicates: 5, workers: 0 })).rejects.toThrow(/workers/);
+    await expect(runInWorkers(plan, { replicates: 0.5, workers: 1 })).rejects.toThrow(RangeError);
+  });
+});
