@@ -18,6 +18,7 @@ export { type InducedSubgraph, inducedSubgraph } from "./graph/induced-subgraph.
 export { type Relabelled, searchOrder } from "./graph/search-order.ts";
 export { SOURCE_CHUNKS } from "./graph/source-chunks.ts";
 export { UnionFind, type UnionResult } from "./graph/union-find.ts";
+export { type AnonymisedRows, anonymiseRows, type CodeLadder } from "./measures/anonymise-rows.ts";
 export { attributeAssortativity } from "./measures/attribute-assortativity.ts";
 export {
   addChunks,
@@ -36,6 +37,22 @@ export {
 } from "./measures/closeness.ts";
 export { type Clustering, clustering } from "./measures/clustering.ts";
 export { colemanHomophily, type Homophily } from "./measures/coleman-homophily.ts";
+export {
+  type Comparability,
+  comparability,
+  type Judgement,
+  type ObservationCaution,
+  type ObservationDescription,
+} from "./measures/comparability.ts";
+export {
+  COMPARABILITY,
+  type ComparisonKey,
+  type ComparisonReason,
+  type ComparisonRow,
+  type ComparisonRule,
+  type ObservationState,
+  type Standing,
+} from "./measures/comparability-table.ts";
 export {
   connectedProbability,
   connectivityLimit,
@@ -67,6 +84,13 @@ export { degreeVariance } from "./measures/degree-variance.ts";
 export { density, possiblePairs } from "./measures/density.ts";
 export { type Dispersion, dispersion } from "./measures/dispersion.ts";
 export { type DistanceEstimates, distanceEstimates } from "./measures/distance-estimates.ts";
+export {
+  type DoubleReports,
+  doubleReports,
+  equalRecallExcess,
+  type SidedReports,
+  sidedReports,
+} from "./measures/double-reports.ts";
 export { type EiIndex, eiIndex } from "./measures/ei-index.ts";
 export {
   EIGENVECTOR_STEPS,
@@ -78,12 +102,19 @@ export type { Estimate, EstimatePerPerson } from "./measures/estimate.ts";
 export { excessDegreeRatio, meanExcessDegree } from "./measures/excess-degree.ts";
 export { expectedIsolatesGnm, expectedIsolatesGnp } from "./measures/expected-isolates.ts";
 export {
+  type ExpectedObservation,
+  expectedObservation,
+  type ObservationDesign,
+} from "./measures/expected-observation.ts";
+export {
   expectedTrianglesGnm,
   expectedTrianglesGnp,
   expectedTwoPathsGnm,
   expectedTwoPathsGnp,
 } from "./measures/expected-triangles.ts";
+export { feasibleInterval } from "./measures/feasible-interval.ts";
 export { isolates } from "./measures/isolates.ts";
+export { type Anonymity, type CodeColumn, kAnonymity } from "./measures/k-anonymity.ts";
 export { largestShare } from "./measures/largest-share.ts";
 export { meanDegree } from "./measures/mean-degree.ts";
 export { type MeanDegreeIntervals, meanDegreeIntervals } from "./measures/mean-degree-intervals.ts";
@@ -112,6 +143,7 @@ export {
   pathFiguresOf,
 } from "./measures/path-figures.ts";
 export { type Percolation, percolation, transmissibility } from "./measures/percolation.ts";
+export { type PublishedTable, tableWithTotals } from "./measures/published-table.ts";
 export {
   type CriticalWindow,
   criticalWindow,
@@ -131,6 +163,20 @@ export {
 } from "./measures/sampled-betweenness.ts";
 export { sampledCloseness } from "./measures/sampled-closeness.ts";
 export { type SampledPathFigures, sampledPathFigures } from "./measures/sampled-path-figures.ts";
+export { type SecondaryAttackRate, secondaryAttackRate } from "./measures/secondary-attack-rate.ts";
+export {
+  type InterviewRecord,
+  type SeenThroughInterviews,
+  seenThroughInterviews,
+} from "./measures/seen-through-interviews.ts";
+export {
+  type CellState,
+  publishedRate,
+  type SuppressedCell,
+  type SuppressedTable,
+  type SuppressionOptions,
+  suppressCells,
+} from "./measures/suppress-cells.ts";
 export {
   FEWEST_FOR_VERDICT,
   FULL_COVERAGE,
@@ -142,7 +188,10 @@ export {
 } from "./measures/threshold.ts";
 export { transitivity } from "./measures/transitivity.ts";
 export { triangles, trianglesByPerson } from "./measures/triangles.ts";
+export { type TwoLists, twoLists } from "./measures/two-lists.ts";
 export { twoPaths } from "./measures/two-paths.ts";
+export { unresolvedShare } from "./measures/unresolved-share.ts";
+export { type NamingCounts, type UnseenPeople, unseenPeople } from "./measures/unseen-people.ts";
 export { type Region, regionsMet, type Verdict, verdictOf } from "./measures/verdict.ts";
 export {
   BURN_IN_PER_PAIR,
@@ -181,6 +230,7 @@ export { binomialCdf, binomialPmf, binomialQuantile, binomialUpper } from "./sta
 export { chiSquaredCdf, chiSquaredQuantile, chiSquaredUpper } from "./stats/chi-squared-law.ts";
 export { clopperPearsonInterval } from "./stats/clopper-pearson-interval.ts";
 export { digamma, trigamma } from "./stats/digamma.ts";
+export { type GammaFit, gammaByLikelihood, gammaByMoments } from "./stats/gamma-fit.ts";
 export {
   gammaCdf,
   gammaPdf,
@@ -215,12 +265,52 @@ export { poissonCdf, poissonPmf, poissonQuantile, poissonUpper } from "./stats/p
 export { quantile } from "./stats/quantile.ts";
 export { FEWEST_FOR_ENVELOPE, type RankEnvelope, rankEnvelope } from "./stats/rank-envelope.ts";
 export { type ReplicateSummary, replicateSummary } from "./stats/replicate-summary.ts";
+export { sampleQuantile } from "./stats/sample-quantile.ts";
+export { type SampleSummary, sampleSummary } from "./stats/sample-summary.ts";
 export { studentCdf, studentQuantile } from "./stats/student-law.ts";
 export { type Interval, wilsonInterval, Z_95 } from "./stats/wilson-interval.ts";
+export { type CaseR, COMPLETE_SHARE, caseR, caseRByCase } from "./time/case-r.ts";
+export { infectiousness } from "./time/case-series.ts";
 export { dayNumber, dayString, MISSING_DAY } from "./time/day-number.ts";
+export { type DoublingTime, doublingTime } from "./time/doubling-time.ts";
+export {
+  type CaseDays,
+  type CurveBin,
+  type CurveOptions,
+  curveBinDays,
+  type EpidemicCurve,
+  epidemicCurve,
+} from "./time/epidemic-curve.ts";
 export {
   type ExposureRange,
   type ExposureTable,
   exposureFilter,
   type FilteredPairs,
 } from "./time/exposure-filter.ts";
+export { extinctionProbability, noOffspringProbability } from "./time/extinction.ts";
+export { type FilmFrame, type FilmInput, type GroupFilm, groupFilm } from "./time/group-film.ts";
+export {
+  type LogLinearGrowth,
+  logLinearGrowth,
+  type PoissonGrowth,
+  poissonGrowth,
+} from "./time/growth.ts";
+export {
+  type HiddenWindow,
+  type InstantaneousInput,
+  instantaneousR,
+  WIDEST_VARIATION,
+  type WindowedR,
+} from "./time/instantaneous-r.ts";
+export { type GroupEvent, LivingGroups } from "./time/living-groups.ts";
+export { type OffspringFit, offspringFit } from "./time/offspring-fit.ts";
+export {
+  type DatedSpans,
+  type PairSpans,
+  spansAsItHappened,
+  spansAsWeKnewIt,
+} from "./time/pair-spans.ts";
+export { reproductionFromGrowth } from "./time/reproduction-from-growth.ts";
+export { type SerialInterval, serialInterval } from "./time/serial-interval.ts";
+export { meanOfWeights, serialIntervalWeights } from "./time/serial-interval-weights.ts";
+export { modelTopShare, observedTopShare } from "./time/top-share.ts";
