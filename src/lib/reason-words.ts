@@ -4,7 +4,6 @@ const words: Record<UndefinedReason, string> = {
   no_people: "there are no people in this population",
   one_person: "there is only one person in this population",
   no_two_paths: "nobody here has two contact pairs",
-  no_pairs: "there are no contact pairs to count here",
   equal_degrees: "everyone with a contact pair has equally many",
   one_group: "everyone, or every contact pair, is in one group",
   one_in_group: "the group has one person only",
