@@ -31,7 +31,7 @@ const REPLICATES = 199;
 /** Above, baselines take minutes and are drawn when asked for. */
 const BASELINES_UP_TO_PEOPLE = 5_000;
 
-/** Below, starting threads takes longer than the work. */
+/** Below, starting threads takes longer than the work; only baselines are shared among them. */
 const THREADS_FROM_PEOPLE = 2_000;
 
 const SEED = 1;
@@ -56,7 +56,7 @@ export async function addedFigures(
   const { refs, attribute } = network;
   const choice = { wants, seed, named: only !== null };
 
-  const runner = workers > 1 ? threadRunner(graph, workers) : inlineRunner(graph);
+  const runner = workers > 1 && !isSmall ? threadRunner(graph, workers) : inlineRunner(graph);
   let structure: Partial<StructureFigures>;
   let paths: Awaited<ReturnType<typeof pathFigures>>;
   try {

@@ -39,8 +39,8 @@ export type Estimated = {
 /** People whose paths are followed in a network too big to follow everyone. */
 export const SOURCES = 512;
 
-/** Streams far beyond the numbers of replicates and starts, one for each sample. */
-const STREAMS = { paths: 2 ** 40, closeness: 2 ** 40 + 1, betweenness: 2 ** 40 + 2 };
+/** The last streams there are, far beyond the numbers of replicates and starts. */
+const STREAMS = { paths: 2 ** 32 - 1, closeness: 2 ** 32 - 2, betweenness: 2 ** 32 - 3 };
 
 type Figures = { -readonly [K in keyof PathFigures]?: PathFigures[K] };
 type Options = {

@@ -50,7 +50,7 @@ describe("the command as a process", () => {
     const [first, second] = [await spawn("node", args, folder), await spawn("node", args, folder)];
     expect(first.code).toBe(0);
     expect(second).toEqual(first);
-  });
+  }, 60_000);
 });
 
 // Source: methods D.3, exact. Isolates are on record through the people file.
