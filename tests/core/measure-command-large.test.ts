@@ -5,17 +5,20 @@ import { measureFolder, rows } from "./support/measure-run.ts";
 const { write, run, remove } = measureFolder();
 afterAll(remove);
 
-/** A ring, in which paths are known: mean (n + 1)/4 for odd n, diameter (n − 1)/2. */
+/** A ring with chords, and somebody with one pair hanging from it for everyone else. */
 const PEOPLE = 20_001;
-const ring = Array.from({ length: PEOPLE }, (_, u) => `${u},${(u + 1) % PEOPLE}`);
+const RING = 501;
 
 describe("above 20,000 people", () => {
   it("says which figures are estimates, with their error", async () => {
     const stream = createStream(3, 0);
-    const chords = Array.from({ length: PEOPLE }, (_, u) => `${u},x${stream.below(PEOPLE)}`);
-    write("pairs.csv", rows("ref_a,ref_b", [...ring, ...chords]));
-    const names = "--pairs pairs.csv --workers 1".split(" ");
-    const { report } = await run(...names);
+    const ring = Array.from({ length: RING }, (_, u) => [
+      `${u},${(u + 1) % RING}`,
+      `${u},${(u + 2 + stream.below(RING - 4)) % RING}`,
+    ]);
+    const hanging = Array.from({ length: PEOPLE - RING }, (_, k) => `${k % RING},h${k}`);
+    write("pairs.csv", rows("ref_a,ref_b", [...ring.flat(), ...hanging]));
+    const { report } = await run("--pairs", "pairs.csv", "--workers", "1");
     if (!report?.estimated) throw new Error("no estimates");
     expect(Object.keys(report.estimated).sort()).toEqual([
       "betweenness",
@@ -29,10 +32,13 @@ describe("above 20,000 people", () => {
     expect(Object.keys(report.estimated.betweenness?.standardError ?? {})).toHaveLength(
       report.people,
     );
-    expect(report).toMatchObject({ reachableShare: 1, baselines: null });
-    expect(report.reasons).toEqual({
-      ...report.reasons,
-      baselines: "too_many_people",
-    });
+    expect(report).toMatchObject({ people: PEOPLE, reachableShare: 1, baselines: null });
+    expect(report.reasons).toEqual({ baselines: "too_many_people" });
+    const exact = await run("--pairs", "pairs.csv", "--workers", "1", "--only", "paths");
+    expect(exact.report?.estimated).toEqual({});
+    const [near = 0, far = 0] = [report.meanPath, exact.report?.meanPath].map(Number);
+    const error = Number(report.estimated.meanPath?.standardError);
+    expect(Math.abs(near - far)).toBeLessThan(4 * error);
+    expect(report.diameter).toBeLessThanOrEqual(Number(exact.report?.diameter));
   }, 60_000);
 });
