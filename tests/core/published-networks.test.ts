@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { networkReport, triangles, twoPaths } from "../../shared/core/index.ts";
 import { graphOf } from "./support/graphs.ts";
-import { florentine, karate, lesMiserables } from "./support/published-networks.ts";
+import { davis, florentine, karate, lesMiserables } from "./support/published-networks.ts";
 
 // Source: methods C.6.5, computed with networkx 2.8.8 and python-igraph 0.10.2, which agree to all
 // digits shown.
@@ -31,6 +31,19 @@ const VALUES = [
     triangles: 467,
     twoPaths: 2808,
     transitivity: 0.498931623932,
+  },
+  {
+    name: "women and gatherings (Davis et al. 1941)",
+    network: davis(),
+    n: 32,
+    m: 89,
+    density: 0.179435483871,
+    c: 5.5625,
+    sumOfSquares: 1250,
+    maxDegree: 14,
+    triangles: 0,
+    twoPaths: 536,
+    transitivity: 0,
   },
   {
     name: "Florentine marriages (Padgett; Breiger & Pattison 1986)",

@@ -1,10 +1,16 @@
 import type { RandomStream } from "../random/random-stream.ts";
 import type { Level, SearchSpace } from "./community-level.ts";
 
-/** Shuffles the first `length` of `order` (Fisher and Yates). */
+/** Nodes are shuffled among this many; a power of two. */
+const WINDOW = 2048;
+
+/**
+ * Shuffles the first `length` of `order` (Fisher and Yates), in windows: what lies far apart in
+ * memory is then not visited by turns, and the starts differ as much as from one great shuffle.
+ */
 function shuffle(order: Int32Array, length: number, stream: RandomStream): void {
   for (let at = length - 1; at > 0; at--) {
-    const other = stream.below(at + 1);
+    const other = at - stream.below((at & (WINDOW - 1)) + 1);
     const held = order[at]!;
     order[at] = order[other]!;
     order[other] = held;
