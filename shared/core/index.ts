@@ -199,6 +199,7 @@ export {
 } from "./null-models/degree-preserving-sampler.ts";
 export { gnmSampler } from "./null-models/gnm-sampler.ts";
 export { gnpSampler } from "./null-models/gnp-sampler.ts";
+export { HEAVY_STATISTICS, type HeavyStatistic } from "./null-models/heavy-statistics.ts";
 export { householdSampler } from "./null-models/household-sampler.ts";
 export { mixingSampler } from "./null-models/mixing-sampler.ts";
 export { type NullModel, samplerOf } from "./null-models/null-model.ts";
@@ -220,6 +221,11 @@ export {
   replicateRunner,
 } from "./null-models/run-replicates.ts";
 export type { SampledNetwork, Sampler } from "./null-models/sampled-network.ts";
+export {
+  type CurveSummary,
+  type ReplicatesSummary,
+  summariseReplicates,
+} from "./null-models/summarise-replicates.ts";
 export { SwapChain } from "./null-models/swap-chain.ts";
 export { type TracedRecord, tracedDesign } from "./null-models/traced-design.ts";
 export { type TracedDesign, tracedSampler } from "./null-models/traced-sampler.ts";

@@ -65,12 +65,18 @@ export class PValues {
     this.#add("degree curve, global", rankEnvelope(curve, curves).p);
   }
 
+  /** Share of data sets with p <= level. */
+  share(name: string, level: number): number {
+    const list = this.#found.get(name) ?? [];
+    return list.filter((p) => p <= level + 1e-12).length / list.length;
+  }
+
   /** Expects P(p <= α) <= α + 4 SE at every level, for every figure. */
   expectHonest(): void {
     const offending: string[] = [];
     for (const [name, list] of this.#found) {
       for (const level of LEVELS) {
-        const share = list.filter((p) => p <= level + 1e-12).length / list.length;
+        const share = this.share(name, level);
         const limit = level + 4 * Math.sqrt((level * (1 - level)) / list.length);
         if (share > limit) offending.push(`${name}: ${share} > ${limit} at ${level}`);
       }

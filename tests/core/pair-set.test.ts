@@ -3,7 +3,7 @@ import { expect, it } from "vitest";
 import { createStream, PairSet } from "../../shared/core/index.ts";
 
 const person = fc.integer({ min: 0, max: 12 });
-const step = fc.record({ kind: fc.constantFrom("add", "delete", "has"), u: person, v: person });
+const step = fc.record({ kind: fc.constantFrom("add", "has"), u: person, v: person });
 
 it("does what a set of texts does", () => {
   fc.assert(
@@ -18,9 +18,6 @@ it("does what a set of texts does", () => {
         if (kind === "add") {
           expect(set.add(u, v)).toBe(!held);
           twin.add(key);
-        } else if (kind === "delete") {
-          expect(set.delete(u, v)).toBe(held);
-          twin.delete(key);
         }
         expect(set.size).toBe(twin.size);
       }
@@ -32,7 +29,7 @@ it("does what a set of texts does", () => {
   );
 });
 
-it("keeps 10,000 pairs of people up to 2^31 apart through removals and growth", () => {
+it("keeps 10,000 pairs of people up to 2^31 apart through growth", () => {
   const random = createStream(5, 0);
   const set = new PairSet(10);
   const twin = new Map<string, [number, number]>();
@@ -42,17 +39,9 @@ it("keeps 10,000 pairs of people up to 2^31 apart through removals and growth", 
     expect(set.add(v, u)).toBe(!twin.has(`${u} ${v}`));
     twin.set(`${u} ${v}`, [u, v]);
   }
-  let turn = 0;
-  for (const [key, [u, v]] of twin) {
-    if (turn++ % 2 === 0) continue;
-    expect(set.delete(u, v)).toBe(true);
-    twin.delete(key);
-  }
   for (const [u, v] of twin.values()) expect(set.has(u, v)).toBe(true);
   expect(set.size).toBe(twin.size);
-  const copy = new PairSet();
-  copy.copyFrom(set);
   set.clear();
-  expect([set.size, copy.size]).toEqual([0, twin.size]);
-  for (const [u, v] of twin.values()) expect(copy.has(v, u) && !set.has(u, v)).toBe(true);
+  expect(set.size).toBe(0);
+  for (const [u, v] of twin.values()) expect(set.has(v, u)).toBe(false);
 });

@@ -3,10 +3,13 @@ import { runInWorkers } from "../../server/analysis/replicates/run-in-workers.ts
 import {
   BURN_IN_PER_PAIR,
   type NullModel,
+  observedRow,
+  quantile,
   type ReplicatePlan,
   replicateRange,
   replicateRunner,
   rowWidth,
+  summariseReplicates,
 } from "../../shared/core/index.ts";
 import { endsOf } from "./support/graphs.ts";
 import { karate } from "./support/published-networks.ts";
@@ -81,6 +84,39 @@ describe("replicateRange", () => {
     expect(() => replicateRange(plan, 2, 1, () => true)).toThrow(RangeError);
     expect(() => replicateRunner({ ...plan, seed: -1 })).toThrow(/seed/);
     expect(() => replicateRunner({ ...plan, degreeBins: 0.5 })).toThrow(/bins/);
+  });
+});
+
+describe("summariseReplicates", () => {
+  it("gives every figure and both curves of a run", () => {
+    const plan = planOf(MODELS[1] as NullModel);
+    const width = rowWidth(plan);
+    const table = inRanges(plan, [199]);
+    const network = { ...pairs, people: n, length: links.length, isInterviewed: null };
+    const summary = summariseReplicates(plan, observedRow(plan, network), table);
+    expect(summary.replicates).toBe(199);
+    expect([...summary.figures.keys()]).toEqual(plan.statistics);
+    // Source: methods C.7.5: transitivity .13567, sd .0305, upper p <= .00025.
+    const closed = summary.figures.get("transitivity");
+    expect(Math.abs((closed?.mean ?? 0) - 0.13567)).toBeLessThan((4 * 0.0305) / Math.sqrt(199));
+    expect(closed?.pUpper).toBe(1 / 200);
+    const column = Float64Array.from({ length: 199 }, (_, k) => table[k * width + 2] ?? 0).sort();
+    expect(closed?.low).toBe(quantile(column, 0.025));
+    const degrees = summary.degreeCurve;
+    expect([...(degrees?.observed ?? [])]).toEqual([0, 1, 11, 6, 6, 3, 2, 5]);
+    expect(degrees?.mean.reduce((sum, people) => sum + people, 0)).toBeCloseTo(34, 10);
+    expect(degrees?.global.outside).toBe(true);
+    expect(degrees?.global.quickLook).toBe(true);
+    expect([...(summary.sizeCurve?.observed ?? [])]).toEqual([0, 0, 0, 0, 1]);
+  });
+
+  it("has no curve without replicates, and refuses rows of another choice", () => {
+    const plan = planOf(MODELS[1] as NullModel);
+    const empty = summariseReplicates(plan, new Float64Array(18), new Float64Array(0));
+    expect([empty.replicates, empty.degreeCurve]).toEqual([0, null]);
+    expect(() => summariseReplicates(plan, new Float64Array(17), new Float64Array(18))).toThrow(
+      RangeError,
+    );
   });
 });
 

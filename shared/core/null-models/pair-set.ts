@@ -7,8 +7,7 @@ function capacityFor(pairs: number): number {
 /**
  * A set of unordered pairs of people, made for millions of look-ups: open addressing with linear
  * probing over one array that holds both ends side by side, so that a look-up touches one cache
- * line and no pair index has to fit a number. Removal closes the gap (Knuth 1998, *Sorting and
- * Searching*, algorithm 6.4R), so the set never fills up with marks.
+ * line and no pair index has to fit a number. Pairs are added, never taken out.
  *
  * Ends are whole numbers 0 … 2^31 − 1, not checked. Cost: O(1) a step at a load of at most one half;
  * 16 to 32 bytes a pair.
@@ -35,14 +34,6 @@ export class PairSet {
   clear(): void {
     this.#slots.fill(-1);
     this.#size = 0;
-  }
-
-  /** Makes this set hold exactly the pairs of another. */
-  copyFrom(other: PairSet): void {
-    if (this.#slots.length !== other.#slots.length) this.#slots = other.#slots.slice();
-    else this.#slots.set(other.#slots);
-    this.#mask = other.#mask;
-    this.#size = other.#size;
   }
 
   #home(low: number, high: number): number {
@@ -81,32 +72,6 @@ export class PairSet {
     this.#slots[2 * slot] = low;
     this.#slots[2 * slot + 1] = high;
     if (++this.#size * 2 > this.#mask + 1) this.#grow();
-    return true;
-  }
-
-  /** Removes a pair. @returns false when it was not there */
-  delete(u: number, v: number): boolean {
-    const found = u < v ? this.#find(u, v) : this.#find(v, u);
-    if (found < 0) return false;
-    const slots = this.#slots;
-    const mask = this.#mask;
-    let gap = found;
-    let slot = gap;
-    for (;;) {
-      slot = (slot + 1) & mask;
-      const low = slots[2 * slot]!;
-      if (low === -1) break;
-      const high = slots[2 * slot + 1]!;
-      const home = this.#home(low, high);
-      // Move it into the gap unless its own place lies between the gap and here.
-      if (((slot - home) & mask) >= ((slot - gap) & mask)) {
-        slots[2 * gap] = low;
-        slots[2 * gap + 1] = high;
-        gap = slot;
-      }
-    }
-    slots[2 * gap] = -1;
-    this.#size--;
     return true;
   }
 

@@ -1,10 +1,11 @@
+import { HEAVY_STATISTICS, type HeavyStatistic, heavyStatistics } from "./heavy-statistics.ts";
 import { PairGroups } from "./pair-groups.ts";
 import { mixingFigures } from "./pair-mixing.ts";
 import { PairTriangles } from "./pair-triangles.ts";
 import type { SampledNetwork } from "./sampled-network.ts";
 
 /**
- * Figures of one network, in the order of a replicate's row. Degrees are those of interviewed
+ * Figures of one network that are always quick; `HEAVY_STATISTICS` are the others. Degrees are those of interviewed
  * people where the network was seen through interviews, else of everyone.
  *
  * - `people`, `pairs`: on record. `groups`, `largestGroup`, `isolates`: connected groups, people in
@@ -15,8 +16,8 @@ import type { SampledNetwork } from "./sampled-network.ts";
  * - `meanDegree`, `degreeVariance` (divisor k − 1; undefined below two people), `maxDegree`.
  * - `triangles`, `transitivity`, `averageClustering` (people with fewer than two pairs count as
  *   zero), `degreeAssortativity`.
- * - `attributeAssortativity`, `ei`, `modularity` of a stated partition: pairs with a missing value
- *   are left out.
+ * - `attributeAssortativity`, `ei`, `attributeModularity` (of the stated classes): pairs with a
+ *   missing value are left out.
  */
 export const STATISTICS = [
   "people",
@@ -36,11 +37,11 @@ export const STATISTICS = [
   "degreeAssortativity",
   "attributeAssortativity",
   "ei",
-  "modularity",
+  "attributeModularity",
 ] as const;
 
 /** Name of a figure. */
-export type Statistic = (typeof STATISTICS)[number];
+export type Statistic = (typeof STATISTICS)[number] | HeavyStatistic;
 
 /** What is measured on every network. */
 export type StatisticsChoice = {
@@ -60,7 +61,7 @@ const GROUPS = [
   "meanSmallGroupOfPerson",
   "sizeSquares",
 ];
-const MIXING = ["attributeAssortativity", "ei", "modularity"];
+const MIXING = ["attributeAssortativity", "ei", "attributeModularity"];
 
 /**
  * Measures networks one after another in the same arrays. A row holds the chosen statistics, then
@@ -111,7 +112,12 @@ export class ReplicateStatistics {
       const figures = mixingFigures(network, attribute);
       this.#values.set("attributeAssortativity", figures.assortativity);
       this.#values.set("ei", figures.ei);
-      this.#values.set("modularity", figures.modularity);
+      this.#values.set("attributeModularity", figures.modularity);
+    }
+    if (this.#needs(HEAVY_STATISTICS)) {
+      for (const [name, value] of heavyStatistics(network, this.#wants)) {
+        this.#values.set(name, value);
+      }
     }
     for (let at = 0; at < statistics.length; at++) {
       out[offset + at] = this.#values.get(statistics[at]!) ?? Number.NaN;
