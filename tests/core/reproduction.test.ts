@@ -12,7 +12,7 @@ import {
 const SERIES = [1, 2, 3, 5, 8, 10, 12, 11, 9, 7];
 const WEIGHTS = [0, 0.2, 0.5, 0.2, 0.1];
 const cori = (changes: Partial<Parameters<typeof instantaneousR>[0]> = {}) =>
-  instantaneousR({ local: SERIES, imported: null, weights: WEIGHTS, window: 3, ...changes });
+  instantaneousR({ local: SERIES, imported: null, weights: WEIGHTS, windowDays: 3, ...changes });
 
 describe("serial interval by days", () => {
   it("gives the published weights", () => {
@@ -146,7 +146,7 @@ describe("instantaneous R", () => {
   });
 
   it.each([
-    { window: 0 },
+    { windowDays: 0 },
     { prior: { shape: 0, scale: 5 } },
     { weights: [0.1, 0.9] },
     { weights: [0, 0.9, 0.9] },

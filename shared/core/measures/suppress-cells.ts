@@ -74,29 +74,29 @@ export function suppressCells(
   const states = initialStates();
   const hidden = Uint8Array.from(states, (state) => (state === "shown" ? 0 : 1));
 
-  const isNarrow = (cell: number): boolean => {
-    const [low, high] = feasibleInterval(table, hidden, cell);
-    return high - low < width;
-  };
-  // Each round hides at least one more cell or gives a cell up, so this ends.
-  const given = new Set<number>();
-  for (let open = true; open; ) {
-    open = false;
-    for (let cell = 0; cell < values.length; cell++) {
-      if (states[cell] === "shown" || states[cell] === "not_published") continue;
-      if (given.has(cell) || !isNarrow(cell)) continue;
-      open = true;
-      const more =
+  // Hiding more never narrows an interval, so a cell that is wide enough need not be looked at again.
+  const open = states.flatMap((state, cell) =>
+    state === "shown" || state === "not_published" ? [] : [cell],
+  );
+  for (let cell = open.shift(); cell !== undefined; cell = open.shift()) {
+    for (let more: number[] | null = []; more !== null && isNarrow(cell); ) {
+      more =
         complementaryCells(table, hidden, cell, width, hideZeros) ??
         complementaryCells(table, hidden, cell, 1, hideZeros);
-      if (more === null || more.length === 0) given.add(cell);
+      if (more?.length === 0) more = null;
       for (const one of more ?? []) {
         hidden[one] = 1;
         states[one] = "complementary";
+        open.push(one);
       }
     }
   }
   return answer();
+
+  function isNarrow(cell: number): boolean {
+    const [low, high] = feasibleInterval(table, hidden, cell, width);
+    return high - low < width;
+  }
 
   function initialStates(): CellState[] {
     const totals = options.totals ?? { rows: true, columns: true, all: true };

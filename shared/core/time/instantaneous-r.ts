@@ -11,7 +11,7 @@ export type InstantaneousInput = {
   /** w_0 … w_last of the serial interval. */
   readonly weights: ArrayLike<number>;
   /** τ, days of the window; default 7. */
-  readonly window?: number;
+  readonly windowDays?: number;
   /** Gamma prior: shape a and **scale** b; default 1 and 5 (mean and deviation 5). */
   readonly prior?: { readonly shape: number; readonly scale: number };
 };
@@ -59,8 +59,9 @@ export const WIDEST_VARIATION = 0.3;
  * framework and software to estimate time-varying reproduction numbers*; methods C.9.5.
  */
 export function instantaneousR(input: InstantaneousInput): WindowedR[] {
-  const { local, imported, weights, window = 7, prior = { shape: 1, scale: 5 } } = input;
-  if (!Number.isSafeInteger(window) || window < 1) throw new RangeError("window: at least one day");
+  const { local, imported, weights, windowDays = 7, prior = { shape: 1, scale: 5 } } = input;
+  if (!Number.isSafeInteger(windowDays) || windowDays < 1)
+    throw new RangeError("windowDays: at least one day");
   for (const part of [prior.shape, prior.scale]) {
     if (!(part > 0 && Number.isFinite(part))) throw new RangeError("prior: shape and scale > 0");
   }
@@ -68,13 +69,13 @@ export function instantaneousR(input: InstantaneousInput): WindowedR[] {
   checkWeights(weights);
   const pressure = infectiousness(all, weights);
   const first = all.findIndex((count) => count > 0);
-  const soonest = first + Math.max(window, meanOfWeights(weights));
+  const soonest = first + Math.max(windowDays, meanOfWeights(weights));
 
   const windows: WindowedR[] = [];
-  for (let day = window - 1; day < all.length; day++) {
+  for (let day = windowDays - 1; day < all.length; day++) {
     let cases = 0;
     let total = 0;
-    for (let t = day - window + 1; t <= day; t++) {
+    for (let t = day - windowDays + 1; t <= day; t++) {
       if (!(pressure[t]! > 0)) continue;
       cases += local[t]!;
       total += pressure[t]!;

@@ -13,6 +13,34 @@ export type GroupEvent = {
 };
 
 /**
+ * The oldest member (lowest number) of everyone's group. A union–find of its own, with the older root
+ * always on top, without the checks of the growable one: it runs over all pairs at once.
+ */
+function oldestMembers(people: number, a: Int32Array, b: Int32Array, count: number): Int32Array {
+  const parent = Int32Array.from({ length: people }, (_, u) => u);
+  for (let k = 0; k < count; k++) {
+    let [u, v] = [a[k]!, b[k]!];
+    while (u !== v) {
+      if (u < v) {
+        // Halve the younger end's path, or hang its root below.
+        if (parent[v] === v) parent[v] = u;
+        const above = parent[v]!;
+        parent[v] = parent[above]!;
+        v = above;
+      } else {
+        if (parent[u] === u) parent[u] = v;
+        const above = parent[u]!;
+        parent[u] = parent[above]!;
+        u = above;
+      }
+    }
+  }
+  // Parents are older, so one pass in order of age settles everyone.
+  for (let u = 0; u < people; u++) parent[u] = parent[parent[u]!]!;
+  return parent;
+}
+
+/**
  * Groups that keep their identity while people and pairs come and go. A person enters as a group of
  * one and gives it an id. When groups join, the larger part keeps its id (tie:
  * the one with the oldest member); when one falls apart, its largest part does, and the others get
@@ -88,39 +116,49 @@ export class LivingGroups {
    */
   rebuild(a: Int32Array, b: Int32Array, count: number): GroupEvent[] {
     const people = this.#sets.length;
-    const before = Int32Array.from({ length: people }, (_, u) => this.idOf(u));
+    const old = this.#sets;
     const next = new UnionFind(people);
-    for (let k = 0; k < count; k++) next.union(a[k]!, b[k]!);
+    const oldest = oldestMembers(people, a, b, count);
+    // Of equal parts the older wins, so the root of each part stays its oldest member.
+    for (let u = 0; u < people; u++) if (oldest[u] !== u) next.union(oldest[u]!, u);
 
-    // Roots by size descending, then oldest member: the first to claim an id keeps it.
-    const roots: number[] = [];
-    for (let u = 0; u < people; u++) if (next.root(u) === u) roots.push(u);
-    roots.sort((x, y) => next.size(y) - next.size(x) || next.oldest(x) - next.oldest(y));
-    const keeper = new Map<number, number>();
+    // The largest part of each old group keeps its id (tie: the one met first, by oldest member).
+    const sizes = new Int32Array(people);
+    for (const root of oldest) sizes[root]!++;
+    const oldRoot = new Int32Array(people);
+    const heir = new Int32Array(people).fill(-1);
+    let largest = 0;
+    for (let root = 0; root < people; root++) {
+      if (oldest[root] !== root) continue;
+      oldRoot[root] = old.root(root);
+      if (sizes[root]! > largest) largest = sizes[root]!;
+      const held = heir[oldRoot[root]!]!;
+      if (held < 0 || sizes[root]! > sizes[held]!) heir[oldRoot[root]!] = root;
+    }
     const ids = new Array<number>(people).fill(-1);
     const events: GroupEvent[] = [];
-    for (const root of roots) {
-      const was = before[root]!;
-      const size = next.size(root);
-      const holder = keeper.get(was);
-      if (holder === undefined) {
-        keeper.set(was, root);
-        ids[root] = was;
-        if (size === 1 && this.#sets.size(root) > 1) {
-          events.push({ kind: "end", group: was, other: null, size: 1, otherSize: 0 });
+    for (let root = 0; root < people; root++) {
+      if (oldest[root] !== root) continue;
+      const from = oldRoot[root]!;
+      const group = this.#ids[from]!;
+      const size = sizes[root]!;
+      if (heir[from] === root) {
+        ids[root] = group;
+        if (size === 1 && old.size(from) > 1) {
+          events.push({ kind: "end", group, other: null, size: 1, otherSize: 0 });
         }
         continue;
       }
-      const id = this.#nextId++;
-      ids[root] = id;
+      const other = this.#nextId++;
+      ids[root] = other;
       if (size > 1) {
-        const held = next.size(holder);
-        events.push({ kind: "split", group: was, other: id, size: held, otherSize: size });
+        const left = sizes[heir[from]!]!;
+        events.push({ kind: "split", group, other, size: left, otherSize: size });
       }
     }
     this.#sets = next;
     this.#ids = ids;
-    this.#largest = roots.length === 0 ? 0 : next.size(roots[0]!);
+    this.#largest = largest;
     return events;
   }
 }

@@ -72,7 +72,8 @@ function profileInterval(counts: OffspringCounts, best: number, logBest: number)
  *
  * Edge cases: no case → all undefined (`no_cases`); nobody infected anyone → k undefined
  * (`no_offspring`); variance (divisor cases) <= mean, or the best k at the boundary → k undefined
- * (`no_overdispersion`), with the interval's upper limit Infinity. Cost: O(most offspring) per step,
+ * (`no_overdispersion`), with the interval's upper limit Infinity; a k below e^(−10), which takes a lone
+ * great spreader among some 100,000 cases, is given as e^(−10). Cost: O(most offspring) per step,
  * a few hundred steps. Source: Lloyd-Smith, Schreiber, Kopp & Getz 2005, *Superspreading and the
  * effect of individual variation on disease emergence*; methods C.9.4.
  */
