@@ -63,8 +63,21 @@ const SHAPE = [
 const MIXING = [
   "attributeAssortativity",
   "ei",
-  "modularity",
+  "attributeModularity",
 ] as const satisfies readonly Statistic[];
+
+/** They search from everyone on every replicate, so only small networks get them. */
+const HEAVY = [
+  "meanPath",
+  "diameter",
+  "reachableShare",
+  "efficiency",
+  "maxBetweenness",
+  "maxCore",
+  "articulationPeople",
+  "bridges",
+] as const satisfies readonly Statistic[];
+const HEAVY_UP_TO_PEOPLE = 500;
 
 /** Not fixed by the interviews alone, unlike in the other baselines. */
 const TRACED = ["pairs", "meanDegree"] as const satisfies readonly Statistic[];
@@ -150,7 +163,8 @@ export async function baselineFigures(
   const { n, m } = graph;
   const whole = wholeNetwork(graph);
   const classOf = attribute?.classOf ?? null;
-  const statistics: Statistic[] = classOf ? [...SHAPE, ...MIXING] : [...SHAPE];
+  const shape: Statistic[] = n <= HEAVY_UP_TO_PEOPLE ? [...SHAPE, ...HEAVY] : [...SHAPE];
+  const statistics: Statistic[] = classOf ? [...shape, ...MIXING] : shape;
   const seen = isInterviewed ? seenNetwork(whole, isInterviewed) : null;
   const kept = seen ?? whole;
   const keptClasses = classOf && seen ? seen.original.map((u) => classOf[u] ?? 0) : classOf;
@@ -166,7 +180,7 @@ export async function baselineFigures(
     });
     const nobody: Measured<BaselineFigures> = { value: null, reason: "no_one_interviewed" };
     baselines.traced = design
-      ? await figuresOf({ kind: "traced", design }, seen, [...SHAPE, ...TRACED], null, options)
+      ? await figuresOf({ kind: "traced", design }, seen, [...shape, ...TRACED], null, options)
       : take("baselines.traced", nobody);
   }
   const gnm: NullModel = { kind: "gnm", n, m };

@@ -26,14 +26,18 @@ describe("baselines of the karate club", () => {
       degreeAssortativity: [-0.06788, 0.0016, 0.0996],
       largestGroup: [33.786, 0.0074, 0.467],
       maxDegree: [9.012, 0.017, 1.08],
-      modularity: [-0.01737, 0.00085, 0.0536],
+      meanPath: [2.39593, 0.00078, 0.0492],
+      maxBetweenness: [80.73, 0.27, 17.4],
+      attributeModularity: [-0.01737, 0.00085, 0.0536],
     },
     degreePreserving: {
       transitivity: [0.22354, 0.00041, 0.026],
       triangles: [39.344, 0.072, 4.57],
       averageClustering: [0.35599, 0.00082, 0.0517],
       degreeAssortativity: [-0.30184, 0.00077, 0.0486],
-      modularity: [-0.01898, 0.00075, 0.0475],
+      meanPath: [2.24994, 0.00072, 0.0458],
+      maxBetweenness: [172.63, 0.23, 14.8],
+      attributeModularity: [-0.01898, 0.00075, 0.0475],
     },
   } as const;
 
