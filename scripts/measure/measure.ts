@@ -1,6 +1,7 @@
 import { readFileSync } from "node:fs";
 import { resolve } from "node:path";
 import { buildGraph, networkReport, recall } from "../../shared/core/index.ts";
+import { addedFigures } from "./added-figures.ts";
 import { type Arguments, readArguments, USAGE } from "./read-arguments.ts";
 import type { BadRow } from "./read-csv.ts";
 import { readNetwork } from "./read-network.ts";
@@ -47,7 +48,8 @@ function listFaults(people: readonly BadRow[] | null, pairs: readonly BadRow[]):
 }
 
 /**
- * The network report of CSV files. Same files, same bytes out.
+ * The network report of CSV files with what is added to it, as one JSON object. Same files, same
+ * arguments, same bytes out, with any number of workers.
  *
  * A people file with a column `interviewed` is read as the interviews of one preset window; recall
  * is estimated when the pairs say who named whom.
@@ -55,14 +57,14 @@ function listFaults(people: readonly BadRow[] | null, pairs: readonly BadRow[]):
  * @param args command-line arguments
  * @param folder folder that relative paths start from
  */
-export function measure(args: readonly string[], folder: string): Measured {
+export async function measure(args: readonly string[], folder: string): Promise<Measured> {
   let options: Arguments;
   let pairsBytes: Uint8Array;
   let peopleBytes: Uint8Array | null;
   try {
     options = readArguments(args);
   } catch (error) {
-    return refused(oneLine(error), USAGE);
+    return refused(oneLine(error), ...(args.length === 0 ? [USAGE] : []));
   }
   try {
     pairsBytes = readBytes("pairs", options.pairs, folder);
@@ -71,21 +73,30 @@ export function measure(args: readonly string[], folder: string): Measured {
     return refused(oneLine(error));
   }
 
-  const { network, peopleFaults, pairsFaults } = readNetwork(pairsBytes, peopleBytes);
+  const { attribute, population } = options;
+  const { network, peopleFaults, pairsFaults } = readNetwork(pairsBytes, peopleBytes, attribute);
   if (network === null) {
     return refused(...listFaults(peopleBytes ? peopleFaults : null, pairsFaults));
   }
   const { n, ends, isInterviewed, doubleReports } = network;
-  if (options.population !== null && options.population < n) {
-    return refused(
-      `--population: ${options.population} is fewer than the ${n} people in the files`,
-    );
+  if (population !== null && population < n) {
+    return refused(`--population: ${population} is fewer than the ${n} people in the files`);
+  }
+  if (attribute !== null && network.attribute === null) {
+    return refused(`--attribute: the people file has no column "${attribute.slice(0, 40)}"`);
   }
   const estimate = doubleReports ? recall(doubleReports.both, doubleReports.one) : null;
-  const report = networkReport(buildGraph(n, ends), isInterviewed, {
-    declaredPopulation: options.population,
+  const graph = buildGraph(n, ends);
+  const report = networkReport(graph, isInterviewed, {
+    declaredPopulation: population,
     presetWindow: true,
     recall: estimate?.value ?? null,
   });
-  return { output: JSON.stringify(report), complaints: [], code: 0 };
+  const added = await addedFigures(graph, network, {
+    ...options,
+    recall: estimate?.value ?? null,
+  });
+  const reasons = { ...report.reasons, ...added.reasons };
+  const output = JSON.stringify({ ...report, ...added.figures, reasons });
+  return { output, complaints: [], code: 0 };
 }

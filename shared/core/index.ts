@@ -16,7 +16,7 @@ export { coreNumbers } from "./graph/core-numbers.ts";
 export { foldLeaves } from "./graph/fold-leaves.ts";
 export { type InducedSubgraph, inducedSubgraph } from "./graph/induced-subgraph.ts";
 export { type Relabelled, searchOrder } from "./graph/search-order.ts";
-export { SOURCE_CHUNKS } from "./graph/source-chunks.ts";
+export { chunkRange, SOURCE_CHUNKS } from "./graph/source-chunks.ts";
 export { UnionFind, type UnionResult } from "./graph/union-find.ts";
 export { type AnonymisedRows, anonymiseRows, type CodeLadder } from "./measures/anonymise-rows.ts";
 export { attributeAssortativity } from "./measures/attribute-assortativity.ts";

@@ -50,12 +50,12 @@ describe("the command as a process", () => {
     const [first, second] = [await spawn("node", args, folder), await spawn("node", args, folder)];
     expect(first.code).toBe(0);
     expect(second).toEqual(first);
-  });
+  }, 60_000);
 });
 
 // Source: methods D.3, exact. Isolates are on record through the people file.
 describe.each(HAND_GRAPHS)("$name through the command", (hand) => {
-  it("has its values", () => {
+  it("has its values", async () => {
     write(
       "pairs.csv",
       rows(
@@ -70,7 +70,7 @@ describe.each(HAND_GRAPHS)("$name through the command", (hand) => {
         Array.from({ length: hand.n }, (_, k) => `p${k}`),
       ),
     );
-    const { report, code } = run("--pairs", "pairs.csv", "--people", "people.csv");
+    const { report, code } = await run("--pairs", "pairs.csv", "--people", "people.csv");
     expect(code).toBe(0);
     expect(report).toMatchObject({
       people: hand.n,
@@ -88,7 +88,7 @@ describe.each(HAND_GRAPHS)("$name through the command", (hand) => {
 
 describe("complete networks through the command", () => {
   // Source: methods C.6.5 and C.2.3, computed with networkx 2.8.8 and scipy 1.10.1.
-  it("karate club", () => {
+  it("karate club", async () => {
     write(
       "pairs.csv",
       rows(
@@ -96,7 +96,7 @@ describe("complete networks through the command", () => {
         karate().links.map(([a, b]) => `${a},${b}`),
       ),
     );
-    const { report } = run("--pairs", "pairs.csv");
+    const { report } = await run("--pairs", "pairs.csv");
     expect(report).toMatchObject({ people: 34, pairs: 78, isolates: 0, reasons: {} });
     expect(report?.threshold).toMatchObject({ population: "complete", verdict: "above" });
     expect(report?.threshold.pairsPerPerson).toBeCloseTo(4.588235294118, 11);
@@ -105,7 +105,7 @@ describe("complete networks through the command", () => {
     expect(report?.transitivity).toBeCloseTo(45 / 176, 14);
   });
 
-  it("Les Misérables", () => {
+  it("Les Misérables", async () => {
     write(
       "pairs.csv",
       rows(
@@ -113,7 +113,7 @@ describe("complete networks through the command", () => {
         lesMiserables().links.map(([a, b]) => `${a},${b}`),
       ),
     );
-    const { report } = run("--pairs", "pairs.csv");
+    const { report } = await run("--pairs", "pairs.csv");
     expect(report).toMatchObject({ people: 77, pairs: 254, componentSizes: [77] });
     expect(report?.density).toBeCloseTo(0.086807928913, 11);
     expect(report?.transitivity).toBeCloseTo(0.498931623932, 11);
@@ -130,10 +130,17 @@ describe("interviewed people through the command", () => {
     return `i${k % 100},c${contact}`;
   });
 
-  it("gives the fixture, once with the population declared and once with it on record", () => {
+  it("gives the fixture, once with the population declared and once with it on record", async () => {
     write("pairs.csv", rows("ref_a,ref_b", told));
     write("people.csv", rows("ref,interviewed", [...interviewed, ...others]));
-    const declared = run("--pairs", "pairs.csv", "--people", "people.csv", "--population", "1000");
+    const declared = await run(
+      "--pairs",
+      "pairs.csv",
+      "--people",
+      "people.csv",
+      "--population",
+      "1000",
+    );
     expect(declared.report).toMatchObject({ people: 400, pairs: 475, reasons: {} });
     expect(declared.report?.threshold).toMatchObject({
       population: "interviewed",
@@ -147,20 +154,20 @@ describe("interviewed people through the command", () => {
 
     const rest = Array.from({ length: 600 }, (_, k) => `r${k},`);
     write("people.csv", rows("ref,interviewed", [...interviewed, ...others, ...rest]));
-    const recorded = run("--pairs", "pairs.csv", "--people", "people.csv");
+    const recorded = await run("--pairs", "pairs.csv", "--people", "people.csv");
     expect(recorded.report?.people).toBe(1000);
     expect(recorded.report?.threshold).toEqual(declared.report?.threshold);
   });
 
-  it("leaves pairs nobody interviewed could have told out of the threshold only", () => {
+  it("leaves pairs nobody interviewed could have told out of the threshold only", async () => {
     write("pairs.csv", "ref_a,ref_b\na,b\nb,c\n");
     write("people.csv", "ref,interviewed\na,yes\nb,unknown\nc,refused\n");
-    const { report } = run("--pairs", "pairs.csv", "--people", "people.csv");
+    const { report } = await run("--pairs", "pairs.csv", "--people", "people.csv");
     // X = 0 + 1·2, one pair told: c = 2 · 1/2.
     expect(report).toMatchObject({ pairs: 2, threshold: { interviewed: 1, pairsPerPerson: 1 } });
   });
 
-  it("estimates recall when the pairs say who named whom", () => {
+  it("estimates recall when the pairs say who named whom", async () => {
     // Source of q: methods C.8.2, exact: named by both 6, by one 4 → 0.75.
     const pair = (k: number) => [`i${k}`, `i${k + 10}`] as const;
     const tellings = Array.from({ length: 10 }, (_, k) => {
@@ -169,14 +176,14 @@ describe("interviewed people through the command", () => {
     }).flat();
     write("pairs.csv", rows("ref_a,ref_b,named_by", [...tellings, "i90,c1,i90", "i91,i92,"]));
     write("people.csv", rows("ref,interviewed", [...interviewed, ...others]));
-    const { report } = run("--pairs", "pairs.csv", "--people", "people.csv");
+    const { report } = await run("--pairs", "pairs.csv", "--people", "people.csv");
     expect(report).toMatchObject({ pairs: 12, threshold: { recall: 0.75, verdict: "below" } });
   });
 
-  it("without double reports never says below, and says why", () => {
+  it("without double reports never says below, and says why", async () => {
     write("pairs.csv", "ref_a,ref_b,named_by\ni0,i1,i0\n");
     write("people.csv", rows("ref,interviewed", [...interviewed, ...others]));
-    const { report } = run("--pairs", "pairs.csv", "--people", "people.csv");
+    const { report } = await run("--pairs", "pairs.csv", "--people", "people.csv");
     expect(report?.threshold.verdict).toBe("not_distinguishable");
     expect(report?.threshold).not.toHaveProperty("recall");
     expect(report?.reasons).toMatchObject({ "threshold.verdict": "recall_unknown" });

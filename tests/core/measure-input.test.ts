@@ -5,22 +5,22 @@ const { write, run, remove } = measureFolder();
 afterAll(remove);
 
 describe("reading files", () => {
-  it("takes byte-order mark, CRLF, quotes, blank lines, spaces and columns it does not know", () => {
+  it("takes byte-order mark, CRLF, quotes, blank lines, spaces and columns it does not know", async () => {
     write(
       "pairs.csv",
       '\ufeffref_b, ref_a ,colour\r\n"x, y"," z ",red\r\n\r\nz,"x, y",\r\nq,z,\r\n',
     );
-    expect(run("--pairs", "pairs.csv").report).toMatchObject({ people: 3, pairs: 2 });
+    expect((await run("--pairs", "pairs.csv")).report).toMatchObject({ people: 3, pairs: 2 });
   });
 
-  it("tells references by case", () => {
+  it("tells references by case", async () => {
     write("pairs.csv", "ref_a,ref_b\na,A\n");
-    expect(run("--pairs", "pairs.csv").report).toMatchObject({ people: 2, pairs: 1 });
+    expect((await run("--pairs", "pairs.csv")).report).toMatchObject({ people: 2, pairs: 1 });
   });
 
-  it("takes files without rows as nobody", () => {
+  it("takes files without rows as nobody", async () => {
     write("pairs.csv", "ref_a,ref_b\n");
-    const { report, code } = run("--pairs", "pairs.csv");
+    const { report, code } = await run("--pairs", "pairs.csv");
     expect(code).toBe(0);
     expect(report).toMatchObject({
       people: 0,
@@ -63,9 +63,9 @@ describe("reading files", () => {
       'ref_a,ref_b\r\n"a\r\nb",c\r\n\r\nd,d\r\n',
       ["line 5: ref_b: self_contact"],
     ],
-  ])("refuses %s", (_, content, complaints) => {
+  ])("refuses %s", async (_, content, complaints) => {
     write("pairs.csv", content);
-    expect(run("--pairs", "pairs.csv")).toEqual({
+    expect(await run("--pairs", "pairs.csv")).toEqual({
       code: 2,
       complaints,
       output: null,
@@ -73,15 +73,15 @@ describe("reading files", () => {
     });
   });
 
-  it("refuses text that is not UTF-8", () => {
+  it("refuses text that is not UTF-8", async () => {
     write("pairs.csv", Uint8Array.of(0x72, 0xff, 0x0a));
-    expect(run("--pairs", "pairs.csv").complaints).toEqual(["line 1: row: encoding"]);
+    expect((await run("--pairs", "pairs.csv")).complaints).toEqual(["line 1: row: encoding"]);
   });
 
-  it("lists what is wrong in both files, in order, without repeating values", () => {
+  it("lists what is wrong in both files, in order, without repeating values", async () => {
     write("pairs.csv", "ref_a,ref_b\nanna,zoe\nanna,anna\n");
     write("people.csv", "ref,interviewed\nanna,maybe\nanna,yes\n,no\n");
-    expect(run("--pairs", "pairs.csv", "--people", "people.csv").complaints).toEqual([
+    expect((await run("--pairs", "pairs.csv", "--people", "people.csv")).complaints).toEqual([
       "people file",
       "line 2: interviewed: not_in_list",
       "line 3: ref: duplicate_ref",
@@ -94,44 +94,50 @@ describe("reading files", () => {
 });
 
 describe("options", () => {
-  const first = (...args: string[]) => {
+  const first = async (...args: string[]) => {
     write("pairs.csv", "ref_a,ref_b\na,b\n");
-    const { code, complaints } = run(...args);
+    const { code, complaints } = await run(...args);
     expect(code).toBe(2);
     return complaints[0];
   };
 
-  it("need a pairs file that can be read", () => {
-    expect(first()).toBe("--pairs: is needed");
-    expect(first("--pairs", "none.csv")).toBe("--pairs: no such file: none.csv");
-    expect(first("--pairs", ".")).toBe("--pairs: is a folder: .");
-    expect(first("--pairs", "pairs.csv", "--people", "none.csv")).toContain(
+  it("need a pairs file that can be read", async () => {
+    expect(await first()).toBe("--pairs: is needed");
+    expect(await first("--pairs", "none.csv")).toBe("--pairs: no such file: none.csv");
+    expect(await first("--pairs", ".")).toBe("--pairs: is a folder: .");
+    expect(await first("--pairs", "pairs.csv", "--people", "none.csv")).toContain(
       "--people: no such file",
     );
   });
 
-  it("refuse what they do not know", () => {
-    expect(first("--pairs", "pairs.csv", "--pears", "x")).toContain("--pears");
-    expect(first("--pairs", "pairs.csv", "more")).toContain("more");
-    expect(first("--pairs")).toContain("--pairs");
-    expect(first("--pairs", "pairs.csv", "--pairs", "pairs.csv")).toBe(
+  it("refuse what they do not know", async () => {
+    expect(await first("--pairs", "pairs.csv", "--pears", "x")).toContain("--pears");
+    expect(await first("--pairs", "pairs.csv", "more")).toContain("more");
+    expect(await first("--pairs")).toContain("--pairs");
+    expect(await first("--pairs", "pairs.csv", "--pairs", "pairs.csv")).toBe(
       "--pairs: given more than once",
     );
   });
 
-  it.each(["x", "1.5", "-1", "1e3", "", "99999999999999999999"])("refuse the number %j", (text) => {
-    expect(first("--pairs", "pairs.csv", `--population=${text}`)).toContain("--population");
-    expect(first("--pairs", "pairs.csv", `--seed=${text}`)).toContain("--seed");
-  });
+  it.each(["x", "1.5", "-1", "1e3", "", "99999999999999999999"])(
+    "refuse the number %j",
+    async (text) => {
+      expect(await first("--pairs", "pairs.csv", `--population=${text}`)).toContain("--population");
+      for (const name of ["--seed", "--replicates", "--workers"]) {
+        expect(await first("--pairs", "pairs.csv", `${name}=${text}`)).toContain(name);
+      }
+    },
+  );
 
-  it("refuse a population smaller than the people in the files", () => {
-    expect(first("--pairs", "pairs.csv", "--population", "1")).toBe(
+  it("refuse a population smaller than the people in the files", async () => {
+    expect(await first("--pairs", "pairs.csv", "--population", "1")).toBe(
       "--population: 1 is fewer than the 2 people in the files",
     );
   });
 
-  it("take a population of exactly the people in the files", () => {
+  it("take a population of exactly the people in the files", async () => {
     write("pairs.csv", "ref_a,ref_b\na,b\n");
-    expect(run("--pairs", "pairs.csv", "--population", "2").report?.threshold.n).toBe(2);
+    const { report } = await run("--pairs", "pairs.csv", "--population", "2");
+    expect(report?.threshold.n).toBe(2);
   });
 });

@@ -3,7 +3,6 @@ export type UndefinedReason =
   | "no_people"
   | "one_person"
   | "no_two_paths"
-  | "no_pairs"
   | "equal_degrees"
   | "one_group"
   | "one_in_group"

@@ -1,6 +1,7 @@
 import { mkdtempSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
+import type { AddedFigures } from "../../../scripts/measure/added-figures.ts";
 import { measure } from "../../../scripts/measure/measure.ts";
 import type { NetworkReport } from "../../../shared/core/index.ts";
 
@@ -12,9 +13,9 @@ export function measureFolder() {
     remove: () => rmSync(folder, { recursive: true, force: true }),
     write: (name: string, content: string | Uint8Array) =>
       writeFileSync(join(folder, name), content),
-    run: (...args: string[]) => {
-      const { output, complaints, code } = measure(args, folder);
-      const report = output === null ? null : (JSON.parse(output) as NetworkReport);
+    run: async (...args: string[]) => {
+      const { output, complaints, code } = await measure(args, folder);
+      const report = output === null ? null : (JSON.parse(output) as NetworkReport & AddedFigures);
       return { code, complaints, output, report };
     },
   };
