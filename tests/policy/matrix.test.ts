@@ -4,7 +4,7 @@ import type { AnyRoute } from "../../server/http/route.ts";
 import { plainRoutes, ROUTES } from "../../server/routes.ts";
 import { ROLES, type Role } from "../../shared/roles.ts";
 import { buildAccount, buildMember } from "../support/factories.ts";
-import { bodyFor, exportOf, stageImport } from "./support/bodies.ts";
+import { bodyFor, exportOf, runOf, stageImport } from "./support/bodies.ts";
 import {
   type Answer,
   cookiesOf,
@@ -46,6 +46,10 @@ beforeAll(async () => {
     exportId: {
       own: await exportOf(world, "officer"),
       other: await exportOf(world, "officer", world.others.officer),
+    },
+    runId: {
+      own: await runOf(world, world.everyone.supervisor),
+      other: await runOf(world, world.others.supervisor),
     },
     importId: {
       own: await stageImport(world.everyone.supervisor),
@@ -178,6 +182,10 @@ async function addressOf(
     if (name === "exportId" && object === "own" && holds(route, visitor ?? "anonymous")) {
       // A file is its maker's: each has one of their own.
       own = await exportOf(world, visitor as Role);
+    }
+    if (name === "runId" && object === "own" && holds(route, visitor ?? "anonymous")) {
+      // Only who made a comparison, or a supervisor, may change it.
+      own = await runOf(world, world.everyone[visitor as Role]);
     }
     path = path.replace(`:${name}`, pick(object, own, known.other));
   }

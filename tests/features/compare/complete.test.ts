@@ -127,7 +127,7 @@ test("a run again on the stored input has the same result, whatever was recorded
   expect(JSON.stringify(second.result)).toBe(JSON.stringify(first.result));
   expect(second.cutOff).toBe(first.cutOff);
   expect((await compareNow(complete)).people).toBe(35);
-});
+}, 60_000);
 
 test("a star has no other network with its degrees, and says so", async () => {
   const member = await signInAs(app, "epidemiologist", await buildInvestigation(app));
