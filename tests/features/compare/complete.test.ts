@@ -1,4 +1,6 @@
 import { afterAll, beforeAll, expect, test } from "vitest";
+import { recompute } from "../../../server/analysis/compare/recompute.ts";
+import { comparisonFile } from "../../../server/analysis/compare/run-file.ts";
 import type { CompareRun } from "../../../shared/contracts/compare.ts";
 import type { Statistic } from "../../../shared/core/index.ts";
 import { karate } from "../../core/support/published-networks.ts";
@@ -65,6 +67,22 @@ test("the lesson: extreme against random mixing, ordinary once degrees are kept"
   expect(measureOf(run, "ei").baselines.mixing).toBeUndefined();
   expect(measureOf(run, "ei").baselines.gnm?.pTwoSided).toBeLessThan(0.01);
   expect(measureOf(run, "meanSmallGroup")).toMatchObject({ observed: null, reason: "one_group" });
+});
+
+test("its download gives the same figures in one thread, without the server", async () => {
+  const run = await compareNow(complete, { attribute: "area" });
+  const { client, base } = complete;
+  const answer = await client.get(`${base}/compare/runs/${run.id}/file`);
+  const file = comparisonFile.parse(answer.body);
+  expect([file.people.length, file.pairs.length, file.classes]).toEqual([
+    34,
+    78,
+    ["North", "South"],
+  ]);
+  expect(JSON.parse(JSON.stringify(recompute(file)))).toEqual(run.result);
+  // A pair less is another network.
+  const other = recompute({ ...file, pairs: file.pairs.slice(1) });
+  expect(other.measures).not.toEqual(run.result?.measures);
 });
 
 test("figures, histograms, curves and laws hang together", async () => {

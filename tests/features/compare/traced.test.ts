@@ -1,4 +1,6 @@
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
+import { recompute } from "../../../server/analysis/compare/recompute.ts";
+import { comparisonFile } from "../../../server/analysis/compare/run-file.ts";
 import { endInterruptedRuns } from "../../../server/features/compare/upkeep.ts";
 import { compareRunList } from "../../../shared/contracts/compare.ts";
 import { CORE_VERSION } from "../../../shared/core/index.ts";
@@ -128,6 +130,7 @@ describe("a record made by tracing", () => {
     const file = answer.body;
     expect(file.run).toMatchObject({ id: run.id, coreVersion: CORE_VERSION, seed: 1 });
     expect(file.result).toEqual(run.result);
+    expect(JSON.parse(JSON.stringify(recompute(comparisonFile.parse(file))))).toEqual(run.result);
     expect(file.people.length).toBe(8);
     const asked = file.people.filter((one: { interviewed: boolean }) => one.interviewed);
     expect(asked.map((one: { interviewOrder: number }) => one.interviewOrder).sort()).toEqual([
