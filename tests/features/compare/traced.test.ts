@@ -1,10 +1,13 @@
+import { sql } from "drizzle-orm";
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
 import { recompute } from "../../../server/analysis/compare/recompute.ts";
 import { comparisonFile } from "../../../server/analysis/compare/run-file.ts";
+import { withTx } from "../../../server/db/with-tx.ts";
 import { endInterruptedRuns } from "../../../server/features/compare/upkeep.ts";
 import { compareRunList } from "../../../shared/contracts/compare.ts";
 import { CORE_VERSION } from "../../../shared/core/index.ts";
 import type { Role } from "../../../shared/roles.ts";
+import { contextOf } from "../../policy/support/world.ts";
 import { startTestApp, type TestApp } from "../../support/app.ts";
 import { askRun, compareNow, ended, resultOf, runOf } from "../../support/comparisons.ts";
 import {
@@ -177,7 +180,7 @@ describe("what is done with runs", () => {
     await asAdmin(
       app,
       `insert into core.person (id, investigation_id, study_number, recorded_at)
-       select gen_random_uuid(), $1, 'C' || k, now() from generate_series(1, 1500) k`,
+       select gen_random_uuid(), $1, 'C' || k, now() from generate_series(1, 800) k`,
       [member.investigationId],
     );
     await asAdmin(
@@ -186,7 +189,7 @@ describe("what is done with runs", () => {
           where investigation_id = $1),
         c as (insert into core.contact_pair (id, investigation_id, person_a, person_b)
           select gen_random_uuid(), $1, least(a.id, b.id), greatest(a.id, b.id)
-          from p a join p b on b.k = (a.k + 1) % 1500 or b.k = (a.k + 7) % 1500 returning id)
+          from p a join p b on b.k = (a.k + 1) % 800 or b.k = (a.k + 7) % 800 returning id)
        insert into core.exposure (id, investigation_id, pair_id)
        select gen_random_uuid(), $1, id from c`,
       [member.investigationId],
@@ -198,7 +201,7 @@ describe("what is done with runs", () => {
       await new Promise((resolve) => setTimeout(resolve, 50));
       run = await runOf(member, id);
     }
-    expect(run).toMatchObject({ state: "running", people: 1500, pairs: 3000, result: null });
+    expect(run).toMatchObject({ state: "running", people: 800, pairs: 1600, result: null });
     expect(run.progress).toBeGreaterThan(0);
     expect(run.progress).toBeLessThan(1);
     const early = await member.client.get(path(member, `/${id}/file`));
@@ -209,7 +212,32 @@ describe("what is done with runs", () => {
     expect((await compareNow(supervisor)).state).toBe("ready");
     expect(await runOf(member, id)).toMatchObject({ state: "cancelled", result: null });
     expect((await member.client.call("delete", path(member, `/${id}`))).status).toBe(204);
-  }, 60_000);
+
+    // Swaps on 1600 pairs are worth threads of their own; one thread must find the same.
+    const threaded = await compareNow(member);
+    const file = await member.client.get(path(member, `/${threaded.id}/file`));
+    const alone = recompute(comparisonFile.parse(file.body));
+    expect(JSON.parse(JSON.stringify(alone))).toEqual(threaded.result);
+  }, 90_000);
+
+  test("row security lets an epidemiologist change and delete their own alone", async () => {
+    const theirs = await compareNow(supervisor);
+    const mine = await compareNow(epidemiologist);
+    const nonce = await contextOf(app, epidemiologist, "epidemiologist");
+    const context = { pool: app.pools.epidemiologist, nonce };
+    for (const statement of [
+      sql`update core.compare_run set name = 'Taken' where investigation_id is not null`,
+      sql`delete from core.compare_run where id in (${theirs.id}, ${mine.id})`,
+    ]) {
+      await withTx(context, (tx) => tx.execute(statement));
+    }
+    expect((await runOf(supervisor, theirs.id)).name).toBe("A comparison");
+    expect((await supervisor.client.get(path(supervisor, `/${mine.id}`))).status).toBe(404);
+    const forged = sql`update core.compare_run set result = '{}' where id = ${theirs.id}`;
+    await expect(withTx(context, (tx) => tx.execute(forged))).rejects.toMatchObject({
+      cause: { code: "42501" },
+    });
+  });
 
   test("a process that ends leaves an entry that says so, and it can be run again", async () => {
     const run = await compareNow(epidemiologist);
