@@ -67,7 +67,7 @@ test("the lesson: extreme against random mixing, ordinary once degrees are kept"
   expect(measureOf(run, "ei").baselines.mixing).toBeUndefined();
   expect(measureOf(run, "ei").baselines.gnm?.pTwoSided).toBeLessThan(0.01);
   expect(measureOf(run, "meanSmallGroup")).toMatchObject({ observed: null, reason: "one_group" });
-});
+}, 60_000);
 
 test("its download gives the same figures in one thread, without the server", async () => {
   const run = await compareNow(complete, { attribute: "area" });
@@ -83,7 +83,7 @@ test("its download gives the same figures in one thread, without the server", as
   // A pair less is another network.
   const other = recompute({ ...file, pairs: file.pairs.slice(1) });
   expect(other.measures).not.toEqual(run.result?.measures);
-});
+}, 60_000);
 
 test("figures, histograms, curves and laws hang together", async () => {
   const result = resultOf(await compareNow(complete));

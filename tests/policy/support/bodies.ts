@@ -59,10 +59,10 @@ export async function exportOf(
 }
 
 /** A finished comparison of a member's, on nobody; past the routes. */
-export async function runOf(
+export async function madeRun(
   world: World,
-  member: Member,
-  state: "ready" | "running" = "ready",
+  role: Role,
+  member: Member = world.everyone[role],
 ): Promise<string> {
   const result = {
     seen: {
@@ -86,15 +86,9 @@ export async function runOf(
     `insert into core.compare_run (id, investigation_id, name, state, replicates, seed, population,
        time_window, question, as_of, cut_off, graph_version, core_version, generator, input, result,
        recorded_by)
-     values (gen_random_uuid(), $1, 'A run', $2, 199, 1, 'all', 'preset', '{"population":"all"}',
-       '2026-03-01', now(), 0, '1', 'none', $3, $4, $5) returning id`,
-    [
-      member.investigationId,
-      state,
-      await packInput(NOBODY),
-      JSON.stringify(result),
-      member.accountId,
-    ],
+     values (gen_random_uuid(), $1, 'A run', 'ready', 199, 1, 'all', 'preset', '{"population":"all"}',
+       '2026-03-01', now(), 0, '1', 'none', $2, $3, $4) returning id`,
+    [member.investigationId, await packInput(NOBODY), JSON.stringify(result), member.accountId],
   );
   return made.rows[0].id;
 }
