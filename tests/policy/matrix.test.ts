@@ -6,6 +6,14 @@ import { ROLES, type Role } from "../../shared/roles.ts";
 import { buildAccount, buildMember } from "../support/factories.ts";
 import { bodyFor, exportOf, madeRun, stageImport } from "./support/bodies.ts";
 import {
+  checkOf,
+  endOf,
+  likeHeld,
+  openInvitation,
+  savedFilterOf,
+  teamIn,
+} from "./support/objects.ts";
+import {
   type Answer,
   cookiesOf,
   inBatches,
@@ -27,21 +35,24 @@ beforeAll(async () => {
   cookies = await cookiesOf(world);
   objects = {
     personId: { own: world.people.held, other: world.foreign },
-    checkId: { own: await checkOf(world.people.held), other: await checkOf(world.foreign) },
-    endId: { own: await endOf(world.people.held), other: await endOf(world.foreign) },
+    checkId: {
+      own: await checkOf(world, world.people.held),
+      other: await checkOf(world, world.foreign),
+    },
+    endId: { own: await endOf(world, world.people.held), other: await endOf(world, world.foreign) },
     memberId: {
       own: world.everyone.epidemiologist.memberId,
       other: world.others.epidemiologist.memberId,
     },
     invitationId: {
-      own: await openInvitation(world.here),
-      other: await openInvitation(world.elsewhere),
+      own: await openInvitation(world, world.here),
+      other: await openInvitation(world, world.elsewhere),
     },
-    teamId: { own: await teamIn(world.here), other: await teamIn(world.elsewhere) },
+    teamId: { own: await teamIn(world, world.here), other: await teamIn(world, world.elsewhere) },
     // Saved filters are each account's own: addressOf makes one for whoever knocks.
     filterId: {
       own: randomUUID(),
-      other: await savedFilterOf(world.elsewhere, world.others.supervisor.accountId),
+      other: await savedFilterOf(world, world.elsewhere, world.others.supervisor.accountId),
     },
     exportId: {
       own: await exportOf(world, "officer"),
@@ -66,72 +77,6 @@ beforeAll(async () => {
 afterAll(async () => {
   await world?.close();
 });
-
-/** A check of a person, whoever may see it. */
-async function checkOf(personId: string): Promise<string> {
-  const made = await world.admin.query(
-    `insert into core.follow_check (id, investigation_id, person_id, day, outcome)
-     select gen_random_uuid(), investigation_id, id, '2026-03-04', 'seen' from core.person
-     where id = $1 returning id`,
-    [personId],
-  );
-  return made.rows[0].id;
-}
-
-/** A team without members, past the routes. */
-async function teamIn(investigationId: string): Promise<string> {
-  const id = randomUUID();
-  await world.admin.query(
-    "insert into core.team (id, investigation_id, name) values ($1, $2, $3)",
-    [id, investigationId, `Team ${id.slice(0, 8)}`],
-  );
-  return id;
-}
-
-/** Another person held by whoever holds the held one. */
-async function likeHeld(): Promise<string> {
-  const made = await world.admin.query(
-    `insert into core.person (id, investigation_id, study_number, classification,
-       assigned_account_id, recorded_by)
-     select gen_random_uuid(), investigation_id, left(gen_random_uuid()::text, 8), 'contact',
-       assigned_account_id, recorded_by from core.person where id = $1 returning id`,
-    [world.people.held],
-  );
-  return made.rows[0].id;
-}
-
-/** An end of a person's follow-up. */
-async function endOf(personId: string): Promise<string> {
-  const made = await world.admin.query(
-    `insert into core.follow_end (id, investigation_id, person_id, reason, day)
-     select gen_random_uuid(), investigation_id, id, 'moved', '2099-03-04' from core.person
-     where id = $1 returning id`,
-    [personId],
-  );
-  return made.rows[0].id;
-}
-
-/** An invitation that nobody took up, past the routes. */
-async function openInvitation(investigationId: string): Promise<string> {
-  const id = randomUUID();
-  await world.admin.query(
-    `insert into auth.invitation (id, token_hash, kind, email, investigation_id, role, expires_at)
-     values ($1, $2, 'invitation', 'open@body.example', $3, 'tracer', now() + interval '1 hour')`,
-    [id, randomUUID(), investigationId],
-  );
-  return id;
-}
-
-/** A saved filter of an account, past the routes. */
-async function savedFilterOf(investigationId: string, accountId: string): Promise<string> {
-  const id = randomUUID();
-  await world.admin.query(
-    `insert into core.saved_filter (id, investigation_id, account_id, name, filter)
-     values ($1, $2, $3, $4, '{}')`,
-    [id, investigationId, accountId, randomUUID()],
-  );
-  return id;
-}
 
 type Where = "own" | "other" | "random" | "malformed";
 const WHERE: readonly Where[] = ["own", "other", "random", "malformed"];
@@ -161,23 +106,23 @@ async function addressOf(
       own = await buildMember(world.app, world.here, account.id, "tracer");
     }
     if (route.method === "delete" && object === "own" && name === "checkId") {
-      own = await checkOf(world.people.held);
+      own = await checkOf(world, world.people.held);
     }
     if (route.method === "delete" && object === "own" && name === "teamId") {
-      own = await teamIn(world.here);
+      own = await teamIn(world, world.here);
     }
     if (route.method === "delete" && object === "own" && name === "endId") {
       // One follow-up has one end, so each deletion gets a contact of its own.
-      const person = await likeHeld();
-      own = await endOf(person);
+      const person = await likeHeld(world);
+      own = await endOf(world, person);
       path = path.replace(world.people.held, person);
     }
     if (route.method === "delete" && object === "own" && name === "invitationId") {
-      own = await openInvitation(world.here);
+      own = await openInvitation(world, world.here);
     }
     if (object === "own" && name === "filterId") {
       const role = ROLES.find((one) => one === visitor) ?? "tracer";
-      own = await savedFilterOf(world.here, world.everyone[role].accountId);
+      own = await savedFilterOf(world, world.here, world.everyone[role].accountId);
     }
     const make = { exportId: exportOf, runId: madeRun }[name];
     if (make && object === "own" && holds(route, visitor ?? "anonymous")) {
