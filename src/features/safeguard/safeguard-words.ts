@@ -51,6 +51,11 @@ export const actionWords: Readonly<Record<EventName, string>> = {
   "export.made": "made an export",
   "export.downloaded": "downloaded an export",
   "export.deleted": "deleted an export",
+  "compare.requested": "asked for a comparison",
+  "compare.renamed": "renamed a comparison",
+  "compare.cancelled": "stopped a comparison",
+  "compare.deleted": "deleted a comparison",
+  "compare.downloaded": "downloaded a comparison",
   "access_events.read": "read this record",
   "field_policy.read": "read the field policy",
 };
