@@ -211,6 +211,7 @@ export { onlyGraph } from "./null-models/only-graph.ts";
 export { pairAt, type TwoEnds } from "./null-models/pair-at.ts";
 export { PairSet } from "./null-models/pair-set.ts";
 export {
+  type QuickStatistic,
   ReplicateStatistics,
   rowWidth,
   STATISTICS,

@@ -14,14 +14,6 @@ import {
   teamIn,
 } from "./support/objects.ts";
 import {
-  checkOf,
-  endOf,
-  likeHeld,
-  openInvitation,
-  savedFilterOf,
-  teamIn,
-} from "./support/objects.ts";
-import {
   type Answer,
   cookiesOf,
   inBatches,

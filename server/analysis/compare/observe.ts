@@ -2,8 +2,8 @@ import type { CompareRun, MixingAttribute } from "../../../shared/contracts/comp
 import {
   type Comparability,
   comparability,
+  type QuickStatistic,
   type SampledNetwork,
-  type Statistic,
   type StatisticsChoice,
   type TracedDesign,
   tracedDesign,
@@ -13,7 +13,7 @@ import type { CompareInput } from "./compare-input.ts";
 type Seen = NonNullable<CompareRun["result"]>["seen"];
 
 /** Figures of the table, in the order of the screen; those of mixing only with an attribute. */
-const TABLE: readonly Statistic[] = [
+const TABLE: readonly QuickStatistic[] = [
   "people",
   "pairs",
   "groups",
@@ -29,7 +29,7 @@ const TABLE: readonly Statistic[] = [
   "averageClustering",
   "degreeAssortativity",
 ];
-const MIXING: readonly Statistic[] = ["attributeAssortativity", "ei", "modularity"];
+const MIXING: readonly QuickStatistic[] = ["attributeAssortativity", "ei", "attributeModularity"];
 
 /** Longest and shortest curve of degrees, and the length of that of group sizes. */
 const MOST_DEGREE_BINS = 40;
@@ -39,7 +39,9 @@ const SIZE_BINS = 12;
 /** What is known before anything is drawn. */
 export type Observation = {
   readonly network: SampledNetwork;
-  readonly choice: StatisticsChoice;
+  readonly choice: Omit<StatisticsChoice, "statistics"> & {
+    readonly statistics: readonly QuickStatistic[];
+  };
   readonly judged: Comparability;
   /** Null where there is nothing to simulate interviews from. */
   readonly design: TracedDesign | null;

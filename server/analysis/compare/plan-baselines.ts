@@ -5,9 +5,9 @@ import {
   type ComparisonKey,
   type NullModel,
   onlyGraph,
+  type QuickStatistic,
   type ReplicatePlan,
   type Standing,
-  type Statistic,
 } from "../../../shared/core/index.ts";
 import type { CompareInput } from "./compare-input.ts";
 import { type Observation, observe } from "./observe.ts";
@@ -34,19 +34,24 @@ const RULE: Record<Baseline, ComparisonKey> = {
   mixing: "mixing_preserving",
 };
 
-const DEGREES: readonly Statistic[] = ["isolates", "meanDegree", "degreeVariance", "maxDegree"];
+const DEGREES: readonly QuickStatistic[] = [
+  "isolates",
+  "meanDegree",
+  "degreeVariance",
+  "maxDegree",
+];
 
 /**
  * Figures that a baseline holds fixed, or that say nothing on what it draws: there is nothing to
  * compare. Among interviewed people alone the mean degree varies although the pairs are fixed.
  */
-export function heldFixed(baseline: Baseline, observation: Observation): readonly Statistic[] {
+export function heldFixed(baseline: Baseline, observation: Observation): readonly QuickStatistic[] {
   const everyone = observation.network.isInterviewed === null;
-  const meanDegree: readonly Statistic[] = everyone ? ["meanDegree"] : [];
+  const meanDegree: readonly QuickStatistic[] = everyone ? ["meanDegree"] : [];
   switch (baseline) {
     case "traced":
       // The people who are drawn are not those of the record: they have no attribute.
-      return ["attributeAssortativity", "ei", "modularity"];
+      return ["attributeAssortativity", "ei", "attributeModularity"];
     case "gnm":
       return ["people", "pairs", ...meanDegree];
     case "degreePreserving":
@@ -55,7 +60,7 @@ export function heldFixed(baseline: Baseline, observation: Observation): readonl
     case "mixing":
       return observation.attribute === "household"
         ? ["people", "pairs", ...meanDegree, "ei"]
-        : ["people", "pairs", ...meanDegree, "attributeAssortativity", "ei", "modularity"];
+        : ["people", "pairs", ...meanDegree, "attributeAssortativity", "ei", "attributeModularity"];
   }
 }
 

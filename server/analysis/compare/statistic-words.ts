@@ -1,8 +1,8 @@
-import type { Direction, Statistic, UndefinedReason } from "../../../shared/core/index.ts";
+import type { Direction, QuickStatistic, UndefinedReason } from "../../../shared/core/index.ts";
 import type { Observation } from "./observe.ts";
 
 /** What one more pair between known people can do to each figure. Source: methods C.3.4. */
-export const DIRECTION_OF: Readonly<Record<Statistic, Direction>> = {
+export const DIRECTION_OF: Readonly<Record<QuickStatistic, Direction>> = {
   people: "up",
   pairs: "up",
   groups: "down",
@@ -20,11 +20,11 @@ export const DIRECTION_OF: Readonly<Record<Statistic, Direction>> = {
   degreeAssortativity: "either",
   attributeAssortativity: "either",
   ei: "either",
-  modularity: "either",
+  attributeModularity: "either",
 };
 
 /** Why a figure has no value on the observed network. */
-export function whyUndefined(statistic: Statistic, { network }: Observation): UndefinedReason {
+export function whyUndefined(statistic: QuickStatistic, { network }: Observation): UndefinedReason {
   const { people, length: pairs } = network;
   if (people === 0) return "no_people";
   switch (statistic) {
@@ -42,7 +42,7 @@ export function whyUndefined(statistic: Statistic, { network }: Observation): Un
       return pairs === 0 ? "no_pairs" : "equal_degrees";
     case "attributeAssortativity":
     case "ei":
-    case "modularity":
+    case "attributeModularity":
       return pairs === 0 ? "no_pairs" : "no_values";
     default:
       return "no_values";

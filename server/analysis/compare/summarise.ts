@@ -7,9 +7,9 @@ import {
   pointwiseEnvelope,
   poissonDegrees,
   possiblePairs,
+  type QuickStatistic,
   rankEnvelope,
   replicateSummary,
-  type Statistic,
 } from "../../../shared/core/index.ts";
 import type { CompareInput } from "./compare-input.ts";
 import { type Observation, observe, seenOf } from "./observe.ts";
@@ -72,8 +72,8 @@ function figuresOf(
   drawn: DrawnBaseline,
   observation: Observation,
   observed: Float64Array,
-): Map<Statistic, NonNullable<Figures[Baseline]>> {
-  const figures = new Map<Statistic, NonNullable<Figures[Baseline]>>();
+): Map<QuickStatistic, NonNullable<Figures[Baseline]>> {
+  const figures = new Map<QuickStatistic, NonNullable<Figures[Baseline]>>();
   const { table, reached } = drawn;
   if (table === null || reached === 0) return figures;
   const width = observed.length;

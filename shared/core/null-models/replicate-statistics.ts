@@ -40,6 +40,9 @@ export const STATISTICS = [
   "attributeModularity",
 ] as const;
 
+/** Name of a figure that is always quick. */
+export type QuickStatistic = (typeof STATISTICS)[number];
+
 /** Name of a figure. */
 export type Statistic = (typeof STATISTICS)[number] | HeavyStatistic;
 
