@@ -63,5 +63,6 @@ export const TOPICS = [
   "members",
   "clusters",
   "settings",
+  "compare",
 ] as const;
 export type Topic = (typeof TOPICS)[number];

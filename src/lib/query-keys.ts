@@ -17,6 +17,7 @@ export type QueryWord =
   | "groups"
   | "network"
   | "clusters"
+  | "comparisons"
   | "field-policy"
   | "access-events";
 
