@@ -63,6 +63,5 @@ export const TOPICS = [
   "members",
   "clusters",
   "settings",
-  "compare",
 ] as const;
 export type Topic = (typeof TOPICS)[number];

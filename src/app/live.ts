@@ -15,7 +15,6 @@ export const STALE_BY_TOPIC: Readonly<Record<Topic, readonly QueryWord[]>> = {
   clusters: ["clusters"],
   settings: ["settings", "investigation", "network", "groups", "clusters", "people", "follow-up"],
   exports: ["exports"],
-  compare: ["comparisons"],
 };
 
 const allTopics = Object.keys(STALE_BY_TOPIC) as Topic[];

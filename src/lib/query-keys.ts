@@ -17,7 +17,6 @@ export type QueryWord =
   | "groups"
   | "network"
   | "clusters"
-  | "comparisons"
   | "field-policy"
   | "access-events";
 

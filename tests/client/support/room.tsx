@@ -40,6 +40,8 @@ export type Answers = (
 export type RoomOptions = {
   room: ComponentType;
   at: string;
+  /** Pattern of the page's address, where it holds an id. */
+  path?: string;
   rooms: Session["rooms"];
   answers: Answers;
   /** More of the session, where the room looks at it. */
@@ -47,7 +49,8 @@ export type RoomOptions = {
 };
 
 /** Renders a room on answers of one's own; gives what was asked for and the cut-offs it showed. */
-export function renderRoom({ room: Room, at, rooms, answers, session: more }: RoomOptions) {
+export function renderRoom(options: RoomOptions) {
+  const { room: Room, at, path: pattern = "/room", rooms, answers, session: more } = options;
   const asked: string[] = [];
   const cutOffs: unknown[] = [];
   const start = `/api/investigations/${ids.investigation}/`;
@@ -74,7 +77,7 @@ export function renderRoom({ room: Room, at, rooms, answers, session: more }: Ro
   const session = { rooms, ...more } as Session;
   const router = createMemoryRouter(
     [
-      { path: "/room", element: <Room /> },
+      { path: pattern, element: <Room /> },
       { path: "*", element: <Elsewhere /> },
     ],
     { initialEntries: [at] },

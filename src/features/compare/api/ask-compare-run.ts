@@ -7,7 +7,7 @@ import { investigationKey } from "../../../lib/query-keys.ts";
 function useRefresh(investigationId: string) {
   const queryClient = useQueryClient();
   return () =>
-    queryClient.invalidateQueries({ queryKey: investigationKey(investigationId, "comparisons") });
+    queryClient.invalidateQueries({ queryKey: investigationKey(investigationId, "compare") });
 }
 
 /** Asks for a comparison; it is worked out in the server. */

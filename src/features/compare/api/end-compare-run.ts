@@ -15,7 +15,7 @@ export function useEndCompareRun(investigationId: string) {
       queryClient.invalidateQueries({
         queryKey: investigationKey(
           investigationId,
-          "comparisons",
+          "compare",
           ...(act === "delete" ? ["list"] : []),
         ),
         predicate: ({ queryKey }) => act === "cancel" || !queryKey.includes(runId),

@@ -7,7 +7,7 @@ import { runPollMs } from "./list-compare-runs.ts";
 /** One comparison with its figures, once they are there. */
 export function compareRunQuery(investigationId: string, runId: string) {
   return queryOptions({
-    queryKey: investigationKey(investigationId, "comparisons", "one", runId),
+    queryKey: investigationKey(investigationId, "compare", "one", runId),
     queryFn: ({ signal }) =>
       api.get(inInvestigation(investigationId, `compare/runs/${runId}`), {
         schema: compareRunAnswer,

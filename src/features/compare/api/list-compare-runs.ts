@@ -9,7 +9,7 @@ export const runPollMs = 1_500;
 /** Comparisons asked for so far, newest first. */
 export function compareRunsQuery(investigationId: string, page: number, pageSize: number) {
   return queryOptions({
-    queryKey: investigationKey(investigationId, "comparisons", "list", { page, pageSize }),
+    queryKey: investigationKey(investigationId, "compare", "list", { page, pageSize }),
     queryFn: ({ signal }) =>
       api.get(inInvestigation(investigationId, "compare/runs"), {
         query: { page, pageSize },
