@@ -8,6 +8,7 @@ import { migrate } from "./db/migrate.ts";
 import { createPools, endPools, loginUrl } from "./db/pools.ts";
 import { startDispatcher } from "./events/dispatcher.ts";
 import { createLiveHub } from "./events/live-hub.ts";
+import { startCompareUpkeep } from "./features/compare/upkeep.ts";
 import { startExportUpkeep } from "./features/exports/upkeep.ts";
 import { startImportUpkeep } from "./features/imports/upkeep.ts";
 import { firstOfficerToken } from "./features/session/first-officer.ts";
@@ -81,6 +82,7 @@ async function main(): Promise<void> {
   await analysis.start();
   const imports = await startImportUpkeep({ pools, log });
   const exports = await startExportUpkeep({ pools, log });
+  const comparisons = await startCompareUpkeep({ pools, log });
   const dispatcher = await startDispatcher({ pools, systemUrl, analysis, hub, log });
   const housekeeping = startHousekeeping(pools, log);
   const address =
@@ -131,6 +133,7 @@ async function main(): Promise<void> {
       imports.stop();
       exports.stop();
       housekeeping.stop();
+      await comparisons.stop();
       await mail.stop();
       await dispatcher.stop();
       await analysis.stop();

@@ -1,5 +1,6 @@
 import { liveRoutes } from "./events/routes.ts";
 import { clusterRoutes } from "./features/clusters/routes.ts";
+import { compareRoutes } from "./features/compare/routes.ts";
 import { exportRoutes } from "./features/exports/routes.ts";
 import { followUpRoutes } from "./features/follow-up/routes.ts";
 import { groupRoutes } from "./features/groups/routes.ts";
@@ -38,6 +39,7 @@ export const ROUTES: readonly AnyRoute[] = [
   ...groupRoutes,
   ...clusterRoutes,
   ...networkRoutes,
+  ...compareRoutes,
   ...safeguardRoutes,
 ];
 

@@ -105,6 +105,8 @@ export const FIELD_ERRORS = {
   stage_dropped: "The checked rows were deleted after a day; upload the file again",
   export_failed: "The file could not be made; nothing was kept of it",
   export_no_access: "You signed out or changed role before it was finished; nothing was kept",
+  compare_failed: "The comparison could not be finished; nothing was kept of it",
+  compare_interrupted: "The server was restarted before it was finished; run it again",
   commit_failed: "The import could not be finished; nothing was stored",
   commit_clash: "Someone recorded the same reference meanwhile; nothing was stored",
   commit_no_access: "You signed out or changed role before it was finished; nothing was stored",

@@ -32,6 +32,7 @@ begin
   delete from identity.ref_alias t where t.investigation_id = v_id;
   delete from identity.export_part t where t.investigation_id = v_id;
   delete from core.export t where t.investigation_id = v_id;
+  delete from core.compare_run t where t.investigation_id = v_id;
   delete from identity.search_token t where t.investigation_id = v_id;
   delete from identity.person t where t.investigation_id = v_id;
   delete from core.follow_check t where t.investigation_id = v_id;

@@ -50,7 +50,7 @@ export function dayRange(question: ReportQuestion, lastDay: number, dated: boole
 }
 
 /** Group exposures on record whose days meet the range, or which have no day. */
-function countGroupExposures(snapshot: GraphSnapshot, at: number, range: DayRange): number {
+export function countGroupExposures(snapshot: GraphSnapshot, at: number, range: DayRange): number {
   const { firstDay, lastDay, recordedAt, withdrawnAt } = snapshot.groupExposures;
   let count = 0;
   for (let k = 0; k < firstDay.length; k++) {

@@ -2,24 +2,26 @@ import { recall } from "../../shared/core/index.ts";
 import { type GraphSnapshot, NAMED_BY } from "./graph-store.ts";
 import { type DayRange, meets, type Selection } from "./selection.ts";
 
+/** Pairs of two interviewed people: how many both named, and how many one of them only. */
+export type NamingsOfPairs = { readonly both: number; readonly one: number };
+
 /**
- * Recall q from the pairs of a selection whose two people were both interviewed: how often both
- * named the other, and how often one only. Tellings whose teller is not known do not count.
+ * Counts who named whom among the pairs of a selection whose two people were both interviewed.
+ * Tellings whose teller is not known do not count.
  *
  * @param interviewed flags by person number of the selection's graph; a pair with an end whose flag
  *   is 0 is left out
  * @param at instant (ms) up to which tellings count
- * @returns q, or null when no pair was named by both
  *
  * Source: methods C.8.2.
  */
-export function recallOf(
+export function namingsOf(
   snapshot: GraphSnapshot,
   selection: Selection,
   interviewed: Uint8Array,
   at: number,
   range: DayRange,
-): number | null {
+): NamingsOfPairs {
   const sides = new Uint8Array(snapshot.pairs.a.length);
   const { pair, namedBy, firstDay, lastDay, recordedAt, withdrawnAt } = snapshot.exposures;
   for (let k = 0; k < pair.length; k++) {
@@ -38,5 +40,21 @@ export function recallOf(
     if (named === 3) both++;
     else if (named !== 0) one++;
   }
+  return { both, one };
+}
+
+/**
+ * Recall q from the pairs that `namingsOf` counts.
+ *
+ * @returns q, or null when no pair was named by both
+ */
+export function recallOf(
+  snapshot: GraphSnapshot,
+  selection: Selection,
+  interviewed: Uint8Array,
+  at: number,
+  range: DayRange,
+): number | null {
+  const { both, one } = namingsOf(snapshot, selection, interviewed, at, range);
   return recall(both, one).value;
 }

@@ -40,7 +40,7 @@ export async function recordGraphChange(
 /** Announces that something of a topic changed, without touching the graph. */
 export async function announce(
   tx: Tx,
-  topic: "people" | "interviews" | "imports" | "exports" | "members" | "settings",
+  topic: "people" | "interviews" | "imports" | "exports" | "compare" | "members" | "settings",
   entityId: string | null,
 ): Promise<void> {
   await tx.execute(sql`select core.announce(${topic}, ${entityId}::uuid, null)`);

@@ -9,7 +9,7 @@ import { safeError } from "./translate-error.ts";
 export interface FileAnswer {
   /** Fixed ASCII name; nothing typed. */
   name: string;
-  type: "text/csv; charset=utf-8";
+  type: "text/csv; charset=utf-8" | "application/json; charset=utf-8";
   /** Length in bytes, said before the first one: what ends early is then seen to have failed. */
   bytes: number;
   read(): AsyncIterable<Buffer>;

@@ -1,6 +1,6 @@
 import { z } from "zod";
 import { COMPARISON_KEYS, OBSERVATION_STATES, STANDINGS, STATISTICS } from "../core/index.ts";
-import { day, LIMITS, listOf, text, uuid } from "./common.ts";
+import { day, LIMITS, listOf, listQuery, text, uuid } from "./common.ts";
 import { POPULATIONS } from "./network.ts";
 
 /** Attributes by which mixing can be compared; all of them are told to the epidemiologist. */
@@ -52,6 +52,11 @@ export const compareRunInput = z.strictObject({
 });
 export type CompareRunInput = z.output<typeof compareRunInput>;
 
+/** Another name for a run. */
+export const compareRunPatch = z.strictObject({ name: text(LIMITS.name, 1) });
+/** Query of the list; `q` looks into names. The order is fixed: newest first. */
+export const compareRunQuery = listQuery;
+
 const nullable = z.number().nullable();
 
 /** A run as the list tells it. */
@@ -81,6 +86,8 @@ export const compareRunItem = z.strictObject({
   by: z.string().nullable(),
   recordedAt: z.string(),
   finishedAt: z.string().nullable(),
+  /** What the acting person may do with it; the download and "run again" are every reader's. */
+  can: z.strictObject({ change: z.boolean() }).optional(),
 });
 export type CompareRunItem = z.output<typeof compareRunItem>;
 export const compareRunList = listOf(compareRunItem);
@@ -144,6 +151,9 @@ export const compareRunAnswer = compareRunItem.extend({
         recall: nullable,
         unresolvedGroupExposures: z.int(),
         undated: z.int(),
+        /** On record, and not compared: seen through no interview (people, pairs). */
+        leftOutPeople: z.int().optional(),
+        leftOutPairs: z.int().optional(),
         /** What to print beside every comparison. */
         cautions: z.array(z.string()),
       }),

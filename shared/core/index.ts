@@ -2,6 +2,7 @@
  * The numeric core: typed arrays in, numbers and typed arrays out. It imports nothing outside its
  * folder and reads no clock; what is random comes from a seed and the number of a replicate.
  */
+export { CORE_VERSION, GENERATOR } from "./core-version.ts";
 export { type Articulation, articulation } from "./graph/articulation.ts";
 export { buildGraph, type Graph, type PairEnds } from "./graph/build-graph.ts";
 export {

@@ -15,6 +15,7 @@ export const STALE_BY_TOPIC: Readonly<Record<Topic, readonly QueryWord[]>> = {
   clusters: ["clusters"],
   settings: ["settings", "investigation", "network", "groups", "clusters", "people", "follow-up"],
   exports: ["exports"],
+  compare: ["compare"],
 };
 
 const allTopics = Object.keys(STALE_BY_TOPIC) as Topic[];

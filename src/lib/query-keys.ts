@@ -14,6 +14,7 @@ export type QueryWord =
   | "follow-up"
   | "imports"
   | "exports"
+  | "compare"
   | "groups"
   | "network"
   | "clusters"

@@ -10,6 +10,7 @@ import { createApp } from "../../server/app.ts";
 import { createPools, endPools, loginUrl, type Pools } from "../../server/db/pools.ts";
 import { startDispatcher } from "../../server/events/dispatcher.ts";
 import { createLiveHub } from "../../server/events/live-hub.ts";
+import { startCompareUpkeep } from "../../server/features/compare/upkeep.ts";
 import { createKeyRing, type KeyRing } from "../../server/identity/keys.ts";
 import { startMail } from "../../server/mail/mail.ts";
 import type { Services } from "../../server/services.ts";
@@ -44,6 +45,7 @@ export async function startTestApp(): Promise<TestApp> {
   const analysis = createAnalysis({ pools, log });
   await analysis.start();
   const systemUrl = loginUrl(database.adminUrl, "system", TEST_PASSWORDS.system);
+  const comparisons = await startCompareUpkeep({ pools, log });
   const dispatcher = await startDispatcher({ pools, systemUrl, analysis, hub, log });
   let origin = "";
   const env = { loopback: true, publicUrl: undefined, smtpUrl: undefined, mailFrom: undefined };
@@ -82,6 +84,7 @@ export async function startTestApp(): Promise<TestApp> {
       hub.close();
       server.closeAllConnections();
       await new Promise<void>((resolve) => server.close(() => resolve()));
+      await comparisons.stop();
       await mail.stop();
       await dispatcher.stop();
       await analysis.stop();

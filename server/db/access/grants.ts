@@ -208,6 +208,10 @@ export function grants(): string[] {
   out.push(`grant update (done_at), delete on core.outbox to ${loginOf("system")}`);
   out.push(`grant update (state, progress) on core.import to ${loginOf("system")}`);
   out.push(`grant update (state, progress, failure) on core.export to ${loginOf("system")}`);
+  out.push(
+    `grant update (state, progress, reached, input, result, failure, people, pairs, graph_version,
+       cut_off, as_of, from_day, to_day, finished_at) on core.compare_run to ${loginOf("system")}`,
+  );
   const auth = loginOf("auth");
   out.push(
     `grant select, insert, update, delete on auth.account, auth.session, auth.ctx_live,

@@ -16,6 +16,7 @@ interface Writes {
 
 const RECORDERS = ["tracer", "supervisor", "officer"] as const;
 const LEADERS = ["supervisor", "officer"] as const;
+const COMPARERS = ["supervisor", "epidemiologist"] as const;
 const EXPORTERS = ["supervisor", "epidemiologist", "officer"] as const;
 
 export const WRITES: Record<string, Writes> = {
@@ -134,6 +135,11 @@ export const WRITES: Record<string, Writes> = {
       ],
     },
   },
+  "core.compare_run": {
+    insert: COMPARERS,
+    update: { roles: COMPARERS, columns: ["name", "state", "finished_at"] },
+    remove: COMPARERS,
+  },
   "core.match_review": { insert: [], update: { roles: ["supervisor"], columns: ["state"] } },
   "core.investigation": {
     insert: [],
@@ -191,6 +197,7 @@ const TRACER_ROWS: Record<string, string> = {
   "core.member": "false",
   "core.import": "false",
   "core.export": "false",
+  "core.compare_run": "false",
 };
 
 const MINE = `${HERE} and recorded_by = (select core.ctx_user())`;
@@ -200,9 +207,15 @@ const ROLE_ROWS: Record<string, Partial<Record<Role, string>>> = {
   "core.export": { supervisor: MINE, epidemiologist: MINE },
 };
 
+/** Rows a role may change or remove, where that is less than what it sees. */
+const ROLE_CHANGES: Record<string, Partial<Record<Role, string>>> = {
+  "core.compare_run": { epidemiologist: MINE },
+};
+
 /** Rows any role may add, where that needs more than the investigation. */
 const ADDS: Record<string, string> = {
   "core.export": `${MINE} and role = (select core.ctx_role())`,
+  "core.compare_run": MINE,
 };
 
 /** Rows that belong to an account, whatever its role: nobody else sees or changes them. */
@@ -247,6 +260,7 @@ export const CORE_TABLES = [
   "core.outbox",
   "core.import",
   "core.export",
+  "core.compare_run",
 ] as const;
 
 const IDENTITY_TABLES = [
@@ -314,19 +328,20 @@ export function rowPolicies(): string[] {
       const tracer = role === "tracer";
       const rows = (tracer && TRACER_ROWS[table]) || ROLE_ROWS[table]?.[role] || here(table);
       out.push(policy(table, `read_${role}`, "select", login, `using (${rows})`));
+      const own = ROLE_CHANGES[table]?.[role] ?? rows;
       const writes = WRITES[table];
       if (writes?.insert.includes(role)) {
         const adds = (tracer && TRACER_ADDS[table]) || ADDS[table] || here(table);
         out.push(policy(table, `add_${role}`, "insert", login, `with check (${adds})`));
       }
       if (writes?.remove?.includes(role)) {
-        out.push(policy(table, `remove_${role}`, "delete", login, `using (${rows})`));
+        out.push(policy(table, `remove_${role}`, "delete", login, `using (${own})`));
       }
       if (writes?.update?.roles.includes(role)) {
         // Asked per row: as a second list beside the one of the read policy, the index would be
         // searched for every pair of entries of both.
         const changes =
-          tracer && table === "core.person" ? `${HERE} and core.ctx_may_name(id)` : rows;
+          tracer && table === "core.person" ? `${HERE} and core.ctx_may_name(id)` : own;
         out.push(
           policy(
             table,
@@ -344,6 +359,9 @@ export function rowPolicies(): string[] {
   out.push(policy("core.outbox", "end_system", "delete", loginOf("system"), "using (true)"));
   out.push(policy("core.import", "change_system", "update", loginOf("system"), "using (true)"));
   out.push(policy("core.export", "change_system", "update", loginOf("system"), "using (true)"));
+  out.push(
+    policy("core.compare_run", "change_system", "update", loginOf("system"), "using (true)"),
+  );
   for (const table of [
     ...AUTH_TABLES.filter((t) => t !== "auth.field_right"),
     "core.investigation",

@@ -7,8 +7,13 @@ import { mixingSampler } from "./mixing-sampler.ts";
 import type { Sampler } from "./sampled-network.ts";
 import { type TracedDesign, tracedSampler } from "./traced-sampler.ts";
 
+/** Whose degrees are counted: one flag per person; absent or null = everyone's, or the sampler's own. */
+type Seen = { readonly seen?: Uint8Array | null };
+
 /** What is held fixed while the rest falls at random, as plain data that a thread can be sent. */
-export type NullModel =
+export type NullModel = Seen & KeptFixed;
+
+type KeptFixed =
   | { readonly kind: "gnp"; readonly n: number; readonly p: number }
   | { readonly kind: "gnm"; readonly n: number; readonly m: number }
   | {
@@ -24,11 +29,7 @@ export type NullModel =
   | { readonly kind: "household"; readonly pairs: PairEnds; readonly householdOf: Int32Array }
   | { readonly kind: "traced"; readonly design: TracedDesign };
 
-/**
- * The sampler of a null model.
- * @throws RangeError as the sampler of its kind
- */
-export function samplerOf(model: NullModel): Sampler {
+function plainSampler(model: NullModel): Sampler {
   switch (model.kind) {
     case "gnp":
       return gnpSampler(model.n, model.p);
@@ -45,4 +46,23 @@ export function samplerOf(model: NullModel): Sampler {
     case "traced":
       return tracedSampler(model.design);
   }
+}
+
+/**
+ * The sampler of a null model. With `seen`, what it draws carries these flags as those of people who
+ * were interviewed, so that degrees are counted as they are on the observed record.
+ *
+ * @throws RangeError as the sampler of its kind, or when there are flags for fewer people than drawn
+ */
+export function samplerOf(model: NullModel): Sampler {
+  const sampler = plainSampler(model);
+  const { seen = null } = model;
+  if (seen === null) return sampler;
+  return {
+    sample(random) {
+      const drawn = sampler.sample(random);
+      if (seen.length < drawn.people) throw new RangeError("seen must hold one flag per person");
+      return { ...drawn, isInterviewed: seen };
+    },
+  };
 }

@@ -51,6 +51,11 @@ export const actionWords: Readonly<Record<EventName, string>> = {
   "export.made": "made an export",
   "export.downloaded": "downloaded an export",
   "export.deleted": "deleted an export",
+  "compare.requested": "comparison asked for",
+  "compare.renamed": "comparison renamed",
+  "compare.cancelled": "comparison stopped",
+  "compare.deleted": "comparison deleted",
+  "compare.downloaded": "comparison downloaded",
   "access_events.read": "read this record",
   "field_policy.read": "read the field policy",
 };
