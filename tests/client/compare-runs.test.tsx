@@ -1,5 +1,5 @@
 // @vitest-environment jsdom
-import { cleanup, screen, waitFor, within } from "@testing-library/react";
+import { cleanup, configure, screen, waitFor, within } from "@testing-library/react";
 import userEvent from "@testing-library/user-event";
 import { afterEach, beforeAll, describe, expect, it, vi } from "vitest";
 import { compareRunAnswer } from "../../shared/contracts/compare.ts";
@@ -29,6 +29,8 @@ import { ids, summaryOf } from "./support/network-answers.ts";
 import { type Answers, renderRoom } from "./support/room.tsx";
 
 afterEach(cleanup);
+// Rows, forms and plots come in parts; a busy machine takes its time with each.
+configure({ asyncUtilTimeout: 8_000 });
 // The drawing library is fetched with the first plot, which takes longer than one may wait here.
 beforeAll(async () => {
   await import("../../src/features/compare/components/run-curves.tsx");
@@ -67,7 +69,14 @@ describe("comparisons in the room", () => {
     );
     const table = await screen.findByRole("table", { name: /^Comparisons/ });
     const row = rowOf(table, /^Week 22/);
-    for (const text of ["ready", "27 May 2026", "E. Epi", "all people on record", "34", "999"]) {
+    for (const text of [
+      "ready",
+      "May 27, 2026, 18:01",
+      "E. Epi",
+      "all people on record",
+      "34",
+      "999",
+    ]) {
       expect(row.textContent).toContain(text);
     }
     expect(rowOf(table, /^Quick/).textContent).toContain("ready, time ran out");
@@ -89,7 +98,7 @@ describe("comparisons in the room", () => {
     const bar = await screen.findByRole("progressbar", { name: "Week 22" });
     expect(bar.getAttribute("aria-valuenow")).toBe("42");
     expect(bar.getAttribute("aria-valuetext")).toContain("420 of 999");
-    await user.click(screen.getByRole("button", { name: "Cancel Week 22" }));
+    await user.click(screen.getByRole("button", { name: /^Cancel ?Week 22$/ }));
     await waitFor(() => expect(screen.queryByRole("progressbar")).toBeNull());
     expect(asked).toContain(`POST compare/runs/${runIds.one}/cancel`);
     expect(screen.getByRole("row", { name: /^Week 22/ }).textContent).toContain("cancelled");
@@ -116,7 +125,7 @@ describe("comparisons in the room", () => {
     await user.clear(within(form).getByLabelText("Seed"));
     await user.type(within(form).getByLabelText("Seed"), "1.5");
     await user.click(within(form).getByRole("button", { name: "Compare" }));
-    expect((await within(form).findByText(/Not a whole number/i)).textContent).toContain("Check:");
+    expect((await within(form).findByText(/Give a whole number/)).textContent).toContain("Check:");
     expect(within(form).getByLabelText(/^Name/).getAttribute("aria-invalid")).toBe("true");
     expect(sent).toEqual([]);
     await user.type(within(form).getByLabelText(/^Name/), "Week 23");
@@ -131,7 +140,7 @@ describe("comparisons in the room", () => {
     expect(sent).toEqual([
       {
         name: "Week 23",
-        population: "interviewed",
+        population: "all",
         window: "preset",
         attribute: "household",
         replicates: 199,
@@ -192,7 +201,7 @@ describe("the page of a comparison", () => {
     expect(row.textContent).toContain(
       "higher than random mixing gives; ordinary once each person's number of contact pairs is kept",
     );
-    expect(rowOf(table, /^like with like by number/).textContent).toContain("-0.262 to 0.131");
+    expect(rowOf(table, /^like with like by number/).textContent).toContain("-0.2620 to 0.1310");
     expect(rowOf(table, /^contact pairs/).textContent).toContain("the same in every network");
   });
 
@@ -214,7 +223,7 @@ describe("the page of a comparison", () => {
     await user.keyboard("t");
     const rows = within(within(figure).getByRole("table")).getAllByRole("row");
     expect(rows).toHaveLength(1 + 13 + 1);
-    expect(rows.at(-1)?.textContent).toContain("0.25568");
+    expect(rows.at(-1)?.textContent).toContain("0.2557");
     expect(rows.at(-1)?.textContent).toContain("here");
     const greyed = screen.getByRole("figure", { name: "transitivity, random mixing" });
     expect(greyed.parentElement?.parentElement?.textContent).toContain("Greyed: people found by");
@@ -307,7 +316,7 @@ describe("the page of a comparison", () => {
     expect(within(asked).queryByRole("row", { name: /^seed/ })).toBeNull();
     const both = screen.getByRole("table", { name: /^Measures side by side/ });
     expect(rowOf(both, /^triangles/).textContent).toContain("-5");
-    expect(within(both).getAllByRole("columnheader")[1]?.textContent).toContain("this one, 27 May");
+    expect(within(both).getAllByRole("columnheader")[1]?.textContent).toContain("this one, May 27");
   });
 
   it("is run again, asked of the newer record, taken out and deleted", async () => {

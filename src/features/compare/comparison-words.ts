@@ -61,12 +61,10 @@ const reasons: Readonly<Record<ComparisonReason, string>> = {
 /** Reasons why a baseline was not drawn or has no random networks, beside those of the table. */
 const baselineReasons: Readonly<Record<string, string>> = {
   no_attribute: "no attribute was chosen",
-  no_swap: "only one network has these numbers of pairs",
+  attribute_empty: "nobody here has a value of this attribute",
+  needs_whole_record:
+    "it needs everybody on record, not interviewed people alone: ask for “all on record”",
   only_graph: "only one network has these numbers of pairs",
-  only_one_graph: "only one network has these numbers of pairs",
-  time_cap: "time ran out",
-  no_pairs: "there are no contact pairs",
-  too_many_pairs: "there are more pairs than places for them",
 };
 
 /** Why a comparison is warned of, greyed or refused. */

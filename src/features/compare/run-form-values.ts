@@ -21,7 +21,8 @@ export function startValues(question: NetworkQuestion): RunValues {
   const { population, window, from = "", to = "", asOf = "" } = question;
   return {
     name: "",
-    population,
+    // The baseline through the same interviews is worked out on everybody on record.
+    population: population === "interviewed" ? "all" : population,
     window,
     from,
     to,

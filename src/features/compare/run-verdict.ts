@@ -95,7 +95,8 @@ export function verdictWords(measure: CompareMeasure, result: RunResult): string
   const first = firstBaseline(result);
   if (!first) return "not compared: no baseline may be held against this network";
   const figure = measure.baselines[first.baseline];
-  const side = sideOf(figure);
+  // What a baseline keeps has no random figures in the answer.
+  const side = figure ? sideOf(figure) : "kept";
   if (side === null) return "not compared: no random network gave a value";
   const mixing =
     first.baseline === "traced" ? "random mixing, seen the same way," : "random mixing";

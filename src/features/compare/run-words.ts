@@ -144,6 +144,11 @@ export const monotoneWords = {
   either: "either way",
 } as const;
 
+/** Whether the reader may stop or delete a run; the server says so, and refuses otherwise. */
+export function mayChange({ can }: Pick<CompareRunItem, "can">): boolean {
+  return can?.change !== false;
+}
+
 /** State of a run in a word or two, with how far it is. */
 export function runStateWords(run: CompareRunItem): string {
   if (run.state === "running") {

@@ -30,7 +30,6 @@ export function useRunAgain(investigationId: string) {
   return useMutation({
     mutationFn: ({ runId, idempotencyKey }: { runId: string; idempotencyKey: string }) =>
       api.post(inInvestigation(investigationId, `compare/runs/${runId}/again`), {
-        body: {},
         idempotencyKey,
         schema: receipt,
       }),

@@ -8,7 +8,7 @@ export function useEndCompareRun(investigationId: string) {
   return useMutation({
     mutationFn: ({ runId, act }: { runId: string; act: "cancel" | "delete" }) => {
       const path = inInvestigation(investigationId, `compare/runs/${runId}`);
-      return act === "cancel" ? api.post(`${path}/cancel`, { body: {} }) : api.delete(path);
+      return act === "cancel" ? api.post(`${path}/cancel`) : api.delete(path);
     },
     // A deleted run must not be asked for again; only the lists are.
     onSettled: (_answer, _error, { runId, act }) =>

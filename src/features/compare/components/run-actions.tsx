@@ -10,6 +10,7 @@ import { inInvestigation } from "../../../lib/api-client.ts";
 import { errorWords } from "../../../lib/api-error.ts";
 import { useAskCompareRun, useRunAgain } from "../api/ask-compare-run.ts";
 import { useEndCompareRun } from "../api/end-compare-run.ts";
+import { mayChange } from "../run-words.ts";
 
 export type RunActionsProps = { investigationId: string; run: CompareRun };
 
@@ -73,9 +74,11 @@ export function RunActions({ investigationId, run }: RunActionsProps) {
             Ask the record as it stands now
           </Button>
         ) : null}
-        <Button variant="danger" onClick={() => setDeleting(true)}>
-          Delete
-        </Button>
+        {mayChange(run) ? (
+          <Button variant="danger" onClick={() => setDeleting(true)}>
+            Delete
+          </Button>
+        ) : null}
       </div>
       <p className="mt-1.5 max-w-[80ch] text-sm text-ink-2">
         Run again takes the same record, cut-off and seed and gives the same figures. The record as

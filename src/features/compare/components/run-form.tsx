@@ -91,6 +91,7 @@ export function RunForm({ investigationId, question, onClose, onAsked }: RunForm
         <SelectField
           label="People"
           options={populationOptions}
+          hint="Random mixing seen through the same interviews needs all on record."
           error={fieldWords(errors.population?.message)}
           {...form.register("population")}
         />

@@ -12,7 +12,7 @@ import { formatInstant, formatNumber } from "../../../lib/formatters.ts";
 import { populationNames } from "../../../lib/population-words.ts";
 import { useEndCompareRun } from "../api/end-compare-run.ts";
 import { compareRunsQuery } from "../api/list-compare-runs.ts";
-import { runStateWords } from "../run-words.ts";
+import { mayChange, runStateWords } from "../run-words.ts";
 import { plainLink } from "./plain-link.ts";
 import { RunProgress } from "./run-progress.tsx";
 
@@ -76,7 +76,9 @@ export function RunList({ investigationId, timeZone }: RunListProps) {
                     {run.name}
                   </Link>
                 }
-                onCancel={() => end.mutate({ runId: run.id, act: "cancel" })}
+                onCancel={
+                  mayChange(run) ? () => end.mutate({ runId: run.id, act: "cancel" }) : undefined
+                }
                 cancelling={end.isPending && end.variables.runId === run.id}
               />
             </li>

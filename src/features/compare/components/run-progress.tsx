@@ -6,7 +6,8 @@ import { formatNumber, formatShare } from "../../../lib/formatters.ts";
 export type RunProgressProps = {
   run: CompareRunItem;
   label: ReactNode;
-  onCancel: () => void;
+  /** Undefined for those who may watch it only. */
+  onCancel: (() => void) | undefined;
   cancelling: boolean;
 };
 
@@ -35,9 +36,11 @@ export function RunProgress({ run, label, onCancel, cancelling }: RunProgressPro
         >
           <div className="h-full bg-seen" style={{ inlineSize: `${run.progress * 100}%` }} />
         </div>
-        <Button size="small" pending={cancelling} pendingLabel="Stopping" onClick={onCancel}>
-          Cancel<span className="sr-only"> {run.name}</span>
-        </Button>
+        {onCancel ? (
+          <Button size="small" pending={cancelling} onClick={onCancel}>
+            Cancel<span className="sr-only"> {run.name}</span>
+          </Button>
+        ) : null}
       </div>
     </div>
   );

@@ -31,7 +31,7 @@ export function RunRowDetail({ measure, result, reached, fileStem }: RunRowDetai
       <div className="grid gap-x-10 gap-y-4 lg:grid-cols-2">
         {result.baselines.map((one) => {
           const figure = measure.baselines[one.baseline];
-          if (!one.drawn || !figure) return null;
+          if (!one.drawn) return null;
           const { short, held } = baselineWords[one.baseline];
           const greyed = !isOpen(one);
           return (
@@ -44,15 +44,22 @@ export function RunRowDetail({ measure, result, reached, fileStem }: RunRowDetai
                   {one.reasons.map(comparisonReason).join("; ")}.
                 </Caution>
               ) : null}
-              <ReplicateHistogram
-                label={`${name}, ${short}`}
-                figure={figure}
-                observed={measure.observed}
-                decimals={decimals}
-                sentence={replicateSentence(figure, reached)}
-                fileStem={`${fileStem}-${measure.statistic}-${one.baseline}`}
-                greyed={greyed}
-              />
+              {figure ? (
+                <ReplicateHistogram
+                  label={`${name}, ${short}`}
+                  figure={figure}
+                  observed={measure.observed}
+                  decimals={decimals}
+                  sentence={replicateSentence(figure, reached)}
+                  fileStem={`${fileStem}-${measure.statistic}-${one.baseline}`}
+                  greyed={greyed}
+                />
+              ) : (
+                <p className="text-sm text-ink-2">
+                  Every random network of this kind keeps it as it is on record, so there is nothing
+                  to compare.
+                </p>
+              )}
             </div>
           );
         })}

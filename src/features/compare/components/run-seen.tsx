@@ -2,7 +2,7 @@ import type { ReactNode } from "react";
 import type { CompareRun } from "../../../../shared/contracts/compare.ts";
 import { Answer } from "../../../components/ui/answer.tsx";
 import { Caution } from "../../../components/ui/caution.tsx";
-import { formatNumber, formatPart, formatShare } from "../../../lib/formatters.ts";
+import { formatCount, formatNumber, formatPart, formatShare } from "../../../lib/formatters.ts";
 import { reasonWords } from "../../../lib/reason-words.ts";
 import { cautionWords, observationWords } from "../comparison-words.ts";
 import type { RunResult } from "../run-verdict.ts";
@@ -48,6 +48,13 @@ export function RunSeen({ run, seen }: { run: CompareRun; seen: RunResult["seen"
           remark={run.window === "all" ? "counted" : "left out of a range of days"}
         />
       </dl>
+      {seen.leftOutPeople || seen.leftOutPairs ? (
+        <p className="mt-3 text-sm text-ink-2">
+          On record but seen through no interview, and left out of the comparison:{" "}
+          {formatCount(seen.leftOutPeople ?? 0, "person", "people")},{" "}
+          {formatCount(seen.leftOutPairs ?? 0, "contact pair", "contact pairs")}.
+        </p>
+      ) : null}
       {seen.cautions.map((code) => {
         const words = cautionWords(code);
         return words ? (

@@ -72,6 +72,9 @@ export function RunStandings({ result }: { result: RunResult }) {
 
 const parameterNames: Readonly<Record<string, string>> = {
   burnIn: "burn-in",
+  burnInPerPair: "burn-in per pair",
+  interviews: "interviews",
+  missing: "people without a value",
   p: "p",
   q: "recall q",
   sigma: "share named before their interview σ",

@@ -115,8 +115,10 @@ function FigureCell({ measure, one, reached }: FigureCellProps) {
           <span className="block text-sm">{envelopeWords(figure, decimals)}</span>
           <span className="block text-sm">p {tableP(figure, reached)}</span>
         </>
-      ) : (
+      ) : figure ? (
         "—"
+      ) : (
+        <span className="text-sm text-ink-2">kept</span>
       )}
     </Cell>
   );

@@ -112,10 +112,16 @@ function FiguresTable({ label, head, rows }: PlotTable & { label: string }) {
   );
 }
 
-/** Words as they are; figures with up to four places. */
+/** Words as they are; figures with as many places as their size needs. */
 function shown(value: string | number | null | undefined): string {
   if (typeof value === "string") return value;
   if (value === null || value === undefined) return "—";
-  const places = Number.isInteger(value) ? 0 : Math.abs(value) < 10 ? 3 : 1;
+  const places = Number.isInteger(value)
+    ? 0
+    : Math.abs(value) < 1
+      ? 4
+      : Math.abs(value) < 10
+        ? 3
+        : 1;
   return formatNumber(value, { decimals: places });
 }

@@ -25,7 +25,7 @@ export function ReplicateHistogram(props: ReplicateHistogramProps) {
   const [ref, width] = useWidth(420);
   if (figure.histogram === null) return <p>{sentence}</p>;
   const { outline, low, high } = histogramOutline(figure.histogram, observed);
-  const most = Math.max(...figure.histogram.counts, 1);
+  const most = Math.max(...outline.map(({ count }) => count), 1);
   const ticks = roundTicks(low, high, width < 360 ? 3 : 5);
   const atEnd = observed !== null && observed > (low + high) / 2;
   return (

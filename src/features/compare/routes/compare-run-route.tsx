@@ -25,7 +25,7 @@ import { RunProgress } from "../components/run-progress.tsx";
 import { RunSeen } from "../components/run-seen.tsx";
 import { RunStandings } from "../components/run-standings.tsx";
 import { RunTable } from "../components/run-table.tsx";
-import { runStateWords } from "../run-words.ts";
+import { mayChange, runStateWords } from "../run-words.ts";
 
 const RunCurves = lazy(() =>
   import("../components/run-curves.tsx").then(({ RunCurves: curves }) => ({ default: curves })),
@@ -93,7 +93,7 @@ function RunState({ investigationId, run }: { investigationId: string; run: Comp
           run={run}
           label="Drawing random networks"
           cancelling={end.isPending}
-          onCancel={() => end.mutate({ runId: run.id, act: "cancel" })}
+          onCancel={mayChange(run) ? () => end.mutate({ runId: run.id, act: "cancel" }) : undefined}
         />
         {end.isError ? (
           <Notice tone="error" title="Not stopped." className="mt-2">
