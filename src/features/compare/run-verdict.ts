@@ -76,10 +76,34 @@ export function firstBaseline({ baselines }: RunResult): DrawnBaseline | undefin
   return open.find(({ baseline }) => baseline === "traced" || baseline === "gnm") ?? open[0];
 }
 
+/**
+ * A baseline without random figures of a measure keeps it as it is on record; save the traced one,
+ * in which invented people have no attributes.
+ */
+export function isKept(baseline: Baseline): boolean {
+  return baseline !== "traced";
+}
+
+/** The first baseline, or the next open one where the first has nothing to say on a measure. */
+function baselineFor(measure: CompareMeasure, result: RunResult): DrawnBaseline | undefined {
+  const first = firstBaseline(result);
+  if (!first || measure.baselines[first.baseline] || isKept(first.baseline)) return first;
+  const others = result.baselines.filter((one) => one.drawn && isOpen(one));
+  return others.find(({ baseline }) => measure.baselines[baseline]) ?? first;
+}
+
 /** Whether a baseline may carry a verdict; greyed ones are shown without. */
 export function isOpen({ standing }: Pick<DrawnBaseline, "standing">): boolean {
   return standing === "show" || standing === "warn";
 }
+
+const againstWords: Readonly<Record<Baseline, string>> = {
+  traced: "random mixing seen the same way",
+  gnm: "random mixing",
+  degreePreserving: "networks with the same numbers of pairs",
+  degreePreservingInterviewedEnd: "networks with the same numbers of pairs",
+  mixing: "networks with the same mixing",
+};
 
 const keptWords: Partial<Record<Baseline, string>> = {
   degreePreserving: "each person's number of contact pairs is kept",
@@ -92,17 +116,15 @@ export function verdictWords(measure: CompareMeasure, result: RunResult): string
   if (measure.observed === null) {
     return `no value: ${reasonWords(measure.reason ?? undefined) ?? "no reason was given"}`;
   }
-  const first = firstBaseline(result);
+  const first = baselineFor(measure, result);
   if (!first) return "not compared: no baseline may be held against this network";
   const figure = measure.baselines[first.baseline];
-  // What a baseline keeps has no random figures in the answer.
-  const side = figure ? sideOf(figure) : "kept";
+  const side = figure ? sideOf(figure) : isKept(first.baseline) ? "kept" : null;
   if (side === null) return "not compared: no random network gave a value";
-  const mixing =
-    first.baseline === "traced" ? "random mixing, seen the same way," : "random mixing";
-  if (side === "kept") return `the same in every network of ${mixing.replace(/,$/, "")}`;
-  if (side === "usual") return `not told apart from ${mixing.replace(/,$/, "")}`;
-  const parts = [`${side} than ${mixing} gives`];
+  const against = againstWords[first.baseline];
+  if (side === "kept") return `the same in all of ${against}`;
+  if (side === "usual") return `not told apart from ${against}`;
+  const parts = [`${side} than in ${against}`];
   for (const other of result.baselines) {
     const kept = keptWords[other.baseline];
     if (!kept || other.baseline === first.baseline || !other.drawn || !isOpen(other)) continue;
@@ -112,7 +134,7 @@ export function verdictWords(measure: CompareMeasure, result: RunResult): string
     else if (then === "higher" || then === "lower") parts.push(`but ${then} when ${kept}`);
   }
   if (figure?.pHolm !== null && figure?.pHolm !== undefined && figure.pHolm > level) {
-    parts.push("taken alone; not once all rows of this table are allowed for (Holm)");
+    parts.push("taken alone");
   }
   return parts.join("; ");
 }

@@ -168,5 +168,9 @@ export function asOfWords({ asOf }: Pick<CompareRunItem, "asOf">, timeZone: stri
 /** Which exposures a run counted. */
 export function runExposureWords(run: CompareRunItem): string {
   if (run.window === "all") return "all exposures, dated or not";
+  // The days of a preset window follow the record; only a run that is ready has them.
+  if (run.window === "preset" && run.from === null && run.to === null) {
+    return "exposures of one infectious window";
+  }
   return exposureWords({ window: run.window, from: run.from, to: run.to });
 }

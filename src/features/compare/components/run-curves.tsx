@@ -19,7 +19,7 @@ export function RunCurves({ result, fileStem }: RunCurvesProps) {
       isDrawn && (result.degrees.baselines[baseline] || result.sizes.baselines[baseline]),
   );
   const [chosen, setChosen] = useState<Baseline | null>(
-    () => firstBaseline(result)?.baseline ?? drawn[0]?.baseline ?? null,
+    () => bestForCurves(drawn, result) ?? drawn[0]?.baseline ?? null,
   );
   const one = drawn.find(({ baseline }) => baseline === chosen);
   const greyed = one ? !isOpen(one) : false;
@@ -81,6 +81,14 @@ export function RunCurves({ result, fileStem }: RunCurvesProps) {
   );
 }
 
+/** An open baseline with bands for both curves; one that keeps numbers of pairs has none for them. */
+function bestForCurves(drawn: RunResult["baselines"], result: RunResult): Baseline | undefined {
+  const first = firstBaseline(result);
+  const withBands = drawn.filter(({ baseline }) => result.degrees.baselines[baseline]);
+  if (first && withBands.some(({ baseline }) => baseline === first.baseline)) return first.baseline;
+  return (withBands.find(isOpen) ?? withBands[0] ?? first)?.baseline;
+}
+
 type CurvePlotProps = {
   label: string;
   curve: Curve;
@@ -108,8 +116,11 @@ function CurvePlot(props: CurvePlotProps) {
       notes={
         <div className="text-sm text-ink-2">
           {sentence ? <strong className="font-bold text-ink">{sentence} </strong> : null}
+          {baseline && !bands
+            ? "Random networks of this kind keep these numbers as they are on record: no bands. "
+            : ""}
           {bands?.quickLook ? "A quick look: fewer than 999 random networks. " : ""}
-          Points: on record. Shaded: 95 % at each point.
+          Points: on record.{bands ? " Shaded: 95 % at each point." : ""}
           {bands?.globalLow ? " Dashed: 95 % for the curve as a whole." : ""}
           {withLaws ? " Ochre: the binomial law, dotted the Poisson law, of random mixing." : ""}
           {growing ? " Both axes shrink what is large." : ""}

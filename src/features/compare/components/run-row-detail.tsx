@@ -2,7 +2,7 @@ import type { CompareMeasure } from "../../../../shared/contracts/compare.ts";
 import { Caution } from "../../../components/ui/caution.tsx";
 import { comparisonReason } from "../comparison-words.ts";
 import { ReplicateHistogram } from "../plots/replicate-histogram.tsx";
-import { isOpen, type RunResult, replicateSentence } from "../run-verdict.ts";
+import { isKept, isOpen, type RunResult, replicateSentence } from "../run-verdict.ts";
 import { baselineWords, statisticWords } from "../run-words.ts";
 
 const directionSentences = {
@@ -56,8 +56,9 @@ export function RunRowDetail({ measure, result, reached, fileStem }: RunRowDetai
                 />
               ) : (
                 <p className="text-sm text-ink-2">
-                  Every random network of this kind keeps it as it is on record, so there is nothing
-                  to compare.
+                  {isKept(one.baseline)
+                    ? "Every random network of this kind keeps it as it is on record, so there is nothing to compare."
+                    : "People drawn for these networks have no attributes, so there is nothing to compare."}
                 </p>
               )}
             </div>

@@ -7,7 +7,7 @@ import { formatNumber } from "../../../lib/formatters.ts";
 import { wordFor } from "../../../lib/words.ts";
 import { comparisonReason, comparisonWords, standingWords } from "../comparison-words.ts";
 import type { RunResult } from "../run-verdict.ts";
-import { baselineWords } from "../run-words.ts";
+import { attributeWords, baselineWords } from "../run-words.ts";
 
 const tones: Record<Standing, TagTone> = {
   show: "kelp",
@@ -27,9 +27,8 @@ export function RunStandings({ result }: { result: RunResult }) {
         <Table caption="Comparisons and whether this record allows them" hideCaption>
           <thead>
             <tr>
-              <HeadCell>comparison</HeadCell>
+              <HeadCell>comparison, and why it is not simply shown</HeadCell>
               <HeadCell>here</HeadCell>
-              <HeadCell>why</HeadCell>
             </tr>
           </thead>
           <tbody>
@@ -37,13 +36,15 @@ export function RunStandings({ result }: { result: RunResult }) {
               <tr key={key}>
                 <HeadCell scope="row" className={standing === "grey" ? "text-ink-2" : ""}>
                   {comparisonWords[key]}
+                  {reasons.length > 0 ? (
+                    <span className="block text-sm text-ink-2">
+                      {sentence(reasons)}
+                      {instead ? ` Look at ${comparisonWords[instead]} instead.` : ""}
+                    </span>
+                  ) : null}
                 </HeadCell>
                 <Cell>
                   <Tag tone={tones[standing]}>{standingWords[standing]}</Tag>
-                </Cell>
-                <Cell className="min-w-64 text-sm text-ink-2">
-                  {reasons.map(comparisonReason).join("; ")}
-                  {instead ? `. Look at ${comparisonWords[instead]} instead.` : ""}
                 </Cell>
               </tr>
             ))}
@@ -59,8 +60,7 @@ export function RunStandings({ result }: { result: RunResult }) {
               {drawn ? standingWords[standing] : "not drawn"}
             </Tag>
             <span className="ms-2 text-sm text-ink-2">
-              {baselineWords[baseline].held}
-              {reasons.length > 0 ? `. ${reasons.map(comparisonReason).join("; ")}` : ""}
+              {baselineWords[baseline].held}.{reasons.length > 0 ? ` ${sentence(reasons)}` : ""}
               {drawn ? parameterWords(parameters) : ""}
             </span>
           </li>
@@ -68,6 +68,12 @@ export function RunStandings({ result }: { result: RunResult }) {
       </ul>
     </Section>
   );
+}
+
+/** Reasons as one sentence. */
+function sentence(reasons: readonly string[]): string {
+  const text = reasons.map(comparisonReason).join("; ");
+  return `${text.charAt(0).toUpperCase()}${text.slice(1)}.`;
 }
 
 const parameterNames: Readonly<Record<string, string>> = {
@@ -82,15 +88,16 @@ const parameterNames: Readonly<Record<string, string>> = {
 
 function parameterWords(parameters: RunResult["baselines"][number]["parameters"]): string {
   const told = Object.entries(parameters).flatMap(([key, value]) => {
-    if (value === null) return [];
+    // How many were reached stands over the table.
+    if (value === null || key === "reached") return [];
     const shown =
       typeof value === "string"
-        ? value
+        ? wordFor(attributeWords, value)
         : Number.isInteger(value)
           ? formatNumber(value)
           : String(Number(value.toPrecision(4)));
     const name = wordFor(parameterNames, key).replace(/[A-Z]/g, (one) => ` ${one.toLowerCase()}`);
     return [`${name} ${shown}`];
   });
-  return told.length > 0 ? `. Drawn with ${told.join(", ")}.` : "";
+  return told.length > 0 ? ` Drawn with ${told.join(", ")}.` : "";
 }

@@ -8,6 +8,7 @@ import { formatInterval, formatNumber } from "../../../lib/formatters.ts";
 import {
   type BaselineFigure,
   type DrawnBaseline,
+  isKept,
   isOpen,
   type RunResult,
   tableP,
@@ -59,7 +60,7 @@ export function RunTable({ result, reached, fileStem }: RunTableProps) {
             return (
               <Fragment key={measure.statistic}>
                 <tr>
-                  <HeadCell scope="row" className="min-w-40">
+                  <HeadCell scope="row" className="min-w-40 align-top!">
                     <button
                       type="button"
                       aria-expanded={isShown}
@@ -70,7 +71,7 @@ export function RunTable({ result, reached, fileStem }: RunTableProps) {
                       {statisticWords[measure.statistic].name}
                     </button>
                   </HeadCell>
-                  <Cell numeric>
+                  <Cell numeric className="align-top!">
                     {formatNumber(measure.observed, {
                       decimals: statisticWords[measure.statistic].decimals,
                     })}
@@ -78,8 +79,8 @@ export function RunTable({ result, reached, fileStem }: RunTableProps) {
                   {drawn.map((one) => (
                     <FigureCell key={one.baseline} {...{ measure, one, reached }} />
                   ))}
-                  <Cell className="min-w-56">{verdictWords(measure, result)}</Cell>
-                  <Cell className="whitespace-nowrap text-sm text-ink-2">
+                  <Cell className="min-w-56 align-top!">{verdictWords(measure, result)}</Cell>
+                  <Cell className="whitespace-nowrap align-top! text-sm text-ink-2">
                     {monotoneWords[measure.monotone]}
                   </Cell>
                 </tr>
@@ -108,7 +109,7 @@ function FigureCell({ measure, one, reached }: FigureCellProps) {
   const figure = measure.baselines[one.baseline];
   const { decimals } = statisticWords[measure.statistic];
   return (
-    <Cell numeric className={clsx(!isOpen(one) && "text-ink-2 italic")}>
+    <Cell numeric className={clsx("align-top!", !isOpen(one) && "text-ink-2 italic")}>
       {figure && figure.mean !== null ? (
         <>
           {formatNumber(figure.mean, { decimals: Math.max(1, decimals) })}
@@ -117,8 +118,10 @@ function FigureCell({ measure, one, reached }: FigureCellProps) {
         </>
       ) : figure ? (
         "—"
-      ) : (
+      ) : isKept(one.baseline) ? (
         <span className="text-sm text-ink-2">kept</span>
+      ) : (
+        "—"
       )}
     </Cell>
   );

@@ -162,7 +162,9 @@ function RunFigures({ run, result }: RunFiguresProps) {
         </Caution>
         <p className="mt-1 text-sm text-ink-2">
           p is two-sided; 95 % is the middle of the random networks. Greyed columns are shown to be
-          read, and take no part in what may be said. “—” means not worked out; it is not 0.
+          read, and take no part in what may be said; “kept” is what a kind of random network holds
+          fixed. “Taken alone”: p is 0.05 or less by itself, and not once all rows are allowed for
+          (Holm). “—” means not worked out; it is not 0.
         </p>
       </Section>
       <Suspense fallback={<LoadingState label="Opening the plots" rows={6} />}>
