@@ -2,11 +2,14 @@ import { describe, expect, it } from "vitest";
 import { runInWorkers } from "../../server/analysis/replicates/run-in-workers.ts";
 import {
   BURN_IN_PER_PAIR,
+  createStream,
   type NullModel,
+  observedRow,
   type ReplicatePlan,
   replicateRange,
   replicateRunner,
   rowWidth,
+  samplerOf,
 } from "../../shared/core/index.ts";
 import { endsOf } from "./support/graphs.ts";
 import { karate } from "./support/published-networks.ts";
@@ -149,5 +152,23 @@ describe("worker threads", () => {
     );
     await expect(runInWorkers(plan, { replicates: 5, workers: 0 })).rejects.toThrow(/workers/);
     await expect(runInWorkers(plan, { replicates: 0.5, workers: 1 })).rejects.toThrow(RangeError);
+  });
+});
+
+describe("whose degrees are counted", () => {
+  it("are those of the people seen, on drawn networks as on the record", () => {
+    const seen = Uint8Array.from({ length: n }, (_, u) => (u < 5 ? 1 : 0));
+    for (const model of MODELS.slice(0, 5)) {
+      const plain = samplerOf(model).sample(createStream(3, 0));
+      const drawn = samplerOf({ ...model, seen }).sample(createStream(3, 0));
+      expect(drawn.isInterviewed).toBe(seen);
+      expect([...drawn.a.subarray(0, drawn.length)]).toEqual([
+        ...plain.a.subarray(0, plain.length),
+      ]);
+      const row = observedRow({ ...planOf(model), statistics: ["meanDegree"] }, drawn);
+      expect(row.subarray(1, 9).reduce((sum, people) => sum + people, 0)).toBe(5);
+    }
+    const short = samplerOf({ kind: "gnm", n, m: 9, seen: new Uint8Array(3) });
+    expect(() => short.sample(createStream(3, 0))).toThrow(/seen/);
   });
 });

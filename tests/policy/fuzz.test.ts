@@ -105,7 +105,8 @@ async function settled(): Promise<void> {
   for (let tries = 0; tries < 400; tries++) {
     const busy = await world.admin.query(
       `select 1 from core.export where state = 'building'
-       union all select 1 from core.import where state = 'committing'`,
+       union all select 1 from core.import where state = 'committing'
+       union all select 1 from core.compare_run where state = 'running'`,
     );
     if (busy.rowCount === 0) return;
     await new Promise((done) => setTimeout(done, 50));

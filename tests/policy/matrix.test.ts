@@ -4,7 +4,7 @@ import type { AnyRoute } from "../../server/http/route.ts";
 import { plainRoutes, ROUTES } from "../../server/routes.ts";
 import { ROLES, type Role } from "../../shared/roles.ts";
 import { buildAccount, buildMember } from "../support/factories.ts";
-import { bodyFor, exportOf, stageImport } from "./support/bodies.ts";
+import { bodyFor, exportOf, madeRun, stageImport } from "./support/bodies.ts";
 import {
   type Answer,
   cookiesOf,
@@ -46,6 +46,10 @@ beforeAll(async () => {
     exportId: {
       own: await exportOf(world, "officer"),
       other: await exportOf(world, "officer", world.others.officer),
+    },
+    runId: {
+      own: await madeRun(world, "supervisor"),
+      other: await madeRun(world, "supervisor", world.others.supervisor),
     },
     importId: {
       own: await stageImport(world.everyone.supervisor),
@@ -175,9 +179,10 @@ async function addressOf(
       const role = ROLES.find((one) => one === visitor) ?? "tracer";
       own = await savedFilterOf(world.here, world.everyone[role].accountId);
     }
-    if (name === "exportId" && object === "own" && holds(route, visitor ?? "anonymous")) {
-      // A file is its maker's: each has one of their own.
-      own = await exportOf(world, visitor as Role);
+    const make = { exportId: exportOf, runId: madeRun }[name];
+    if (make && object === "own" && holds(route, visitor ?? "anonymous")) {
+      // A file or a comparison is its maker's: each has one of their own.
+      own = await make(world, visitor as Role);
     }
     path = path.replace(`:${name}`, pick(object, own, known.other));
   }

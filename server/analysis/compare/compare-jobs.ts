@@ -1,4 +1,5 @@
 import type { MixingAttribute } from "../../../shared/contracts/compare.ts";
+import { type ReplicatePlan, replicateRunner } from "../../../shared/core/index.ts";
 import { serveJobs } from "../../worker-lane.ts";
 import type { CompareInput } from "./compare-input.ts";
 import { gatherInput } from "./gather-input.ts";
@@ -15,6 +16,12 @@ export type CompareJob =
     }
   | { readonly kind: "plan"; readonly input: CompareInput; readonly seed: number }
   | {
+      readonly kind: "draw";
+      readonly plan: ReplicatePlan;
+      readonly from: number;
+      readonly to: number;
+    }
+  | {
       readonly kind: "summarise";
       readonly input: CompareInput;
       readonly drawn: readonly DrawnBaseline[];
@@ -24,8 +31,19 @@ export type CompareJob =
 export type CompareAnswer = {
   gather: CompareInput;
   plan: PlannedBaseline[];
+  /** Rows of the replicates, one after another. */
+  draw: Float64Array;
   summarise: CompareResult;
 };
+
+function draw(plan: ReplicatePlan, from: number, to: number): Float64Array {
+  const runner = replicateRunner(plan);
+  const table = new Float64Array((to - from) * runner.width);
+  for (let replicate = from; replicate < to; replicate++) {
+    runner.run(replicate, table, (replicate - from) * runner.width);
+  }
+  return table;
+}
 
 serveJobs<CompareJob>((job) => {
   switch (job.kind) {
@@ -33,6 +51,8 @@ serveJobs<CompareJob>((job) => {
       return gatherInput(job.record, job.attribute);
     case "plan":
       return planBaselines(job.input, job.seed);
+    case "draw":
+      return draw(job.plan, job.from, job.to);
     case "summarise":
       return summarise(job.input, job.drawn);
   }

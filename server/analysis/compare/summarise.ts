@@ -134,6 +134,22 @@ function lawsOf(observation: Observation, observed: Float64Array) {
   };
 }
 
+/** A baseline as the result tells it. Where time left only a few replicates, no verdict rests on them. */
+function toldBaseline(drawn: DrawnBaseline): CompareResult["baselines"][number] {
+  const { baseline, standing, reasons, parameters, table, reached } = drawn;
+  if (table === null) {
+    return { baseline, standing, reasons: [...reasons], drawn: false, parameters };
+  }
+  const few = reached < FEWEST_FOR_CURVE;
+  return {
+    baseline,
+    standing: few ? "grey" : standing,
+    reasons: few ? ["few_replicates", ...reasons] : [...reasons],
+    drawn: reached > 0,
+    parameters: { ...parameters, reached },
+  };
+}
+
 /**
  * The result of a comparison. It depends on input and rows alone: the same bytes whenever and
  * wherever it is worked out.
@@ -175,13 +191,7 @@ export function summarise(input: CompareInput, drawn: readonly DrawnBaseline[]):
       const { standing, reasons, instead } = judged.judgements[key];
       return { key, standing, reasons: [...reasons], instead };
     }),
-    baselines: drawn.map(({ baseline, standing, reasons, parameters, table, reached }) => ({
-      baseline,
-      standing,
-      reasons: [...reasons],
-      drawn: table !== null && reached > 0,
-      parameters: table === null ? parameters : { ...parameters, reached },
-    })),
+    baselines: drawn.map(toldBaseline),
     measures,
     degrees: {
       observed: Array.from(degrees),

@@ -8,6 +8,8 @@ import {
   compareRunPatch,
   compareRunQuery,
 } from "../../../shared/contracts/compare.ts";
+import { unpackInput } from "../../analysis/compare/compare-input.ts";
+import { runFile } from "../../analysis/compare/run-file.ts";
 import { reportQuestion } from "../../analysis/report-question.ts";
 import { recordEvent } from "../../audit/record-event.ts";
 import { now } from "../../clock.ts";
@@ -19,7 +21,6 @@ import { type Actor, type AnyRoute, defineRoute } from "../../http/route.ts";
 import { loadInvestigation } from "../investigations/store.ts";
 import { queueRun, stopRun } from "./commands/run-comparison.ts";
 import { mayChange, presentRun } from "./present.ts";
-import { runFile } from "./run-file.ts";
 import {
   cancelRun,
   countRunning,
@@ -207,7 +208,8 @@ export const compareRoutes: AnyRoute[] = [
       const input = await loadInput(tx, runId);
       if (row.state !== "ready" || !result || !input) throw new HttpProblem("not_found");
       await told(tx, actor, "downloaded", runId, { people: row.people, pairs: row.pairs });
-      const body = await runFile(presentRun(row, actor), result, input);
+      const file = runFile(presentRun(row, actor), result, await unpackInput(input));
+      const body = Buffer.from(`${JSON.stringify(file)}\n`, "utf8");
       return {
         name: `strandline-comparison-${runId.slice(0, 8)}.json`,
         type: "application/json; charset=utf-8",

@@ -1,4 +1,6 @@
 import { afterAll, beforeAll, expect, test } from "vitest";
+import { recompute } from "../../../server/analysis/compare/recompute.ts";
+import { comparisonFile } from "../../../server/analysis/compare/run-file.ts";
 import type { CompareRun } from "../../../shared/contracts/compare.ts";
 import type { Statistic } from "../../../shared/core/index.ts";
 import { karate } from "../../core/support/published-networks.ts";
@@ -65,7 +67,23 @@ test("the lesson: extreme against random mixing, ordinary once degrees are kept"
   expect(measureOf(run, "ei").baselines.mixing).toBeUndefined();
   expect(measureOf(run, "ei").baselines.gnm?.pTwoSided).toBeLessThan(0.01);
   expect(measureOf(run, "meanSmallGroup")).toMatchObject({ observed: null, reason: "one_group" });
-});
+}, 60_000);
+
+test("its download gives the same figures in one thread, without the server", async () => {
+  const run = await compareNow(complete, { attribute: "area" });
+  const { client, base } = complete;
+  const answer = await client.get(`${base}/compare/runs/${run.id}/file`);
+  const file = comparisonFile.parse(answer.body);
+  expect([file.people.length, file.pairs.length, file.classes]).toEqual([
+    34,
+    78,
+    ["North", "South"],
+  ]);
+  expect(JSON.parse(JSON.stringify(recompute(file)))).toEqual(run.result);
+  // A pair less is another network.
+  const other = recompute({ ...file, pairs: file.pairs.slice(1) });
+  expect(other.measures).not.toEqual(run.result?.measures);
+}, 60_000);
 
 test("figures, histograms, curves and laws hang together", async () => {
   const result = resultOf(await compareNow(complete));
@@ -127,7 +145,7 @@ test("a run again on the stored input has the same result, whatever was recorded
   expect(JSON.stringify(second.result)).toBe(JSON.stringify(first.result));
   expect(second.cutOff).toBe(first.cutOff);
   expect((await compareNow(complete)).people).toBe(35);
-});
+}, 60_000);
 
 test("a star has no other network with its degrees, and says so", async () => {
   const member = await signInAs(app, "epidemiologist", await buildInvestigation(app));

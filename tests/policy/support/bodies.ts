@@ -1,7 +1,32 @@
+import { type CompareInput, packInput } from "../../../server/analysis/compare/compare-input.ts";
 import type { AnyRoute } from "../../../server/http/route.ts";
 import type { Role } from "../../../shared/roles.ts";
 import type { Member } from "../../support/factories.ts";
 import type { World } from "./world.ts";
+
+const NOBODY: CompareInput = {
+  format: 1,
+  population: "all",
+  n: 0,
+  interviewedPeople: 0,
+  complete: false,
+  presetWindow: true,
+  recall: null,
+  namedByBoth: 0,
+  namedByOne: 0,
+  unresolvedGroupExposures: 0,
+  undated: 0,
+  leftOutPeople: 0,
+  leftOutPairs: 0,
+  studyNumbers: [],
+  interviewed: null,
+  order: [],
+  attribute: null,
+  classes: [],
+  classOf: null,
+  pairs: { a: [], b: [] },
+  tellings: { a: [], b: [] },
+};
 
 const PEOPLE_FILE = "ref,name,area\nstaged-1,Staged Person,North\n";
 
@@ -29,6 +54,41 @@ export async function exportOf(
      values (gen_random_uuid(), $1, 'people', false, 'analysis', $2, '{ref}', 'ready', $3, $4, now(),
        now() + interval '1 hour') returning id`,
     [member.investigationId, role, "0".repeat(64), member.accountId],
+  );
+  return made.rows[0].id;
+}
+
+/** A finished comparison of a member's, on nobody; past the routes. */
+export async function madeRun(
+  world: World,
+  role: Role,
+  member: Member = world.everyone[role],
+): Promise<string> {
+  const result = {
+    seen: {
+      state: "unseen",
+      n: 0,
+      interviewed: 0,
+      coverage: null,
+      doubleNamedShare: null,
+      recall: null,
+      unresolvedGroupExposures: 0,
+      undated: 0,
+      cautions: [],
+    },
+    comparisons: [],
+    baselines: [],
+    measures: [],
+    degrees: { observed: [], baselines: {}, binomial: null, poisson: null },
+    sizes: { observed: [], baselines: {} },
+  };
+  const made = await world.admin.query(
+    `insert into core.compare_run (id, investigation_id, name, state, replicates, seed, population,
+       time_window, question, as_of, cut_off, graph_version, core_version, generator, input, result,
+       recorded_by)
+     values (gen_random_uuid(), $1, 'A run', 'ready', 199, 1, 'all', 'preset', '{"population":"all"}',
+       '2026-03-01', now(), 0, '1', 'none', $2, $3, $4) returning id`,
+    [member.investigationId, await packInput(NOBODY), JSON.stringify(result), member.accountId],
   );
   return made.rows[0].id;
 }
@@ -81,6 +141,8 @@ const BODIES: Record<string, (world: World) => unknown> = {
     matchedOn: "name",
   }),
   "post /api/investigations/:id/exports": () => ({ kind: "people", purpose: "analysis" }),
+  "post /api/investigations/:id/compare/runs": () => ({ name: "A run", replicates: 199 }),
+  "patch /api/investigations/:id/compare/runs/:runId": () => ({ name: "Another name" }),
   "post /api/investigations/:id/imports/:importId/commit": () => ({ createMissing: false }),
 };
 

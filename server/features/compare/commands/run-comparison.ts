@@ -8,10 +8,10 @@ import {
   unpackInput,
 } from "../../../analysis/compare/compare-input.ts";
 import type { CompareAnswer, CompareJob } from "../../../analysis/compare/compare-jobs.ts";
+import { drawBaseline } from "../../../analysis/compare/draw-baseline.ts";
 import type { PlannedBaseline } from "../../../analysis/compare/plan-baselines.ts";
 import { readRecord } from "../../../analysis/compare/read-record.ts";
 import type { DrawnBaseline } from "../../../analysis/compare/summarise.ts";
-import { runInWorkers } from "../../../analysis/replicates/run-in-workers.ts";
 import { safeError } from "../../../http/translate-error.ts";
 import type { Services } from "../../../services.ts";
 import { WorkerLane } from "../../../worker-lane.ts";
@@ -26,6 +26,9 @@ export const BASELINE_CAP_MS = 120_000;
 
 /** One processor is left to the people who work. */
 const workers = () => Math.max(1, availableParallelism() - 1);
+
+/** The thread of comparisons: it starts with the first one and waits for the next. */
+const lane = new WorkerLane<CompareJob, CompareAnswer>(WORKER, "compare");
 
 type AskedRun = {
   investigationId: string;
@@ -43,7 +46,6 @@ type Run = {
   readonly id: string;
   readonly services: RunServices;
   readonly asked: AskedRun;
-  readonly lane: WorkerLane<CompareJob, CompareAnswer>;
   readonly stop: AbortController;
 };
 
@@ -73,7 +75,7 @@ async function readAsked(services: RunServices, id: string): Promise<AskedRun | 
 
 /** The input of a run: the stored one, or else read from the record and stored. */
 async function inputOf(run: Run): Promise<CompareInput> {
-  const { asked, services, lane } = run;
+  const { asked, services } = run;
   if (asked.input) return await unpackInput(asked.input);
   const { investigationId, question, attribute } = asked;
   const record = await readRecord(services.pools.system, investigationId, question, attribute);
@@ -130,7 +132,7 @@ async function draw(run: Run, planned: readonly PlannedBaseline[]): Promise<Draw
       continue;
     }
     const before = ready;
-    const made = await runInWorkers(plan, {
+    const made = await drawBaseline(lane, plan, {
       replicates,
       workers: workers(),
       capMs: BASELINE_CAP_MS,
@@ -155,7 +157,7 @@ function reachedOf(drawn: readonly DrawnBaseline[]): number {
 }
 
 async function make(run: Run): Promise<void> {
-  const { lane, asked } = run;
+  const { asked } = run;
   const input = await inputOf(run);
   const planned = await lane.run({ kind: "plan", input, seed: asked.seed });
   const drawn = await draw(run, planned);
@@ -177,12 +179,11 @@ const stops = new Map<string, AbortController>();
  */
 async function runComparison(services: RunServices, id: string, stop: AbortController) {
   let investigationId: string | null = null;
-  const lane = new WorkerLane<CompareJob, CompareAnswer>(WORKER, "compare");
   try {
     const asked = stop.signal.aborted ? undefined : await readAsked(services, id);
     if (!asked) return;
     investigationId = asked.investigationId;
-    await make({ id, services, asked, lane, stop });
+    await make({ id, services, asked, stop });
     services.log.info({ event: "comparison made", runId: id });
   } catch (error) {
     if (error instanceof CancelledError) {
@@ -199,7 +200,6 @@ async function runComparison(services: RunServices, id: string, stop: AbortContr
       .catch(() => undefined);
   } finally {
     stops.delete(id);
-    await lane.stop();
     if (investigationId) publish(services, investigationId, id);
   }
 }
@@ -223,4 +223,5 @@ export function stopRun(id: string): void {
 export async function stopRuns(): Promise<void> {
   for (const stop of stops.values()) stop.abort();
   await queue;
+  await lane.stop();
 }
