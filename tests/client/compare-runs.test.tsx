@@ -31,6 +31,7 @@ const openRoom = (answers: Answers) =>
 const openRun = (answers: Answers, at = `/i/x/compare/runs/${runIds.one}`) =>
   renderRoom({
     room: RunPage,
+    near: true,
     path: "/i/:id/compare/runs/:runId",
     at,
     rooms: ["compare"],
@@ -184,7 +185,7 @@ describe("the page of a comparison", () => {
     );
     expect(rowOf(table, /^like with like by number/).textContent).toContain("-0.2620 to 0.1310");
     expect(rowOf(table, /^contact pairs/).textContent).toContain(
-      "the same in all of random mixing",
+      "the same in every random network",
     );
   });
 

@@ -61,6 +61,7 @@ const reasons: Readonly<Record<ComparisonReason, string>> = {
 /** Reasons why a baseline was not drawn or has no random networks, beside those of the table. */
 const baselineReasons: Readonly<Record<string, string>> = {
   no_attribute: "no attribute was chosen",
+  few_replicates: "too few random networks were drawn in the time there was",
   attribute_empty: "nobody here has a value of this attribute",
   needs_whole_record:
     "it needs everybody on record, not interviewed people alone: ask for “all on record”",

@@ -122,7 +122,7 @@ export function verdictWords(measure: CompareMeasure, result: RunResult): string
   const side = figure ? sideOf(figure) : isKept(first.baseline) ? "kept" : null;
   if (side === null) return "not compared: no random network gave a value";
   const against = againstWords[first.baseline];
-  if (side === "kept") return `the same in all of ${against}`;
+  if (side === "kept") return "the same in every random network, which keeps it";
   if (side === "usual") return `not told apart from ${against}`;
   const parts = [`${side} than in ${against}`];
   for (const other of result.baselines) {

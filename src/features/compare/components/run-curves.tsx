@@ -48,7 +48,7 @@ export function RunCurves({ result, fileStem }: RunCurvesProps) {
           ) : null}
         </div>
       ) : null}
-      <div className="grid gap-x-10 lg:grid-cols-2">
+      <div className="grid grid-cols-1 gap-x-10 lg:grid-cols-2">
         <Section title="Contact pairs of a person">
           <CurvePlot
             label="People by their number of contact pairs"
@@ -120,7 +120,9 @@ function CurvePlot(props: CurvePlotProps) {
             ? "Random networks of this kind keep these numbers as they are on record: no bands. "
             : ""}
           {bands?.quickLook ? "A quick look: fewer than 999 random networks. " : ""}
-          Points: on record.{bands ? " Shaded: 95 % at each point." : ""}
+          Points: on record
+          {points.length === curve.observed.length ? "; the last one, that many or more" : ""}.
+          {bands ? " Shaded: 95 % at each point." : ""}
           {bands?.globalLow ? " Dashed: 95 % for the curve as a whole." : ""}
           {withLaws ? " Ochre: the binomial law, dotted the Poisson law, of random mixing." : ""}
           {growing ? " Both axes shrink what is large." : ""}

@@ -28,7 +28,7 @@ export function RunRowDetail({ measure, result, reached, fileStem }: RunRowDetai
       <p className="mb-3 text-sm text-ink-2">
         {name}: {meaning}. {directionSentences[measure.monotone]}
       </p>
-      <div className="grid gap-x-10 gap-y-4 lg:grid-cols-2">
+      <div className="grid grid-cols-1 gap-x-10 gap-y-4 lg:grid-cols-2">
         {result.baselines.map((one) => {
           const figure = measure.baselines[one.baseline];
           if (!one.drawn) return null;

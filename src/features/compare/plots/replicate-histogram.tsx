@@ -17,7 +17,7 @@ export type ReplicateHistogramProps = {
   greyed: boolean;
 };
 
-const height = 190;
+const height = 172;
 
 /** Values of a measure over the random networks, with the network on record marked among them. */
 export function ReplicateHistogram(props: ReplicateHistogramProps) {
@@ -46,7 +46,7 @@ export function ReplicateHistogram(props: ReplicateHistogramProps) {
           width={width}
           height={height}
           data={outline}
-          margin={plotMargin}
+          margin={{ ...plotMargin, bottom: 2 }}
           accessibilityLayer={false}
         >
           {figure.low !== null && figure.high !== null && figure.high > figure.low ? (

@@ -26,6 +26,7 @@ import { RunSeen } from "../components/run-seen.tsx";
 import { RunStandings } from "../components/run-standings.tsx";
 import { RunTable } from "../components/run-table.tsx";
 import { mayChange, runStateWords } from "../run-words.ts";
+import { useNear } from "../use-near.ts";
 
 const RunCurves = lazy(() =>
   import("../components/run-curves.tsx").then(({ RunCurves: curves }) => ({ default: curves })),
@@ -139,13 +140,15 @@ type RunFiguresProps = { run: CompareRun; result: NonNullable<CompareRun["result
 function RunFigures({ run, result }: RunFiguresProps) {
   const fileStem = `comparison-version-${run.graphVersion}-seed-${run.seed}`;
   const { seen } = result;
+  // The drawing library is heavy, and the table above is what one comes for.
+  const [curvesRef, near] = useNear();
   return (
     <>
       <RunSeen run={run} seen={seen} />
       <RunStandings result={result} />
       <Section
         title="Measures"
-        subLine={`${populationNames[run.population]}, n = ${formatNumber(seen.n)}; ${formatNumber(run.reached)} random networks of each kind; open a row for its plot`}
+        subLine={`${populationNames[run.population]}, n = ${formatNumber(run.people)}; ${formatNumber(run.reached)} random networks of each kind; open a row for its plot`}
       >
         <RunTable result={result} reached={run.reached} fileStem={fileStem} />
         <Caution className="mt-2">
@@ -167,9 +170,15 @@ function RunFigures({ run, result }: RunFiguresProps) {
           (Holm). “—” means not worked out; it is not 0.
         </p>
       </Section>
-      <Suspense fallback={<LoadingState label="Opening the plots" rows={6} />}>
-        <RunCurves result={result} fileStem={fileStem} />
-      </Suspense>
+      <div ref={curvesRef}>
+        {near ? (
+          <Suspense fallback={<LoadingState label="Opening the plots" rows={6} />}>
+            <RunCurves result={result} fileStem={fileStem} />
+          </Suspense>
+        ) : (
+          <LoadingState label="Opening the plots" rows={6} />
+        )}
+      </div>
     </>
   );
 }
