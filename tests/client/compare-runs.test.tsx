@@ -131,6 +131,18 @@ describe("comparisons in the room", () => {
     ]);
   });
 
+  it("give the keyboard back to its button when the form is closed", async () => {
+    const user = userEvent.setup();
+    openRoom(() => listAnswer([]));
+    const opener = await screen.findByRole("button", { name: "New comparison" });
+    await user.click(opener);
+    const name = await screen.findByLabelText(/^Name/);
+    expect(document.activeElement).toBe(name);
+    await user.click(screen.getByRole("button", { name: "Close the form" }));
+    expect(screen.queryByRole("form", { name: "New comparison" })).toBeNull();
+    expect(document.activeElement).toBe(opener);
+  });
+
   it("take a free range only with a day, and in order", () => {
     const start = {
       ...startValues({ population: "all", window: "free" }),

@@ -1,4 +1,4 @@
-import { lazy, Suspense, useState } from "react";
+import { lazy, Suspense, useRef, useState } from "react";
 import { useNavigate } from "react-router-dom";
 import { paths } from "../../../app/paths.ts";
 import { Section } from "../../../components/layouts/section.tsx";
@@ -26,19 +26,32 @@ export function ComparisonsSection({
   question,
 }: ComparisonsSectionProps) {
   const [asking, setAsking] = useState(false);
+  const opener = useRef<HTMLButtonElement>(null);
   const navigate = useNavigate();
   return (
     <Section
       title="Comparisons"
       subLine="the network on record against networks in which chance decides"
-      actions={asking ? undefined : <Button onClick={() => setAsking(true)}>New comparison</Button>}
+      actions={
+        <Button
+          ref={opener}
+          aria-expanded={asking}
+          onClick={() => setAsking((current) => !current)}
+        >
+          New comparison
+        </Button>
+      }
     >
       {asking ? (
         <Suspense fallback={<LoadingState label="Opening the form" rows={4} />}>
           <RunForm
             investigationId={investigationId}
             question={question}
-            onClose={() => setAsking(false)}
+            onClose={() => {
+              setAsking(false);
+              // The button that was pressed is gone with the form; the keyboard goes on where it came from.
+              opener.current?.focus();
+            }}
             onAsked={(runId) => void navigate(paths.compareRun(investigationId, runId))}
           />
         </Suspense>
