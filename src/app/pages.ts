@@ -13,6 +13,7 @@ export const pages = {
   follow: () => import("../features/follow-up/routes/follow-route.tsx"),
   review: () => import("../features/review/routes/review-route.tsx"),
   compare: () => import("../features/compare/routes/compare-route.tsx"),
+  compareRun: () => import("../features/compare/routes/compare-run-route.tsx"),
   safeguard: () => import("./routes/safeguard-route.tsx"),
   settings: () => import("../features/settings/routes/settings-route.tsx"),
   members: () => import("./routes/members-route.tsx"),

@@ -23,6 +23,8 @@ export const paths = {
   follow: (investigationId: string) => `/i/${investigationId}/follow`,
   review: (investigationId: string) => `/i/${investigationId}/review`,
   compare: (investigationId: string) => `/i/${investigationId}/compare`,
+  compareRun: (investigationId: string, runId: string) =>
+    `/i/${investigationId}/compare/runs/${runId}`,
   safeguard: (investigationId: string) => `/i/${investigationId}/safeguard`,
 } as const;
 

@@ -21,6 +21,7 @@ const rooms: RouteObject[] = [
   { path: "follow", lazy: pages.follow },
   { path: "review", lazy: pages.review },
   { path: "compare", lazy: pages.compare },
+  { path: "compare/runs/:runId", lazy: pages.compareRun },
   { path: "safeguard", lazy: pages.safeguard },
   { path: "settings", lazy: pages.settings },
   { path: "members", lazy: pages.members },

@@ -12,6 +12,8 @@ export type FigureWithTableProps = {
   notes?: ReactNode;
   /** No visible button, for rows of small figures; the key still works. */
   quiet?: boolean;
+  /** Keeps the drawing in the page, unseen, while the table is shown, so that it can be taken out. */
+  keepDrawing?: boolean;
 };
 
 /** A drawing whose table is one key away: `t` inside the figure, or the button at its foot. */
@@ -21,6 +23,7 @@ export function FigureWithTable({
   table,
   notes,
   quiet = false,
+  keepDrawing = false,
 }: FigureWithTableProps) {
   const [asTable, setAsTable] = useState(false);
   const id = useId();
@@ -42,7 +45,8 @@ export function FigureWithTable({
       className="mb-4 min-w-0 outline-offset-4"
     >
       <div id={id}>
-        {asTable ? <ScrollRegion label={`${label}, as a table`}>{table}</ScrollRegion> : children}
+        {keepDrawing ? <div hidden={asTable}>{children}</div> : asTable ? null : children}
+        {asTable ? <ScrollRegion label={`${label}, as a table`}>{table}</ScrollRegion> : null}
       </div>
       <figcaption className="flex flex-wrap items-start gap-x-6 gap-y-1">
         {notes ? <div className="min-w-0 flex-1 basis-72">{notes}</div> : null}

@@ -40,6 +40,10 @@ export type Answers = (
 export type RoomOptions = {
   room: ComponentType;
   at: string;
+  /** Pattern of the page's address, where it holds an id. */
+  path?: string;
+  /** Every part of the page is in sight, with what is fetched only then. */
+  near?: boolean;
   rooms: Session["rooms"];
   answers: Answers;
   /** More of the session, where the room looks at it. */
@@ -47,7 +51,16 @@ export type RoomOptions = {
 };
 
 /** Renders a room on answers of one's own; gives what was asked for and the cut-offs it showed. */
-export function renderRoom({ room: Room, at, rooms, answers, session: more }: RoomOptions) {
+export function renderRoom(options: RoomOptions) {
+  const {
+    room: Room,
+    at,
+    path: pattern = "/room",
+    rooms,
+    near = false,
+    answers,
+    session: more,
+  } = options;
   const asked: string[] = [];
   const cutOffs: unknown[] = [];
   const start = `/api/investigations/${ids.investigation}/`;
@@ -62,11 +75,15 @@ export function renderRoom({ room: Room, at, rooms, answers, session: more }: Ro
       headers: { "content-type": "application/json" },
     });
   });
-  // Nothing comes near in a page without layout, so the drawing library is not fetched.
+  // Nothing comes near by itself in a page without layout: drawing libraries are not fetched.
   vi.stubGlobal(
     "IntersectionObserver",
     class {
-      observe() {}
+      constructor(private readonly seen: IntersectionObserverCallback) {}
+      observe() {
+        const entries = [{ isIntersecting: near }] as IntersectionObserverEntry[];
+        if (near) this.seen(entries, this as unknown as IntersectionObserver);
+      }
       disconnect() {}
     },
   );
@@ -74,7 +91,7 @@ export function renderRoom({ room: Room, at, rooms, answers, session: more }: Ro
   const session = { rooms, ...more } as Session;
   const router = createMemoryRouter(
     [
-      { path: "/room", element: <Room /> },
+      { path: pattern, element: <Room /> },
       { path: "*", element: <Elsewhere /> },
     ],
     { initialEntries: [at] },

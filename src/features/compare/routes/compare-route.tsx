@@ -14,6 +14,7 @@ import { formatPart } from "../../../lib/formatters.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
 import { networkSummaryQuery } from "../../../lib/network-summary-query.ts";
 import { saveText } from "../../../lib/save-text.ts";
+import { ComparisonsSection } from "../components/comparisons-section.tsx";
 import { MeasuresTable } from "../components/measures-table.tsx";
 import { PictureSection } from "../components/picture-section.tsx";
 import { QuestionControls } from "../components/question-controls.tsx";
@@ -101,9 +102,10 @@ export function Component() {
               worked out; it is not 0.
             </Caution>
           </Section>
-          <PictureSection question={question} drawn={drawn} onChange={change} />
         </div>
       )}
+      <ComparisonsSection investigationId={id} timeZone={timeZone} question={question} />
+      {summary ? <PictureSection question={question} drawn={drawn} onChange={change} /> : null}
     </RoomPage>
   );
 }
