@@ -4,7 +4,7 @@ import type {
   CompareRunItem,
   MixingAttribute,
 } from "../../../shared/contracts/compare.ts";
-import type { Statistic } from "../../../shared/core/index.ts";
+import type { QuickStatistic } from "../../../shared/core/index.ts";
 import { formatDay, formatInstant, formatShare } from "../../lib/formatters.ts";
 import { exposureWords } from "../../lib/population-words.ts";
 
@@ -55,7 +55,7 @@ type StatisticWords = {
 };
 
 /** Names and meanings of the measures; network terms are explained where they appear. */
-export const statisticWords: Readonly<Record<Statistic, StatisticWords>> = {
+export const statisticWords: Readonly<Record<QuickStatistic, StatisticWords>> = {
   people: { name: "people on record", meaning: "everybody in the network", decimals: 0 },
   pairs: { name: "contact pairs", meaning: "two people who met, counted once", decimals: 0 },
   groups: {
@@ -131,7 +131,7 @@ export const statisticWords: Readonly<Record<Statistic, StatisticWords>> = {
       "pairs between classes less pairs inside, as a share of all: −1 inside only, 1 between",
     decimals: 4,
   },
-  modularity: {
+  attributeModularity: {
     name: "modularity of the attribute",
     meaning: "share of pairs inside classes, less what the numbers of pairs alone would give",
     decimals: 4,
