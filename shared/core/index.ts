@@ -273,7 +273,6 @@ export {
 export { normalCdf, normalQuantile, normalUpper } from "./stats/normal-law.ts";
 export { type Envelope, pointwiseEnvelope } from "./stats/pointwise-envelope.ts";
 export { poissonCdf, poissonPmf, poissonQuantile, poissonUpper } from "./stats/poisson-law.ts";
-export { quantile } from "./stats/quantile.ts";
 export { FEWEST_FOR_ENVELOPE, type RankEnvelope, rankEnvelope } from "./stats/rank-envelope.ts";
 export { type ReplicateSummary, replicateSummary } from "./stats/replicate-summary.ts";
 export { sampleQuantile } from "./stats/sample-quantile.ts";

@@ -17,19 +17,13 @@ import {
 } from "../../shared/core/index.ts";
 import { expectClose } from "./support/close-to.ts";
 import { graphOf, type Links, randomLinks } from "./support/graphs.ts";
+import { type Network, networks } from "./support/networks.ts";
 import { karate } from "./support/published-networks.ts";
-
-type Network = { n: number; links: Links };
 
 // A fixed seed: a failure must come back the next time.
 const RUN = { seed: 20260302, numRuns: 150 };
 
-const network = (most = 45): fc.Arbitrary<Network> =>
-  fc.integer({ min: 2, max: most }).chain((n) => {
-    const person = fc.integer({ min: 0, max: n - 1 });
-    const pair = fc.tuple(person, person).filter(([a, b]) => a !== b);
-    return fc.record({ n: fc.constant(n), links: fc.array(pair, { maxLength: 2 * n }) });
-  });
+const network = (most = 45) => networks(most, 2);
 
 const harmonicOf = ({ n, links }: Network) =>
   closeness(graphOf(n, links)).harmonic.value ?? new Float64Array();

@@ -1,4 +1,4 @@
-import { quantile } from "./quantile.ts";
+import { sampleQuantile } from "./sample-quantile.ts";
 
 /** Lower and upper limit at each point of a curve. */
 export type Envelope = { readonly low: Float64Array; readonly high: Float64Array };
@@ -19,14 +19,15 @@ export function pointwiseEnvelope(curves: Float64Array, points: number, alpha = 
     throw new RangeError("curves must hold a whole number of replicates");
   }
   const replicates = curves.length / points;
-  const low = new Float64Array(points);
-  const high = new Float64Array(points);
+  const low = new Float64Array(points).fill(Number.NaN);
+  const high = new Float64Array(points).fill(Number.NaN);
+  if (replicates === 0) return { low, high };
   const column = new Float64Array(replicates);
   for (let point = 0; point < points; point++) {
     for (let k = 0; k < replicates; k++) column[k] = curves[k * points + point]!;
     column.sort();
-    low[point] = quantile(column, alpha / 2);
-    high[point] = quantile(column, 1 - alpha / 2);
+    low[point] = sampleQuantile(column, alpha / 2);
+    high[point] = sampleQuantile(column, 1 - alpha / 2);
   }
   return { low, high };
 }

@@ -1,5 +1,5 @@
 import { monteCarloP } from "./monte-carlo-p.ts";
-import { quantile } from "./quantile.ts";
+import { sampleQuantile } from "./sample-quantile.ts";
 
 /** One figure over the replicates of a null model; null = undefined, `undefinedReplicates` tells. */
 export type ReplicateSummary = {
@@ -43,8 +43,8 @@ export function replicateSummary(observed: number, values: ArrayLike<number>): R
   return {
     mean: length === 0 ? null : mean,
     sd: length < 2 ? null : Math.sqrt(squares / (length - 1)),
-    low: length === 0 ? null : quantile(defined, 0.025),
-    high: length === 0 ? null : quantile(defined, 0.975),
+    low: length === 0 ? null : sampleQuantile(defined, 0.025),
+    high: length === 0 ? null : sampleQuantile(defined, 0.975),
     pUpper: p?.upper ?? null,
     pLower: p?.lower ?? null,
     pTwoSided: p?.twoSided ?? null,
