@@ -1,8 +1,5 @@
-import pg from "pg";
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
 import { generateOutbreak } from "../../../drizzle/seed/generator/generate-outbreak.ts";
-import type { Outbreak } from "../../../drizzle/seed/generator/types.ts";
-import { loadOutbreak } from "../../../drizzle/seed/load-outbreak.ts";
 import { dayIn, now } from "../../../server/clock.ts";
 import {
   groupList,
@@ -14,6 +11,7 @@ import { fileOf, takeOut } from "../../support/exports.ts";
 import { buildInvestigation, type Member, signInAs } from "../../support/factories.ts";
 import { asAdmin, contactRow, register, submit } from "../../support/field-work.ts";
 import { commit, problemLines, stage } from "../../support/imports.ts";
+import { loadGenerated } from "../../support/load-generated.ts";
 
 const SETTINGS = {
   monitoringDays: 14,
@@ -38,55 +36,20 @@ beforeAll(async () => {
   app = await startTestApp();
   const investigationId = await buildInvestigation(app, SETTINGS);
   source = await signInAs(app, "supervisor", investigationId);
-  await loadGenerated(investigationId);
+  const outbreak = generateOutbreak({
+    seed: 26,
+    people: 400,
+    lastDay: dayIn("UTC", now()),
+    tracers: ["first"],
+    ...SETTINGS,
+  });
+  await loadGenerated(app, investigationId, outbreak);
   await addOddities();
 }, 60_000);
 
 afterAll(async () => {
   await app?.close();
 });
-
-/** A generated outbreak of some hundred people, as the demo's code loads it. */
-async function loadGenerated(investigationId: string): Promise<void> {
-  const lastDay = dayIn("UTC", now());
-  const outbreak = generateOutbreak({
-    seed: 26,
-    people: 400,
-    lastDay,
-    tracers: ["first"],
-    ...SETTINGS,
-  });
-  const [key] = await asAdmin<{ wrapped_key: Buffer }>(
-    app,
-    "select wrapped_key from identity.data_key where investigation_id = $1",
-    [investigationId],
-  );
-  if (!key) throw new Error("the investigation has no data key");
-  const client = new pg.Client({ connectionString: app.adminUrl });
-  await client.connect();
-  try {
-    await loadOutbreak(
-      {
-        client,
-        keys: app.keys.unwrap(investigationId, key.wrapped_key),
-        investigationId,
-        accounts: new Map(),
-        country: "GB",
-      },
-      // A year alone is no partial day of ours; it could be typed in no form.
-      { ...outbreak, people: outbreak.people.map(withMonth) },
-    );
-    await client.query("analyze");
-  } finally {
-    await client.end();
-  }
-  // Loaded past the routes: the live graph reads itself when the next change says so.
-}
-
-function withMonth(person: Outbreak["people"][number]): Outbreak["people"][number] {
-  const { birthDate } = person;
-  return birthDate?.length === 4 ? { ...person, birthDate: `${birthDate}-07` } : person;
-}
 
 /** What a generator does not make: cells that bite, words, partial days, withdrawn things. */
 async function addOddities(): Promise<void> {

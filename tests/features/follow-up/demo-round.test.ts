@@ -1,13 +1,12 @@
-import pg from "pg";
 import { afterAll, beforeAll, expect, test } from "vitest";
 import { generateOutbreak } from "../../../drizzle/seed/generator/generate-outbreak.ts";
 import type { Outbreak } from "../../../drizzle/seed/generator/types.ts";
-import { loadOutbreak } from "../../../drizzle/seed/load-outbreak.ts";
 import { dayIn, now } from "../../../server/clock.ts";
 import { type FollowUpItem, followUpList } from "../../../shared/contracts/follow-up.ts";
 import { startTestApp, type TestApp } from "../../support/app.ts";
 import { buildInvestigation, type Member, signInAs } from "../../support/factories.ts";
 import { asAdmin } from "../../support/field-work.ts";
+import { loadGenerated } from "../../support/load-generated.ts";
 
 const SETTINGS = {
   monitoringDays: 14,
@@ -27,29 +26,7 @@ beforeAll(async () => {
   supervisor = await signInAs(app, "supervisor", investigationId);
   const lastDay = dayIn("UTC", now());
   outbreak = generateOutbreak({ seed: 18, lastDay, tracers: ["first"], ...SETTINGS });
-  const [key] = await asAdmin<{ wrapped_key: Buffer }>(
-    app,
-    "select wrapped_key from identity.data_key where investigation_id = $1",
-    [investigationId],
-  );
-  if (!key) throw new Error("the investigation has no data key");
-  const client = new pg.Client({ connectionString: app.adminUrl });
-  await client.connect();
-  try {
-    await loadOutbreak(
-      {
-        client,
-        keys: app.keys.unwrap(investigationId, key.wrapped_key),
-        investigationId,
-        accounts: new Map(),
-        country: "GB",
-      },
-      outbreak,
-    );
-    await client.query("analyze");
-  } finally {
-    await client.end();
-  }
+  await loadGenerated(app, investigationId, outbreak);
   for (let page = 1; page < 20; page += 1) {
     const answer = await supervisor.client.get(`${supervisor.base}/follow-up`, {
       show: "all",
