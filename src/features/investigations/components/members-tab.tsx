@@ -4,10 +4,10 @@ import type { Member } from "../../../../shared/contracts/investigations.ts";
 import { ROLE_NAMES } from "../../../../shared/roles.ts";
 import type { DataColumn } from "../../../components/data-table/data-column.ts";
 import { DataTable } from "../../../components/data-table/data-table.tsx";
+import { pagedTable, usePages } from "../../../components/data-table/use-paged-table.ts";
 import { Section } from "../../../components/layouts/section.tsx";
 import { Button } from "../../../components/ui/button.tsx";
 import { useToast } from "../../../components/ui/use-toast.ts";
-import { errorKind } from "../../../lib/api-error.ts";
 import { formatDay, formatInstant, noValue } from "../../../lib/formatters.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
 import { membersQuery } from "../../../lib/members-query.ts";
@@ -79,12 +79,11 @@ export function MembersTab() {
   const { id, timeZone } = useInvestigation();
   const { accountId } = useSession();
   const toast = useToast();
-  const [page, setPage] = useState(1);
-  const [pageSize, setPageSize] = useState(50);
+  const pages = usePages();
   const [adding, setAdding] = useState<NewMemberBy | null>(null);
   const [ending, setEnding] = useState<Member | null>(null);
   const [changing, setChanging] = useState<Member | null>(null);
-  const members = useQuery(membersQuery(id, page, pageSize));
+  const members = useQuery(membersQuery(id, pages.page, pages.pageSize));
   const columns = useMemo(
     () => memberColumns(timeZone, accountId, setChanging, setEnding),
     [timeZone, accountId],
@@ -105,25 +104,11 @@ export function MembersTab() {
         </Section>
       ) : null}
       <DataTable<Member>
+        {...pagedTable(members, pages)}
         caption="Members of this investigation, by name"
         noun="memberships"
         columns={columns}
-        rows={members.data?.items ?? []}
         rowId={(member) => member.id}
-        total={members.data?.total ?? 0}
-        page={page}
-        pageSize={pageSize}
-        onPageChange={setPage}
-        onPageSizeChange={(size) => {
-          setPageSize(size);
-          setPage(1);
-        }}
-        sort={null}
-        onSortChange={() => {}}
-        state={members.data ? "ready" : members.isError ? "error" : "loading"}
-        updating={members.isPlaceholderData}
-        errorKind={errorKind(members.error)}
-        onRetry={() => void members.refetch()}
         tools={
           adding ? undefined : (
             <>

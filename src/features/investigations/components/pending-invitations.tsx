@@ -1,13 +1,13 @@
 import { useQuery } from "@tanstack/react-query";
-import { useState } from "react";
 import type { Invitation } from "../../../../shared/contracts/accounts.ts";
 import { ROLE_NAMES } from "../../../../shared/roles.ts";
 import type { DataColumn } from "../../../components/data-table/data-column.ts";
 import { DataTable } from "../../../components/data-table/data-table.tsx";
+import { pagedTable, usePages } from "../../../components/data-table/use-paged-table.ts";
 import { Section } from "../../../components/layouts/section.tsx";
 import { Button } from "../../../components/ui/button.tsx";
 import { useToast } from "../../../components/ui/use-toast.ts";
-import { errorKind, errorWords } from "../../../lib/api-error.ts";
+import { errorWords } from "../../../lib/api-error.ts";
 import { formatDay, formatInstant, noValue } from "../../../lib/formatters.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
 import { invitationsQuery, useWithdrawInvitation } from "../api/invitations.ts";
@@ -50,12 +50,14 @@ function columnsIn(
 /** Invitations that are still open; nothing at all when there is none. */
 export function PendingInvitations() {
   const { id, timeZone } = useInvestigation();
-  const [page, setPage] = useState(1);
-  const [pageSize, setPageSize] = useState(50);
+  const pages = usePages();
   const toast = useToast();
   const withdraw = useWithdrawInvitation(id);
   // The one invited acts elsewhere, so this list asks again by itself.
-  const list = useQuery({ ...invitationsQuery(id, page, pageSize), refetchInterval: 30_000 });
+  const list = useQuery({
+    ...invitationsQuery(id, pages.page, pages.pageSize),
+    refetchInterval: 30_000,
+  });
   if (list.data?.total === 0) return null;
   return (
     <div className="mt-8">
@@ -64,6 +66,7 @@ export function PendingInvitations() {
         subLine="Inviting the same address and role again ends the earlier link."
       >
         <DataTable<Invitation>
+          {...pagedTable(list, pages)}
           caption="Open invitations, the newest first"
           noun="invitations"
           columns={columnsIn(timeZone, (one) =>
@@ -73,21 +76,7 @@ export function PendingInvitations() {
                 toast({ tone: "error", text: `Not withdrawn. ${errorWords(error)}.` }),
             }),
           )}
-          rows={list.data?.items ?? []}
           rowId={(one) => one.id}
-          total={list.data?.total ?? 0}
-          page={page}
-          pageSize={pageSize}
-          onPageChange={setPage}
-          onPageSizeChange={(size) => {
-            setPageSize(size);
-            setPage(1);
-          }}
-          sort={null}
-          onSortChange={() => {}}
-          state={list.data ? "ready" : list.isError ? "error" : "loading"}
-          errorKind={errorKind(list.error)}
-          onRetry={() => void list.refetch()}
         />
       </Section>
     </div>

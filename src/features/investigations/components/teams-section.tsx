@@ -3,11 +3,12 @@ import { useState } from "react";
 import type { Team } from "../../../../shared/contracts/investigations.ts";
 import type { DataColumn } from "../../../components/data-table/data-column.ts";
 import { DataTable } from "../../../components/data-table/data-table.tsx";
+import { pagedTable, usePages } from "../../../components/data-table/use-paged-table.ts";
 import { Section } from "../../../components/layouts/section.tsx";
 import { Button } from "../../../components/ui/button.tsx";
 import { EmptyState } from "../../../components/ui/empty-state.tsx";
 import { useToast } from "../../../components/ui/use-toast.ts";
-import { ApiError, errorKind, errorWords } from "../../../lib/api-error.ts";
+import { ApiError, errorWords } from "../../../lib/api-error.ts";
 import { fieldWords } from "../../../lib/form-errors.ts";
 import { formatNumber } from "../../../lib/formatters.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
@@ -48,11 +49,10 @@ function columnsWith(
 export function TeamsSection() {
   const { id } = useInvestigation();
   const toast = useToast();
-  const [page, setPage] = useState(1);
-  const [pageSize, setPageSize] = useState(50);
+  const pages = usePages();
   const [naming, setNaming] = useState<Team | "new" | null>(null);
   const remove = useRemoveTeam(id);
-  const list = useQuery(teamsQuery(id, page, pageSize));
+  const list = useQuery(teamsQuery(id, pages.page, pages.pageSize));
   const removeTeam = (team: Team) =>
     remove.mutate(team.id, {
       onSuccess: () => toast({ tone: "done", text: `Team ${team.name} removed` }),
@@ -79,25 +79,11 @@ export function TeamsSection() {
           />
         ) : null}
         <DataTable<Team>
+          {...pagedTable(list, pages)}
           caption="Teams of this investigation, by name"
           noun="teams"
           columns={columnsWith(setNaming, removeTeam)}
-          rows={list.data?.items ?? []}
           rowId={(team) => team.id}
-          total={list.data?.total ?? 0}
-          page={page}
-          pageSize={pageSize}
-          onPageChange={setPage}
-          onPageSizeChange={(size) => {
-            setPageSize(size);
-            setPage(1);
-          }}
-          sort={null}
-          onSortChange={() => {}}
-          state={list.data ? "ready" : list.isError ? "error" : "loading"}
-          updating={list.isPlaceholderData}
-          errorKind={errorKind(list.error)}
-          onRetry={() => void list.refetch()}
           empty={
             <EmptyState title="No team yet">
               People are assigned to one member each. Make a team where several share the same

@@ -5,13 +5,13 @@ import { hasDuty } from "../../../../shared/roles.ts";
 import { paths } from "../../../app/paths.ts";
 import type { DataColumn } from "../../../components/data-table/data-column.ts";
 import { DataTable } from "../../../components/data-table/data-table.tsx";
+import { pagedTable, usePages } from "../../../components/data-table/use-paged-table.ts";
 import { RoomPage } from "../../../components/layouts/room-page.tsx";
 import { Section } from "../../../components/layouts/section.tsx";
 import { Answer } from "../../../components/ui/answer.tsx";
 import { Button } from "../../../components/ui/button.tsx";
 import { EmptyState } from "../../../components/ui/empty-state.tsx";
 import { LinkButton } from "../../../components/ui/link-button.tsx";
-import { errorKind } from "../../../lib/api-error.ts";
 import { formatInstant } from "../../../lib/formatters.ts";
 import { useInvestigation } from "../../../lib/investigation-context.ts";
 import { useSession } from "../../../lib/session-context.ts";
@@ -49,11 +49,10 @@ function placeColumns(timeZone: string): DataColumn<Place>[] {
 export function Component() {
   const { id, timeZone } = useInvestigation();
   const { actingRole } = useSession();
-  const [page, setPage] = useState(1);
-  const [pageSize, setPageSize] = useState(50);
+  const pages = usePages();
   const [adding, setAdding] = useState(false);
   const [columns] = useState(() => placeColumns(timeZone));
-  const places = useQuery(placesQuery(id, page, pageSize));
+  const places = useQuery(placesQuery(id, pages.page, pages.pageSize));
   const mayRecord = hasDuty(actingRole, "recordPlace");
   return (
     <RoomPage
@@ -76,25 +75,11 @@ export function Component() {
         </Section>
       ) : null}
       <DataTable<Place>
+        {...pagedTable(places, pages)}
         caption="Places on record"
         noun="places"
         columns={columns}
-        rows={places.data?.items ?? []}
         rowId={(place) => place.id}
-        total={places.data?.total ?? 0}
-        page={page}
-        pageSize={pageSize}
-        onPageChange={setPage}
-        onPageSizeChange={(size) => {
-          setPageSize(size);
-          setPage(1);
-        }}
-        sort={null}
-        onSortChange={() => {}}
-        state={places.data ? "ready" : places.isError ? "error" : "loading"}
-        updating={places.isPlaceholderData}
-        errorKind={errorKind(places.error)}
-        onRetry={() => void places.refetch()}
         empty={
           <EmptyState title="No place is on record yet">
             Places are recorded here, or while listing contacts in an interview.
