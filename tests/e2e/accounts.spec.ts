@@ -23,6 +23,8 @@ test("a supervisor opens an investigation and invites a tracer, who joins from t
   await form.getByRole("checkbox", { name: /invented/i }).check();
   await page.getByRole("button", { name: "Open the investigation" }).click();
   await page.getByRole("button", { name: `Act here in ${name}` }).click();
+  // Acting elsewhere gives the session a new id; who asks with the old one is signed out.
+  await page.waitForURL(/\/i\/[0-9a-f-]{36}\//);
   await expect(page.getByRole("navigation", { name: "Rooms" })).toBeVisible();
 
   const { displayName } = await readApi<Session>(page, "/api/session");
